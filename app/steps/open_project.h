@@ -21,6 +21,7 @@
 #include "model/progress.h"
 #include "model/solar/shade.h"
 #include "model/sun/climate.h"
+#include "model/vet/vet_result.h"
 
 namespace unstring {
 
@@ -36,6 +37,7 @@ struct ProjectView {
     Plan plan;
     std::vector<std::string> plan_names;
     std::vector<Finding> findings;      ///< of gather and of the last vet
+    std::optional<VetResult> vet;       ///< findings left out: they are in `findings`
     std::optional<ShadeResult> shade;   ///< results of the last run, stale or not
     std::optional<DecideResult> decide;
     std::optional<PhaseResult> phase;   ///< of the plan as it is now, hand edits included

@@ -8,6 +8,7 @@
 #include "model/city/city.h"
 #include "model/finding.h"
 #include "model/money/cash.h"
+#include "model/series/sections.h"
 #include "model/series/verdict.h"
 
 namespace unstring {
@@ -55,14 +56,6 @@ struct UnitMove {
     int year = 0;
     TransformerIx transformer;
     std::string from, to;  ///< string id, "spare", "scrapped", "bought"
-};
-
-struct Section {  ///< lamps that leave together
-    int id = 0;
-    StringIx string;
-    int ring = 0;                 ///< 0 = at the far end
-    std::vector<PoleIx> poles;    ///< in wiring order
-    int cutback = -1;             ///< place in City.cutbacks of the cut-back behind which they lie, -1 = jumpered
 };
 
 struct PhaseResult {

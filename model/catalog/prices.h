@@ -2,6 +2,8 @@
 // The price book: one closed list of items (prices, paces, rates), each with low, base and high and its years.
 // Comes in: rows of prices.csv. Goes out: the price of an item in a year, per metre or per piece.
 
+#include <functional>
+#include <map>
 #include <optional>
 #include <span>
 #include <string>
@@ -18,6 +20,12 @@ struct PriceItem {
 
 /// The closed list, in the order of resources/prices.csv.
 [[nodiscard]] std::span<const PriceItem> price_items();
+/// Null for a name that is not in the list.
+[[nodiscard]] const PriceItem* find_price_item(std::string_view item);
+/// Whether a file may give this item in that unit: the list's own, or metres in place of feet.
+[[nodiscard]] bool price_unit_fits(const PriceItem& item, std::string_view unit);
+/// The wire item of a conductor size: "wire_awg8", "wire_awg1_0".
+[[nodiscard]] std::string wire_item(int awg);
 
 struct PriceRow {
     std::string item, unit, note, date;
@@ -35,8 +43,11 @@ class PriceBook {
     [[nodiscard]] const std::vector<PriceRow>& rows() const { return rows_; }
 
     /// Base price in a calendar year: the last row with from_year <= year, times (1 + change)^(year - from_year).
-    /// Items priced per foot or per metre come back per metre. Throws std::logic_error for an item that is not in
-    /// the closed list; an item of the list without a row takes the default book's value (set by with_defaults).
+    /// No row reaches the year: the last that had begun, as in its last year, else the first to come. A row without
+    /// from_year holds from the start
+    /// and never changes. Items priced per foot or per metre come back per metre, paces in feet in metres per crew-day.
+    /// Throws std::logic_error for an item that is not in the closed list, or that neither this book nor its defaults
+    /// (with_defaults) give.
     [[nodiscard]] double at(std::string_view item, int year) const;
 
     /// Fills the items that this book lacks from another (the default) book.
@@ -45,6 +56,7 @@ class PriceBook {
 
   private:
     std::vector<PriceRow> rows_;
+    std::map<std::string, std::vector<std::size_t>, std::less<>> places_;  ///< item -> rows, by from_year
 };
 
 }  // namespace unstring

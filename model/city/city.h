@@ -30,6 +30,7 @@ struct Pole {
     std::string string_given;  ///< as in the file
     StringIx string;           ///< not valid: unknown string, or none given
     std::optional<int> order;  ///< wiring order as given, 1..n
+    bool order_is_inferred = false;  ///< order was written by vet, the file gave none
     MapPoint place;
     bool has_place = false;
     PoleStatus status = PoleStatus::standing;
@@ -75,6 +76,7 @@ struct SeriesString {  ///< one row of circuits.csv; kind says whether it is a s
     std::optional<double> faults_year;
     std::optional<double> asfound_a, asfound_v, insulation_mohm;
     std::string asfound_date;
+    double order_confidence_frac = 1;  ///< of a wiring order that vet inferred
     bool set_aside = false;
     RowRef from;
 };

@@ -30,6 +30,10 @@ struct StringLoop {
     std::vector<double> legs_m;            ///< n + 1 conductor metres
     std::vector<LoopCutBack> cutbacks;
     int far_position = 0;                  ///< 1..n, the far end
+    /// Lamps whose records are set aside: they burn on the string as long as any lamp of the plan does, so their watts
+    /// count, but they have no position, no section and no leg of their own. A second record of one lamp is left out.
+    std::vector<PoleIx> aside;
+    std::vector<double> aside_w, aside_pf;
     double current_a = 6.6;
     const Cable* cable = nullptr;          ///< never null
     double cable_kv = 5;
@@ -38,7 +42,9 @@ struct StringLoop {
 };
 
 /// One loop per string of the city, in the city's order (empty loops for parallel circuits and strings set aside).
-/// Legs: straight distance from lamp to lamp and to the station, scaled to length_m where the file gives it.
+/// Legs: straight distance from lamp to lamp and to the station, scaled to length_m where the file gives it. Without a
+/// station the closing run from the last lamp to the first is halved between the two home legs.
+/// Poles down: 0 W, jumpered, still in the loop. A lamp of unknown watts takes the median of its string's known ones.
 [[nodiscard]] std::vector<StringLoop> string_loops(const City& city, const Catalog& catalog);
 
 struct StringState {
@@ -48,7 +54,9 @@ struct StringState {
     std::vector<int> used;  ///< places in StringLoop.cutbacks
 };
 
-/// State with the lamps for which live[i] != 0 (i = position - 1): energised loop by the cut-backs, phasor sum.
+/// State with the lamps for which live[i] != 0 (i = position - 1): energised loop by the cut-backs, phasor sum; cable at
+/// 25 C. Poles down count neither as lamps nor as a reason to keep the loop; a cut-back is used only where a lamp between
+/// its ends has left. Nothing left that burns: all zero.
 /// @param ageing_frac  multiplies each lamp's watts and volts by 1 + ageing_frac
 [[nodiscard]] StringState string_state(const StringLoop& loop, const std::vector<char>& live, double ageing_frac = 0);
 

@@ -78,6 +78,7 @@ constexpr auto kItems = std::to_array<PriceItem>({
     {"burn_hours", "h per year", "burning hours"},
     {"design_frac", "frac", "design and supervision, part of the works"},
     {"led_life", "years", "life of an LED luminaire"},
+    {"pole_life", "years", "life of a new pole"},
     {"conduit_life", "years", "life of new conduit and wire"},
     {"pole_fail_frac", "frac", "chance that a pole of unknown strength cannot carry a solar head"},
     {"span_typical", "m of span", "length of a pole's own span when the conversion owed is priced"},
@@ -119,7 +120,7 @@ constexpr auto kItems = std::to_array<PriceItem>({
     {"crew_lighting", "people", "lighting crew"},
     {"crew_electric", "people", "electricians"},
     {"day_hours", "h", "working hours of a crew-day"},
-    {"clearance_hours", "h", "switching clearance, crew-hours of waiting per string and day"},
+    {"clearance_hours", "h", "wait for the switching clearance, whole crew, per string and day"},
 });
 
 }  // namespace

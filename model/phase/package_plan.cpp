@@ -1,0 +1,86 @@
+#include "model/phase/package_plan.h"
+
+#include <algorithm>
+#include <cmath>
+
+namespace unstring {
+namespace {
+
+constexpr double kWhole = 1e-9;  ///< a fraction of a unit under this is rounding
+
+using Counts = std::vector<std::vector<int>>;
+
+Counts buy(const PackageCase& packages, const Counts& in_service, PackagePlan& plan) {
+    const auto years = static_cast<std::size_t>(packages.years);
+    const auto classes = static_cast<std::size_t>(packages.classes);
+    Counts bought(years, std::vector<int>(classes, 0));
+    for (std::size_t cls = 0; cls < classes; ++cls) {
+        int held = 0;
+        for (std::size_t t = 0; t < years; ++t) {
+            const int more = units_wanting(packages, t, cls, in_service[t][cls]) - held;
+            if (more <= 0) continue;
+            if (packages.buy_cost[t] == kNever) {
+                plan.penalty += more * packages.unit_penalty;
+                continue;
+            }
+            bought[t][cls] = more;
+            held += more;
+            plan.cost += more * packages.buy_cost[t];
+        }
+    }
+    return bought;
+}
+
+}  // namespace
+
+int units_wanting(const PackageCase& packages, std::size_t t, std::size_t cls, int in_service) {
+    if (in_service == 0) return 0;
+    const double wanting = packages.pool_factor * in_service - packages.owned[t][cls];
+    return std::max(0, static_cast<int>(std::ceil(wanting - kWhole)));
+}
+
+PackagePlan add_up(const PackageCase& packages, std::vector<StringPlan> strings, const Use& over_price) {
+    PackagePlan plan;
+    const auto years = static_cast<std::size_t>(packages.years);
+    std::vector<Use> use(years, Use{});
+    Counts in_service(years, std::vector<int>(static_cast<std::size_t>(packages.classes), 0));
+    for (std::size_t s = 0; s < strings.size(); ++s) {
+        const ColumnFigures figures = column_figures(packages, s, strings[s]);
+        plan.cost += figures.cost;
+        plan.penalty += figures.left_penalty;
+        for (std::size_t t = 0; t < years; ++t) {
+            for (std::size_t l = 0; l < kLimits; ++l) use[t][l] += figures.use[t][l];
+            if (figures.in_class[t] != kNoClass) ++in_service[t][static_cast<std::size_t>(figures.in_class[t])];
+        }
+    }
+    plan.bought = buy(packages, in_service, plan);
+    for (std::size_t t = 0; t < years; ++t)
+        for (std::size_t l = 0; l < kLimits; ++l) {
+            const double by = use[t][l] - packages.limit[t][l];
+            if (by <= 1e-7 * std::max(1.0, std::abs(packages.limit[t][l]))) continue;
+            plan.over.push_back({static_cast<int>(t), l, by});
+            plan.penalty += by * over_price[l];
+        }
+    plan.strings = std::move(strings);
+    return plan;
+}
+
+Use steep_over_price(const PackageCase& packages) {
+    double dearest = 1;
+    for (const PackageString& string : packages.strings)
+        for (std::size_t k = 0; k < static_cast<std::size_t>(string.sections); ++k) {
+            double most = 0;
+            for (const auto& year : string.work_cost) most = std::max(most, std::abs(year[k]));
+            dearest += most;
+        }
+    Use price{};
+    for (std::size_t l = 0; l < kLimits; ++l) {
+        double largest = 0;
+        for (const Use& limit : packages.limit)
+            if (limit[l] < kNever) largest = std::max(largest, limit[l]);
+        price[l] = 10 * dearest / std::max(1.0, largest);
+    }
+    return price;
+}
+
+}  // namespace unstring

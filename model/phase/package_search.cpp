@@ -1,0 +1,140 @@
+#include "model/phase/package_search.h"
+
+#include <algorithm>
+#include <numeric>
+#include <random>
+
+namespace unstring {
+namespace {
+
+/// The plans in hand and what they use together.
+class Hand {
+  public:
+    explicit Hand(const PackageCase& packages)
+        : packages_(packages), over_price_(steep_over_price(packages)),
+          used_(static_cast<std::size_t>(packages.years), Use{}),
+          in_service_(used_.size(), std::vector<int>(static_cast<std::size_t>(packages.classes), 0)),
+          plans_(packages.strings.size()), figures_(packages.strings.size()), has_(packages.strings.size(), 0) {}
+
+    void take_out(std::size_t s) {
+        if (has_[s] == 0) return;
+        count(figures_[s], -1);
+        has_[s] = 0;
+    }
+
+    void put(std::size_t s, StringPlan plan) {
+        figures_[s] = column_figures(packages_, s, plan);
+        plans_[s] = std::move(plan);
+        count(figures_[s], 1);
+        has_[s] = 1;
+    }
+
+    /// Puts a string back at its best; false when it has no legal plan.
+    bool put_best(std::size_t s) {
+        PricedColumn best = best_column_in(packages_, s, room());
+        if (best.value == kNever) return false;
+        put(s, std::move(best.plan));
+        return true;
+    }
+
+    double worth() const {
+        const PackagePlan plan = add_up(packages_, plans_, over_price_);
+        return plan.cost + plan.penalty;
+    }
+    const std::vector<StringPlan>& plans() const { return plans_; }
+    const StringPlan& plan(std::size_t s) const { return plans_[s]; }
+    PackagePlan sum() const { return add_up(packages_, plans_, over_price_); }
+
+  private:
+    void count(const ColumnFigures& figures, int sign) {
+        for (std::size_t t = 0; t < used_.size(); ++t) {
+            for (std::size_t l = 0; l < kLimits; ++l) used_[t][l] += sign * figures.use[t][l];
+            if (figures.in_class[t] != kNoClass) in_service_[t][static_cast<std::size_t>(figures.in_class[t])] += sign;
+        }
+    }
+
+    Room room() const {
+        Room room;
+        room.over_price = over_price_;
+        room.use = packages_.limit;
+        room.unit_is_there.assign(used_.size(), std::vector<char>(static_cast<std::size_t>(packages_.classes), 0));
+        std::vector<int> held(static_cast<std::size_t>(packages_.classes), 0);
+        for (std::size_t t = 0; t < used_.size(); ++t) {
+            for (std::size_t l = 0; l < kLimits; ++l) room.use[t][l] -= used_[t][l];
+            for (std::size_t c = 0; c < held.size(); ++c) {
+                held[c] = std::max(held[c], units_wanting(packages_, t, c, in_service_[t][c]));
+                room.unit_is_there[t][c] = units_wanting(packages_, t, c, in_service_[t][c] + 1) <= held[c];
+            }
+        }
+        return room;
+    }
+
+    const PackageCase& packages_;
+    Use over_price_;
+    std::vector<Use> used_;
+    std::vector<std::vector<int>> in_service_;
+    std::vector<StringPlan> plans_;
+    std::vector<ColumnFigures> figures_;
+    std::vector<char> has_;
+};
+
+double size_of(const PackageString& string) {
+    double sum = 0;
+    for (const Use& use : string.work_use.front()) sum += use[0];
+    return sum;
+}
+
+bool construct(const PackageCase& packages, const SearchChoices& choices, Hand& hand) {
+    std::vector<std::size_t> order(packages.strings.size());
+    std::iota(order.begin(), order.end(), std::size_t{0});
+    std::stable_sort(order.begin(), order.end(), [&](std::size_t a, std::size_t b) {
+        return size_of(packages.strings[a]) > size_of(packages.strings[b]);
+    });
+    if (!choices.start.empty()) {
+        for (std::size_t s = 0; s < order.size(); ++s) hand.put(s, choices.start[s]);
+        return true;
+    }
+    return std::all_of(order.begin(), order.end(), [&](std::size_t s) { return hand.put_best(s); });
+}
+
+}  // namespace
+
+PackagePlan search_packages(const PackageCase& packages, const SearchChoices& choices, const Progress& progress) {
+    Hand hand(packages);
+    if (packages.years == 0 || packages.strings.empty() || !construct(packages, choices, hand)) return {};
+    const std::size_t strings = packages.strings.size();
+    double best = hand.worth();
+    std::mt19937 random(choices.seed);
+    int idle = 0;
+    for (int round = 0; round < choices.rounds && !progress.is_cancelled(); ++round) {
+        const std::size_t out = std::min<std::size_t>(strings, round < static_cast<int>(strings) ? 1 : 2 + random() % 5);
+        std::vector<std::size_t> taken;
+        if (out == 1) taken.push_back(static_cast<std::size_t>(round) % strings);
+        while (taken.size() < out) {
+            const std::size_t s = random() % strings;
+            if (std::find(taken.begin(), taken.end(), s) == taken.end()) taken.push_back(s);
+        }
+        std::vector<StringPlan> before;
+        for (const std::size_t s : taken) {
+            before.push_back(hand.plan(s));
+            hand.take_out(s);
+        }
+        for (const std::size_t s : taken) hand.put_best(s);
+        const double now = hand.worth();
+        if (now <= best) {
+            idle = now < best - 1e-7 ? 0 : idle + 1;
+            best = now;
+        } else {
+            ++idle;
+            for (std::size_t i = 0; i < taken.size(); ++i) {
+                hand.take_out(taken[i]);
+                hand.put(taken[i], before[i]);
+            }
+        }
+        if (idle > 60 * static_cast<int>(strings)) break;  // nothing has helped for long
+        progress.at(static_cast<double>(round + 1) / choices.rounds);
+    }
+    return hand.sum();
+}
+
+}  // namespace unstring

@@ -158,13 +158,16 @@ PackageAnswer solve_packages(const PackageCase& packages, int search_rounds, int
         open.pop();
         if (answer.is_feasible && node.bound >= answer.plan.cost - kHalfCent) continue;
         ++answer.branches;
-        const MasterAnswer relaxed = solve_master(packages, node.branch, !answer.is_feasible, columns, progress);
+        // Until there is a plan, only the root is priced; the others ask whether any plan is left in them.
+        const bool ask_cost = answer.is_feasible || node.id == 0;
+        const MasterAnswer relaxed = solve_master(packages, node.branch, ask_cost ? MasterAim::least_cost : MasterAim::any_plan,
+                                                  columns, progress);
         if (!relaxed.is_solved) {  // its bound stays the parent's
             open.push(std::move(node));
             break;
         }
         if (relaxed.is_infeasible) continue;
-        node.bound = std::max(node.bound, relaxed.bound);
+        if (ask_cost) node.bound = std::max(node.bound, relaxed.bound);
         PackagePlan near = rounded(packages, relaxed, columns);
         if (is_better(near, answer.plan)) {
             answer.plan = std::move(near);

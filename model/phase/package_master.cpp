@@ -16,6 +16,8 @@ bool fits(const MasterColumn& column, const ColumnLimits& limits) {
     return true;
 }
 
+constexpr double kOverrun = 1e-6;  ///< shares of a limit above this are an over-run, not rounding
+
 class Master {
   public:
     Master(const PackageCase& packages, const MasterBranch& branch, std::vector<MasterColumn>& columns)
@@ -48,6 +50,7 @@ class Master {
                 improved = true;
             }
             if (!improved) return true;
+            if (only_overrun && (bound() > kOverrun || program_.objective() < kOverrun / 10)) return true;
         }
         return false;
     }
@@ -216,7 +219,7 @@ MasterBranch whole_branch(const PackageCase& packages) {
     return branch;
 }
 
-MasterAnswer solve_master(const PackageCase& packages, const MasterBranch& branch, bool prove_infeasible,
+MasterAnswer solve_master(const PackageCase& packages, const MasterBranch& branch, MasterAim aim,
                           std::vector<MasterColumn>& columns, const Progress& progress) {
     MasterAnswer answer;
     Master master(packages, branch, columns);
@@ -224,13 +227,12 @@ MasterAnswer solve_master(const PackageCase& packages, const MasterBranch& branc
         answer.is_solved = answer.is_infeasible = true;
         return answer;
     }
-    answer.is_solved = master.run(false, progress);
+    answer.is_solved = master.run(aim == MasterAim::any_plan, progress);
     if (!answer.is_solved) return answer;
-    answer.bound = master.bound();
+    if (aim == MasterAim::any_plan) answer.is_infeasible = master.bound() > kOverrun;
+    else answer.bound = master.bound();
     answer.overrun = master.overrun();
     master.answer(answer);
-    if (answer.overrun > 1e-7 && prove_infeasible && master.run(true, progress))
-        answer.is_infeasible = master.bound() > 1e-6;
     return answer;
 }
 

@@ -21,10 +21,12 @@ struct MasterBranch {  ///< what a branch of the exact search holds fixed
     std::vector<std::vector<double>> buy_low, buy_high;  ///< [t][class]
 };
 
+enum class MasterAim { least_cost, any_plan };
+
 struct MasterAnswer {
-    double bound = 0;        ///< no plan of the branch that keeps every limit costs less
+    double bound = 0;        ///< least_cost: no plan of the branch that keeps every limit costs less
     double overrun = 0;      ///< what the relaxed answer still over-runs, each limit as a share of itself
-    bool is_infeasible = false;  ///< proved: no plan of the branch keeps every limit
+    bool is_infeasible = false;  ///< any_plan: proved, no plan of the branch keeps every limit
     bool is_solved = false;  ///< the master came to its end
     std::vector<std::pair<std::size_t, double>> used;  ///< place in the columns, share > 0
     std::vector<std::vector<double>> bought;           ///< [t][class]
@@ -33,8 +35,8 @@ struct MasterAnswer {
 [[nodiscard]] MasterBranch whole_branch(const PackageCase& packages);
 
 /// Solves the relaxation of a branch; columns found are added to `columns` for the next one.
-/// @param prove_infeasible  where over-runs remain, minimise them alone to prove that no plan exists
-[[nodiscard]] MasterAnswer solve_master(const PackageCase& packages, const MasterBranch& branch, bool prove_infeasible,
+/// Aim any_plan minimises the over-runs alone, and stops as soon as it is certain whether some remain.
+[[nodiscard]] MasterAnswer solve_master(const PackageCase& packages, const MasterBranch& branch, MasterAim aim,
                                         std::vector<MasterColumn>& columns, const Progress& progress);
 
 /// Sum of each string's cheapest plan by itself, limits and pool left out: a bound for every plan, loose.

@@ -8,7 +8,7 @@ namespace unstring {
 namespace {
 
 constexpr int kUsualLamps = 8;  // sections of about 6 to 10 lamps
-constexpr int kMostLamps = 10;
+constexpr int kMostLamps = 11;  // eleven are one section: two would be under six
 
 /// A run of lamps that is off: positions first .. last.
 struct Run {
@@ -17,7 +17,7 @@ struct Run {
     [[nodiscard]] int lamps() const { return last - first + 1; }
 };
 
-/// How far a ring of so many lamps is from the usual size; nothing for 6 to 10, and for what must be cut into such pieces.
+/// How far a ring of so many lamps is from the usual size; nothing for 6 to 11, and for what must be cut into such pieces.
 double size_cost(int lamps) {
     const int pieces = std::max(1, (lamps + kMostLamps - 1) / kMostLamps);
     const double each = static_cast<double>(lamps) / pieces;

@@ -14,8 +14,8 @@ std::int64_t key_of(std::int64_t x, std::int64_t y) { return x * 0x100000000LL +
 
 template <class Visit> void for_cells(MapPoint a, MapPoint b, Visit visit) {
     if (!(distance_m(a, b) < kLongest_m)) return;
-    const auto [x0, x1] = std::minmax(cell_of(a.x_m), cell_of(b.x_m));
-    const auto [y0, y1] = std::minmax(cell_of(a.y_m), cell_of(b.y_m));
+    const auto [x0, x1] = std::minmax({cell_of(a.x_m), cell_of(b.x_m)});
+    const auto [y0, y1] = std::minmax({cell_of(a.y_m), cell_of(b.y_m)});
     for (std::int64_t x = x0; x <= x1; ++x)
         for (std::int64_t y = y0; y <= y1; ++y) visit(key_of(x, y));
 }

@@ -19,14 +19,16 @@ struct CircuitSpan {  ///< one edge of the chosen tree
     int id = 0;
     int parent = -1;      ///< span nearer to the source, -1 = at the service point
     PoleIx pole;          ///< pole at its far end; not valid at a bare street point
-    ServiceIx service;    ///< of its circuit
+    ServiceIx service;    ///< of its circuit; not valid: fed by a tap of the secondary at the first pole
     SpanKind kind = SpanKind::trench_verge;
     std::vector<MapPoint> line;
     double length_m = 0;
     Cents cost = 0;       ///< capital at decide_year's price, wire included, not discounted
     int awg = 8;
-    StringIx duct_string;  ///< string whose old conduit it reuses; not valid = none
-    PoleIx duct_from, duct_to;  ///< the poles at the ends of that conduit span
+    int boxes = 0;         ///< pull boxes that are set with it
+    Surface surface = Surface::verge;  ///< over an old conduit: what is dug up where the conduit is bad
+    StringIx duct_string;  ///< string whose old conduit it reuses, dead before it is pulled; not valid = none, or a spare duct
+    PoleIx duct_from, duct_to;  ///< the poles at the ends of that conduit span, in wiring order
     std::vector<PoleIx> poles_beyond;  ///< rewired poles fed through it
 };
 
@@ -45,7 +47,7 @@ struct PoleDecision {
 };
 
 struct Circuit {  ///< one lighting circuit
-    ServiceIx service;
+    ServiceIx service;  ///< not valid: a tap of the secondary at poles[0]
     std::vector<PoleIx> poles;
     double load_kva = 0, worst_drop_frac = 0, source_a = 0, device_a = 0;
     Cents connection_cost = 0;

@@ -154,7 +154,7 @@ double load_kva(const std::vector<PoleRow>& poles, int cable_awg, double length_
 Tables tile_of(const Town& town, int tile_x, int tile_y, long poles_left) {
     const int tile = tile_y * town.tiles_x + tile_x;
     Tables tables;
-    int next_circuit = tile * 20 + 1;  // a tile has fewer parallel circuits than that
+    int next_circuit = tile * 30 + 1;  // a tile has fewer parallel circuits than that
     for (int district = 1; district <= kDistricts; ++district) {
         const long left = poles_left - static_cast<long>(tables.poles.size());
         if (left <= 0) break;

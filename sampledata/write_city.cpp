@@ -6,6 +6,7 @@
 #include <fmt/format.h>
 
 #include "sampledata/csv_file.h"
+#include "sampledata/layers.h"
 #include "sampledata/tile.h"
 #include "sampledata/year_tables.h"
 
@@ -101,6 +102,8 @@ Expected<CityCount> write_city(const CityOrder& order) {
         }
     if (auto closed = files.close(); !closed) return tl::unexpected(closed.error());
     if (auto written = write_year_tables(order.folder, count.poles, first_poles); !written) return tl::unexpected(written.error());
+    if (order.with_layers)
+        if (auto written = write_layers(order.folder, town); !written) return tl::unexpected(written.error());
     return count;
 }
 

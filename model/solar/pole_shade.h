@@ -1,0 +1,22 @@
+#pragma once
+// One pole under its own sky, with each head.
+
+#include <vector>
+
+#include "model/solar/city_light.h"
+#include "model/solar/pole_horizon.h"
+#include "model/solar/shade.h"
+
+namespace unstring {
+
+/// Room to work in, kept by a thread from pole to pole.
+struct ShadeScratch {
+    std::vector<float> through;
+    std::vector<double> yield;
+    std::vector<float> soc;
+};
+
+[[nodiscard]] PoleShade shade_pole(const ShadeInput& input, const CityLight& light, const ShadeTerms& terms,
+                                   PoleIx pole, const PoleHorizon& horizon, ShadeScratch& scratch);
+
+}  // namespace unstring

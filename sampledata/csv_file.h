@@ -11,14 +11,14 @@
 namespace unstring::sample {
 
 class CsvFile {
-  public:
+public:
     CsvFile(std::string path, const std::string& header);
 
     void row(std::initializer_list<std::string> cells);
     /// Empties the buffers to disk. @fault write_failed
     [[nodiscard]] Expected<void> close();
 
-  private:
+private:
     struct Closer {
         void operator()(std::FILE* file) const { std::fclose(file); }
     };
@@ -30,4 +30,4 @@ class CsvFile {
 [[nodiscard]] std::string cell(double value, int decimals);
 [[nodiscard]] std::string yes_no(bool value);
 
-}  // namespace unstring::sample
+} // namespace unstring::sample

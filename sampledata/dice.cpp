@@ -10,7 +10,7 @@ std::uint64_t mixed(std::uint64_t value) {
     return value ^ (value >> 31);
 }
 
-}  // namespace
+} // namespace
 
 Dice::Dice(std::uint64_t seed, std::initializer_list<std::uint64_t> key) : state_(mixed(seed)) {
     for (const std::uint64_t part : key) state_ = mixed(state_ + 0x9e3779b97f4a7c15ULL * (part + 1));
@@ -22,4 +22,4 @@ double Dice::unit() { return static_cast<double>(next() >> 11) * 0x1.0p-53; }
 
 int Dice::below(int count) { return static_cast<int>(next() % static_cast<std::uint64_t>(count)); }
 
-}  // namespace unstring::sample
+} // namespace unstring::sample

@@ -7,18 +7,18 @@
 namespace unstring::sample {
 
 class Dice {
-  public:
+public:
     /// One independent stream a key: (seed, what it is for, which one).
     Dice(std::uint64_t seed, std::initializer_list<std::uint64_t> key);
 
     [[nodiscard]] std::uint64_t next();
-    [[nodiscard]] double unit();  ///< [0, 1)
+    [[nodiscard]] double unit(); ///< [0, 1)
     [[nodiscard]] double between(double low, double high) { return low + (high - low) * unit(); }
-    [[nodiscard]] int below(int count);  ///< 0 .. count - 1
+    [[nodiscard]] int below(int count); ///< 0 .. count - 1
     [[nodiscard]] bool chance(double part) { return unit() < part; }
 
-  private:
+private:
     std::uint64_t state_ = 0;
 };
 
-}  // namespace unstring::sample
+} // namespace unstring::sample

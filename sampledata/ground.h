@@ -1,5 +1,6 @@
 #pragma once
-// What stands between the streets: houses and trees, one grid cell (the block of houses between four corners) at a time.
+// What stands between the streets: houses and trees, one grid cell (the block of houses between four corners)
+// at a time.
 
 #include <vector>
 
@@ -9,12 +10,12 @@ namespace unstring::sample {
 
 struct Tree {
     MapPoint place;
-    double crown_m = 4;  ///< radius
+    double crown_m = 4; ///< radius
     double height_m = 10;
 };
 
 struct Building {
-    std::vector<MapPoint> ring;  ///< closed
+    std::vector<MapPoint> ring; ///< closed
     double height_m = 7;
 };
 
@@ -37,4 +38,4 @@ struct Box {
 void crown_row(const std::vector<const Tree*>& trees, double west_m, double centre_m, double cell_m,
                std::vector<unsigned char>& row);
 
-}  // namespace unstring::sample
+} // namespace unstring::sample

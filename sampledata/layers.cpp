@@ -16,7 +16,7 @@ namespace {
 
 constexpr int kEpsg = 32609;
 constexpr double kMostCells = 2e8;
-constexpr int kBandRows = 256;  // rows of one row of TIFF tiles
+constexpr int kBandRows = 256; // rows of one row of TIFF tiles
 
 struct Closer {
     void operator()(GDALDataset* set) const { GDALClose(set); }
@@ -24,7 +24,9 @@ struct Closer {
 using DataSet = std::unique_ptr<GDALDataset, Closer>;
 
 Fault not_written(const std::string& path) {
-    return {FaultCode::write_failed, path, 0, "", CPLGetLastErrorMsg(), "room and permission to write", "choose another folder with --to"};
+    return {
+        FaultCode::write_failed,          path, 0, "", CPLGetLastErrorMsg(), "room and permission to write",
+        "choose another folder with --to"};
 }
 
 OGRSpatialReference plan_crs() {
@@ -44,9 +46,11 @@ DataSet new_package(const std::string& path) {
     return set;
 }
 
-template <class Geometry> Geometry geometry_of(const std::vector<MapPoint>& points) {
+template <class Geometry>
+Geometry geometry_of(const std::vector<MapPoint>& points) {
     Geometry line;
-    for (const MapPoint point : points) line.addPoint(std::round(point.x_m * 100) / 100, std::round(point.y_m * 100) / 100);
+    for (const MapPoint point : points)
+        line.addPoint(std::round(point.x_m * 100) / 100, std::round(point.y_m * 100) / 100);
     return line;
 }
 
@@ -68,7 +72,8 @@ bool add_street(OGRLayer& layer, const Town& town, const Block& block) {
     return layer.CreateFeature(&feature) == OGRERR_NONE;
 }
 
-template <class Visit> void each_corner(const Town& town, Visit visit) {
+template <class Visit>
+void each_corner(const Town& town, Visit visit) {
     for (int row = 0; row < town.tiles_y * kRows; ++row)
         for (int column = 0; column < town.tiles_x * kColumns; ++column) visit(Corner{column, row});
 }
@@ -83,7 +88,8 @@ Expected<void> write_streets(const std::string& path, const Town& town) {
     add_field(*layer, "repave_year", OFTInteger);
     bool is_good = true;
     each_corner(town, [&](Corner corner) {
-        for (const Block& block : blocks_from(town, corner)) is_good = add_street(*layer, town, block) && is_good;
+        for (const Block& block : blocks_from(town, corner))
+            is_good = add_street(*layer, town, block) && is_good;
     });
     if (!is_good || set->CommitTransaction() != OGRERR_NONE) return tl::unexpected(not_written(path));
     return {};
@@ -110,10 +116,12 @@ Expected<void> write_buildings(const std::string& path, const std::vector<Buildi
 
 DataSet new_raster(const std::string& path, const Box& box, double cell_m, int columns, int rows) {
     char** options = nullptr;
-    for (const char* option : {"COMPRESS=DEFLATE", "ZLEVEL=9", "PREDICTOR=2", "TILED=YES", "SPARSE_OK=TRUE", "BIGTIFF=IF_SAFER"})
+    for (const char* option :
+         {"COMPRESS=DEFLATE", "ZLEVEL=9", "PREDICTOR=2", "TILED=YES", "SPARSE_OK=TRUE", "BIGTIFF=IF_SAFER"})
         options = CSLAddString(options, option);
     GDALDriver* driver = GetGDALDriverManager()->GetDriverByName("GTiff");
-    DataSet set(driver == nullptr ? nullptr : driver->Create(path.c_str(), columns, rows, 1, GDT_Byte, options));
+    DataSet set(driver == nullptr ? nullptr
+                                  : driver->Create(path.c_str(), columns, rows, 1, GDT_Byte, options));
     CSLDestroy(options);
     if (!set) return set;
     double transform[6] = {box.west_m, cell_m, 0, box.north_m, 0, -cell_m};
@@ -124,12 +132,14 @@ DataSet new_raster(const std::string& path, const Box& box, double cell_m, int c
 }
 
 // Trees by the band of raster rows that their crowns reach.
-std::vector<std::vector<const Tree*>> trees_by_band(const std::vector<Tree>& trees, const Box& box, double band_m, std::size_t bands) {
+std::vector<std::vector<const Tree*>> trees_by_band(const std::vector<Tree>& trees, const Box& box,
+                                                    double band_m, std::size_t bands) {
     std::vector<std::vector<const Tree*>> by_band(bands);
     for (const Tree& tree : trees) {
         const double first = (box.north_m - tree.place.y_m - tree.crown_m) / band_m;
         const double last = (box.north_m - tree.place.y_m + tree.crown_m) / band_m;
-        for (auto band = static_cast<std::size_t>(std::max(0.0, first)); band < bands && static_cast<double>(band) <= last; ++band)
+        for (auto band = static_cast<std::size_t>(std::max(0.0, first));
+             band < bands && static_cast<double>(band) <= last; ++band)
             by_band[band].push_back(&tree);
     }
     return by_band;
@@ -140,7 +150,8 @@ Expected<void> write_canopy(const std::string& path, const Town& town, const std
     const double wide_m = box.east_m - box.west_m, high_m = box.north_m - box.south_m;
     double cell_m = 0.5;
     while (wide_m / cell_m * (high_m / cell_m) > kMostCells) cell_m *= 2;
-    const int columns = static_cast<int>(std::ceil(wide_m / cell_m)), rows = static_cast<int>(std::ceil(high_m / cell_m));
+    const int columns = static_cast<int>(std::ceil(wide_m / cell_m)),
+              rows = static_cast<int>(std::ceil(high_m / cell_m));
     const DataSet set = new_raster(path, box, cell_m, columns, rows);
     if (!set) return tl::unexpected(not_written(path));
     const auto bands = static_cast<std::size_t>((rows + kBandRows - 1) / kBandRows);
@@ -153,22 +164,23 @@ Expected<void> write_canopy(const std::string& path, const Town& town, const std
             crown_row(by_band[band], box.west_m, box.north_m - (row + 0.5) * cell_m, cell_m, line);
             block.insert(block.end(), line.begin(), line.end());
         }
-        if (set->GetRasterBand(1)->RasterIO(GF_Write, 0, first, columns, count, block.data(), columns, count, GDT_Byte, 0, 0,
-                                            nullptr) != CE_None)
+        if (set->GetRasterBand(1)->RasterIO(GF_Write, 0, first, columns, count, block.data(), columns, count,
+                                            GDT_Byte, 0, 0, nullptr) != CE_None)
             return tl::unexpected(not_written(path));
     }
     return {};
 }
 
-}  // namespace
+} // namespace
 
 Expected<void> write_layers(const std::string& folder, const Town& town) {
     GDALAllRegister();
     Ground ground;
     each_corner(town, [&](Corner corner) { add_cell(town, corner, ground); });
     if (auto written = write_streets(folder + "/streets.gpkg", town); !written) return written;
-    if (auto written = write_buildings(folder + "/buildings.gpkg", ground.buildings); !written) return written;
+    if (auto written = write_buildings(folder + "/buildings.gpkg", ground.buildings); !written)
+        return written;
     return write_canopy(folder + "/canopy.tif", town, ground.trees);
 }
 
-}  // namespace unstring::sample
+} // namespace unstring::sample

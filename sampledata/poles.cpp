@@ -6,22 +6,25 @@
 namespace unstring::sample {
 namespace {
 
-constexpr int kOverheadDistrict = 12, kOldQuarter = 5;
+constexpr int kOverheadDistrict = 12, kOldQuarter = 5, kBrightDistrict = 1;
 
 struct Fitting {
     const char* fixture;
     double burns_w, burns_pf;
     bool in_catalogue;
 };
-constexpr Fitting kHps70{"HPS70", 91, 0.9, true}, kHps100{"HPS100", 130, 0.9, true}, kHps150{"HPS150", 188, 0.9, true},
-    kHps250{"HPS250", 295, 0.9, true}, kFilament{"FIL4000", 268, 0.98, false};
+constexpr Fitting kHps70{"HPS70", 91, 0.9, true}, kHps100{"HPS100", 130, 0.9, true},
+    kHps150{"HPS150", 188, 0.9, true}, kHps250{"HPS250", 295, 0.9, true},
+    kFilament{"FIL4000", 268, 0.98, false};
 
 Fitting fitting_of(const Town& town, const Block& block, RoadClass road_class, int district) {
     if (road_class == RoadClass::arterial) return kHps250;
     if (road_class == RoadClass::collector) return kHps150;
+    if (district == kBrightDistrict) return kHps150;
     // A local street has one kind from end to end.
     const bool east = block.from.row == block.to.row;
-    Dice dice(town.seed, {4, east ? 1U : 0U, static_cast<std::uint64_t>(east ? block.from.row : block.from.column)});
+    Dice dice(town.seed,
+              {4, east ? 1U : 0U, static_cast<std::uint64_t>(east ? block.from.row : block.from.column)});
     if (district == kOldQuarter && dice.chance(0.7)) return kFilament;
     return dice.chance(0.4) ? kHps70 : kHps100;
 }
@@ -37,7 +40,10 @@ void set_structure(RoadClass road_class, Dice& dice, PoleRow& pole) {
     pole.arm_m = road_class == RoadClass::arterial ? 3.0 : road_class == RoadClass::collector ? 2.4 : 1.8;
     const double roll = dice.unit();
     pole.kind = pole.is_overhead ? "wood" : roll < 0.62 ? "steel" : roll < 0.82 ? "concrete" : "aluminium";
-    const double allowed = pole.kind == "wood" ? 1.7 : pole.kind == "steel" ? 1.15 : pole.kind == "concrete" ? 1.4 : 0.5;
+    const double allowed = pole.kind == "wood"       ? 1.7
+                           : pole.kind == "steel"    ? 1.15
+                           : pole.kind == "concrete" ? 1.4
+                                                     : 0.5;
     const double spread = dice.between(0.85, 1.2);
     if (dice.chance(0.62)) pole.epa_allow_m2 = allowed * spread;
     const double wear = dice.unit();
@@ -48,8 +54,9 @@ void set_structure(RoadClass road_class, Dice& dice, PoleRow& pole) {
 // Ducts are known block by block, not pole by pole.
 void set_duct(const Town& town, const Block& block, PoleRow& pole) {
     if (pole.is_overhead) return;
-    Dice dice(town.seed, {5, static_cast<std::uint64_t>(block.from.column), static_cast<std::uint64_t>(block.from.row),
-                          block.from.row == block.to.row ? 1U : 0U});
+    Dice dice(town.seed,
+              {5, static_cast<std::uint64_t>(block.from.column), static_cast<std::uint64_t>(block.from.row),
+               block.from.row == block.to.row ? 1U : 0U});
     const double roll = dice.unit();
     pole.duct = roll < 0.10   ? "proven"
                 : roll < 0.26 ? "inspected"
@@ -72,23 +79,27 @@ void set_owner(Dice& dice, PoleRow& pole) {
     if (pole.consent != "yes") pole.earliest_year = 2028 + dice.below(2);
 }
 
-}  // namespace
+} // namespace
 
-std::vector<PoleRow> poles_along(const Town& town, const Route& route, const std::vector<Lamp>& lamps, int district) {
+std::vector<PoleRow> poles_along(const Town& town, const Route& route, const std::vector<Lamp>& lamps,
+                                 int district) {
     std::vector<PoleRow> poles;
     poles.reserve(lamps.size());
     for (std::size_t i = 0; i < lamps.size(); ++i) {
         const Lamp& lamp = lamps[i];
         const Road road = road_of(town, lamp.block);
-        Dice dice(town.seed, {6, static_cast<std::uint64_t>(lamp.block.from.column),
-                              static_cast<std::uint64_t>(lamp.block.from.row), static_cast<std::uint64_t>(i)});
+        Dice dice(town.seed,
+                  {6, static_cast<std::uint64_t>(lamp.block.from.column),
+                   static_cast<std::uint64_t>(lamp.block.from.row), static_cast<std::uint64_t>(i)});
         PoleRow pole;
         pole.place = lamp.place;
         pole.arm_deg = lamp.arm_deg;
         pole.side = lamp.side;
         pole.street = road.name;
         pole.road_class = text_of(road.road_class);
-        pole.need_lm = road.road_class == RoadClass::arterial ? 11000 : road.road_class == RoadClass::collector ? 7000 : 4000;
+        pole.need_lm = road.road_class == RoadClass::arterial    ? 11000
+                       : road.road_class == RoadClass::collector ? 7000
+                                                                 : 4000;
         pole.ward = ward_of(route.passes[static_cast<std::size_t>(lamp.pass)].block.from);
         pole.is_overhead = district == kOverheadDistrict;
         pole.is_critical = lamp.is_at_corner && dice.chance(0.6);
@@ -109,10 +120,12 @@ void apply_oddities(const Town& town, int district_number, bool is_series, std::
         if (dice.chance(0.012)) pole.attachments = kAttached[dice.below(4)];
         if (dice.chance(0.008)) pole.solar_ok = "no", pole.note = "heritage front, no panel in sight";
         const double roll = dice.unit();
-        if (is_series && roll < 0.009) pole.status = "down", pole.note = "knocked down, jumpered at the base", pole.is_critical = false;
-        if (!is_series && roll < 0.01) pole.status = "not-ours", pole.owner = "other", pole.note = "port authority's pole";
+        if (is_series && roll < 0.009)
+            pole.status = "down", pole.note = "knocked down, jumpered at the base", pole.is_critical = false;
+        if (!is_series && roll < 0.01)
+            pole.status = "not-ours", pole.owner = "other", pole.note = "port authority's pole";
         if (!is_series && roll > 0.99) pole.status = "proposed", pole.note = "asked for by residents";
     }
 }
 
-}  // namespace unstring::sample
+} // namespace unstring::sample

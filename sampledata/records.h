@@ -1,5 +1,6 @@
 #pragma once
-// The rows of the sample city's files, before they are written. A blank cell is an empty text or a negative number.
+// The rows of the sample city's files, before they are written. A blank cell is an empty text or a negative
+// number.
 
 #include <string>
 #include <vector>
@@ -10,11 +11,11 @@ namespace unstring::sample {
 
 struct PoleRow {
     std::string id, circuit;
-    int order = 0;  ///< 0 = blank
+    int order = 0; ///< 0 = blank
     MapPoint place;
     std::string status = "standing", fixture;
-    double lamp_w = -1, lamp_pf = -1;  ///< as in the file: mostly blank, the catalogue knows
-    double burns_w = 0, burns_pf = 0.9;  ///< what really burns, for the loads; not in the file
+    double lamp_w = -1, lamp_pf = -1;   ///< as in the file: mostly blank, the catalogue knows
+    double burns_w = 0, burns_pf = 0.9; ///< what really burns, for the loads; not in the file
     double mount_m = 8.5, arm_m = 2.4, arm_deg = 0;
     std::string kind;
     double epa_allow_m2 = -1;
@@ -39,7 +40,7 @@ struct CircuitRow {
     std::string control = "photocell", control_from, feeder;
     double faults_year = -1, asfound_a = -1, asfound_v = -1, insulation_mohm = -1;
     std::string asfound_date;
-    double load_kva = 0;  ///< today; not in the file
+    double load_kva = 0; ///< today; not in the file
 };
 
 struct UnitRow {
@@ -72,4 +73,4 @@ struct Tables {
     std::vector<ServiceRow> services;
 };
 
-}  // namespace unstring::sample
+} // namespace unstring::sample

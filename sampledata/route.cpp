@@ -24,8 +24,9 @@ Block between(Corner a, Corner b) {
 
 // The streets of one district as a tree that hangs from its roots, and the blocks left over as spurs.
 class Walker {
-  public:
-    Walker(const Town& town, const std::vector<Corner>& corners, int district) : town_(town), district_(district) {
+public:
+    Walker(const Town& town, const std::vector<Corner>& corners, int district)
+        : town_(town), district_(district) {
         for (const Corner corner : corners) inside_.insert(key_of(corner));
     }
 
@@ -55,13 +56,14 @@ class Walker {
 
     void excursions(Corner at, Route& route) {
         for (const Block& block : blocks_from(town_, at))
-            if (owns(block.from, block.to) && used_.insert(key_of(block)).second) out_and_back(at, block.to, route, false);
+            if (owns(block.from, block.to) && used_.insert(key_of(block)).second)
+                out_and_back(at, block.to, route, false);
         const auto found = children_.find(key_of(at));
         if (found == children_.end()) return;
         for (const Corner child : found->second) out_and_back(at, child, route, true);
     }
 
-  private:
+private:
     void grow_along(const std::vector<Corner>& steps) {
         std::deque<Corner> open = queue_;
         while (!open.empty()) {
@@ -69,7 +71,8 @@ class Walker {
             open.pop_front();
             for (const Corner step : steps) {
                 const Corner next{at.column + step.column, at.row + step.row};
-                if (inside_.count(key_of(next)) == 0 || reached_.count(key_of(next)) != 0 || !owns(at, next)) continue;
+                if (inside_.count(key_of(next)) == 0 || reached_.count(key_of(next)) != 0 || !owns(at, next))
+                    continue;
                 hang(at, next);
                 open.push_back(next);
             }
@@ -134,7 +137,8 @@ Route ring_route(Walker& walker, const std::vector<Corner>& rim) {
 // The collector street of the district where it has one, else the row in its middle.
 int trunk_row(const Town& town, const std::vector<Corner>& corners) {
     for (const Corner corner : corners)
-        if (road_of(town, {corner, {corner.column + 1, corner.row}}).road_class == RoadClass::collector) return corner.row;
+        if (road_of(town, {corner, {corner.column + 1, corner.row}}).road_class == RoadClass::collector)
+            return corner.row;
     const int south = corners.front().row, north = corners.back().row;
     return south + (north - south + 1) / 2;
 }
@@ -147,20 +151,22 @@ Route tree_route(const Town& town, Walker& walker, const std::vector<Corner>& co
     Route route;
     route.station = line.front();
     walker.take(line.front());
-    for (std::size_t i = 1; i < line.size() && walker.owns(line[i - 1], line[i]); ++i) walker.hang(line[i - 1], line[i]);
+    for (std::size_t i = 1; i < line.size() && walker.owns(line[i - 1], line[i]); ++i)
+        walker.hang(line[i - 1], line[i]);
     walker.grow();
     walker.excursions(route.station, route);
     return route;
 }
 
-}  // namespace
+} // namespace
 
 Route route_of(const Town& town, int tile_x, int tile_y, int district, Shape shape) {
     const std::vector<Corner> corners = corners_of(town, tile_x, tile_y, district);
     if (corners.empty()) return {};
     Walker walker(town, corners, district);
     if (shape == Shape::ring)
-        if (const std::vector<Corner> rim = rim_of(corners); is_closed(walker, rim)) return ring_route(walker, rim);
+        if (const std::vector<Corner> rim = rim_of(corners); is_closed(walker, rim))
+            return ring_route(walker, rim);
     return tree_route(town, walker, corners);
 }
 
@@ -172,7 +178,8 @@ Route harbour_road(const Town& town, int tile_x, int tile_y) {
         if (district_of(probe) != kHarbourRoad) continue;
         route.station = probe.from;
         for (int column = first; column <= last; ++column)
-            if (const Corner from{column, row}, to{column + 1, row}; has_corner(town, from) && has_corner(town, to))
+            if (const Corner from{column, row}, to{column + 1, row};
+                has_corner(town, from) && has_corner(town, to))
                 route.passes.push_back({{from, to}, from, to, Way::out, -1});
     }
     const int count = static_cast<int>(route.passes.size());
@@ -184,4 +191,4 @@ Route harbour_road(const Town& town, int tile_x, int tile_y) {
     return route;
 }
 
-}  // namespace unstring::sample
+} // namespace unstring::sample

@@ -11,11 +11,11 @@ namespace {
 constexpr std::size_t kPolesPerService = 38, kPolesPerCandidate = 75;
 
 class Numbering {
-  public:
-    explicit Numbering(int tile) : next_(tile * 100 + 1) {}  // a tile has fewer sources than that
+public:
+    explicit Numbering(int tile) : next_(tile * 100 + 1) {} // a tile has fewer sources than that
     std::string take() { return fmt::format("SV-{:02}", next_++); }
 
-  private:
+private:
     int next_;
 };
 
@@ -30,7 +30,8 @@ ServiceRow source_near(const PoleRow& pole, Dice& dice, std::string kind, std::s
 void add_along(Dice& dice, const std::vector<const PoleRow*>& poles, Numbering& ids, Tables& tables) {
     const std::size_t services = std::max<std::size_t>(1, poles.size() / kPolesPerService);
     for (std::size_t k = 0; k < services; ++k) {
-        ServiceRow row = source_near(*poles[(2 * k + 1) * poles.size() / (2 * services)], dice, "service", ids.take());
+        ServiceRow row =
+            source_near(*poles[(2 * k + 1) * poles.size() / (2 * services)], dice, "service", ids.take());
         row.volts = dice.chance(0.85) ? 240 : 480;
         row.free_kva = 5 + 2.5 * dice.below(9);
         row.lead_weeks = 4 + 2 * dice.below(4);
@@ -54,7 +55,7 @@ void add_end(Dice& dice, const PoleRow& last, Numbering& ids, Tables& tables) {
     tables.services.push_back(row);
 }
 
-}  // namespace
+} // namespace
 
 void add_services(const Town& town, int tile, Tables& tables) {
     Dice dice(town.seed, {11, static_cast<std::uint64_t>(tile)});
@@ -64,9 +65,11 @@ void add_services(const Town& town, int tile, Tables& tables) {
         for (const PoleRow& pole : tables.poles)
             if (pole.circuit == circuit.id && pole.status == "standing") poles.push_back(&pole);
         if (poles.empty()) continue;
-        if (circuit.is_series) add_along(dice, poles, ids, tables);
-        else add_end(dice, *poles.back(), ids, tables);
+        if (circuit.is_series)
+            add_along(dice, poles, ids, tables);
+        else
+            add_end(dice, *poles.back(), ids, tables);
     }
 }
 
-}  // namespace unstring::sample
+} // namespace unstring::sample

@@ -11,12 +11,17 @@ namespace unstring::sample {
 namespace {
 
 constexpr double kCurrent_a = 6.6;
-constexpr int kCircuitPoles = 28;  // of a parallel circuit, at most
+constexpr int kCircuitPoles = 28; // of a parallel circuit, at most
 
 Shape shape_of(int district) {
     switch (district) {
-    case 3: case 7: case 11: case 14: return Shape::ring;
-    default: return Shape::out_and_back;
+    case 3:
+    case 7:
+    case 11:
+    case 14:
+        return Shape::ring;
+    default:
+        return Shape::out_and_back;
     }
 }
 
@@ -32,14 +37,16 @@ void name_poles(int number, std::vector<PoleRow>& poles) {
 }
 
 void add_readings(Dice& dice, CircuitRow& circuit) {
-    if (dice.chance(0.35)) return;  // nobody has measured this one lately
+    if (dice.chance(0.35)) return; // nobody has measured this one lately
     circuit.asfound_a = 6.6 + dice.between(-0.05, 0.05);
     circuit.asfound_v = std::round(circuit.load_kva * 1000 / kCurrent_a * dice.between(0.997, 1.003) / 5) * 5;
     circuit.insulation_mohm = dice.between(0.8, 6);
-    circuit.asfound_date = fmt::format("202{}-{:02}-{:02}", 4 + dice.below(2), 1 + dice.below(12), 1 + dice.below(28));
+    circuit.asfound_date =
+        fmt::format("202{}-{:02}-{:02}", 4 + dice.below(2), 1 + dice.below(12), 1 + dice.below(28));
 }
 
-CircuitRow string_of(const Town& town, int district, int number, Corner station, const std::vector<PoleRow>& poles) {
+CircuitRow string_of(const Town& town, int district, int number, Corner station,
+                     const std::vector<PoleRow>& poles) {
     Dice dice(town.seed, {8, static_cast<std::uint64_t>(number)});
     CircuitRow circuit;
     circuit.id = string_id(number);
@@ -47,7 +54,7 @@ CircuitRow string_of(const Town& town, int district, int number, Corner station,
     circuit.cable_awg = district == 5 || district == 12 ? 6 : 8;
     const double length_m = loop_m(circuit.station, poles);
     circuit.load_kva = load_kva(poles, circuit.cable_awg, length_m);
-    if (district % 4 != 3) circuit.length_m = length_m;  // of some strings nobody has measured the cable
+    if (district % 4 != 3) circuit.length_m = length_m; // of some strings nobody has measured the cable
     circuit.is_pulsing = district == 10;
     if (district == 9) circuit.control = "relay", circuit.control_from = string_id(number - 3);
     if (district == 3) circuit.control = "clock";
@@ -57,24 +64,32 @@ CircuitRow string_of(const Town& town, int district, int number, Corner station,
     return circuit;
 }
 
-void add_cutbacks(const Town& town, int number, const Route& route, const std::vector<Lamp>& lamps, std::size_t kept,
-                  const std::vector<PoleRow>& poles, Tables& tables) {
+void add_cutbacks(const Town& town, int number, const Route& route, const std::vector<Lamp>& lamps,
+                  std::size_t kept, const std::vector<PoleRow>& poles, Tables& tables) {
     Dice dice(town.seed, {9, static_cast<std::uint64_t>(number)});
-    for (const Pair& pair : pairs_of(town, route, lamps)) {
-        const bool is_confirmed = dice.chance(pair.is_across_block ? 0.5 : 0.8), is_crossing = dice.chance(0.7);
+    const std::vector<Pair> pairs = pairs_of(town, route, lamps);
+    for (const Pair& pair : pairs) {
+        const bool is_confirmed = dice.chance(pair.is_across_block ? 0.5 : 0.8),
+                   is_crossing = dice.chance(0.7);
         if (static_cast<std::size_t>(pair.b) >= kept) continue;
         tables.cutbacks.push_back({string_id(number), poles[static_cast<std::size_t>(pair.a)].id,
                                    poles[static_cast<std::size_t>(pair.b)].id,
-                                   pair.is_across_block ? "trench" : is_crossing ? "crossing" : "pullbox", is_confirmed,
-                                   pair.cable_m});
+                                   pair.is_across_block ? "trench"
+                                   : is_crossing        ? "crossing"
+                                                        : "pullbox",
+                                   is_confirmed, pair.cable_m});
     }
-    // The return leg comes home past the station: the lamps after its last street can leave there.
-    if (route.ring.empty() || poles.size() < 12) return;
-    tables.cutbacks.push_back({string_id(number), "out", poles[5].id, "trench", false,
-                               distance_m(tables.circuits.back().station, poles[5].place) + 10});
+    // The first street of an open loop can be left out altogether, up to where the next splice begins.
+    if (route.ring.empty() || pairs.empty() || pairs.front().a < 2 ||
+        static_cast<std::size_t>(pairs.front().a) >= kept)
+        return;
+    const PoleRow& first = poles[static_cast<std::size_t>(pairs.front().a)];
+    tables.cutbacks.push_back({string_id(number), "out", first.id, "trench", false,
+                               distance_m(tables.circuits.back().station, first.place) + 10});
 }
 
-void add_string(const Town& town, int tile_x, int tile_y, int district, int number, std::size_t most, Tables& tables) {
+void add_string(const Town& town, int tile_x, int tile_y, int district, int number, std::size_t most,
+                Tables& tables) {
     const Route route = route_of(town, tile_x, tile_y, district, shape_of(district));
     const std::vector<Lamp> lamps = lamps_along(town, route);
     std::vector<PoleRow> poles = poles_along(town, route, lamps, district);
@@ -82,7 +97,8 @@ void add_string(const Town& town, int tile_x, int tile_y, int district, int numb
     if (poles.empty()) return;
     name_poles(number, poles);
     apply_oddities(town, number, true, poles);
-    for (std::size_t i = 0; i < poles.size(); ++i) poles[i].circuit = string_id(number), poles[i].order = static_cast<int>(i) + 1;
+    for (std::size_t i = 0; i < poles.size(); ++i)
+        poles[i].circuit = string_id(number), poles[i].order = static_cast<int>(i) + 1;
     tables.circuits.push_back(string_of(town, district, number, route.station, poles));
     add_cutbacks(town, number, route, lamps, poles.size(), poles, tables);
     tables.poles.insert(tables.poles.end(), poles.begin(), poles.end());
@@ -99,10 +115,11 @@ void fit_parallel(int circuit, PoleRow& pole) {
     if (pole.duct == "direct-buried" || pole.duct == "bad") pole.duct = "proven";
 }
 
-void add_parallel(const Town& town, int tile_x, int tile_y, int district, int number, std::size_t most, int& next_circuit,
-                  Tables& tables) {
-    const Route route = district == kHarbourRoad ? harbour_road(town, tile_x, tile_y)
-                                                 : route_of(town, tile_x, tile_y, district, Shape::out_and_back);
+void add_parallel(const Town& town, int tile_x, int tile_y, int district, int number, std::size_t most,
+                  int& next_circuit, Tables& tables) {
+    const Route route = district == kHarbourRoad
+                            ? harbour_road(town, tile_x, tile_y)
+                            : route_of(town, tile_x, tile_y, district, Shape::out_and_back);
     const std::vector<Lamp> lamps = lamps_along(town, route);
     std::vector<PoleRow> poles = poles_along(town, route, lamps, district);
     poles.resize(std::min(poles.size(), most));
@@ -127,10 +144,10 @@ void add_parallel(const Town& town, int tile_x, int tile_y, int district, int nu
     tables.poles.insert(tables.poles.end(), poles.begin(), poles.end());
 }
 
-}  // namespace
+} // namespace
 
 double loop_m(MapPoint station, const std::vector<PoleRow>& poles) {
-    constexpr double kAlongKerb = 1.06;  // cable follows kerbs and goes down into every base
+    constexpr double kAlongKerb = 1.06; // cable follows kerbs and goes down into every base
     double metres = 0;
     MapPoint last = station;
     for (const PoleRow& pole : poles) metres += distance_m(last, pole.place), last = pole.place;
@@ -154,18 +171,20 @@ double load_kva(const std::vector<PoleRow>& poles, int cable_awg, double length_
 Tables tile_of(const Town& town, int tile_x, int tile_y, long poles_left) {
     const int tile = tile_y * town.tiles_x + tile_x;
     Tables tables;
-    int next_circuit = tile * 30 + 1;  // a tile has fewer parallel circuits than that
+    int next_circuit = tile * 30 + 1; // a tile has fewer parallel circuits than that
     for (int district = 1; district <= kDistricts; ++district) {
         const long left = poles_left - static_cast<long>(tables.poles.size());
         if (left <= 0) break;
         const auto most = static_cast<std::size_t>(left);
         const int number = tile * kDistricts + district;
-        if (district <= kStrings) add_string(town, tile_x, tile_y, district, number, most, tables);
-        else add_parallel(town, tile_x, tile_y, district, number, most, next_circuit, tables);
+        if (district <= kStrings)
+            add_string(town, tile_x, tile_y, district, number, most, tables);
+        else
+            add_parallel(town, tile_x, tile_y, district, number, most, next_circuit, tables);
     }
     add_units(town, tile, tables);
     add_services(town, tile, tables);
     return tables;
 }
 
-}  // namespace unstring::sample
+} // namespace unstring::sample

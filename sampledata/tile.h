@@ -10,8 +10,8 @@ namespace unstring::sample {
 [[nodiscard]] Tables tile_of(const Town& town, int tile_x, int tile_y, long poles_left);
 
 /// The poles of one circuit in walking order, without the odd ones out (see apply_oddities).
-[[nodiscard]] std::vector<PoleRow> poles_along(const Town& town, const Route& route, const std::vector<Lamp>& lamps,
-                                               int district);
+[[nodiscard]] std::vector<PoleRow> poles_along(const Town& town, const Route& route,
+                                               const std::vector<Lamp>& lamps, int district);
 /// Poles down, not ours, proposed; attachments; owners; heritage: a few of each.
 void apply_oddities(const Town& town, int district_number, bool is_series, std::vector<PoleRow>& poles);
 
@@ -20,9 +20,9 @@ void apply_oddities(const Town& town, int district_number, bool is_series, std::
 /// Phasor sum of lamps and cable at 6.6 A.
 [[nodiscard]] double load_kva(const std::vector<PoleRow>& poles, int cable_awg, double length_m);
 
-/// Transformers for the strings of a tile: the smallest rating that still carries 1.1 times today's lamps; S-01 and
-/// S-02 share a two-loop unit; four spares.
+/// Transformers for the strings of a tile: the smallest rating that still carries 1.1 times today's lamps;
+/// S-01 and S-02 share a two-loop unit; four spares.
 void add_units(const Town& town, int tile, Tables& tables);
 void add_services(const Town& town, int tile, Tables& tables);
 
-}  // namespace unstring::sample
+} // namespace unstring::sample

@@ -12,25 +12,27 @@ namespace {
 constexpr std::array<double, kColumns> kColumnStep_m = {118, 132, 124, 140, 126, 112, 128, 136, 142,
                                                         120, 130, 126, 134, 118, 124, 138, 122, 128};
 constexpr std::array<double, kRows> kRowStep_m = {86, 92, 84, 96, 98, 88, 94, 90, 82, 92, 86, 94};
-constexpr std::array<int, 5> kDistrictColumn = {0, 3, 7, 12, 15};  // first column of each
+constexpr std::array<int, 5> kDistrictColumn = {0, 3, 7, 12, 15}; // first column of each
 constexpr std::array<int, 4> kDistrictRow = {0, 3, 7, 10};
 constexpr int kDistrictAt[4][5] = {
     {12, 13, 14, 15, 16}, {8, 9, 10, 11, 17}, {5, 6, 7, 4, 18}, {1, 2, 19, 3, 20}};
-constexpr int kRoadRow = 4, kAvenueColumn = 8;  // the two arterials
-constexpr double kTurn_deg = 4;                 // the grid is turned a little from grid north
-constexpr MapPoint kOrigin{406540, 3762130};    // of EPSG:32609: the first tile lies around 34 N 130 W
+constexpr int kRoadRow = 4, kAvenueColumn = 8; // the two arterials
+constexpr double kTurn_deg = 4;                // the grid is turned a little from grid north
+constexpr MapPoint kOrigin{406540, 3762130};   // of EPSG:32609: the first tile lies around 34 N 130 W
 
 constexpr std::array<const char*, kColumns> kColumnName = {
-    "Gannet Lane", "Plover Lane",  "Heron Lane",  "Curlew Lane", "Sandpiper Lane", "Dunlin Lane",
-    "Tern Lane",   "Whimbrel Lane", "Meridian Avenue", "Petrel Lane", "Turnstone Lane", "Avocet Lane",
-    "Osprey Lane", "Kittiwake Lane", "Puffin Lane", "Godwit Lane", "Fulmar Lane", "Shearwater Lane"};
-constexpr std::array<const char*, kRows> kRowName = {"Ropewalk",      "Cooper Street", "Tallow Street",  "Sailmaker Street",
-                                                     "Harbour Road",  "Saltmarket",    "Glazier Street", "Kiln Street",
-                                                     "Chandler Street", "Fuller Street", "Orchard Street", "Thatcher Street"};
+    "Gannet Lane", "Plover Lane",    "Heron Lane",      "Curlew Lane", "Sandpiper Lane", "Dunlin Lane",
+    "Tern Lane",   "Whimbrel Lane",  "Meridian Avenue", "Petrel Lane", "Turnstone Lane", "Avocet Lane",
+    "Osprey Lane", "Kittiwake Lane", "Puffin Lane",     "Godwit Lane", "Fulmar Lane",    "Shearwater Lane"};
+constexpr std::array<const char*, kRows> kRowName = {"Ropewalk",         "Cooper Street",  "Tallow Street",
+                                                     "Sailmaker Street", "Harbour Road",   "Saltmarket",
+                                                     "Glazier Street",   "Kiln Street",    "Chandler Street",
+                                                     "Fuller Street",    "Orchard Street", "Thatcher Street"};
 
 constexpr int tile_place(int global, int size) { return global % size; }
 
-template <std::size_t n> double along_m(const std::array<double, n>& steps, int global) {
+template <std::size_t n>
+double along_m(const std::array<double, n>& steps, int global) {
     double tile_m = 0, in_tile_m = 0;
     for (std::size_t i = 0; i < n; ++i) {
         if (static_cast<int>(i) < global % static_cast<int>(n)) in_tile_m += steps[i];
@@ -39,7 +41,8 @@ template <std::size_t n> double along_m(const std::array<double, n>& steps, int 
     return tile_m * (global / static_cast<int>(n)) + in_tile_m;
 }
 
-template <std::size_t n> int band_of(const std::array<int, n>& firsts, int place) {
+template <std::size_t n>
+int band_of(const std::array<int, n>& firsts, int place) {
     return static_cast<int>(std::upper_bound(firsts.begin(), firsts.end(), place) - firsts.begin()) - 1;
 }
 
@@ -69,19 +72,22 @@ std::string numbered(const char* name, int tile) {
     return tile == 0 ? name : std::string(name) + " " + std::to_string(tile + 1);
 }
 
-}  // namespace
+} // namespace
 
 const char* text_of(RoadClass value) {
     switch (value) {
-    case RoadClass::local: return "local";
-    case RoadClass::collector: return "collector";
-    case RoadClass::arterial: return "arterial";
+    case RoadClass::local:
+        return "local";
+    case RoadClass::collector:
+        return "collector";
+    case RoadClass::arterial:
+        return "arterial";
     }
     return "";
 }
 
 Town town_for(long poles, std::uint64_t seed) {
-    constexpr double kPolesPerTile = 1400;  // a little under what a tile holds
+    constexpr double kPolesPerTile = 1400; // a little under what a tile holds
     const double tiles = std::max(1.0, std::ceil(static_cast<double>(poles) / kPolesPerTile));
     Town town;
     town.seed = seed;
@@ -93,7 +99,7 @@ Town town_for(long poles, std::uint64_t seed) {
 
 bool is_land(const Town& town, Corner corner) {
     const int from_east = town.tiles_x * kColumns - 1 - corner.column;
-    return from_east + 1.4 * corner.row > 2.5;  // the harbour cuts the south-east corner off
+    return from_east + 1.4 * corner.row > 2.5; // the harbour cuts the south-east corner off
 }
 
 bool has_corner(const Town& town, Corner corner) {
@@ -102,7 +108,8 @@ bool has_corner(const Town& town, Corner corner) {
 }
 
 MapPoint place_of(const Town& town, Corner corner) {
-    Dice dice(town.seed, {1, static_cast<std::uint64_t>(corner.column), static_cast<std::uint64_t>(corner.row)});
+    Dice dice(town.seed,
+              {1, static_cast<std::uint64_t>(corner.column), static_cast<std::uint64_t>(corner.row)});
     const double x = along_m(kColumnStep_m, corner.column) + dice.between(-6, 6);
     const double y = along_m(kRowStep_m, corner.row) + dice.between(-5, 5);
     const double cosine = std::cos(kTurn_deg * kRadPerDeg), sine = std::sin(kTurn_deg * kRadPerDeg);
@@ -122,15 +129,21 @@ Road road_of(const Town& town, const Block& block) {
     const int place = east ? tile_place(block.from.row, kRows) : tile_place(block.from.column, kColumns);
     const int tile = east ? block.from.row / kRows : block.from.column / kColumns;
     Road road;
-    road.name = numbered(east ? kRowName[static_cast<std::size_t>(place)] : kColumnName[static_cast<std::size_t>(place)], tile);
+    road.name = numbered(east ? kRowName[static_cast<std::size_t>(place)]
+                              : kColumnName[static_cast<std::size_t>(place)],
+                         tile);
     road.road_class = east ? class_of_row(place) : class_of_column(place);
-    road.width_m = road.road_class == RoadClass::arterial ? 18 : road.road_class == RoadClass::collector ? 12 : 9;
+    road.width_m = road.road_class == RoadClass::arterial    ? 18
+                   : road.road_class == RoadClass::collector ? 12
+                                                             : 9;
     const Quarter quarter = quarter_of(block.from);
-    Dice dice(town.seed, {2, east ? 1U : 0U, static_cast<std::uint64_t>(east ? block.from.row : block.from.column)});
+    Dice dice(town.seed,
+              {2, east ? 1U : 0U, static_cast<std::uint64_t>(east ? block.from.row : block.from.column)});
     // Whole streets are repaved together.
     if (dice.chance(0.45)) road.repave_year = 2027 + dice.below(10);
     road.is_paved = road.road_class == RoadClass::arterial || quarter.building_m > 9;
-    road.is_avenue = quarter.trees_frac > 0.25 && road.road_class != RoadClass::arterial && dice.chance(0.3 + 0.5 * quarter.trees_frac);
+    road.is_avenue = quarter.trees_frac > 0.25 && road.road_class != RoadClass::arterial &&
+                     dice.chance(0.3 + 0.5 * quarter.trees_frac);
     return road;
 }
 
@@ -156,14 +169,39 @@ Quarter quarter_of(Corner corner) {
     Quarter quarter;
     quarter.is_park = is_in_park(corner);
     switch (district_of(corner)) {
-    case 1: case 2: case 5: quarter.trees_frac = 0.75; break;
-    case 6: case 8: quarter.trees_frac = 0.6; break;
-    case 4: case 9: case 3: quarter.trees_frac = 0.4; break;
-    case 7: case 10: quarter = {0.3, 14, quarter.is_park}; break;  // the middle of the town
-    case 14: quarter = {0.12, 11, quarter.is_park}; break;
-    case 20: case 12: case 13: quarter.trees_frac = 0.15; break;
-    case 15: case 16: quarter = {0.02, 10, quarter.is_park}; break;  // quays
-    default: quarter.trees_frac = 0.2; break;
+    case 1:
+    case 2:
+    case 5:
+        quarter.trees_frac = 0.75;
+        break;
+    case 6:
+    case 8:
+        quarter.trees_frac = 0.6;
+        break;
+    case 4:
+    case 9:
+    case 3:
+        quarter.trees_frac = 0.4;
+        break;
+    case 7:
+    case 10:
+        quarter = {0.3, 14, quarter.is_park};
+        break; // the middle of the town
+    case 14:
+        quarter = {0.12, 11, quarter.is_park};
+        break;
+    case 20:
+    case 12:
+    case 13:
+        quarter.trees_frac = 0.15;
+        break;
+    case 15:
+    case 16:
+        quarter = {0.02, 10, quarter.is_park};
+        break; // quays
+    default:
+        quarter.trees_frac = 0.2;
+        break;
     }
     return quarter;
 }
@@ -177,4 +215,4 @@ std::vector<Corner> corners_of(const Town& town, int tile_x, int tile_y, int dis
     return corners;
 }
 
-}  // namespace unstring::sample
+} // namespace unstring::sample

@@ -12,49 +12,67 @@ namespace unstring::sample {
 namespace {
 
 // A mid-latitude ocean island: mild winters, a clearness of about .5 in winter and .56 in summer. Invented.
-constexpr std::array<double, 12> kGhi_kwh_m2_day = {2.72, 3.55, 4.72, 5.78, 6.30, 6.48, 6.55, 6.02, 5.05, 3.92, 2.95, 2.48};
-constexpr std::array<double, 12> kTemp_c = {13.2, 13.0, 13.6, 14.6, 16.0, 17.8, 19.6, 20.6, 20.3, 18.7, 16.3, 14.2};
+constexpr std::array<double, 12> kGhi_kwh_m2_day = {2.72, 3.55, 4.72, 5.78, 6.30, 6.48,
+                                                    6.55, 6.02, 5.05, 3.92, 2.95, 2.48};
+constexpr std::array<double, 12> kTemp_c = {13.2, 13.0, 13.6, 14.6, 16.0, 17.8,
+                                            19.6, 20.6, 20.3, 18.7, 16.3, 14.2};
 
 Expected<void> write_climate(const std::string& folder) {
     CsvFile file(folder + "/climate.csv", "month,ghi_kwh_m2_day,temp_c,albedo");
-    for (std::size_t i = 0; i < 12; ++i) file.row({std::to_string(i + 1), cell(kGhi_kwh_m2_day[i], 2), cell(kTemp_c[i], 1), "0.20"});
+    for (std::size_t i = 0; i < 12; ++i)
+        file.row({std::to_string(i + 1), cell(kGhi_kwh_m2_day[i], 2), cell(kTemp_c[i], 1), "0.20"});
     return file.close();
 }
 
 Expected<void> write_prices(const std::string& folder) {
-    CsvFile file(folder + "/prices.csv", "item,unit,low,base,high,note,date,from_year,to_year,change_frac_year");
+    CsvFile file(folder + "/prices.csv",
+                 "item,unit,low,base,high,note,date,from_year,to_year,change_frac_year");
     const std::string note = "invented, Quillhaven works department";
     file.row({"trench_soft", "ft", "32", "48", "75", note, "2025-11-03", "", "", "0.01"});
     file.row({"trench_paved", "ft", "80", "118", "190", note, "2025-11-03", "", "", "0.015"});
     file.row({"bore", "ft", "45", "70", "105", note, "2025-11-03", "", "", ""});
     file.row({"pull", "ft", "5", "8.5", "14", note, "2025-11-03", "", "", ""});
-    file.row({"service_new", "each", "6000", "11500", "26000", note + "; utility's tariff", "2025-07-01", "", "", "0.02"});
-    file.row({"led_head", "each", "290", "430", "700", note + "; term contract", "2025-09-15", "2026", "2028", "-0.01"});
-    file.row({"led_head", "each", "280", "410", "700", note + "; expected after the contract", "2025-09-15", "2029", "", ""});
-    file.row({"solar_head_m", "each", "3400", "4350", "6000", note + "; quotation", "2025-10-20", "", "", "-0.015"});
-    file.row({"solar_head_l", "each", "5000", "6300", "8600", note + "; quotation", "2025-10-20", "", "", "-0.015"});
+    file.row({"service_new", "each", "6000", "11500", "26000", note + "; utility's tariff", "2025-07-01", "",
+              "", "0.02"});
+    file.row({"led_head", "each", "290", "430", "700", note + "; term contract", "2025-09-15", "2026", "2028",
+              "-0.01"});
+    file.row({"led_head", "each", "280", "410", "700", note + "; expected after the contract", "2025-09-15",
+              "2029", "", ""});
+    file.row({"solar_head_m", "each", "3400", "4350", "6000", note + "; quotation", "2025-10-20", "", "",
+              "-0.015"});
+    file.row({"solar_head_l", "each", "5000", "6300", "8600", note + "; quotation", "2025-10-20", "", "",
+              "-0.015"});
     file.row({"battery", "each", "380", "560", "900", note, "2025-10-20", "", "", "-0.02"});
-    file.row({"energy_kwh", "kWh", "0.14", "0.19", "0.28", note + "; island tariff", "2025-07-01", "", "", "0.005"});
-    file.row({"upkeep_series", "year", "90", "135", "210", note + "; mean of the last five years", "2025-06-30", "", "", ""});
+    file.row({"energy_kwh", "kWh", "0.14", "0.19", "0.28", note + "; island tariff", "2025-07-01", "", "",
+              "0.005"});
+    file.row({"upkeep_series", "year", "90", "135", "210", note + "; mean of the last five years",
+              "2025-06-30", "", "", ""});
     file.row({"traffic_arterial", "day", "1600", "2600", "4800", note, "2025-11-03", "", "", ""});
     return file.close();
 }
 
 Expected<void> write_budget(const std::string& folder, long poles) {
     constexpr std::array<double, 8> kMoney_k = {1600, 1800, 2000, 2100, 2200, 2300, 2400, 2400};
-    CsvFile file(folder + "/budget.csv", "year,money,fund,wards,kinds,spend_by,match_frac,line_h,civil_h,lighting_h,electric_h");
+    CsvFile file(folder + "/budget.csv",
+                 "year,money,fund,wards,kinds,spend_by,match_frac,line_h,civil_h,lighting_h,electric_h");
     const double size = static_cast<double>(poles) / 1400;
-    const auto scaled = [&](double value) { return fmt::format("{:.0f}", std::ceil(value * size / 10) * 10); };
+    const auto scaled = [&](double value) {
+        return fmt::format("{:.0f}", std::ceil(value * size / 10) * 10);
+    };
     for (std::size_t i = 0; i < kMoney_k.size(); ++i)
-        file.row({std::to_string(2027 + i), scaled(kMoney_k[i] * 1000), "street lighting", "", "", "", "", scaled(i < 2 ? 900 : 1100),
-                  scaled(i < 2 ? 2400 : 2900), scaled(800), scaled(500)});
+        file.row({std::to_string(2027 + i), scaled(kMoney_k[i] * 1000), "street lighting", "", "", "", "",
+                  scaled(i < 2 ? 900 : 1100), scaled(i < 2 ? 2400 : 2900), scaled(800), scaled(500)});
     return file.close();
 }
 
 // The n-th standing pole that is still on a string and passes the test.
-template <class Test> const PoleRow* pick(const std::vector<PoleRow>& poles, const std::string& circuit, std::size_t nth, Test test) {
+template <class Test>
+const PoleRow* pick(const std::vector<PoleRow>& poles, const std::string& circuit, std::size_t nth,
+                    Test test) {
     for (const PoleRow& pole : poles)
-        if (pole.circuit == circuit && pole.order != 0 && pole.status == "standing" && test(pole) && nth-- == 0) return &pole;
+        if (pole.circuit == circuit && pole.order != 0 && pole.status == "standing" && test(pole) &&
+            nth-- == 0)
+            return &pole;
     return nullptr;
 }
 
@@ -86,20 +104,23 @@ Expected<void> write_marks(const std::string& folder, const std::vector<PoleRow>
     }};
     CsvFile file(folder + "/marks.csv", "pole_id,mark,lock,year,who,note");
     for (const Wish& wish : kWishes) {
-        const PoleRow* pole = pick(poles, wish.circuit, wish.nth, [&](const PoleRow& each) { return each.road_class == wish.road_class; });
-        if (pole == nullptr) continue;  // a small city has not all of these strings
-        file.row({pole->id, wish.mark, wish.is_lock ? "1" : "0", wish.year == 0 ? "" : std::to_string(wish.year), wish.who, wish.note});
+        const PoleRow* pole = pick(poles, wish.circuit, wish.nth,
+                                   [&](const PoleRow& each) { return each.road_class == wish.road_class; });
+        if (pole == nullptr) continue; // a small city has not all of these strings
+        file.row({pole->id, wish.mark, wish.is_lock ? "1" : "0",
+                  wish.year == 0 ? "" : std::to_string(wish.year), wish.who, wish.note});
     }
     return file.close();
 }
 
-}  // namespace
+} // namespace
 
-Expected<void> write_year_tables(const std::string& folder, long poles, const std::vector<PoleRow>& first_poles) {
+Expected<void> write_year_tables(const std::string& folder, long poles,
+                                 const std::vector<PoleRow>& first_poles) {
     if (auto written = write_climate(folder); !written) return written;
     if (auto written = write_prices(folder); !written) return written;
     if (auto written = write_budget(folder, poles); !written) return written;
     return write_marks(folder, first_poles);
 }
 
-}  // namespace unstring::sample
+} // namespace unstring::sample

@@ -21,6 +21,7 @@ int main(int argc, char** argv) {
         fmt::print(stderr, "{}\n", unstring::fault_text(count.error()));
         return unstring::fault_exit_code(count.error().code);
     }
-    fmt::print("{} poles, {} of them on {} series strings, in {}\n", count->poles, count->series_poles, count->strings, order.folder);
+    fmt::print("{} poles, {} of them on {} series strings, in {}\n", count->poles, count->series_poles,
+               count->strings, order.folder);
     return 0;
 }

@@ -1,7 +1,6 @@
 #include "model/series/loop_geometry.h"
 
 #include <algorithm>
-#include <cmath>
 #include <set>
 #include <string>
 #include <unordered_map>
@@ -10,37 +9,34 @@
 namespace unstring {
 namespace {
 
-std::optional<MapPoint> place_of(const Pole& pole) {
-    if (!pole.has_place || !std::isfinite(pole.place.x_m) || !std::isfinite(pole.place.y_m)) return std::nullopt;
-    return pole.place;
-}
-
-/// Places by position, 0 and n + 1 the station's terminals.
-std::vector<std::optional<MapPoint>> places_by_position(const City& city, StringIx string, const std::vector<PoleIx>& lamps) {
-    std::vector<std::optional<MapPoint>> places{city.strings[string.place()].station};
-    for (const PoleIx lamp : lamps) places.push_back(place_of(city.poles[lamp.place()]));
-    places.push_back(places.front());
-    return places;
-}
-
 double between_m(const std::optional<MapPoint>& a, const std::optional<MapPoint>& b) {
     return a && b ? distance_m(*a, *b) : 0;
 }
 
 }  // namespace
 
-std::vector<double> straight_legs_m(const City& city, const std::vector<PoleIx>& lamps,
-                                    const std::optional<MapPoint>& station) {
-    std::vector<double> legs_m;
-    std::optional<MapPoint> here = station, first;
+LoopPlaces loop_places(const City& city, const Extent& extent, StringIx string, const std::vector<PoleIx>& lamps) {
+    const auto believed = [&](const std::optional<MapPoint>& place) {
+        return place && is_believed(extent, *place) ? place : std::nullopt;
+    };
+    LoopPlaces places{believed(city.strings[string.place()].station)};
     for (const PoleIx lamp : lamps) {
-        const std::optional<MapPoint> next = place_of(city.poles[lamp.place()]);
-        legs_m.push_back(between_m(here, next));
-        if (next) here = next;
-        if (!first) first = next;
+        const Pole& pole = city.poles[lamp.place()];
+        places.push_back(pole.has_place ? believed(pole.place) : std::nullopt);
     }
-    legs_m.push_back(between_m(here, station));
-    if (!station) legs_m.front() = legs_m.back() = between_m(here, first) / 2;
+    places.push_back(places.front());
+    return places;
+}
+
+std::vector<double> straight_legs_m(const LoopPlaces& places) {
+    std::vector<double> legs_m;
+    std::optional<MapPoint> here = places.front(), first;
+    for (std::size_t p = 1; p < places.size(); ++p) {
+        legs_m.push_back(between_m(here, places[p]));
+        if (!first) first = places[p];
+        if (places[p]) here = places[p];
+    }
+    if (!places.front()) legs_m.front() = legs_m.back() = between_m(here, first) / 2;
     return legs_m;
 }
 
@@ -59,12 +55,12 @@ int far_position_of(const std::vector<double>& legs_m) {
     return far;
 }
 
-std::vector<LoopCutBack> cutbacks_of_file(const City& city, StringIx string, const std::vector<PoleIx>& lamps) {
+std::vector<LoopCutBack> cutbacks_of_file(const City& city, StringIx string, const std::vector<PoleIx>& lamps,
+                                          const LoopPlaces& places) {
     const int last = static_cast<int>(lamps.size()) + 1;
     std::unordered_map<std::string, int> position_of{{"out", 0}, {"return", last}};
     for (std::size_t i = 0; i < lamps.size(); ++i)
         position_of.try_emplace(city.poles[lamps[i].place()].id, static_cast<int>(i) + 1);
-    const auto places = places_by_position(city, string, lamps);
 
     std::vector<LoopCutBack> found;
     for (std::size_t k = 0; k < city.cutbacks.size(); ++k) {
@@ -81,14 +77,12 @@ std::vector<LoopCutBack> cutbacks_of_file(const City& city, StringIx string, con
     return found;
 }
 
-std::vector<LoopCutBack> cutback_candidates(const City& city, const StringLoop& loop, const std::vector<LoopCutBack>& known,
-                                            const StreetIndex& streets) {
+std::vector<LoopCutBack> cutback_candidates(const StringLoop& loop, const LoopPlaces& places, const StreetIndex& streets) {
     constexpr int kFewestBetween = 2;
-    const auto places = places_by_position(city, loop.string, loop.lamps);
     std::vector<double> out_m{0};
     for (const double leg_m : loop.legs_m) out_m.push_back(out_m.back() + leg_m);
     std::set<std::pair<int, int>> is_known;
-    for (const LoopCutBack& cutback : known) is_known.emplace(cutback.a, cutback.b);
+    for (const LoopCutBack& cutback : loop.cutbacks) is_known.emplace(cutback.a, cutback.b);
 
     std::vector<LoopCutBack> found;
     for (std::size_t i = 0; i < places.size(); ++i)

@@ -1,12 +1,9 @@
 #include "model/series/string_loop.h"
 
 #include <algorithm>
-#include <cmath>
 #include <numeric>
-#include <stdexcept>
 #include <unordered_map>
 
-#include "model/series/energised_loop.h"
 #include "model/series/lamp_load.h"
 #include "model/series/loop_geometry.h"
 #include "model/series/string_load.h"
@@ -37,10 +34,13 @@ OrderFrom order_from_of(const City& city, const std::vector<PoleIx>& lamps) {
     return given == 0 ? OrderFrom::inferred : OrderFrom::partial;
 }
 
+/// A unit whose record is set aside still drives its current through the string.
 double current_of(const City& city, StringIx string) {
     if (const auto& given = city.strings[string.place()].current_a; given && *given > 0) return *given;
-    if (const TransformerIx unit = unit_today(city, string); unit.is_valid())
-        if (const auto& output = city.transformers[unit.place()].output_a; output && *output > 0) return *output;
+    for (const Transformer& unit : city.transformers) {
+        const bool feeds = std::find(unit.strings.begin(), unit.strings.end(), string) != unit.strings.end();
+        if (feeds && unit.state == UnitState::in_service && unit.output_a && *unit.output_a > 0) return *unit.output_a;
+    }
     return kUsualCurrent_a;
 }
 
@@ -93,8 +93,13 @@ void scale_to(std::vector<double>& legs_m, const std::optional<double>& length_m
     for (double& leg_m : legs_m) leg_m *= *length_m / straight_m;
 }
 
+struct Ground {
+    Extent extent;
+    StreetIndex streets;
+};
+
 StringLoop loop_of(const City& city, const Catalog& catalog, StringIx string, std::vector<PoleIx> lamps, LampBook& book,
-                   const StreetIndex& streets) {
+                   const Ground& ground) {
     const SeriesString& row = city.strings[string.place()];
     StringLoop loop;
     loop.string = string;
@@ -110,11 +115,12 @@ StringLoop loop_of(const City& city, const Catalog& catalog, StringIx string, st
     loop.order_from = order_from_of(city, loop.lamps);
     loop.order_confidence_frac = row.order_confidence_frac;
     add_lamp_loads(city, book, loop);
-    loop.legs_m = straight_legs_m(city, loop.lamps, row.station);
+    const LoopPlaces places = loop_places(city, ground.extent, string, loop.lamps);
+    loop.legs_m = straight_legs_m(places);
     scale_to(loop.legs_m, row.length_m);
     loop.far_position = far_position_of(loop.legs_m);
-    loop.cutbacks = cutbacks_of_file(city, string, loop.lamps);
-    const std::vector<LoopCutBack> candidates = cutback_candidates(city, loop, loop.cutbacks, streets);
+    loop.cutbacks = cutbacks_of_file(city, string, loop.lamps, places);
+    const std::vector<LoopCutBack> candidates = cutback_candidates(loop, places, ground.streets);
     loop.cutbacks.insert(loop.cutbacks.end(), candidates.begin(), candidates.end());
     return loop;
 }
@@ -132,11 +138,11 @@ const char* text_of(OrderFrom value) {
 
 std::vector<StringLoop> string_loops(const City& city, const Catalog& catalog) {
     std::vector<std::vector<PoleIx>> lamps = lamps_by_string(city);
-    const StreetIndex streets(city.streets);
+    const Ground ground{extent_of(city), StreetIndex(city.streets)};
     LampBook book(catalog);
     std::vector<StringLoop> loops;
     for (std::size_t s = 0; s < city.strings.size(); ++s)
-        loops.push_back(loop_of(city, catalog, StringIx(s), std::move(lamps[s]), book, streets));
+        loops.push_back(loop_of(city, catalog, StringIx(s), std::move(lamps[s]), book, ground));
     add_aside_lamps(city, book, loops);
     return loops;
 }

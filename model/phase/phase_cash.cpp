@@ -1,0 +1,92 @@
+#include "model/phase/phase_cash.h"
+
+#include <algorithm>
+#include <map>
+#include <numeric>
+
+#include <tbb/parallel_for.h>
+
+namespace unstring {
+
+Cents YearCash::capital_sum() const { return std::accumulate(capital.begin(), capital.end(), Cents{0}); }
+
+int ledger_last_year(const PlanSettings& settings) {
+    return settings.first_year + std::max(settings.years, settings.horizon_years) - 1;
+}
+
+YearCash year_cash(const PlanSettings& settings, const std::vector<CashLine>& lines) {
+    const auto years = static_cast<std::size_t>(ledger_last_year(settings) - settings.first_year + 1);
+    YearCash cash{std::vector<Cents>(years, 0), std::vector<Cents>(years, 0), present_value(lines), true};
+    for (const CashLine& line : lines) {
+        const auto place = static_cast<std::size_t>(line.year - settings.first_year);
+        (line.purse == Purse::capital ? cash.capital : cash.operating).at(place) += line.amount;
+    }
+    return cash;
+}
+
+CashBook::CashBook(const MoneyInput& input, const DecideResult& decide) : input_(input), decide_(decide) {
+    plan_.settings = input.plan.settings;
+    use(input.plan.settings);
+}
+
+void CashBook::use(const PlanSettings& settings) {
+    if (settings == plan_.settings && !poles_.empty()) return;
+    plan_.settings = settings;
+    poles_.assign(std::max<std::size_t>(1, input_.city.poles.size()), {});
+    spans_.assign(decide_.spans.size(), {});
+    connections_.assign(input_.city.services.size(), {});
+}
+
+const YearCash* CashBook::find(const PoleAsk& ask) const {
+    for (const Known& known : poles_[ask.pole.place()]) {
+        if (known.choice != ask.choice) continue;
+        if (ask.choice == Choice::keep || (known.year == ask.year && known.head == ask.head)) return &known.cash;
+    }
+    return nullptr;
+}
+
+std::vector<CashLine> CashBook::pole_lines(const PoleAsk& ask) const {
+    return pole_option(input(), ask.pole, ask.choice, ask.year, ask.head).lines;
+}
+
+void CashBook::work_out(const PoleAsk& ask) {
+    const OptionCost option = pole_option(input(), ask.pole, ask.choice, ask.year, ask.head);
+    YearCash cash = year_cash(plan_.settings, option.lines);
+    cash.possible = option.possible;
+    poles_[ask.pole.place()].push_back({ask.choice, ask.year, ask.head, std::move(cash)});
+}
+
+void CashBook::warm(const std::vector<PoleAsk>& asks) {
+    std::map<PoleIx, std::vector<const PoleAsk*>> wanting;  // one pole is worked out by one thread
+    for (const PoleAsk& ask : asks)
+        if (find(ask) == nullptr) wanting[ask.pole].push_back(&ask);
+    std::vector<const std::vector<const PoleAsk*>*> rows;
+    for (const auto& [pole, row] : wanting) rows.push_back(&row);
+    tbb::parallel_for(std::size_t{0}, rows.size(), [&](std::size_t i) {
+        for (const PoleAsk* ask : *rows[i])
+            if (find(*ask) == nullptr) work_out(*ask);
+    });
+}
+
+const YearCash& CashBook::pole(const PoleAsk& ask) {
+    if (const YearCash* known = find(ask)) return *known;
+    work_out(ask);
+    return poles_[ask.pole.place()].back().cash;
+}
+
+const YearCash& CashBook::span(std::size_t place, int year) {
+    for (const auto& [known, cash] : spans_[place])
+        if (known == year) return cash;
+    spans_[place].emplace_back(year, year_cash(plan_.settings, span_lines(input(), decide_.spans[place], year)));
+    return spans_[place].back().second;
+}
+
+const YearCash& CashBook::connection(ServiceIx service, int year) {
+    auto& known_years = connections_[service.place()];
+    for (const auto& [known, cash] : known_years)
+        if (known == year) return cash;
+    known_years.emplace_back(year, year_cash(plan_.settings, connection_lines(input(), service, year)));
+    return known_years.back().second;
+}
+
+}  // namespace unstring

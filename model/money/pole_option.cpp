@@ -54,7 +54,7 @@ void add_losses(const MoneyInput& input, int year, std::string_view item, std::v
 void add_residual(const MoneyInput& input, const char* what, double quantity, std::string_view item, int bought, double life_yr,
                   std::vector<CashLine>& lines) {
     const int last = horizon_of(input.plan).last;
-    const double left = quantity * (1 - (last - bought) / life_yr);
+    const double left = bought > last ? 0 : quantity * (1 - (last - bought) / life_yr);
     if (left <= 0) return;
     lines.push_back(cash_line(input.plan, what, last, -left, input.prices.at(item, bought), Purse::operating));
 }

@@ -86,6 +86,16 @@ TEST_CASE("pole option: batteries and heads are renewed where the simulation and
     CHECK(sum_of(option.lines, "solar head, value left") == Approx(-4500 * 11.0 / 15).margin(0.01));
 }
 
+TEST_CASE("pole option: work after the horizon leaves no value at it, and no year without a light's cost")  {
+    MoneyCase test;
+    test.plan.settings.horizon_years = 5;
+    for (const CashLine& line : test.option(Choice::rewire, 2034).lines) {
+        INFO(line.what);
+        CHECK(line.amount > 0);
+        CHECK((line.year <= 2031 || line.year == 2034));
+    }
+}
+
 TEST_CASE("pole option: a sound pole's solar head lies between 7 200 and 8 700 dollars, the check of sense") {
     MoneyCase test;
     test.shade.poles[0].heads[0].battery_years = 12;

@@ -162,6 +162,14 @@ void write_change(Database& database, const Change& change, std::int64_t undoes)
 std::optional<UndoLine> next_undo(Database& database, const std::string& plan) { return line_of(database, plan, chains_of(database, plan).done); }
 std::optional<UndoLine> next_redo(Database& database, const std::string& plan) { return line_of(database, plan, chains_of(database, plan).undone); }
 
+UndoLabels undo_labels(Database& database, const std::string& plan) {
+    const Chains chains = chains_of(database, plan);
+    const auto label = [&](const std::vector<std::int64_t>& ids) {
+        return ids.empty() ? std::string() : database.text(fmt::format("SELECT label FROM edits WHERE id={}", ids.back())).value_or("");
+    };
+    return {label(chains.done), label(chains.undone)};
+}
+
 std::vector<EditRecord> edits_of(Database& database, const std::string& plan, const std::string& pole_id, int at_most) {
     Statement select = database.prepare(
         "SELECT id, at, who, label, undoes FROM edits WHERE plan=?1 AND (?2='' OR EXISTS (SELECT 1 FROM json_each(rows_json) AS r"

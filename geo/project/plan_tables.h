@@ -32,6 +32,11 @@ struct UndoLine {
 /// The undo that redo takes back next; a new edit empties redo.
 [[nodiscard]] std::optional<UndoLine> next_redo(Database& database, const std::string& plan);
 
+struct UndoLabels {
+    std::string undo, redo;  ///< empty: nothing to undo, to redo
+};
+[[nodiscard]] UndoLabels undo_labels(Database& database, const std::string& plan);
+
 /// Newest first; empty pole_id = every edit.
 [[nodiscard]] std::vector<EditRecord> edits_of(Database& database, const std::string& plan, const std::string& pole_id, int at_most);
 

@@ -101,6 +101,11 @@ void create_schema(Database& database, const std::string& crs, const std::string
     database.run(fmt::format("PRAGMA application_id={}; PRAGMA user_version=10300", kGeoPackageId));
     database.run(kGeoPackageTables);
     database.run(kOwnTables);
+    set_project_crs(database, crs, crs_wkt);
+    migrate(database, 1);
+}
+
+void set_project_crs(Database& database, const std::string& crs, const std::string& crs_wkt) {
     int srs_id = -1;
     if (crs.starts_with("EPSG:")) {
         srs_id = std::atoi(crs.c_str() + 5);
@@ -109,30 +114,34 @@ void create_schema(Database& database, const std::string& crs, const std::string
         insert.run();
     }
     set_meta_value(database, "srs_id", std::to_string(srs_id));
-    migrate(database, 1);
 }
 
-Expected<void> bring_up_to_date(const std::string& path) {
+Expected<int> check_version(const std::string& path) {
     std::error_code ignored;
     if (!std::filesystem::is_regular_file(path, ignored))
         return tl::make_unexpected(Fault{FaultCode::file_missing, path, 0, "", "no such file", "a project file",
                                          "Make one with: unstring gather " + path + " --poles poles.csv --circuits circuits.csv"});
-    int version = 0;
-    {
-        auto database = Database::open(path, Database::Access::read);
-        if (!database) return tl::make_unexpected(database.error());
-        if (!(*database)->has_table("unstring_meta")) {
-            const auto failure = (*database)->failure();
-            return tl::make_unexpected(failure ? *failure : not_a_project(path, "a file without Unstring's tables"));
-        }
-        version = std::atoi(meta_value(**database, "version").c_str());
+    auto database = Database::open(path, Database::Access::read);
+    if (!database) return tl::make_unexpected(database.error());
+    if (!(*database)->has_table("unstring_meta")) {
+        const auto failure = (*database)->failure();
+        return tl::make_unexpected(failure ? *failure : not_a_project(path, "a file without Unstring's tables"));
     }
-    if (version == kProjectVersion) return {};
+    const int version = std::atoi(meta_value(**database, "version").c_str());
     if (version > kProjectVersion)
         return tl::make_unexpected(Fault{FaultCode::file_newer, path, 0, "version", std::to_string(version),
                                          fmt::format("at most {}", kProjectVersion),
                                          "A newer Unstring wrote this file; open it with that one. It was not touched"});
     if (version < 1) return tl::make_unexpected(not_a_project(path, "no version"));
+    return version;
+}
+
+Expected<void> bring_up_to_date(const std::string& path) {
+    const auto known = check_version(path);
+    if (!known) return tl::make_unexpected(known.error());
+    const int version = *known;
+    if (version == kProjectVersion) return {};
+    std::error_code ignored;
     const std::string copy = path + ".upgrade";
     std::filesystem::remove(copy, ignored);
     {

@@ -14,6 +14,12 @@ inline constexpr int kProjectVersion = 2;
 /// GeoPackage's own tables, and ours, in an empty database. @param crs "EPSG:n"; empty = undefined Cartesian
 void create_schema(Database& database, const std::string& crs, const std::string& crs_wkt);
 
+/// The coordinate system that layers made from now on are in.
+void set_project_crs(Database& database, const std::string& crs, const std::string& crs_wkt);
+
+/// Version of the project's own tables. @fault file_missing, file_broken (not a project), file_newer (by name)
+Expected<int> check_version(const std::string& path);
+
 /// A file of a version before ours is brought up in a copy, which then takes its name; the old one stays as
 /// PATH.before-<version>. @fault file_broken (not a project), file_newer (by name), write_failed
 Expected<void> bring_up_to_date(const std::string& path);

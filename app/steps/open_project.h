@@ -36,7 +36,9 @@ struct ProjectView {
     std::string canopy_raster;  ///< path of the height raster, empty when there is none
     Plan plan;
     std::vector<std::string> plan_names;
-    std::vector<Finding> findings;      ///< of gather and of the last vet
+    std::vector<Finding> findings;      ///< of gather, vet, shade and decide, as each last ran
+    std::vector<Finding> gather_findings;
+    long pole_rows_not_kept = 0;        ///< rows of the pole file that could not be read
     std::optional<VetResult> vet;       ///< findings left out: they are in `findings`
     std::optional<ShadeResult> shade;   ///< results of the last run, stale or not
     std::optional<DecideResult> decide;
@@ -73,6 +75,17 @@ struct HandOutOptions {
     std::string paper = "a4";
 };
 
+struct OrderLine {  ///< one work order that was handed out
+    std::string order_id, crew;
+    int year = 0, poles = 0;
+    double hours = 0;
+};
+
+struct HandOutReport {
+    std::vector<std::string> files;
+    std::vector<OrderLine> orders;
+};
+
 class Printer;  // app/steps/printer.h: paper is handed in behind it
 
 class OpenProject {
@@ -105,8 +118,8 @@ class OpenProject {
     Expected<void> run_shade(const std::vector<std::string>& heads, const Progress& progress);
     Expected<void> run_decide(const DecideOptions& options, const Progress& progress);
     Expected<void> run_phase(const PhaseOptions& options, const Progress& progress);
-    /// The files written.
-    Expected<std::vector<std::string>> run_hand_out(const HandOutOptions& options, Printer* printer, const Progress& progress);
+    /// Work orders as CSV and, with a printer, PDF; layers of the plan. @fault bad_usage (no folder, no such year)
+    Expected<HandOutReport> run_hand_out(const HandOutOptions& options, Printer* printer, const Progress& progress);
 
   private:
     OpenProject();

@@ -155,6 +155,9 @@ void OpenProject::Inside::show() {
     next->plan_names = plan_names(*database);
     if (next->plan_names.empty()) next->plan_names = {plan.settings.name};
     next->findings = gather_findings;
+    next->gather_findings = gather_findings;
+    for (const TableCount& count : tables.counts)
+        if (count.table == "poles") next->pole_rows_not_kept = count.set_aside;
     if (vet) next->findings.insert(next->findings.end(), vet->findings.begin(), vet->findings.end());
     next->findings.insert(next->findings.end(), shade_findings.begin(), shade_findings.end());
     next->vet = vet;

@@ -118,6 +118,10 @@ Json gather_json(const GatherReport& report) {
             {"notes", report.notes},       {"findings", findings_json(report.findings)}};
 }
 
+int count_errors(const std::vector<Finding>& findings) {
+    return static_cast<int>(std::count_if(findings.begin(), findings.end(), [](const Finding& f) { return f.severity == Severity::error; }));
+}
+
 std::vector<Finding> vetted_findings(const ProjectView& view) {
     const bool is_acknowledged = view.steps[static_cast<std::size_t>(Step::gather)].errors == 0;
     std::vector<Finding> findings;

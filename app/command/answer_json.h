@@ -20,6 +20,8 @@ using Json = nlohmann::ordered_json;
 /// @param pole  a pole of the view's city
 [[nodiscard]] Json why_json(const ProjectView& view, PoleIx pole);
 
+/// How many findings are errors.
+[[nodiscard]] int count_errors(const std::vector<Finding>& findings);
 /// What vet counts and lists: gather's findings (its errors only until they were set aside) and vet's own.
 [[nodiscard]] std::vector<Finding> vetted_findings(const ProjectView& view);
 /// Poles that no step plans on: set aside, or on a string that is, and rows that could not be read.

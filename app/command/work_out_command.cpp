@@ -1,0 +1,28 @@
+#include <memory>
+
+#include "app/command/commands.h"
+#include "app/command/work_out.h"
+#include "app/command/work_out_trench.h"
+#include "app/command/work_out_years.h"
+
+namespace unstring {
+
+void add_work_out(CLI::App& app, CommandLine& line) {
+    auto answer = std::make_shared<WorkOutAnswer>();
+    CLI::App* work_out = app.add_subcommand("work-out", "One calculation by itself, its inputs and steps shown");
+    work_out->require_subcommand(1);
+    work_out->footer("Example: unstring work-out worth --rate 0.03 --years 20");
+    add_work_out_trench(*work_out, *answer);
+    add_work_out_years(*work_out, *answer);
+    work_out->callback([answer, &line] {
+        const Console console = line.console();
+        if (answer->fault) {
+            line.exit_status = console.fail(*answer->fault);
+            return;
+        }
+        console.say(answer->steps_text);
+        console.answer(answer->json);
+    });
+}
+
+}  // namespace unstring

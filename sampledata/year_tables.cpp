@@ -28,22 +28,22 @@ Expected<void> write_prices(const std::string& folder) {
     CsvFile file(folder + "/prices.csv",
                  "item,unit,low,base,high,note,date,from_year,to_year,change_frac_year");
     const std::string note = "invented, Quillhaven works department";
-    file.row({"trench_soft", "ft", "32", "48", "75", note, "2025-11-03", "", "", "0.01"});
-    file.row({"trench_paved", "ft", "80", "118", "190", note, "2025-11-03", "", "", "0.015"});
+    file.row({"trench_soft", "ft", "32", "48", "75", note, "2025-11-03", "2026", "", "0.01"});
+    file.row({"trench_paved", "ft", "80", "118", "190", note, "2025-11-03", "2026", "", "0.015"});
     file.row({"bore", "ft", "45", "70", "105", note, "2025-11-03", "", "", ""});
     file.row({"pull", "ft", "5", "8.5", "14", note, "2025-11-03", "", "", ""});
-    file.row({"service_new", "each", "6000", "11500", "26000", note + "; utility's tariff", "2025-07-01", "",
-              "", "0.02"});
+    file.row({"service_new", "each", "6000", "11500", "26000", note + "; utility's tariff", "2025-07-01",
+              "2026", "", "0.02"});
     file.row({"led_head", "each", "290", "430", "700", note + "; term contract", "2025-09-15", "2026", "2028",
               "-0.01"});
     file.row({"led_head", "each", "280", "410", "700", note + "; expected after the contract", "2025-09-15",
               "2029", "", ""});
-    file.row({"solar_head_m", "each", "3400", "4350", "6000", note + "; quotation", "2025-10-20", "", "",
+    file.row({"solar_head_m", "each", "3400", "4350", "6000", note + "; quotation", "2025-10-20", "2026", "",
               "-0.015"});
-    file.row({"solar_head_l", "each", "5000", "6300", "8600", note + "; quotation", "2025-10-20", "", "",
+    file.row({"solar_head_l", "each", "5000", "6300", "8600", note + "; quotation", "2025-10-20", "2026", "",
               "-0.015"});
-    file.row({"battery", "each", "380", "560", "900", note, "2025-10-20", "", "", "-0.02"});
-    file.row({"energy_kwh", "kWh", "0.14", "0.19", "0.28", note + "; island tariff", "2025-07-01", "", "",
+    file.row({"battery", "each", "380", "560", "900", note, "2025-10-20", "2026", "", "-0.02"});
+    file.row({"energy_kwh", "kWh", "0.14", "0.19", "0.28", note + "; island tariff", "2025-07-01", "2026", "",
               "0.005"});
     file.row({"upkeep_series", "year", "90", "135", "210", note + "; mean of the last five years",
               "2025-06-30", "", "", ""});

@@ -1,0 +1,86 @@
+#include "model/decide/decide_city.h"
+
+#include <algorithm>
+#include <chrono>
+
+#include "model/decide/decide_reasons.h"
+#include "model/decide/joint.h"
+#include "model/decide/plan_tree.h"
+#include "model/decide/pole_cases.h"
+#include "model/decide/span_cost.h"
+
+namespace unstring {
+namespace {
+
+using Place = std::size_t;
+
+Fault cancelled() { return {FaultCode::cancelled, {}, 0, {}, {}, {}, {}}; }
+
+/// The bound and the gap are wanted of the plan alone; for comparisons a good tree is enough.
+SteinerLimits quick_limits() {
+    SteinerLimits limits;
+    limits.rounds = 1;
+    limits.shakes = 0;
+    limits.branch_work = 0;
+    return limits;
+}
+
+/// What all poles would cost by one kind, each where it is possible, else by the other kind.
+double all_of(const GroundGraph& graph, std::vector<PoleCase> cases, Choice choice, int& not_possible, const Progress& progress) {
+    not_possible = 0;
+    for (PoleCase& each : cases) {
+        if (each.mode == Mode::keep) continue;
+        const Choice other = choice == Choice::rewire ? Choice::solar : Choice::rewire;
+        if (!each.of(choice).possible) ++not_possible;
+        const Choice taken = each.of(choice).possible ? choice : other;
+        each.mode = !each.of(taken).possible ? Mode::stuck : taken == Choice::rewire ? Mode::rewire : Mode::solar;
+    }
+    return to_dollars(solve_joint(graph, cases, quick_limits(), progress).cost);
+}
+
+void count(DecideResult& result) {
+    for (const PoleDecision& each : result.poles) {
+        result.keep += each.choice == Choice::keep ? 1 : 0;
+        result.rewire += each.choice == Choice::rewire ? 1 : 0;
+        result.solar += each.choice == Choice::solar ? 1 : 0;
+    }
+}
+
+}  // namespace
+
+const PoleDecision* DecideResult::find(PoleIx pole) const {
+    const auto at = std::lower_bound(poles.begin(), poles.end(), pole, [](const PoleDecision& each, PoleIx wanted) { return each.pole < wanted; });
+    return at != poles.end() && at->pole == pole ? &*at : nullptr;
+}
+
+Expected<DecideResult> decide_city(const MoneyInput& input, const Progress& progress) {
+    const auto start = std::chrono::steady_clock::now();
+    DecideResult result;
+    const GroundGraph graph = ground_graph(input);
+    progress.at(0.1);
+    Expected<std::vector<PoleCase>> cases = pole_cases(input, graph, progress);
+    if (!cases) return tl::unexpected(cases.error());
+    settle_modes(input, *cases, result);
+    progress.at(0.3);
+
+    const JointPlan plan = solve_joint(graph, *cases, {}, progress);
+    if (progress.is_cancelled()) return tl::unexpected(cancelled());
+    progress.at(0.7);
+    result.feasible = result.feasible && plan.feasible;
+    lay_out(input, graph, *cases, plan, result);
+    result.poles = pole_decisions(input, *cases, plan, marginal_shares(graph, *cases, plan));
+    count(result);
+    result.cost = to_dollars(plan.cost);
+    result.bound = to_dollars(plan.bound);
+    progress.at(0.8);
+
+    result.all_rewire_cost = all_of(graph, *cases, Choice::rewire, result.all_rewire_not_possible, progress);
+    result.all_solar_cost = all_of(graph, *cases, Choice::solar, result.all_solar_not_possible, progress);
+    result.greedy_cost = to_dollars(greedy_plan(graph, *cases).cost);
+    if (progress.is_cancelled()) return tl::unexpected(cancelled());
+    progress.at(1);
+    result.seconds = std::chrono::duration<double>(std::chrono::steady_clock::now() - start).count();
+    return result;
+}
+
+}  // namespace unstring

@@ -219,6 +219,8 @@ Expected<void> Database::transaction(const std::function<void()>& work) {
     return tl::make_unexpected(std::move(fault));
 }
 
+void Database::trust_schema() { sqlite3_db_config(handle_, SQLITE_DBCONFIG_TRUSTED_SCHEMA, 1, nullptr); }
+
 void Database::close_to_one_file() {
     sqlite3_exec(handle_, "PRAGMA wal_checkpoint(TRUNCATE)", nullptr, nullptr, nullptr);
     sqlite3_exec(handle_, "PRAGMA journal_mode=DELETE", nullptr, nullptr, nullptr);

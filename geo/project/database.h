@@ -77,6 +77,8 @@ class Database {
 
     /// Everything that `work` writes, or nothing of it.
     Expected<void> transaction(const std::function<void()>& work);
+    /// From here on triggers may write the R-trees: only for a schema that check_schema found to be ours.
+    void trust_schema();
     /// Folds the journal in, so that the closed file is one file.
     void close_to_one_file();
     /// Keeps `path` as a whole copy of this database as it stands.

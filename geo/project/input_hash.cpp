@@ -72,7 +72,8 @@ template <class Record> void add_place(Hash& hash, const Record& record) {
     } else if constexpr (requires { record.line; }) {
         for (const MapPoint& point : record.line) hash.add(point);
     } else if constexpr (requires { record.ring; }) {
-        for (const MapPoint& point : record.ring) hash.add(point);
+        const bool is_closed = record.ring.size() > 1 && record.ring.front() == record.ring.back();
+        for (std::size_t i = 0; i + (is_closed ? 1 : 0) < record.ring.size(); ++i) hash.add(record.ring[i]);
     }
 }
 

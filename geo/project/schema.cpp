@@ -3,6 +3,7 @@
 #include <cstdio>
 #include <cstdlib>
 #include <filesystem>
+#include <set>
 #include <vector>
 
 #include <fmt/format.h>
@@ -167,13 +168,25 @@ Expected<void> bring_up_to_date(const std::string& path) {
 }
 
 Expected<void> check_schema(Database& database, const std::string& path) {
-    Statement foreign = database.prepare(
-        "SELECT type, name FROM sqlite_master WHERE type IN ('trigger','view') AND name NOT LIKE 'rtree!_%' ESCAPE '!' LIMIT 1");
-    if (foreign.step())
-        return tl::make_unexpected(Fault{FaultCode::file_broken, path, 0, "", fmt::format("the {} \"{}\"", foreign.text(0), foreign.text(1)),
-                                         "a project without foreign triggers and views",
-                                         "Another program added it; drop it there, or take a copy from before"});
+    std::set<std::string> ours;
+    Statement layers = database.prepare("SELECT table_name FROM gpkg_geometry_columns");
+    while (layers.step()) {
+        if (layers.text(0).find_first_of("\"'") != std::string::npos) continue;
+        const std::string triggers = rtree_triggers(layers.text(0));
+        for (std::size_t from = triggers.find("CREATE"); from != std::string::npos;) {
+            const std::size_t end = triggers.find("END;", from);
+            ours.insert(triggers.substr(from, end + 3 - from));
+            from = triggers.find("CREATE", end);
+        }
+    }
+    Statement rows = database.prepare("SELECT type, name, sql FROM sqlite_master WHERE type IN ('trigger','view')");
+    while (rows.step())
+        if (ours.count(rows.text(2)) == 0)
+            return tl::make_unexpected(Fault{FaultCode::file_broken, path, 0, "", fmt::format("the {} \"{}\"", rows.text(0), rows.text(1)),
+                                             "a project without foreign triggers and views",
+                                             "Another program added it; drop it there, or take a copy from before"});
     if (database.failure()) return tl::make_unexpected(*database.failure());
+    database.trust_schema();
     return {};
 }
 

@@ -24,7 +24,8 @@ Expected<int> check_version(const std::string& path);
 /// PATH.before-<version>. @fault file_broken (not a project), file_newer (by name), write_failed
 Expected<void> bring_up_to_date(const std::string& path);
 
-/// Refuses a file that holds triggers or views that are not ours: they would run while we write.
+/// Refuses a file that holds triggers or views that are not ours to the letter: they would run while we write. After it
+/// the schema is trusted.
 Expected<void> check_schema(Database& database, const std::string& path);
 
 /// Number in the gpkg_spatial_ref_sys table of the project's coordinate system, -1 = undefined.

@@ -8,14 +8,12 @@ namespace {
 
 constexpr int kOverheadDistrict = 12, kOldQuarter = 5, kBrightDistrict = 1;
 
-struct Fitting {
+struct Fitting { // watts and power factor as in the default catalogue
     const char* fixture;
     double burns_w, burns_pf;
-    bool in_catalogue;
 };
-constexpr Fitting kHps70{"HPS70", 91, 0.9, true}, kHps100{"HPS100", 130, 0.9, true},
-    kHps150{"HPS150", 188, 0.9, true}, kHps250{"HPS250", 295, 0.9, true},
-    kFilament{"FIL4000", 268, 0.98, false};
+constexpr Fitting kHps70{"HPS70", 93, 0.9}, kHps100{"HPS100", 130, 0.9}, kHps150{"HPS150", 188, 0.9},
+    kHps250{"HPS250", 295, 0.9}, kFilament{"FIL4000", 248, 0.97};
 
 Fitting fitting_of(const Town& town, const Block& block, RoadClass road_class, int district) {
     if (road_class == RoadClass::arterial) return kHps250;
@@ -32,7 +30,6 @@ Fitting fitting_of(const Town& town, const Block& block, RoadClass road_class, i
 void set_fitting(const Fitting& fitting, PoleRow& pole) {
     pole.fixture = fitting.fixture;
     pole.burns_w = fitting.burns_w, pole.burns_pf = fitting.burns_pf;
-    if (!fitting.in_catalogue) pole.lamp_w = fitting.burns_w, pole.lamp_pf = fitting.burns_pf;
 }
 
 void set_structure(RoadClass road_class, Dice& dice, PoleRow& pole) {

@@ -6,6 +6,7 @@
 #include <set>
 
 #include <catch2/catch.hpp>
+#include <nlohmann/json.hpp>
 
 #include "tests/sampledata/read_csv.h"
 
@@ -50,13 +51,25 @@ double sum(const std::vector<double>& values) {
     return total;
 }
 
-// System watts: lamp, ballast and lamp transformer, as the sample city's order states them.
-double watts_of(const Row& lamp) {
-    static const std::map<std::string, double> kWatts = {
-        {"HPS70", 91}, {"HPS100", 130}, {"HPS150", 188}, {"HPS250", 295}};
-    return lamp.at("lamp_w").empty() ? kWatts.at(lamp.at("fixture")) : number(lamp, "lamp_w");
+// System watts and power factor by fixture, from the default catalogue.
+const std::map<std::string, std::pair<double, double>>& catalogue() {
+    static const auto kLamps = [] {
+        std::map<std::string, std::pair<double, double>> lamps;
+        const auto file =
+            nlohmann::json::parse(text_of_file(std::string(UNSTRING_SOURCE) + "/resources/catalogue.json"));
+        for (const auto& lamp : file.at("lamps"))
+            lamps[lamp.at("fixture")] = {lamp.at("system_w"), lamp.at("pf")};
+        return lamps;
+    }();
+    return kLamps;
 }
-double power_factor_of(const Row& lamp) { return lamp.at("lamp_pf").empty() ? 0.9 : number(lamp, "lamp_pf"); }
+
+double watts_of(const Row& lamp) {
+    return lamp.at("lamp_w").empty() ? catalogue().at(lamp.at("fixture")).first : number(lamp, "lamp_w");
+}
+double power_factor_of(const Row& lamp) {
+    return lamp.at("lamp_pf").empty() ? catalogue().at(lamp.at("fixture")).second : number(lamp, "lamp_pf");
+}
 
 // V = I (R + jX) + sum of P / (I pf), lagging; S = I |V|. R: NEC ch. 9 table 8, stranded uncoated copper at
 // 75 C, 0.778 and 0.491 ohm per 1000 ft for AWG 8 and 6, brought to 25 C; X: table 9, PVC, 0.052 and 0.051.

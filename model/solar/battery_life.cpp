@@ -3,26 +3,10 @@
 #include <algorithm>
 #include <cmath>
 
+#include "model/sun/daily_sun.h"
+
 namespace unstring {
 namespace {
-
-struct Turn {
-    double value;
-    std::size_t at;
-};
-
-std::vector<Turn> turning_points(std::span<const float> series) {
-    std::vector<Turn> turns;
-    for (std::size_t i = 0; i < series.size(); ++i) {
-        const auto value = static_cast<double>(series[i]);
-        if (!turns.empty() && turns.back().value == value) continue;
-        const std::size_t n = turns.size();
-        const bool goes_on = n >= 2 && (turns[n - 1].value > turns[n - 2].value) == (value > turns[n - 1].value);
-        if (goes_on) turns.pop_back();
-        turns.push_back({value, i});
-    }
-    return turns;
-}
 
 double range_of(const Turn& a, const Turn& b) { return std::abs(a.value - b.value); }
 
@@ -36,70 +20,119 @@ double anode_v(double soc) {
 
 double kelvin(double temp_c) { return temp_c + 273.15; }
 
-double mean_c_rate(std::span<const float> soc) {
-    double moved = 0;
-    int hours = 0;
-    for (std::size_t i = 1; i < soc.size(); ++i) {
-        const double step = std::abs(static_cast<double>(soc[i]) - static_cast<double>(soc[i - 1]));
-        if (step < 1e-6) continue;
-        moved += step;
-        ++hours;
-    }
-    return hours > 0 ? moved / hours : 0;
-}
-
-/// One year of calendar stress, in the units in which stress of different days adds up.
-double calendar_stress(const SunYear& sun, std::span<const float> soc, const std::array<double, 12>& temp_c) {
-    std::array<double, 12> sum{}, days{};
-    for (std::size_t i = 0; i < soc.size(); ++i) {
-        const auto month = static_cast<std::size_t>(sun.month_of_hour(i % kHours) - 1);
-        sum[month] += static_cast<double>(soc[i]);
-        days[month] += 1.0 / 24.0;
-    }
+/// One year of calendar stress, in the unit in which stress of different days adds up.
+double calendar_stress(const ChargeHistory& history, const std::array<double, 12>& temp_c) {
     double stress = 0;
-    for (std::size_t month = 0; month < 12; ++month) {
-        if (days[month] == 0) continue;
-        const double rate = calendar_rate(temp_c[month], sum[month] / (days[month] * 24.0));
-        stress += std::pow(rate, 1.0 / kCalendarPower) * days[month];
-    }
+    for (std::size_t month = 0; month < 12; ++month)
+        stress += std::pow(calendar_rate(temp_c[month], history.mean_soc[month]), 1.0 / kCalendarPower) *
+                  days_in_month(static_cast<int>(month) + 1);
     return stress;
 }
 
-double cycle_stress(const SunYear& sun, std::span<const float> soc, const std::array<double, 12>& temp_c) {
-    const double c_rate = mean_c_rate(soc);
+double heat_of_cycles(double temp_c) {
+    const double t = kelvin(temp_c);
+    return std::exp(2190.0 / t) + std::exp(-1.55e5 / t);
+}
+
+double wear_of_depth(double depth, double c_rate) { return 4.38e-8 + 1.55e-8 * depth + 1.68e-7 * c_rate; }
+
+/// wear_of_depth raised to the power in which stress adds up, between 65 places: it is all but linear in the depth, so
+/// that the error stays below 1e-5 of the value.
+class WearTable {
+  public:
+    explicit WearTable(double c_rate) {
+        for (std::size_t i = 0; i < wear_.size(); ++i)
+            wear_[i] = std::pow(wear_of_depth(static_cast<double>(i) / kPieces, c_rate), 1.0 / kCyclePower);
+    }
+    [[nodiscard]] double at(double depth) const {
+        const double place = std::clamp(depth, 0.0, 1.0) * kPieces;
+        const auto from = std::min(static_cast<std::size_t>(place), wear_.size() - 2);
+        return wear_[from] + (wear_[from + 1] - wear_[from]) * (place - static_cast<double>(from));
+    }
+
+  private:
+    static constexpr double kPieces = 64;
+    std::array<double, 65> wear_;
+};
+
+/// All years of cycle stress.
+double cycle_stress(const SunYear& sun, const ChargeHistory& history, const std::array<double, 12>& temp_c) {
+    std::array<double, 12> heat{};
+    for (std::size_t month = 0; month < 12; ++month)
+        heat[month] = std::pow(heat_of_cycles(temp_c[month]), 1.0 / kCyclePower);
+    const WearTable wear(history.c_rate);
     double stress = 0;
-    for (const Cycle& cycle : rainflow(soc)) {
+    for (const Cycle& cycle : rainflow(history.turns)) {
         const auto month = static_cast<std::size_t>(sun.month_of_hour(cycle.end % kHours) - 1);
-        const double rate = cycle_rate(temp_c[month], cycle.range, c_rate);
-        stress += std::pow(rate, 1.0 / kCyclePower) * cycle.count * cycle.range;
+        stress += heat[month] * wear.at(cycle.range) * cycle.count * cycle.range;
     }
     return stress;
 }
 
 }  // namespace
 
-std::vector<Cycle> rainflow(std::span<const float> series) {
+std::vector<Turn> turning_points(std::span<const float> values, std::size_t stride) {
+    std::vector<Turn> turns;
+    for (std::size_t i = 0; i * stride < values.size(); ++i) {
+        const auto value = static_cast<double>(values[i * stride]);
+        const std::size_t n = turns.size();
+        if (n >= 1 && turns[n - 1].value == value) continue;
+        if (n >= 2 && (turns[n - 1].value > turns[n - 2].value) == (value > turns[n - 1].value))
+            turns[n - 1] = {value, i};
+        else
+            turns.push_back({value, i});
+    }
+    return turns;
+}
+
+std::vector<Cycle> rainflow(std::span<const Turn> turns) {
     std::vector<Cycle> cycles;
+    cycles.reserve(turns.size());
     std::vector<Turn> open;
-    for (const Turn& turn : turning_points(series)) {
+    std::size_t start = 0;  // the turns before it are done with
+    for (const Turn& turn : turns) {
         open.push_back(turn);
-        while (open.size() >= 3) {
+        while (open.size() - start >= 3) {
             const std::size_t n = open.size();
             const double last = range_of(open[n - 1], open[n - 2]);
             const double before = range_of(open[n - 2], open[n - 3]);
             if (last < before) break;
-            if (n == 3) {  // the range before holds the start: half a cycle, and the start moves on
-                cycles.push_back({before, 0.5, open[1].at});
-                open.erase(open.begin());
+            if (n - start == 3) {  // the range before holds the start: half a cycle, and the start moves on
+                cycles.push_back({before, 0.5, open[n - 2].at});
+                ++start;
             } else {
                 cycles.push_back({before, 1.0, open[n - 2].at});
-                open.erase(open.end() - 3, open.end() - 1);
+                open[n - 3] = open[n - 1];
+                open.resize(n - 2);
             }
         }
     }
-    for (std::size_t i = 1; i < open.size(); ++i)
+    for (std::size_t i = start + 1; i < open.size(); ++i)
         cycles.push_back({range_of(open[i], open[i - 1]), 0.5, open[i].at});
     return cycles;
+}
+
+ChargeHistory charge_history(const SunYear& sun, std::span<const float> soc, std::size_t stride) {
+    ChargeHistory history;
+    history.turns = turning_points(soc, stride);
+    const std::size_t hours = soc.size() / stride;
+    history.years = static_cast<double>(hours) / kHours;
+    constexpr float kStill = 1e-6F;
+    std::size_t moving_hours = 0;
+    for (std::size_t day = 0; day < hours / 24; ++day) {
+        float sum = 0;
+        for (std::size_t h = day * 24; h < day * 24 + 24; ++h) {
+            sum += soc[h * stride];
+            if (h > 0 && std::abs(soc[h * stride] - soc[(h - 1) * stride]) > kStill) ++moving_hours;
+        }
+        history.mean_soc[static_cast<std::size_t>(sun.days[day % kDays].month - 1)] += static_cast<double>(sum);
+    }
+    for (std::size_t month = 0; month < 12; ++month)
+        history.mean_soc[month] /= 24.0 * days_in_month(static_cast<int>(month) + 1) * history.years;
+    double moved = 0;
+    for (std::size_t i = 1; i < history.turns.size(); ++i) moved += range_of(history.turns[i], history.turns[i - 1]);
+    if (moving_hours > 0) history.c_rate = moved / static_cast<double>(moving_hours);
+    return history;
 }
 
 double calendar_rate(double temp_c, double soc) {
@@ -108,14 +141,12 @@ double calendar_rate(double temp_c, double soc) {
 }
 
 double cycle_rate(double temp_c, double depth, double c_rate) {
-    const double t = kelvin(temp_c);
-    return (4.38e-8 + 1.55e-8 * depth + 1.68e-7 * c_rate) * (std::exp(2190.0 / t) + std::exp(-1.55e5 / t));
+    return wear_of_depth(depth, c_rate) * heat_of_cycles(temp_c);
 }
 
-double battery_life_yr(const SunYear& sun, std::span<const float> soc, const std::array<double, 12>& temp_c) {
-    const double years = static_cast<double>(soc.size()) / kHours;
-    const double calendar = calendar_stress(sun, soc, temp_c) / years;
-    const double cycles = cycle_stress(sun, soc, temp_c) / years;
+double battery_life_yr(const SunYear& sun, const ChargeHistory& history, const std::array<double, 12>& temp_c) {
+    const double calendar = calendar_stress(history, temp_c);
+    const double cycles = cycle_stress(sun, history, temp_c) / history.years;
     for (double year = 1; year < kLifeCap_yr; ++year) {
         const double lost = std::pow(calendar * year, kCalendarPower) + std::pow(cycles * year, kCyclePower);
         if (lost >= kEndOfLife) return year;

@@ -46,20 +46,23 @@ Expected<std::vector<const Head*>> wanted_heads(const ShadeInput& input) {
     return heads;
 }
 
-HeadTerms head_terms(const Head& head, const CityLight& light, const ShadeTerms& terms) {
-    HeadTerms out;
-    out.head = &head;
-    out.fresh.capacity_wh = head.battery_wh;
-    out.fresh.cold_charge_c = terms.cold_charge_c;
-    out.fresh.lost_frac_day = terms.lost_frac_day;
-    out.fresh.standby_w = terms.standby_w;
-    out.fresh.shrinks_in_cold = true;
-    out.worn = out.fresh;
-    out.worn.capacity_wh = head.battery_wh * terms.end_of_life_frac;
-    const std::vector<double> load = lamp_load_wh(light.sun, head.led_w, head.dimming);
-    out.fresh_hours = battery_hours(load, light.air_c, out.fresh);
-    out.worn_hours = battery_hours(load, light.air_c, out.worn);
-    return out;
+HeadGroup head_group(std::span<const Head* const> heads, const CityLight& light, const ShadeTerms& terms) {
+    HeadGroup group;
+    group.heads.assign(heads.begin(), heads.end());
+    for (std::size_t lane = 0; lane < heads.size(); ++lane) {
+        const Head& head = *heads[lane];
+        BatteryTerms battery;
+        battery.capacity_wh = head.battery_wh;
+        battery.cold_charge_c = terms.cold_charge_c;
+        battery.lost_frac_day = terms.lost_frac_day;
+        battery.standby_w = terms.standby_w;
+        battery.shrinks_in_cold = true;
+        const std::vector<double> load = lamp_load_wh(light.sun, head.led_w, head.dimming);
+        set_lane(group.fresh, lane, light.sun, load, light.air_c, battery);
+        battery.capacity_wh *= terms.end_of_life_frac;
+        set_lane(group.worn, lane, light.sun, load, light.air_c, battery);
+    }
+    return group;
 }
 
 std::vector<SunDirection> sun_directions(const SunYear& sun, double convergence_deg) {
@@ -103,14 +106,17 @@ Expected<CityLight> city_light(const ShadeInput& input, const ShadeTerms& terms)
     light.sun = make_sun_year(centre, DayModel::psa, terms.sun_step_min, std::round(centre.lon_deg / 15.0));
     const auto clearness = monthly_clearness(light.sun, input.climate.ghi_kwh_m2_day);
     if (!clearness) return tl::unexpected(clearness.error());
-    light.sky = make_hourly_sky(light.sun, generate_clearness(*clearness, terms.weather_years + 1, 1));
+    light.sky = make_hourly_sky(light.sun, generate_clearness(*clearness, terms.weather_years + kSettlingYears, 1),
+                                kSettlingYears);
     light.air_c = hourly_air_c(light.sun, input.climate.temp_c, terms.temp_swing_k);
     light.directions = sun_directions(light.sun, input.city.convergence_deg);
     light.temp_c = input.climate.temp_c;
     light.albedo = input.climate.albedo;
     light.deciduous = canopy_through(Leaf::deciduous, centre.lat_deg);
     light.evergreen = canopy_through(Leaf::evergreen, centre.lat_deg);
-    for (const Head* head : *heads) light.heads.push_back(head_terms(*head, light, terms));
+    for (std::size_t first = 0; first < heads->size(); first += kLanes)
+        light.groups.push_back(
+            head_group(std::span(*heads).subspan(first, std::min(kLanes, heads->size() - first)), light, terms));
     return light;
 }
 

@@ -12,10 +12,10 @@
 
 namespace unstring {
 
-struct HeadTerms {
-    const Head* head = nullptr;
-    BatteryTerms fresh, worn;  ///< the battery new, and at the end of its life
-    std::vector<BatteryHour> fresh_hours, worn_hours;
+/// Up to kLanes heads of the catalogue, run side by side.
+struct HeadGroup {
+    std::vector<const Head*> heads;
+    BatteryGroup fresh, worn;  ///< the batteries new, and at the end of their lives
 };
 
 /// Where a step of the sun falls among the horizon's directions.
@@ -29,7 +29,7 @@ struct CityLight {
     HourlySky sky;
     std::vector<double> air_c;
     std::vector<SunDirection> directions;  ///< one per step of the sun
-    std::vector<HeadTerms> heads;
+    std::vector<HeadGroup> groups;
     Monthly temp_c{}, albedo{}, deciduous{}, evergreen{};
 };
 

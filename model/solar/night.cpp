@@ -2,14 +2,14 @@
 
 #include <cmath>
 #include <numeric>
+#include <span>
 
 #include "model/solar/battery_life.h"
+#include "model/solar/shade_terms.h"
 #include "model/sun/daily_sun.h"
 
 namespace unstring {
 namespace {
-
-constexpr int kSettlingYears = 1;
 
 std::vector<double> day_clearness(const NightCase& input) {
     const int years = input.years + kSettlingYears;
@@ -22,10 +22,7 @@ std::vector<double> day_clearness(const NightCase& input) {
     return days;
 }
 
-double yearly_global_kwh_m2(const HourlySky& sky) {
-    const auto first = sky.global.begin() + static_cast<std::ptrdiff_t>(kSettlingYears) * kHours;
-    return std::accumulate(first, sky.global.end(), 0.0) / 1000.0 / (sky.years - kSettlingYears);
-}
+double sum_of(std::span<const double> values) { return std::accumulate(values.begin(), values.end(), 0.0); }
 
 }  // namespace
 
@@ -52,33 +49,36 @@ int worst_month(const Monthly& supply_kwh, const Monthly& demand_kwh) {
 
 NightAnswer run_night(const NightCase& input) {
     const SunYear sun = make_sun_year(input.place, input.day_model, input.sun_step_min);
-    const HourlySky sky = make_hourly_sky(sun, day_clearness(input));
+    const HourlySky sky = make_hourly_sky(sun, day_clearness(input), kSettlingYears);
     const std::vector<double> air_c = hourly_air_c(sun, input.temp_c, input.temp_swing_k);
     const PanelLight light = panel_light(sun, beam_through(sun, input.layers), input.layers, input.panel, 0.02);
-    std::vector<double> yield(sky.global.size());
-    write_yield_wh_per_wp(sun, sky, light, air_c, input.terms, yield);
-    const std::vector<double> load = lamp_load_wh(sun, input.led_w, input.dimming, input.switch_deg);
+    std::vector<double> yield(sky.global.size() * kLanes, 0.0);
+    write_yield_wh_per_wp(sun, sky, light, air_c, input.terms, yield.data(), kLanes);
+    BatteryGroup group;
+    set_lane(group, 0, sun, lamp_load_wh(sun, input.led_w, input.dimming, input.switch_deg), air_c, input.battery);
+    std::vector<float> soc(static_cast<std::size_t>(input.years) * kHours * kLanes);
+    const BatteryRun run = run_batteries(sun, group, yield, {input.panel_wp}, kSettlingYears, soc.data())[0];
 
     NightAnswer answer;
-    const std::vector<BatteryHour> hours = battery_hours(load, air_c, input.battery);
-    std::vector<float> soc;
-    answer.run = run_battery({sun, yield, input.panel_wp, hours, input.battery, kSettlingYears}, &soc);
-    const BatteryRun& run = answer.run;
-    answer.years_run = run.years;
-    answer.light = monthly_light(sun, sky, light, kSettlingYears);
-    answer.ghi_kwh_m2 = yearly_global_kwh_m2(sky);
-    answer.panel_kwh = run.panel_kwh / run.years;
-    answer.demand_kwh = run.lamp_kwh / run.years;
-    answer.unmet_kwh = run.unmet_kwh / run.years;
-    const int dark = std::accumulate(run.dark_in_year.begin(), run.dark_in_year.end(), 0);
-    answer.nights_dark_year = static_cast<double>(dark) / run.years;
-    answer.lolp_energy = run.lamp_kwh > 0 ? run.unmet_kwh / run.lamp_kwh : 0;
+    answer.years_run = input.years;
+    answer.light = monthly_light(sun, sky, light);
+    answer.supply_kwh = run.supply_kwh;
+    answer.month_demand_kwh = group.demand_kwh[0];
+    answer.dark_in_year = run.dark_in_year;
+    answer.longest_dark_run = run.longest_dark_run;
+    answer.ghi_kwh_m2 = sum_of(sky.mean_global) / 1000.0;
+    answer.panel_kwh = sum_of(run.supply_kwh);
+    answer.demand_kwh = sum_of(group.demand_kwh[0]);
+    answer.unmet_kwh = run.unmet_kwh;
+    answer.nights_dark_year = run.dark_a_year();
+    answer.lolp_energy = answer.demand_kwh > 0 ? run.unmet_kwh / answer.demand_kwh : 0;
     answer.lolp_nights = answer.nights_dark_year / kDays;
-    answer.cycles_year = run.taken_kwh * 1000.0 / input.battery.capacity_wh / run.years;
-    answer.battery_years = battery_life_yr(sun, soc, input.temp_c);
+    answer.cycles_year = (answer.demand_kwh - run.unmet_kwh) * 1000.0 / input.battery.discharge_frac /
+                         input.battery.capacity_wh;
+    answer.battery_years = battery_life_yr(sun, charge_history(sun, soc, kLanes), input.temp_c);
     answer.final_soc = run.final_soc;
     answer.shade_score = shade_score(answer.light);
-    answer.worst_month = worst_month(run.supply_kwh, run.demand_kwh);
+    answer.worst_month = worst_month(run.supply_kwh, group.demand_kwh[0]);
     answer.sky_view_frac = light.opaque_sky_frac;
     answer.lit_h_year = hours_below(sun, input.switch_deg);
     return answer;

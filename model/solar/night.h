@@ -45,7 +45,9 @@ struct NightAnswer {  ///< means of a reported year
     int years_run = 0;
     double sky_view_frac = 1, lit_h_year = 0;
     MonthlyLight light;
-    BatteryRun run;
+    Monthly supply_kwh{}, month_demand_kwh{};
+    std::vector<int> dark_in_year;
+    int longest_dark_run = 0;
 };
 
 /// Air temperature of each hour of the year [C]: a step per month, and the day's swing about it.

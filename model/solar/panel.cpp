@@ -89,8 +89,8 @@ PanelLight panel_light(const SunYear& sun, std::span<const float> through, const
     return light;
 }
 
-double cell_temp_c(double light_w_m2, double air_c, double wind_m_s, double u0, double u1) {
-    return air_c + light_w_m2 / (u0 + u1 * wind_m_s);
+double cell_temp_c(double light_w_m2, double air_c, double wind_m_s, double still, double per_wind) {
+    return air_c + light_w_m2 / (still + per_wind * wind_m_s);
 }
 
 double cell_temp_by_noct_c(double light_w_m2, double air_c, double noct_c) {
@@ -102,39 +102,34 @@ double panel_power_w(double panel_wp, double light_w_m2, double cell_c, double t
 }
 
 void write_yield_wh_per_wp(const SunYear& sun, const HourlySky& sky, const PanelLight& light,
-                           std::span<const double> air_c, const PanelTerms& terms, std::span<double> yield) {
-    const double per_kelvin = terms.temp_coeff;
+                           std::span<const double> air_c, const PanelTerms& terms, double* yield, std::size_t stride) {
+    const double per_w_m2 = 1.0 / (kFaimanStill + kFaimanWind * terms.wind_m_s);
     for (std::size_t day = 0; day < kDays * static_cast<std::size_t>(sky.years); ++day) {
-        const std::size_t of_year = day % kDays * 24;
-        const auto month = static_cast<std::size_t>(sun.days[day % kDays].month - 1);
+        const SunDay& today = sun.days[day % kDays];
+        const auto month = static_cast<std::size_t>(today.month - 1);
         const double sky_frac = light.sky_frac[month];
         const double ground = light.ground_frac[month];
-        for (std::size_t h = 0; h < 24; ++h) {
+        for (std::size_t h = today.first_lit; h < today.end_lit; ++h) {
             const std::size_t at = day * 24 + h;
+            const std::size_t of_year = day % kDays * 24 + h;
             const double light_w_m2 =
-                sky.beam_like[at] * light.beam_factor[of_year + h] + sky.even_sky[at] * sky_frac + sky.global[at] * ground;
-            const double cell_c = cell_temp_c(light_w_m2, air_c[of_year + h], terms.wind_m_s);
-            yield[at] = panel_power_w(1.0, light_w_m2, cell_c, per_kelvin) * terms.gives_frac;
+                sky.beam_like[at] * light.beam_factor[of_year] + sky.even_sky[at] * sky_frac + sky.global[at] * ground;
+            const double warmer_k = air_c[of_year] + light_w_m2 * per_w_m2 - 25.0;
+            const double power = light_w_m2 * 0.001 * (1.0 + terms.temp_coeff * warmer_k) * terms.gives_frac;
+            yield[at * stride] = std::max(0.0, power);
         }
     }
 }
 
-MonthlyLight monthly_light(const SunYear& sun, const HourlySky& sky, const PanelLight& light, int first_year) {
+MonthlyLight monthly_light(const SunYear& sun, const HourlySky& sky, const PanelLight& light) {
     MonthlyLight sums;
-    for (int year = first_year; year < sky.years; ++year)
-        for (std::size_t hour = 0; hour < kHours; ++hour) {
-            const std::size_t at = static_cast<std::size_t>(year) * kHours + hour;
-            const std::size_t month = month_place(sun, hour);
-            const double from_ground = sky.global[at] * light.ground_frac[month];
-            sums.panel_kwh_m2[month] += sky.beam_like[at] * light.beam_factor[hour] +
-                                        sky.even_sky[at] * light.sky_frac[month] + from_ground;
-            sums.open_kwh_m2[month] += sky.beam_like[at] * light.open_beam_factor[hour] +
-                                       sky.even_sky[at] * light.open_sky_frac + from_ground;
-        }
-    const double scale = 1.0 / (1000.0 * (sky.years - first_year));
-    for (std::size_t month = 0; month < 12; ++month) {
-        sums.panel_kwh_m2[month] *= scale;
-        sums.open_kwh_m2[month] *= scale;
+    for (std::size_t hour = 0; hour < kHours; ++hour) {
+        const std::size_t month = month_place(sun, hour);
+        const double from_ground = sky.mean_global[hour] * light.ground_frac[month];
+        sums.panel_kwh_m2[month] += 0.001 * (sky.mean_beam_like[hour] * light.beam_factor[hour] +
+                                             sky.mean_even_sky[hour] * light.sky_frac[month] + from_ground);
+        sums.open_kwh_m2[month] += 0.001 * (sky.mean_beam_like[hour] * light.open_beam_factor[hour] +
+                                            sky.mean_even_sky[hour] * light.open_sky_frac + from_ground);
     }
     return sums;
 }

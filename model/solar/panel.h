@@ -42,8 +42,10 @@ struct PanelLight {
 [[nodiscard]] PanelLight panel_light(const SunYear& sun, std::span<const float> through, const SkyLayers& layers,
                                      const PanelPlace& place, double sky_step_deg);
 
-/// Cell temperature [C]. Source: D. Faiman, Prog. Photovolt. 16 (2008) 307-315, with 25 and 6.84 W/m2K.
-[[nodiscard]] double cell_temp_c(double light_w_m2, double air_c, double wind_m_s, double u0 = 25.0, double u1 = 6.84);
+inline constexpr double kFaimanStill = 25.0, kFaimanWind = 6.84;  ///< W/m2K, and per m/s of wind
+/// Cell temperature [C]. Source: D. Faiman, Prog. Photovolt. 16 (2008) 307-315.
+[[nodiscard]] double cell_temp_c(double light_w_m2, double air_c, double wind_m_s, double still = kFaimanStill,
+                                 double per_wind = kFaimanWind);
 /// Cell temperature by the nominal operating temperature of the module [C]. Source: R.G. Ross (1976).
 [[nodiscard]] double cell_temp_by_noct_c(double light_w_m2, double air_c, double noct_c);
 
@@ -55,18 +57,17 @@ struct PanelTerms {
 /// Power of a panel [W]: linear in light, and in cell temperature. Source: PVWatts, NREL/TP-6A20-62641 (2014).
 [[nodiscard]] double panel_power_w(double panel_wp, double light_w_m2, double cell_c, double temp_coeff);
 
-/// Per hour of every year the energy of one watt-peak [Wh], before ageing, charge loss and clipping.
-/// @param air_c  kHours;  @param yield  as many as the sky has hours
+/// Per hour of every year the energy of one watt-peak [Wh], before ageing, charge loss and clipping, written to every
+/// `stride`-th place. Hours without sun are not touched: they are 0 for every panel.
+/// @param air_c  kHours
 void write_yield_wh_per_wp(const SunYear& sun, const HourlySky& sky, const PanelLight& light,
-                           std::span<const double> air_c, const PanelTerms& terms, std::span<double> yield);
+                           std::span<const double> air_c, const PanelTerms& terms, double* yield, std::size_t stride);
 
 /// Irradiation on the panel per calendar month, mean of a year [kWh/m2]; with and without what stands around.
 struct MonthlyLight {
     Monthly panel_kwh_m2{}, open_kwh_m2{};
 };
-/// Hours of the years from `first_year` on.
-[[nodiscard]] MonthlyLight monthly_light(const SunYear& sun, const HourlySky& sky, const PanelLight& light,
-                                         int first_year);
+[[nodiscard]] MonthlyLight monthly_light(const SunYear& sun, const HourlySky& sky, const PanelLight& light);
 /// Largest over the months of 1 minus shaded over open; months without sun are left out.
 [[nodiscard]] double shade_score(const MonthlyLight& light);
 

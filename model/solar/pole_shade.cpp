@@ -1,9 +1,11 @@
 #include "model/solar/pole_shade.h"
 
 #include <algorithm>
+#include <array>
 #include <cmath>
-#include <numeric>
+#include <span>
 #include <tuple>
+#include <utility>
 
 #include <fmt/format.h>
 
@@ -14,8 +16,6 @@
 
 namespace unstring {
 namespace {
-
-constexpr int kSettlingYears = 1;
 
 /// The horizon's directions with the first once more at the end, so that the last piece needs no wrap.
 std::vector<float> closed(const std::vector<float>& heights_deg) {
@@ -72,28 +72,30 @@ SkyLayers sky_layers(const CityLight& light, const PoleHorizon& horizon, double 
     return layers;
 }
 
-double mean_of(const std::vector<int>& counts) {
-    if (counts.empty()) return 0;
-    return std::accumulate(counts.begin(), counts.end(), 0.0) / static_cast<double>(counts.size());
-}
-
-/// The battery new, its life, and the battery at the end of that life beside an aged panel.
-void run_head(const CityLight& light, const HeadTerms& terms, const ShadeTerms& shade, ShadeScratch& scratch,
-              HeadAnswer& answer) {
-    const double panel_wp = terms.head->panel_wp;
-    const BatteryRun fresh = run_battery(
-        {light.sun, scratch.yield, panel_wp, terms.fresh_hours, terms.fresh, kSettlingYears}, &scratch.soc);
-    answer.nights_dark_year_new = mean_of(fresh.dark_in_year);
-    answer.battery_years = battery_life_yr(light.sun, scratch.soc, light.temp_c);
-    const double aged_wp = panel_wp * std::pow(1.0 - shade.panel_ages_frac_yr, answer.battery_years);
-    const BatteryRun worn =
-        run_battery({light.sun, scratch.yield, aged_wp, terms.worn_hours, terms.worn, kSettlingYears}, nullptr);
-    answer.nights_dark_year = mean_of(worn.dark_in_year);
-    answer.nights_dark_worst_year = *std::max_element(worn.dark_in_year.begin(), worn.dark_in_year.end());
-    answer.longest_dark_run = worn.longest_dark_run;
-    answer.supply_kwh = worn.supply_kwh;
-    answer.demand_kwh = worn.demand_kwh;
-    answer.worst_month = worst_month(worn.supply_kwh, worn.demand_kwh);
+/// The batteries new, their lives, and the batteries at the end of those lives beside aged panels.
+void run_group(const CityLight& light, const HeadGroup& group, const ShadeTerms& terms, ShadeScratch& scratch,
+               std::span<HeadAnswer> answers) {
+    std::array<double, kLanes> panel_wp{};
+    for (std::size_t lane = 0; lane < answers.size(); ++lane) panel_wp[lane] = group.heads[lane]->panel_wp;
+    const auto fresh =
+        run_batteries(light.sun, group.fresh, scratch.yield, panel_wp, kSettlingYears, scratch.soc.data());
+    for (std::size_t lane = 0; lane < answers.size(); ++lane) {
+        const std::span<const float> soc = std::span(scratch.soc).subspan(lane);
+        answers[lane].nights_dark_year_new = fresh[lane].dark_a_year();
+        answers[lane].battery_years = battery_life_yr(light.sun, charge_history(light.sun, soc, kLanes), light.temp_c);
+        panel_wp[lane] *= std::pow(1.0 - terms.panel_ages_frac_yr, answers[lane].battery_years);
+    }
+    const auto worn = run_batteries(light.sun, group.worn, scratch.yield, panel_wp, kSettlingYears, nullptr);
+    for (std::size_t lane = 0; lane < answers.size(); ++lane) {
+        HeadAnswer& answer = answers[lane];
+        answer.nights_dark_year = worn[lane].dark_a_year();
+        answer.nights_dark_worst_year =
+            *std::max_element(worn[lane].dark_in_year.begin(), worn[lane].dark_in_year.end());
+        answer.longest_dark_run = worn[lane].longest_dark_run;
+        answer.supply_kwh = worn[lane].supply_kwh;
+        answer.demand_kwh = group.worn.demand_kwh[lane];
+        answer.worst_month = worst_month(answer.supply_kwh, answer.demand_kwh);
+    }
 }
 
 void judge(const Pole& pole, const Head& head, double nights_goal, const PoleHorizon& horizon, HeadAnswer& answer) {
@@ -112,16 +114,49 @@ void judge(const Pole& pole, const Head& head, double nights_goal, const PoleHor
 }
 
 /// The cheapest eligible head. Prices are not known here: less panel, then less battery, costs less.
-int best_head(const std::vector<HeadAnswer>& answers, const CityLight& light) {
-    const auto rank = [&](std::size_t i) {
-        const Head& head = *light.heads[i].head;
-        const bool fits = answers[i].eligible;
-        return std::make_tuple(!fits, fits ? 0.0 : answers[i].nights_dark_year, head.panel_wp, head.battery_wh, i);
+int best_head(const std::vector<HeadAnswer>& answers, const Catalog& catalog) {
+    const auto rank = [&](const HeadAnswer& answer) {
+        const Head& head = *find_head(catalog, answer.head);
+        return std::make_tuple(!answer.eligible, answer.eligible ? 0.0 : answer.nights_dark_year, head.panel_wp,
+                               head.battery_wh);
     };
     int best = -1;
     for (std::size_t i = 0; i < answers.size(); ++i)
-        if (best < 0 || rank(i) < rank(static_cast<std::size_t>(best))) best = static_cast<int>(i);
+        if (best < 0 || rank(answers[i]) < rank(answers[static_cast<std::size_t>(best)])) best = static_cast<int>(i);
     return best;
+}
+
+/// What a head's panel gets at this pole, written into its lane of the scratch room.
+HeadAnswer light_on_head(const ShadeInput& input, const CityLight& light, const ShadeTerms& terms,
+                         const SkyLayers& layers, const Head& head, const PanelBearing& bearing, std::size_t lane,
+                         ShadeScratch& scratch) {
+    const PanelPlace place{head.tilt_deg, bearing.bearing_deg + input.city.convergence_deg, light.albedo};
+    const PanelLight panel = panel_light(light.sun, scratch.through, layers, place, terms.sky_step_deg);
+    write_yield_wh_per_wp(light.sun, light.sky, panel, light.air_c, {}, scratch.yield.data() + lane, kLanes);
+    const MonthlyLight monthly = monthly_light(light.sun, light.sky, panel);
+    HeadAnswer answer;
+    answer.head = head.head;
+    answer.sky_view_frac = panel.opaque_sky_frac;
+    answer.shade_score = shade_score(monthly);
+    answer.panel_kwh_m2 = monthly.panel_kwh_m2;
+    return answer;
+}
+
+PoleShade described(PoleIx pole, const PoleHorizon& horizon) {
+    PoleShade shade;
+    shade.pole = pole;
+    shade.panel_height_m = horizon.panel_height_m;
+    shade.solid_deg = horizon.solid_deg;
+    shade.unknown_deg = horizon.unknown_deg;
+    shade.canopy_deg = horizon.deciduous_deg;
+    for (std::size_t i = 0; i < shade.canopy_deg.size(); ++i)
+        shade.canopy_deg[i] = std::max(shade.canopy_deg[i], horizon.evergreen_deg[i]);
+    return shade;
+}
+
+void make_room(const CityLight& light, ShadeScratch& scratch) {
+    scratch.yield.resize(light.sky.global.size() * kLanes);
+    scratch.soc.resize(static_cast<std::size_t>(light.sky.years - light.sky.settling_years) * kHours * kLanes);
 }
 
 }  // namespace
@@ -129,38 +164,26 @@ int best_head(const std::vector<HeadAnswer>& answers, const CityLight& light) {
 PoleShade shade_pole(const ShadeInput& input, const CityLight& light, const ShadeTerms& terms, PoleIx pole_ix,
                      const PoleHorizon& horizon, ShadeScratch& scratch) {
     const Pole& pole = input.city.poles[pole_ix.place()];
-    PoleShade shade;
-    shade.pole = pole_ix;
-    shade.panel_height_m = horizon.panel_height_m;
-    shade.solid_deg = horizon.solid_deg;
-    shade.unknown_deg = horizon.unknown_deg;
-    shade.canopy_deg = horizon.deciduous_deg;
-    for (std::size_t i = 0; i < shade.canopy_deg.size(); ++i)
-        shade.canopy_deg[i] = std::max(shade.canopy_deg[i], horizon.evergreen_deg[i]);
-
+    PoleShade shade = described(pole_ix, horizon);
     const SkyLayers layers = sky_layers(light, horizon, input.city.convergence_deg);
     write_beam_through(light, horizon, scratch.through);
-    scratch.yield.resize(light.sky.global.size());
-    for (const HeadTerms& head : light.heads) {
-        const PanelBearing bearing = panel_bearing(input.city, pole, head.head->turn_deg);
-        if (shade.heads.empty()) {
-            shade.bearing_deg = bearing.bearing_deg;
-            shade.bearing_from = bearing.from;
+    make_room(light, scratch);
+    for (const HeadGroup& group : light.groups) {
+        const std::size_t first = shade.heads.size();
+        for (std::size_t lane = 0; lane < group.heads.size(); ++lane) {
+            const PanelBearing bearing = panel_bearing(input.city, pole, group.heads[lane]->turn_deg);
+            if (shade.heads.empty()) {
+                shade.bearing_deg = bearing.bearing_deg;
+                shade.bearing_from = bearing.from;
+            }
+            shade.heads.push_back(
+                light_on_head(input, light, terms, layers, *group.heads[lane], bearing, lane, scratch));
         }
-        const PanelPlace place{head.head->tilt_deg, bearing.bearing_deg + input.city.convergence_deg, light.albedo};
-        const PanelLight panel = panel_light(light.sun, scratch.through, layers, place, terms.sky_step_deg);
-        write_yield_wh_per_wp(light.sun, light.sky, panel, light.air_c, {}, scratch.yield);
-        const MonthlyLight monthly = monthly_light(light.sun, light.sky, panel, kSettlingYears);
-        HeadAnswer answer;
-        answer.head = head.head->head;
-        answer.sky_view_frac = panel.opaque_sky_frac;
-        answer.shade_score = shade_score(monthly);
-        answer.panel_kwh_m2 = monthly.panel_kwh_m2;
-        run_head(light, head, terms, scratch, answer);
-        judge(pole, *head.head, input.nights_goal, horizon, answer);
-        shade.heads.push_back(std::move(answer));
+        run_group(light, group, terms, scratch, std::span(shade.heads).subspan(first));
+        for (std::size_t lane = 0; lane < group.heads.size(); ++lane)
+            judge(pole, *group.heads[lane], input.nights_goal, horizon, shade.heads[first + lane]);
     }
-    shade.best = best_head(shade.heads, light);
+    shade.best = best_head(shade.heads, input.catalog);
     return shade;
 }
 

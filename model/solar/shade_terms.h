@@ -3,6 +3,8 @@
 
 namespace unstring {
 
+inline constexpr int kSettlingYears = 1;  ///< run before the years that are reported
+
 struct ShadeTerms {
     int weather_years = 20;           ///< generated, after one year of settling that is not counted
     double temp_swing_k = 5;          ///< of the day about the month's mean [A]

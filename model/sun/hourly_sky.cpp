@@ -8,11 +8,23 @@
 #include "model/sun/transposition.h"
 
 namespace unstring {
+namespace {
 
-HourlySky make_hourly_sky(const SunYear& sun, std::span<const double> day_clearness) {
+std::vector<double> mean_year(const std::vector<double>& hours, int settling_years) {
+    std::vector<double> mean(kHours, 0.0);
+    const std::size_t first = static_cast<std::size_t>(settling_years) * kHours;
+    for (std::size_t at = first; at < hours.size(); ++at) mean[at % kHours] += hours[at];
+    for (double& value : mean) value /= static_cast<double>((hours.size() - first) / kHours);
+    return mean;
+}
+
+}  // namespace
+
+HourlySky make_hourly_sky(const SunYear& sun, std::span<const double> day_clearness, int settling_years) {
     if (day_clearness.size() % kDays != 0) throw std::logic_error("hourly sky: whole years of days are wanted");
     HourlySky sky;
     sky.years = static_cast<int>(day_clearness.size() / kDays);
+    sky.settling_years = settling_years;
     const std::size_t hours = day_clearness.size() * 24;
     sky.beam_like.assign(hours, 0.0);
     sky.even_sky.assign(hours, 0.0);
@@ -34,6 +46,9 @@ HourlySky make_hourly_sky(const SunYear& sun, std::span<const double> day_clearn
             sky.global[day * 24 + h] = global;
         }
     }
+    sky.mean_beam_like = mean_year(sky.beam_like, settling_years);
+    sky.mean_even_sky = mean_year(sky.even_sky, settling_years);
+    sky.mean_global = mean_year(sky.global, settling_years);
     return sky;
 }
 

@@ -85,6 +85,15 @@ void add_hour(SunYear& year, const Sky& sky, int day, int hour, int step_min) {
     year.first_step.push_back(static_cast<std::uint32_t>(year.steps.size()));
 }
 
+void bound_light(SunYear& year, std::size_t day) {
+    SunDay& today = year.days[day];
+    for (std::uint32_t hour = 0; hour < 24; ++hour) {
+        if (year.global_share[day * 24 + hour] <= 0) continue;
+        if (today.end_lit == 0) today.first_lit = hour;
+        today.end_lit = hour + 1;
+    }
+}
+
 /// The hour of a day whose centre is the first at or after solar noon.
 std::uint32_t noon_hour(const SunYear& year, std::size_t day) {
     std::uint32_t best = static_cast<std::uint32_t>(day * 24 + 12);
@@ -111,6 +120,7 @@ SunYear make_sun_year(LonLat place, DayModel model, int step_min, double clock_h
         const auto first = static_cast<std::size_t>(day) * 24;
         normalise(std::span(year.global_share).subspan(first, 24));
         normalise(std::span(year.diffuse_share).subspan(first, 24));
+        bound_light(year, static_cast<std::size_t>(day));
         year.noon[static_cast<std::size_t>(day)] = noon_hour(year, static_cast<std::size_t>(day));
     }
     return year;

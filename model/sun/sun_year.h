@@ -25,6 +25,7 @@ struct SunDay {
     double outside_wh_m2 = 0;        ///< irradiation of the horizontal outside the atmosphere
     double outside_normal_w_m2 = 0;  ///< normal to the sun
     double sunset_deg = 0;
+    std::uint32_t first_lit = 0, end_lit = 0;  ///< hours of the day (0..24) between which the sun gives anything
 };
 
 struct SunYear {

@@ -109,8 +109,10 @@ std::string metric_sibling(const std::string& crs) {
     const Pj feet = horizontal(context.get(), create(context.get(), crs));
     if (!feet) return {};
     const Pj with_axes(proj_crs_alter_cs_linear_unit(context.get(), feet.get(), "metre", 1.0, "EPSG", "9001"));
-    const Pj metres(with_axes ? proj_crs_alter_parameters_linear_unit(context.get(), with_axes.get(), "metre", 1.0, "EPSG", "9001", 1)
-                              : nullptr);
+    const Pj converted(with_axes ? proj_crs_alter_parameters_linear_unit(context.get(), with_axes.get(), "metre", 1.0, "EPSG", "9001", 1)
+                                 : nullptr);
+    // Without its old name, by which the registry would answer the system in feet again.
+    const Pj metres(converted ? proj_alter_name(context.get(), converted.get(), "unknown") : nullptr);
     if (!metres) return {};
     const std::string code = code_of(context.get(), metres.get());
     const auto facts = code.empty() ? Expected<CrsFacts>(tl::unexpected(Fault{})) : crs_facts(code);

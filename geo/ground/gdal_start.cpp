@@ -11,6 +11,7 @@ namespace unstring {
 namespace {
 
 void open_once() {
+    CPLSetErrorHandler(CPLQuietErrorHandler);  // errors are asked for where they matter, never printed
     // Set before the drivers register: what could reach a network or run another program is not even there.
     CPLSetConfigOption("GDAL_SKIP", "HTTP,WMS,WMTS,WCS,DAAS,PLMOSAIC,STACIT,STACTA,EEDAI,NGW,OGCAPI,VRT,DERIVED,PDF");
     CPLSetConfigOption("OGR_SKIP", "WFS,OAPIF,CSW,Elastic,Carto,AmigoCloud,NGW,EEDA,PLSCENES,ODBC,PostgreSQL,MySQL,MSSQLSpatial");
@@ -23,7 +24,6 @@ void open_once() {
     CPLSetConfigOption("OGR_GEOJSON_MAX_OBJ_SIZE", "200");
     CPLSetConfigOption("PROJ_NETWORK", "OFF");
     GDALAllRegister();
-    CPLSetErrorHandler(CPLQuietErrorHandler);
 }
 
 }  // namespace

@@ -84,7 +84,7 @@ bool sounds_like(const Field& field, std::string_view column) {
     const std::string name = normalised(column);
     if (name == normalised(field.name) || has_word(field.synonyms, name)) return true;
     const UnitWord* unit = unit_of(column);
-    if (unit == nullptr || !(takes(field.kind, unit->kind) || unit->kind == FieldKind::number)) return false;
+    if (unit == nullptr || field.kind == FieldKind::text || !(takes(field.kind, unit->kind) || unit->kind == FieldKind::number)) return false;
     const std::string bare = without_unit(column, *unit);
     std::string field_bare = normalised(field.name);
     if (const UnitWord* own = unit_of(field.name)) field_bare = without_unit(field.name, *own);

@@ -2,12 +2,14 @@
 
 #include <algorithm>
 #include <set>
+#include <tuple>
 
 namespace unstring {
 namespace {
 
 constexpr double kGain_m = 1e-7;
 constexpr int kMostPasses = 50;
+constexpr std::size_t kWindow = 16;  // slots rearranged at once
 
 class Insertion {
   public:
@@ -51,34 +53,65 @@ class Insertion {
     [[nodiscard]] double d(int a, int b) const { return d_(static_cast<std::size_t>(a), static_cast<std::size_t>(b)); }
     [[nodiscard]] int stop_at(std::size_t i) const { return order_[i == order_.size() ? 0 : i]; }
 
-    /// What the loop is longer for `stop` at place i, between those beside it.
+    /// The two legs of the stop at place i.
     [[nodiscard]] double detour_m(std::size_t i) const {
         return d(order_[i - 1], order_[i]) + d(order_[i], stop_at(i + 1));
     }
 
-    /// Slots front to back, each by the nearest to the one before it; then pairs change places while that shortens the loop.
+    /// Distance of a stop to where the slot should lie: between the numbered stops before and after it, by its share.
+    [[nodiscard]] double misfit_m(std::size_t slot, int stop) const {
+        std::size_t before = slot, after = slot;
+        while (order_[before] < 0) --before;
+        while (after < order_.size() && order_[after] < 0) ++after;
+        const double share = static_cast<double>(slot - before) / static_cast<double>(after - before);
+        return (1 - share) * d(order_[before], stop) + share * d(stop_at(after), stop);
+    }
+
+    /// The best fitting pairs of slot and stop first; then slots change places, turn round or shift while that shortens the loop.
     void fill_slots() {
-        std::vector<int> left = loose_;
-        for (const std::size_t slot : slots_) {
-            const auto nearest = std::min_element(left.begin(), left.end(), [&](int a, int b) {
-                return d(order_[slot - 1], a) < d(order_[slot - 1], b);
-            });
-            order_[slot] = *nearest;
-            left.erase(nearest);
-        }
+        std::vector<std::tuple<double, std::size_t, int>> fits;
+        for (const std::size_t slot : slots_)
+            for (const int stop : loose_) fits.emplace_back(misfit_m(slot, stop), slot, stop);
+        std::sort(fits.begin(), fits.end());
+        std::set<int> placed;
+        for (const auto& [misfit, slot, stop] : fits)
+            if (order_[slot] < 0 && placed.insert(stop).second) order_[slot] = stop;
         bool is_better = true;
         for (int pass = 0; is_better && pass < kMostPasses; ++pass) {
             is_better = false;
             for (std::size_t x = 0; x < slots_.size(); ++x)
-                for (std::size_t y = x + 1; y < slots_.size(); ++y) is_better = swap_slots(slots_[x], slots_[y]) || is_better;
+                for (std::size_t y = x + 1; y < std::min(slots_.size(), x + kWindow); ++y) is_better = rearrange(x, y) || is_better;
         }
     }
 
-    bool swap_slots(std::size_t x, std::size_t y) {
-        const double before_m = detour_m(x) + detour_m(y);
-        std::swap(order_[x], order_[y]);
-        if (detour_m(x) + detour_m(y) < before_m - kGain_m) return true;
-        std::swap(order_[x], order_[y]);
+    [[nodiscard]] double slots_m(std::size_t x, std::size_t y) const {
+        double metres = 0;
+        for (std::size_t k = x; k <= y; ++k) {
+            metres += d(order_[slots_[k] - 1], order_[slots_[k]]);
+            const bool leg_is_next_slots = k < y && slots_[k + 1] == slots_[k] + 1;
+            if (!leg_is_next_slots) metres += d(order_[slots_[k]], stop_at(slots_[k] + 1));
+        }
+        return metres;
+    }
+
+    /// Tries the stops in slots x..y with their ends exchanged, turned round, and shifted by one either way.
+    bool rearrange(std::size_t x, std::size_t y) {
+        const double before_m = slots_m(x, y);
+        std::vector<int> was;
+        for (std::size_t k = x; k <= y; ++k) was.push_back(order_[slots_[k]]);
+        const auto place = [&](const std::vector<int>& stops) {
+            for (std::size_t k = x; k <= y; ++k) order_[slots_[k]] = stops[k - x];
+        };
+        for (int kind = 0; kind < 4; ++kind) {
+            std::vector<int> stops = was;
+            if (kind == 0) std::swap(stops.front(), stops.back());
+            if (kind == 1) std::reverse(stops.begin(), stops.end());
+            if (kind == 2) std::rotate(stops.begin(), stops.begin() + 1, stops.end());
+            if (kind == 3) std::rotate(stops.begin(), stops.end() - 1, stops.end());
+            place(stops);
+            if (slots_m(x, y) < before_m - kGain_m) return true;
+        }
+        place(was);
         return false;
     }
 

@@ -19,7 +19,7 @@ constexpr double kNumbersAsShort = 1.02;  // of the shortest route found
 constexpr double kLongestChecked_m = 300; // pairs farther apart are no neighbours: their crossings are not counted
 
 struct Stops {  ///< 0 = the station, then lamps that have a place
-    bool has_station = false;  ///< else stop 0 lies at no distance from any: the route ends where it likes
+    bool has_station = false;  ///< else stop 0 lies at no distance from any and the loop is closed without it
     std::vector<MapPoint> places;
     std::vector<PoleIx> lamps;
     std::vector<std::optional<int>> numbers;
@@ -60,10 +60,10 @@ DistanceTable street_distances(const Stops& stops, const StreetIndex& streets) {
     return distances;
 }
 
-double length_m(const DistanceTable& distances, const std::vector<int>& order) {
-    double metres = distances(static_cast<std::size_t>(order.back()), static_cast<std::size_t>(order.front()));
-    for (std::size_t i = 1; i < order.size(); ++i)
-        metres += distances(static_cast<std::size_t>(order[i - 1]), static_cast<std::size_t>(order[i]));
+double length_m(const DistanceTable& distances, const Stops& stops, const std::vector<int>& order) {
+    const auto between_m = [&](int a, int b) { return distances(static_cast<std::size_t>(a), static_cast<std::size_t>(b)); };
+    double metres = stops.has_station ? between_m(order.back(), order.front()) : between_m(order.back(), order[1]);
+    for (std::size_t i = 1; i < order.size(); ++i) metres += between_m(order[i - 1], order[i]);
     return metres;
 }
 
@@ -77,11 +77,35 @@ std::vector<int> order_by_pole_numbers(const City& city, const Stops& stops) {
     return order;
 }
 
+RouteEffort effort_for(std::size_t stops) {
+    RouteEffort effort;
+    effort.rounds = 4 * static_cast<int>(stops);
+    return effort;
+}
+
+/// The closed route over the lamps alone, opened at its longest leg.
+std::vector<int> order_without_station(const DistanceTable& distances) {
+    const std::size_t lamps = distances.stops() - 1;
+    DistanceTable own(lamps);
+    for (std::size_t a = 0; a < lamps; ++a)
+        for (std::size_t b = 0; b < a; ++b) own.set(a, b, distances(a + 1, b + 1));
+    std::vector<int> order = closed_route(own, effort_for(lamps)).order;
+    const auto leg_m = [&](std::size_t i) {
+        return own(static_cast<std::size_t>(order[i]), static_cast<std::size_t>(order[(i + 1) % lamps]));
+    };
+    std::size_t longest = 0;
+    for (std::size_t i = 1; i < lamps; ++i)
+        if (leg_m(i) > leg_m(longest)) longest = i;
+    std::rotate(order.begin(), order.begin() + static_cast<long>((longest + 1) % lamps), order.end());
+    for (int& stop : order) ++stop;
+    order.insert(order.begin(), 0);
+    return order;
+}
+
 std::vector<int> order_on(const DistanceTable& distances, const Stops& stops, bool any_number) {
     if (any_number) return insert_unnumbered(distances, stops.numbers);
-    RouteEffort effort;
-    effort.rounds = 4 * static_cast<int>(distances.stops());
-    return closed_route(distances, effort).order;
+    if (!stops.has_station) return order_without_station(distances);
+    return closed_route(distances, effort_for(distances.stops())).order;
 }
 
 std::set<std::pair<int, int>> neighbour_pairs(const std::vector<int>& order) {
@@ -133,7 +157,7 @@ SettledOrder settle_order(const City& city, const Extent& extent, const StreetIn
         std::vector<int> order = order_on(distances, stops, any_number);
         if (!any_number) {
             std::vector<int> by_number = order_by_pole_numbers(city, stops);
-            if (length_m(distances, by_number) <= kNumbersAsShort * length_m(distances, order))
+            if (length_m(distances, stops, by_number) <= kNumbersAsShort * length_m(distances, stops, order))
                 order = std::move(by_number);
             else
                 turn_to_nearer(distances, order);

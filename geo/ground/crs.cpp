@@ -232,4 +232,11 @@ Expected<double> scale_factor(const std::string& crs, MapPoint at) {
     return grid_north(crs, at).map([](const GridNorth& north) { return north.scale; });
 }
 
+std::string crs_wkt(const std::string& crs) {
+    const Context context = new_context();
+    const Pj pj = create(context.get(), crs);
+    const char* text = pj ? proj_as_wkt(context.get(), pj.get(), PJ_WKT1_GDAL, nullptr) : nullptr;
+    return text != nullptr ? text : "";
+}
+
 }  // namespace unstring

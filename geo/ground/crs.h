@@ -58,5 +58,7 @@ class CrsTransform {
 
 /// Map distance over ground distance along the meridian at a point of a system in metres.
 [[nodiscard]] Expected<double> scale_factor(const std::string& crs, MapPoint at);
+/// WKT 1 as GeoPackage keeps it; empty where the system is not known or has no such form.
+[[nodiscard]] std::string crs_wkt(const std::string& crs);
 
 }  // namespace unstring

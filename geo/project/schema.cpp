@@ -1,6 +1,5 @@
 #include "geo/project/schema.h"
 
-#include <cstdio>
 #include <cstdlib>
 #include <filesystem>
 #include <set>

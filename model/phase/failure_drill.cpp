@@ -69,7 +69,7 @@ double failure_frac(const PriceBook& prices, const Transformer& unit, int year) 
     constexpr double kYoungTo = 40, kOldFrom = 60;
     const double young = prices.at("unit_fail_frac", year);
     const double old = prices.at("unit_fail_old_frac", year);
-    const auto made = read_date(unit.made);
+    const auto made = date_of(unit.made);
     if (!made) return young;
     const double share = std::clamp((year - made->year - kYoungTo) / (kOldFrom - kYoungTo), 0.0, 1.0);
     return young + share * (old - young);

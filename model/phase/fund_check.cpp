@@ -30,7 +30,7 @@ bool holds(std::string_view list, std::string_view word) {
 std::vector<Finding> fund_findings(const PhaseFacts& facts, CashBook& book) {
     std::vector<Finding> findings;
     for (const YearBudget& row : facts.city.budget) {
-        const auto by = read_date(row.spend_by);
+        const auto by = date_of(row.spend_by);
         if (row.fund.empty() || !row.money || !by) continue;
         Cents spent = 0;
         for (std::size_t i = 0; i < facts.pole_year.size(); ++i) {

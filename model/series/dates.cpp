@@ -16,7 +16,7 @@ std::optional<int> read_digits(std::string_view text, std::size_t digits) {
 
 }  // namespace
 
-std::optional<Date> read_date(std::string_view text) {
+std::optional<Date> date_of(std::string_view text) {
     const bool has_month = text.size() >= 7;
     const bool has_day = text.size() == 10;
     if (text.size() != 4 && text.size() != 7 && text.size() != 10) return std::nullopt;

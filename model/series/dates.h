@@ -13,6 +13,6 @@ struct Date {
 };
 
 /// "1962", "1962-05", "1962-05-17"; nothing for another form or a day that the calendar does not have.
-[[nodiscard]] std::optional<Date> read_date(std::string_view text);
+[[nodiscard]] std::optional<Date> date_of(std::string_view text);
 
 }  // namespace unstring

@@ -109,7 +109,7 @@ std::vector<UnitFit> units_that_fit(const City& city, const std::vector<Transfor
 }
 
 bool is_untested(const Transformer& unit, int year) {
-    const std::optional<Date> tested = read_date(unit.tested);
+    const std::optional<Date> tested = date_of(unit.tested);
     if (!tested) return true;
     return year > 0 && year - tested->year > kTestGoodYears;
 }

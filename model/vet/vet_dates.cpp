@@ -22,7 +22,7 @@ struct DateField {
 std::optional<Date> vet_date(const VetInput& vet, const char* table, const RowRef& from, const std::string& id, DateField field) {
     if (field.text.empty()) return std::nullopt;
     const int last_year = vet.year > 0 ? vet.year : kLastYear;
-    const std::optional<Date> date = read_date(field.text);
+    const std::optional<Date> date = date_of(field.text);
     if (date && date->year >= kFirstYear && date->year <= last_year) return date;
     vet.add("date-odd", table, from, id, fmt::format("{} {}", field.name, field.text),
             fmt::format("YYYY, YYYY-MM or YYYY-MM-DD, {} to {}", kFirstYear, last_year), "mend the date, or leave it blank");
@@ -38,7 +38,7 @@ int year_of_records(const City& city) {
     if (first_budget > 0) return first_budget;
     int latest = 0;
     const auto consider = [&](const std::string& text) {
-        if (const auto date = read_date(text); date && date->year <= kLastYear) latest = std::max(latest, date->year);
+        if (const auto date = date_of(text); date && date->year <= kLastYear) latest = std::max(latest, date->year);
     };
     for (const Transformer& unit : city.transformers) consider(unit.tested);
     for (const SeriesString& string : city.strings) consider(string.asfound_date);

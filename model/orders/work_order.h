@@ -25,6 +25,15 @@ struct OrderPole {
     PoleIx pole;
     std::string id, street, task, head, warning;  ///< warning: "live series cable in base: line crew opens"
     double volts = 0;  ///< planned, lighting circuit only
+    MapPoint place;
+};
+
+struct LoopBead {  ///< one lamp of the string's loop, in wiring order: what the sketch draws
+    PoleIx pole;
+    std::string id;
+    MapPoint place;
+    bool leaves_now = false, burns_after = false;
+    bool cable_live_after = false;  ///< series cable in its base stays live
 };
 
 struct Material {
@@ -38,16 +47,19 @@ struct WorkOrder {
     Crew crew = Crew::line;
     StringIx string;
     std::string title;
-    std::vector<OrderPole> poles;
+    std::string string_id, unit_id;  ///< unit in service while the work is done, empty = none
+    std::vector<OrderPole> poles;    ///< in working order, far end first
+    std::vector<LoopBead> loop;
     std::vector<std::string> cautions;
     std::vector<OrderStep> steps;
     std::vector<Material> materials;
     std::vector<std::pair<std::string, std::string>> facts;   ///< what the crew should know: "open-circuit kV", "6.3 (estimate)"
     std::vector<std::pair<std::string, std::string>> as_found;  ///< boxes to fill in: label, unit
-    double planned_volts_before = 0, planned_volts_after = 0, lamp_volts = 0;
+    double planned_volts_before = 0, planned_volts_after = 0;
+    double lamp_volts = 0;  ///< of one lamp that leaves, the mean
     double open_circuit_v = 0;
     bool open_circuit_is_estimate = true;
-    std::string switch_on_time;  ///< local solar time of the month, HH:MM
+    std::string switch_on_time;  ///< earliest of the year, local solar time, HH:MM; the twelve months stand in `facts`
     std::vector<std::string> after;  ///< ids of orders that must be signed off before this one
     std::vector<std::string> findings;  ///< in words: open findings at its poles and string
     double hours = 0;

@@ -29,7 +29,9 @@ struct LinearCharge {
     double unit(int t, int cls, bool /*held_before*/) const {
         return cls == kNoClass ? 0 : prices.unit[static_cast<std::size_t>(t)][static_cast<std::size_t>(cls)];
     }
-    double left(double /*penalty*/) const { return 0; }
+    double steer(double /*penalty*/) const { return 0; }
+    double section(int /*t*/, int /*k*/) const { return 0; }
+    double state(int /*t*/, int /*n*/) const { return 0; }
 };
 
 /// Over-runs of what the others leave, charged steeply.
@@ -56,7 +58,13 @@ struct RoomCharge {
         const bool bought_before = held_before && t > 0 && !is_there(t - 1, cls);
         return bought_before ? 0 : price;
     }
-    double left(double penalty) const { return penalty; }
+    double steer(double penalty) const { return penalty; }
+    double section(int t, int k) const {
+        return room.section_penalty.empty() ? 0 : room.section_penalty[static_cast<std::size_t>(t)][static_cast<std::size_t>(k)];
+    }
+    double state(int t, int n) const {
+        return room.state_penalty.empty() ? 0 : room.state_penalty[static_cast<std::size_t>(t)][static_cast<std::size_t>(n)];
+    }
 };
 
 template <class Charge> class ColumnSearch {
@@ -100,9 +108,14 @@ template <class Charge> class ColumnSearch {
     double live_cost(int t, int n, int c) const {
         if (is_banned(t, c)) return kNever;
         double cost = string_.state_cost[static_cast<std::size_t>(t)][static_cast<std::size_t>(n)][static_cast<std::size_t>(c)];
-        if (t + 1 == years_ && !string_.left_penalty.empty())
-            cost += charge_.left(string_.left_penalty[static_cast<std::size_t>(n)]);
-        return cost;
+        if (!string_.state_penalty.empty())
+            cost += charge_.steer(string_.state_penalty[static_cast<std::size_t>(t)][static_cast<std::size_t>(n)][static_cast<std::size_t>(c)]);
+        return cost + end_penalty(t, n);
+    }
+
+    double end_penalty(int t, int n) const {
+        if (t + 1 != years_ || string_.left_penalty.empty()) return 0;
+        return charge_.steer(string_.left_penalty[static_cast<std::size_t>(n)]);
     }
 
     void step(int t, const std::vector<double>& before) {
@@ -119,12 +132,28 @@ template <class Charge> class ColumnSearch {
                     }
                     work += string_.work_cost[year][static_cast<std::size_t>(next - 1)];
                     use = plus(use, string_.work_use[year][static_cast<std::size_t>(next - 1)]);
+                    work += charge_.section(t, next - 1);
                 }
                 if (next < least(t)) continue;
-                if (next == string_.sections && string_.ends[year] != 0) finish(t, n, work + charge_.use(t, use), before);
-                else carry_on(t, n, next, work, use, before);
+                const double whole = work + jump_cost(t, n, next) + charge_.state(t, next);
+                const Use whole_use = with_jump(t, n, next, use);
+                if (next == string_.sections && string_.ends[year] != 0) finish(t, n, whole, whole_use, before);
+                else carry_on(t, n, next, whole, whole_use, before);
             }
         }
+    }
+
+    double jump_cost(int t, int n, int next) const {
+        if (next == n || string_.jump_cost.empty()) return 0;
+        const auto year = static_cast<std::size_t>(t), from = static_cast<std::size_t>(n), by = static_cast<std::size_t>(next - n - 1);
+        double cost = string_.jump_cost[year][from][by];
+        if (!string_.jump_penalty.empty()) cost += charge_.steer(string_.jump_penalty[year][from][by]);
+        return cost;
+    }
+
+    Use with_jump(int t, int n, int next, const Use& use) const {
+        if (next == n || string_.jump_use.empty()) return use;
+        return plus(use, string_.jump_use[static_cast<std::size_t>(t)][static_cast<std::size_t>(n)][static_cast<std::size_t>(next - n - 1)]);
     }
 
     bool any_finite(const std::vector<double>& before, int n) const {
@@ -133,12 +162,15 @@ template <class Charge> class ColumnSearch {
         return false;
     }
 
-    void finish(int t, int n, double cost, const std::vector<double>& before) {
+    void finish(int t, int n, double work, const Use& use, const std::vector<double>& before) {
         const auto year = static_cast<std::size_t>(t);
+        const double idle_cost = work + charge_.use(t, use);
+        const Use with_end = string_.finish_use.empty() ? use : plus(use, string_.finish_use[year]);
+        const double end_cost = work + string_.finish_cost[year] + charge_.use(t, with_end);
         for (int c = 0; c <= classes_; ++c) {
-            const double ends = n < string_.sections || c < classes_ ? string_.finish_cost[year] : 0;
+            const bool ends_now = n < string_.sections || c < classes_;
             const double start = before[static_cast<std::size_t>(state(n, c))];
-            reach(t, state(string_.sections, classes_), start + cost + ends + string_.done_cost[year], state(n, c));
+            reach(t, state(string_.sections, classes_), start + (ends_now ? end_cost : idle_cost) + string_.done_cost[year], state(n, c));
         }
     }
 
@@ -203,12 +235,23 @@ ColumnFigures column_figures(const PackageCase& packages, std::size_t place, con
             figures.cost += string.work_cost[t][static_cast<std::size_t>(k)];
             use = plus(use, string.work_use[t][static_cast<std::size_t>(k)]);
         }
+        if (next > n && !string.jump_cost.empty()) {
+            const auto from = static_cast<std::size_t>(n), by = static_cast<std::size_t>(next - n - 1);
+            figures.cost += string.jump_cost[t][from][by];
+            if (!string.jump_use.empty()) use = plus(use, string.jump_use[t][from][by]);
+            if (!string.jump_penalty.empty()) figures.penalty += string.jump_penalty[t][from][by];
+        }
         int in_class = kNoClass;
         if (next == string.sections && string.ends[t] != 0) {
-            figures.cost += string.done_cost[t] + (n < next || c != kNoClass ? string.finish_cost[t] : 0);
+            figures.cost += string.done_cost[t];
+            if (n < next || c != kNoClass) {
+                figures.cost += string.finish_cost[t];
+                if (!string.finish_use.empty()) use = plus(use, string.finish_use[t]);
+            }
         } else {
             const auto to = static_cast<std::size_t>(plan.cls[t]);
             figures.cost += string.state_cost[t][static_cast<std::size_t>(next)][to];
+            if (!string.state_penalty.empty()) figures.penalty += string.state_penalty[t][static_cast<std::size_t>(next)][to];
             if (plan.cls[t] != c) {
                 figures.cost += string.swap_cost[t];
                 use = plus(use, string.swap_use[t]);
@@ -221,7 +264,7 @@ ColumnFigures column_figures(const PackageCase& packages, std::size_t place, con
         c = plan.cls[t];
     }
     if (n < string.sections && !string.left_penalty.empty())
-        figures.left_penalty = string.left_penalty[static_cast<std::size_t>(n)];
+        figures.penalty += string.left_penalty[static_cast<std::size_t>(n)];
     return figures;
 }
 

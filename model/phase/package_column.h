@@ -7,7 +7,7 @@ namespace unstring {
 
 struct ColumnFigures {
     double cost = 0;            ///< discounted; kNever where a state is not legal
-    double left_penalty = 0;
+    double penalty = 0;         ///< of the string's own: sections left, jumps and states to be avoided
     std::vector<Use> use;       ///< [t]
     std::vector<int> in_class;  ///< [t] place in PackageCase.classes in service at the year's end, kNoClass = none of the pool
 };
@@ -25,6 +25,8 @@ struct Room {
     std::vector<Use> use;                          ///< [t][limit] left; may be negative
     std::vector<std::vector<char>> unit_is_there;  ///< [t][class] one more may be in service without a purchase
     Use over_price{};                              ///< of a unit of over-run
+    std::vector<std::vector<double>> section_penalty;  ///< [t][k] of doing section k in year t: it waits for another string
+    std::vector<std::vector<double>> state_penalty;    ///< [t][n] of being there: another string's section waits for it
 };
 
 struct ColumnLimits {  ///< of a branch of the exact search

@@ -33,6 +33,19 @@ Counts buy(const PackageCase& packages, const Counts& in_service, PackagePlan& p
 
 }  // namespace
 
+int year_done(const StringPlan& plan, int section) {
+    for (std::size_t t = 0; t < plan.done.size(); ++t)
+        if (plan.done[t] > section) return static_cast<int>(t);
+    return -1;
+}
+
+bool is_broken(const PackageWait& wait, const std::vector<StringPlan>& strings) {
+    const int t = year_done(strings[wait.waiting], wait.section);
+    if (t < 0) return false;
+    const auto year = static_cast<std::size_t>(t);
+    return wait.blocks[year][static_cast<std::size_t>(strings[wait.blocking].done[year])] != 0;
+}
+
 int units_wanting(const PackageCase& packages, std::size_t t, std::size_t cls, int in_service) {
     if (in_service == 0) return 0;
     const double wanting = packages.pool_factor * in_service - packages.owned[t][cls];
@@ -47,7 +60,7 @@ PackagePlan add_up(const PackageCase& packages, std::vector<StringPlan> strings,
     for (std::size_t s = 0; s < strings.size(); ++s) {
         const ColumnFigures figures = column_figures(packages, s, strings[s]);
         plan.cost += figures.cost;
-        plan.penalty += figures.left_penalty;
+        plan.penalty += figures.penalty;
         for (std::size_t t = 0; t < years; ++t) {
             for (std::size_t l = 0; l < kLimits; ++l) use[t][l] += figures.use[t][l];
             if (figures.in_class[t] != kNoClass) ++in_service[t][static_cast<std::size_t>(figures.in_class[t])];
@@ -61,6 +74,8 @@ PackagePlan add_up(const PackageCase& packages, std::vector<StringPlan> strings,
             plan.over.push_back({static_cast<int>(t), l, by});
             plan.penalty += by * over_price[l];
         }
+    for (const PackageWait& wait : packages.waits)
+        if (is_broken(wait, strings)) plan.penalty += packages.wait_penalty;
     plan.strings = std::move(strings);
     return plan;
 }
@@ -78,7 +93,7 @@ Use steep_over_price(const PackageCase& packages) {
         double largest = 0;
         for (const Use& limit : packages.limit)
             if (limit[l] < kNever) largest = std::max(largest, limit[l]);
-        price[l] = 10 * dearest / std::max(1.0, largest);
+        price[l] = packages.over_weight * dearest / std::max(1.0, largest);
     }
     return price;
 }

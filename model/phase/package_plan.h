@@ -9,7 +9,11 @@ namespace unstring {
 /// @param over_price  penalty of a unit of over-run
 [[nodiscard]] PackagePlan add_up(const PackageCase& packages, std::vector<StringPlan> strings, const Use& over_price);
 
-/// Steep enough that no saving pays for an over-run: a year's limit over-run whole costs ten times the dearest plan.
+/// The year (0-based) at whose end a section is done; -1 = never.
+[[nodiscard]] int year_done(const StringPlan& plan, int section);
+[[nodiscard]] bool is_broken(const PackageWait& wait, const std::vector<StringPlan>& strings);
+
+/// Steep enough that no saving pays for an over-run: a year's limit over-run whole costs over_weight dearest plans.
 [[nodiscard]] Use steep_over_price(const PackageCase& packages);
 
 /// Units of a class to buy until the end of year t so that `in_class` may be in service.

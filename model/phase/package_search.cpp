@@ -31,7 +31,7 @@ class Hand {
 
     /// Puts a string back at its best; false when it has no legal plan.
     bool put_best(std::size_t s) {
-        PricedColumn best = best_column_in(packages_, s, room());
+        PricedColumn best = best_column_in(packages_, s, room(s));
         if (best.value == kNever) return false;
         put(s, std::move(best.plan));
         return true;
@@ -53,8 +53,32 @@ class Hand {
         }
     }
 
-    Room room() const {
+    void add_waits(std::size_t s, Room& room) const {
+        const auto sections = static_cast<std::size_t>(packages_.strings[s].sections);
+        for (const PackageWait& wait : packages_.waits) {
+            const bool waits = wait.waiting == s && has_[wait.blocking] != 0;
+            const bool blocks = wait.blocking == s && has_[wait.waiting] != 0;
+            if (!waits && !blocks) continue;
+            if (room.section_penalty.empty()) {
+                room.section_penalty.assign(used_.size(), std::vector<double>(sections, 0));
+                room.state_penalty.assign(used_.size(), std::vector<double>(sections + 1, 0));
+            }
+            if (waits)
+                for (std::size_t t = 0; t < used_.size(); ++t)
+                    if (wait.blocks[t][static_cast<std::size_t>(plans_[wait.blocking].done[t])] != 0)
+                        room.section_penalty[t][static_cast<std::size_t>(wait.section)] += packages_.wait_penalty;
+            if (!blocks) continue;
+            const int done = year_done(plans_[wait.waiting], wait.section);
+            if (done < 0) continue;
+            const auto t = static_cast<std::size_t>(done);
+            for (std::size_t n = 0; n <= sections; ++n)
+                if (wait.blocks[t][n] != 0) room.state_penalty[t][n] += packages_.wait_penalty;
+        }
+    }
+
+    Room room(std::size_t s) const {
         Room room;
+        add_waits(s, room);
         room.over_price = over_price_;
         room.use = packages_.limit;
         room.unit_is_there.assign(used_.size(), std::vector<char>(static_cast<std::size_t>(packages_.classes), 0));

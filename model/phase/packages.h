@@ -30,9 +30,25 @@ struct PackageString {
     std::vector<char> ends;               ///< [t] nothing burns at the year's end once all sections are done
     std::vector<double> done_cost;        ///< [t] of a string that has ended
     std::vector<double> finish_cost;      ///< [t] once, in the year in which it ends
+    std::vector<Use> finish_use;          ///< [t]; may be empty
+    /// [t][n][next - n - 1] of going from n to `next` sections done in one year, beside the sections' own work: jumpers,
+    /// splices, new cable. May be empty.
+    std::vector<std::vector<std::vector<double>>> jump_cost;
+    std::vector<std::vector<std::vector<Use>>> jump_use;
     std::vector<double> mobilise_cost, swap_cost;  ///< [t] once a year with work; when another class goes in service
     std::vector<Use> mobilise_use, swap_use;       ///< [t]
+    std::vector<std::vector<std::vector<double>>> jump_penalty;   ///< as jump_cost; steers the search only; may be empty
+    std::vector<std::vector<std::vector<double>>> state_penalty;  ///< as state_cost; likewise
     std::vector<double> left_penalty;     ///< [n] steers the search away from stopping at n < sections; no cost; may be empty
+};
+
+/// A section that may not be done while another string is in certain states: a duct that its cable still occupies, a
+/// control that another string still needs.
+struct PackageWait {
+    std::size_t waiting = 0;  ///< string
+    int section = 0;          ///< of the waiting string
+    std::size_t blocking = 0; ///< string, another one (within one string a wait is part of jump_penalty)
+    std::vector<std::vector<char>> blocks;  ///< [t][n] the section may not be done in year t that ends in this state
 };
 
 struct PackageCase {
@@ -41,6 +57,9 @@ struct PackageCase {
     double pool_factor = 1;                   ///< in service x this <= owned + bought
     std::vector<std::vector<double>> owned;   ///< [t][class]
     std::vector<double> buy_cost;             ///< [t] of one whole unit, there from year t on; kNever = none to be had
+    std::vector<PackageWait> waits;           ///< kept by the search at wait_penalty, left out of bounds
+    double wait_penalty = 1e7;
+    double over_weight = 10;                  ///< a limit over-run by its whole costs this many dearest plans
     double unit_penalty = 1e7;                ///< for a unit that is not there, where none can be bought
     std::vector<Use> limit;                   ///< [t], kNever = no limit
     std::vector<PackageString> strings;

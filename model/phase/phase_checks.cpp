@@ -163,6 +163,7 @@ class Checks {
 
     void check_lead_times() {
         for (std::size_t i = 0; i < facts_.decide.circuits.size(); ++i) {
+            if (!facts_.decide.circuits[i].service.is_valid()) continue;
             const ServicePoint& service = facts_.city.services[facts_.decide.circuits[i].service.place()];
             const int ready = service_ready_year(facts_.city, facts_.prices, facts_.plan.settings, facts_.decide.circuits[i].service);
             if (facts_.connection_year[i] == 0 || facts_.connection_year[i] >= ready) continue;

@@ -3,7 +3,6 @@
 #include <algorithm>
 
 #include "model/money/hours.h"
-#include "model/money/new_light.h"
 #include "model/money/works.h"
 
 namespace unstring {
@@ -127,7 +126,7 @@ void fill_ledger(const PhaseFacts& facts, CashBook& book, bool with_lines, Phase
         if (with_lines) sum.add_lines(span_lines(book.input(), facts.decide.spans[i], facts.span_year[i]));
     }
     for (std::size_t i = 0; i < facts.decide.circuits.size(); ++i) {
-        if (facts.connection_year[i] == 0) continue;
+        if (facts.connection_year[i] == 0 || !facts.decide.circuits[i].service.is_valid()) continue;
         const ServiceIx service = facts.decide.circuits[i].service;
         sum.add(book.connection(service, facts.connection_year[i]));
         if (with_lines) sum.add_lines(connection_lines(book.input(), service, facts.connection_year[i]));
@@ -141,14 +140,12 @@ void fill_ledger(const PhaseFacts& facts, CashBook& book, bool with_lines, Phase
 }
 
 CrewHours span_crew_hours(const City& city, const PriceBook& prices, const CircuitSpan& span, int year) {
-    double sound = 1;
-    Surface surface = Surface::verge;
     const PoleIx at = span.duct_to.is_valid() ? span.duct_to : span.pole;
-    if (span.kind == SpanKind::conduit && at.is_valid()) {
-        sound = duct_sound_frac(prices, city.poles[at.place()].duct, year);
-        surface = surface_at(city, city.poles[at.place()]);
-    }
-    return crew_hours(span_hours(prices, work_of(span.kind), span.length_m, year, sound, surface));
+    const bool has_duct = span.kind == SpanKind::conduit && at.is_valid();
+    const double sound = has_duct ? duct_sound_frac(prices, city.poles[at.place()].duct, year) : 1;
+    CrewHours hours = crew_hours(span_hours(prices, work_of(span.kind), span.length_m, year, sound, span.surface));
+    hours.civil += span.boxes / prices.at("pace_pull_box", year) * prices.at("crew_civil", year) * prices.at("day_hours", year);
+    return hours;
 }
 
 CrewHours connection_crew_hours(const City& city, const PriceBook& prices, ServiceIx service, int year) {
@@ -168,7 +165,7 @@ std::vector<CrewHours> hours_of(const PhaseFacts& facts) {
         if (facts.span_year[i] != 0)
             add(at(facts.span_year[i]), span_crew_hours(facts.city, facts.prices, facts.decide.spans[i], facts.span_year[i]));
     for (std::size_t i = 0; i < facts.decide.circuits.size(); ++i)
-        if (facts.connection_year[i] != 0)
+        if (facts.connection_year[i] != 0 && facts.decide.circuits[i].service.is_valid())
             add(at(facts.connection_year[i]), connection_crew_hours(facts.city, facts.prices, facts.decide.circuits[i].service, facts.connection_year[i]));
     for (std::size_t s = 0; s < facts.loops.size(); ++s)
         for (const StringYearCash& cash : string_cash(facts, s)) {

@@ -1,29 +1,10 @@
 #pragma once
-// A small city with a value in every kind of column, and a folder that goes away with the test.
-
-#include <filesystem>
-#include <string>
-
-#include <unistd.h>
+// A small city with a value in every kind of column.
 
 #include "geo/project/city_tables.h"
+#include "tests/support/temp_folder.h"
 
 namespace unstring::tests {
-
-class TempFolder {
-  public:
-    TempFolder() {
-        std::string pattern = (std::filesystem::temp_directory_path() / "unstring-test-XXXXXX").string();
-        path_ = mkdtemp(pattern.data());
-    }
-    ~TempFolder() { std::filesystem::remove_all(path_); }
-    TempFolder(const TempFolder&) = delete;
-    TempFolder& operator=(const TempFolder&) = delete;
-    [[nodiscard]] std::string file(const std::string& name) const { return (std::filesystem::path(path_) / name).string(); }
-
-  private:
-    std::string path_;
-};
 
 inline CityTables sample_tables() {
     CityTables tables;

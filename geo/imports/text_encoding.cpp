@@ -82,15 +82,16 @@ Expected<DecodedText> decode_as(std::string_view bytes, const std::string& encod
     if (!text)
         return tl::unexpected(Fault{FaultCode::file_broken, file, 0, {}, fmt::format("bytes that are not {}", encoding),
                                     fmt::format("a text in {}", encoding), "give the right --encoding"});
-    return DecodedText{std::move(*text), encoding, false, {}};
+    return DecodedText{std::move(*text), encoding, false, {}, 0};
 }
 
 DecodedText guess(std::string_view bytes) {
     // Latin-1 takes every byte, so the guess always comes to an end.
     for (const std::string encoding : {"WINDOWS-1252", "ISO-8859-1"})
         if (auto text = Converter(encoding).to_utf8(bytes)) {
+            const auto odd = std::find_if(bytes.begin(), bytes.end(), [](char c) { return static_cast<unsigned char>(c) >= 0x80U; });
             std::string sample = sample_of(*text);
-            return {std::move(*text), encoding, true, std::move(sample)};
+            return {std::move(*text), encoding, true, std::move(sample), 1 + std::count(bytes.begin(), odd, '\n')};
         }
     return {};
 }
@@ -115,7 +116,7 @@ Expected<DecodedText> decode_text(std::string bytes, const std::string& encoding
         return tl::unexpected(Fault{FaultCode::file_broken, file, 0, {}, "NUL bytes", "a text file",
                                     "export the table as CSV; a UTF-16 file without mark needs --encoding UTF-16LE"});
     if (view.starts_with(kUtf8Mark)) bytes.erase(0, kUtf8Mark.size());
-    if (!is_wide && is_utf8(bytes)) return DecodedText{std::move(bytes), "UTF-8", false, {}};
+    if (!is_wide && is_utf8(bytes)) return DecodedText{std::move(bytes), "UTF-8", false, {}, 0};
     if (!encoding.empty()) return decode_as(bytes, encoding, file);
     return guess(bytes);
 }

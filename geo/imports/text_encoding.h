@@ -13,6 +13,7 @@ struct DecodedText {
     std::string encoding;  ///< "UTF-8", "UTF-16LE", the one given, or the one guessed
     bool is_guessed = false;
     std::string sample;    ///< of a guessed text: the first words with a letter beyond ASCII
+    long sample_line = 0;  ///< the line that they stand in, 1 = the first
 };
 
 /// By the byte order mark; else UTF-8 where the bytes are; else `encoding`; else guessed as Windows-1252.

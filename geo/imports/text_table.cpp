@@ -177,7 +177,8 @@ Fault broken(const std::string& file, std::string found, std::string wanted, std
     return {FaultCode::file_broken, file, 0, {}, std::move(found), std::move(wanted), std::move(remedy)};
 }
 
-void set_columns(Table& table, const Record& header, std::vector<Finding>& findings, long line) {
+void set_columns(Table& table, Record& header, std::vector<Finding>& findings, long line) {
+    while (header.cells.size() > 1 && header.cells.back().empty()) header.cells.pop_back();  // a delimiter at the line's end
     for (const std::string_view cell : header.cells) {
         std::string name(cell);
         const bool is_twice = !name.empty() && std::find(table.columns.begin(), table.columns.end(), name) != table.columns.end();
@@ -186,7 +187,6 @@ void set_columns(Table& table, const Record& header, std::vector<Finding>& findi
                                             "each column once", "the first one is read; rename the other", table.name));
         table.columns.push_back(is_twice ? std::string() : std::move(name));
     }
-    while (table.columns.size() > 1 && table.columns.back().empty()) table.columns.pop_back();
 }
 
 /// Extra cells are forgiven where they are empty (a delimiter at the line's end).
@@ -245,7 +245,7 @@ Expected<Table> read_text_table(const std::string& path, const std::string& name
     auto text = decode_text(std::move(*bytes), encoding, path);
     if (!text) return tl::unexpected(text.error());
     if (text->is_guessed)
-        findings.push_back(make_finding("encoding-guessed", path, 0, {}, fmt::format("read as {}: \"{}\"", text->encoding, text->sample),
+        findings.push_back(make_finding("encoding-guessed", path, text->sample_line, {}, fmt::format("read as {}: \"{}\"", text->encoding, text->sample),
                                         "UTF-8", "look at the sample; give --encoding if it is wrong", name));
     return parse_text_table(std::move(text->utf8), path, name, findings);
 }

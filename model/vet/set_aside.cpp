@@ -17,7 +17,8 @@ template <class Record> bool is_named(const Record& record, const std::string& i
     return !finding.record.empty() && id == finding.record;
 }
 
-std::string cutback_id(const CutBack& cutback) { return cutback.string_given + " " + cutback.pole_a + " " + cutback.pole_b; }
+/// A cut-back has no id of its own: its findings name its string, and it by its row.
+std::string cutback_id(const CutBack& cutback) { return cutback.string_given; }
 
 template <class Table, class IdOf, class Visit> void visit_named(Table& table, IdOf id_of, const Finding& finding, Visit visit) {
     for (auto& record : table)

@@ -32,7 +32,7 @@ struct VetInput {
 /// First year of the budget, else the latest year that a test or reading bears.
 [[nodiscard]] int year_of_records(const City& city);
 
-void vet_ids(const VetInput& vet);          ///< pole-id-twice, pole-near-twin, unit-twice
+void vet_ids(const VetInput& vet);          ///< pole-id-twice, pole-near-twin, transformer-twice
 void vet_places(const VetInput& vet);       ///< place-missing, place-swapped, place-far, station-missing
 void vet_references(const VetInput& vet);   ///< string-unknown, pole-unknown, control-unknown
 void vet_lamps(const VetInput& vet);        ///< lamp-unknown, led-on-string

@@ -69,13 +69,13 @@ void vet_unit_ids(const VetInput& vet) {
     for (const Transformer& unit : vet.city.transformers) {
         if (unit.set_aside) continue;
         if (const auto [first, is_new] = by_id.try_emplace(unit.id, &unit); !is_new)
-            vet.add("unit-twice", kTransformersTable, unit.from, unit.id, fmt::format("also in row {}", first->second->from.row),
+            vet.add("transformer-twice", kTransformersTable, unit.from, unit.id, fmt::format("also in row {}", first->second->from.row),
                     "one row for each unit, or two that differ in the string alone", "give one of the two its own id");
         else if (unit.strings.size() > 2)
-            vet.add("unit-twice", kTransformersTable, unit.from, unit.id, fmt::format("feeds {} strings", unit.strings.size()),
+            vet.add("transformer-twice", kTransformersTable, unit.from, unit.id, fmt::format("feeds {} strings", unit.strings.size()),
                     "one string, or two of a two-loop unit", "mend the string_id of its rows");
         else if (unit.strings.size() == 2 && unit.strings[0] == unit.strings[1])
-            vet.add("unit-twice", kTransformersTable, unit.from, unit.id, "two rows with one string",
+            vet.add("transformer-twice", kTransformersTable, unit.from, unit.id, "two rows with one string",
                     "one row, or two strings of a two-loop unit", "delete one row");
     }
 }

@@ -2,7 +2,8 @@
 
 #include <algorithm>
 #include <map>
-#include <set>
+#include <utility>
+#include <vector>
 
 #include <fmt/format.h>
 
@@ -26,46 +27,54 @@ void vet_twice(const VetInput& vet, const std::vector<PoleIx>& lamps) {
     }
 }
 
+/// One finding for a string without any number, at its first lamp; else one for each lamp.
 void vet_missing(const VetInput& vet, const SeriesString& string, const std::vector<PoleIx>& lamps) {
     std::vector<const Pole*> without;
     for (const PoleIx lamp : lamps)
         if (!has_number(vet.city.poles[lamp.place()])) without.push_back(&vet.city.poles[lamp.place()]);
-    if (without.size() == lamps.size())
-        vet.add("order-missing", kCircuitsTable, string.from, string.id, fmt::format("none of {} lamps has an order", lamps.size()),
+    if (without.size() == lamps.size()) {
+        const Pole& first = **std::min_element(without.begin(), without.end(),
+                                               [](const Pole* a, const Pole* b) { return a->from.row < b->from.row; });
+        vet.add("order-missing", kPolesTable, first.from, first.id,
+                fmt::format("none of the {} lamps of string {} has an order", lamps.size(), string.id),
                 "wiring order 1..n from the station out", "trace the loop; until then the order is inferred from the map");
-    else
-        for (const Pole* pole : without)
-            vet.add("order-missing", kPolesTable, pole->from, pole->id, "no order", "its number in string " + string.id,
-                    "trace the loop there; until then its place is inferred from the map");
+        return;
+    }
+    for (const Pole* pole : without)
+        vet.add("order-missing", kPolesTable, pole->from, pole->id, "no order", "its number in string " + string.id,
+                "trace the loop there; until then its place is inferred from the map");
 }
 
-/// Numbers from 1 to the highest that no row of the string bears, rows set aside included.
-void vet_gaps(const VetInput& vet, const SeriesString& string, const std::set<int>& numbers) {
-    if (numbers.empty()) return;
-    constexpr int kShown = 8;
-    std::string list;
-    long missing = *numbers.rbegin() - static_cast<long>(numbers.size());
-    const long odd = std::count_if(numbers.begin(), numbers.end(), [](int number) { return number < 1; });
-    missing += odd;
-    if (missing <= 0) return;
-    int shown = 0;
-    for (int number = 1; number < *numbers.rbegin() && shown < kShown; ++number) {
-        if (numbers.contains(number)) continue;
-        list += (list.empty() ? "" : ", ") + std::to_string(number);
-        ++shown;
+/// Numbers of a string, rows set aside included, by the pole that bears each (the first of equals).
+using Numbers = std::map<int, const Pole*>;
+
+std::string run_text(int first, int last) { return first == last ? fmt::format("{}", first) : fmt::format("{} to {}", first, last); }
+
+/// A finding at the pole after each gap; where gaps are the rule (numbers in tens) one for the string.
+void vet_gaps(const VetInput& vet, const SeriesString& string, const Numbers& numbers) {
+    std::vector<std::pair<int, const Pole*>> gaps;  // the first number that is missing, the pole after it
+    int expected = 1;
+    for (const auto& [number, pole] : numbers) {
+        if (number > expected) gaps.emplace_back(expected, pole);
+        expected = number + 1;
     }
-    vet.add("order-gap", kCircuitsTable, string.from, string.id,
-            fmt::format("no lamp {}{}", list, missing > kShown ? fmt::format(" and {} more", missing - kShown) : ""), "1..n without gaps",
-            "look whether poles are missing from the file");
+    const bool is_rule = gaps.size() > 3 && 3 * gaps.size() > numbers.size();
+    for (const auto& [first, pole] : gaps) {
+        const std::string also = is_rule ? fmt::format(", and so on: {} gaps in {} numbers", gaps.size(), numbers.size()) : "";
+        vet.add("order-gap", kPolesTable, pole->from, pole->id,
+                fmt::format("{} missing before {} in string {}{}", run_text(first, *pole->order - 1), *pole->order, string.id, also),
+                "1..n without gaps", "look whether poles are missing from the file");
+        if (is_rule) return;
+    }
 }
 
 }  // namespace
 
 void vet_orders(const VetInput& vet) {
     const std::vector<std::vector<PoleIx>> lamps = lamps_by_string(vet.city);
-    std::vector<std::set<int>> numbers(vet.city.strings.size());
+    std::vector<Numbers> numbers(vet.city.strings.size());
     for (const Pole& pole : vet.city.poles)
-        if (pole.string.is_valid() && has_number(pole)) numbers[pole.string.place()].insert(*pole.order);
+        if (pole.string.is_valid() && has_number(pole)) numbers[pole.string.place()].try_emplace(*pole.order, &pole);
     for (std::size_t s = 0; s < vet.city.strings.size(); ++s) {
         const SeriesString& string = vet.city.strings[s];
         if (string.set_aside || string.kind == CircuitKind::parallel || lamps[s].empty()) continue;
@@ -79,7 +88,7 @@ void vet_cutbacks(const VetInput& vet) {
     for (const CutBack& cutback : vet.city.cutbacks) {
         if (cutback.set_aside || cutback.confirmed || !cutback.string.is_valid()) continue;
         vet.add("cutback-unconfirmed", kCutbacksTable, cutback.from,
-                fmt::format("{} {} {}", cutback.string_given, cutback.pole_a, cutback.pole_b), "confirmed blank or no",
+                cutback.string_given, fmt::format("{} to {}, confirmed blank or no", cutback.pole_a, cutback.pole_b),
                 "a splice place that someone has seen", "survey it before work that needs it is handed out");
     }
 }

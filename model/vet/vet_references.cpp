@@ -48,21 +48,23 @@ void vet_string_of_units(const VetInput& vet) {
     }
 }
 
+/// A pole that is in no file at all is gather's finding.
 void vet_ends_of_cutbacks(const VetInput& vet) {
-    std::unordered_set<std::string> on_string;
-    for (const Pole& pole : vet.city.poles)
+    std::unordered_set<std::string> on_string, in_city;
+    for (const Pole& pole : vet.city.poles) {
+        in_city.insert(pole.id);
         if (pole.string.is_valid()) on_string.insert(fmt::format("{}|{}", pole.string.place(), pole.id));
+    }
     for (const CutBack& cutback : vet.city.cutbacks) {
         if (cutback.set_aside) continue;
-        const std::string record = fmt::format("{} {} {}", cutback.string_given, cutback.pole_a, cutback.pole_b);
         if (!cutback.string.is_valid()) {
-            vet.add("string-unknown", kCutbacksTable, cutback.from, record, cutback.string_given, kWantString,
+            vet.add("string-unknown", kCutbacksTable, cutback.from, cutback.string_given, cutback.string_given, kWantString,
                     "mend the id, or set the cut-back aside");
             continue;
         }
         for (const std::string& end : {cutback.pole_a, cutback.pole_b})
-            if (end != "out" && end != "return" && !on_string.contains(fmt::format("{}|{}", cutback.string.place(), end)))
-                vet.add("pole-unknown", kCutbacksTable, cutback.from, record, end.empty() ? "nothing" : end,
+            if (in_city.contains(end) && !on_string.contains(fmt::format("{}|{}", cutback.string.place(), end)))
+                vet.add("pole-unknown", kCutbacksTable, cutback.from, cutback.string_given, end + ", which is not on that string",
                         "a pole of that string, \"out\" or \"return\"", "mend the id; until then the cut-back is not used");
     }
 }

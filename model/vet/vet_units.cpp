@@ -19,20 +19,18 @@ bool is_series(const City& city, StringIx string) {
            !city.strings[string.place()].set_aside;
 }
 
-/// The unit's output against its strings' currents, and those against each other.
+/// Each string's current against its unit's output, or against that of the other string of a two-loop unit.
 void vet_current(const VetInput& vet, const Transformer& unit) {
     std::optional<double> current = unit.output_a;
-    std::string whose = "output";
+    std::string whose = "unit " + unit.id;
     for (const StringIx ix : unit.strings) {
         if (!is_series(vet.city, ix)) continue;
         const SeriesString& string = vet.city.strings[ix.place()];
         if (!string.current_a) continue;
-        if (current && std::abs(*current - *string.current_a) > kSameCurrent_a) {
-            vet.add("current-mixed", kTransformersTable, unit.from, unit.id,
-                    fmt::format("{} {:g} A, string {} {:g} A", whose, *current, string.id, *string.current_a),
-                    "one current in unit and string", "read the nameplate; mend output_a, current_a or string_id");
-            return;
-        }
+        if (current && std::abs(*current - *string.current_a) > kSameCurrent_a)
+            vet.add("current-mixed", kCircuitsTable, string.from, string.id,
+                    fmt::format("{:g} A, {} {:g} A", *string.current_a, whose, *current), "one current in unit and string",
+                    "read the nameplate; mend current_a, output_a or string_id");
         if (!current) {
             current = string.current_a;
             whose = "string " + string.id;

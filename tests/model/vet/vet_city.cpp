@@ -101,14 +101,14 @@ TEST_CASE("vet: poles, units and cut-backs of a string that is not there") {
     cutback.string = StringIx(0);
     cutback.string_given = "S-1";
     cutback.pole_a = "P-5";
-    cutback.pole_b = "P-500";
+    cutback.pole_b = "P-1";  // in the city, but on no string
     city.cutbacks.push_back(cutback);
     const VetResult result = vet(city);
     CHECK(finding_of(result.findings, "string-unknown", "P-1").found == "S-99");
     CHECK(finding_of(result.findings, "string-unknown", "P-2").found == "nothing");
     CHECK(finding_of(result.findings, "string-unknown", "T-2").found == "S-98");
     CHECK(count_of(result.findings, "string-unknown") == 4);
-    CHECK(finding_of(result.findings, "pole-unknown", "S-1 P-5 P-500").found == "P-500");
+    CHECK(finding_of(result.findings, "pole-unknown", "S-1").found == "P-1, which is not on that string");
     CHECK(count_of(result.findings, "cutback-unconfirmed") == 1);
 }
 
@@ -125,10 +125,10 @@ TEST_CASE("vet: currents, units and strings that do not go together") {
     city.transformers.push_back(unit_row("T-4", 25, {}, ""));
     city.transformers.back().from.row = 6;
     const VetResult result = vet(city);
-    CHECK(finding_of(result.findings, "current-mixed", "T-1").found == "output 20 A, string S-1 6.6 A");
+    CHECK(finding_of(result.findings, "current-mixed", "S-1").found == "6.6 A, unit T-1 20 A");
     CHECK(finding_of(result.findings, "transformer-twice", "T-2").row == 3);
-    CHECK(finding_of(result.findings, "unit-twice", "T-3").found == "two rows with one string");
-    CHECK(finding_of(result.findings, "unit-twice", "T-4").row == 6);
+    CHECK(finding_of(result.findings, "transformer-twice", "T-3").found == "two rows with one string");
+    CHECK(finding_of(result.findings, "transformer-twice", "T-4").row == 6);
     CHECK(finding_of(result.findings, "untested-spare", "T-4").severity == Severity::notice);
 }
 
@@ -152,13 +152,25 @@ TEST_CASE("vet: wiring numbers that are missing, doubled or leave gaps") {
     const VetResult result = vet(city);
     CHECK(finding_of(result.findings, "order-missing", "P-10").table == "poles");
     CHECK(finding_of(result.findings, "order-twice", "P-5").found == "order 4, as P-4 in row 5");
-    CHECK(finding_of(result.findings, "order-gap", "S-1").found == "no lamp 5, 10");
+    CHECK(finding_of(result.findings, "order-gap", "P-6").found == "5 missing before 6 in string S-1");
+    CHECK(finding_of(result.findings, "order-gap", "P-11").row == 12);
     CHECK(result.strings[0].order == OrderFrom::partial);
     for (Pole& pole : city.poles) pole.order.reset();
     const VetResult none = vet(city);
-    CHECK(finding_of(none.findings, "order-missing", "S-1").found == "none of 30 lamps has an order");
+    CHECK(finding_of(none.findings, "order-missing", "P-1").found == "none of the 30 lamps of string S-1 has an order");
+    CHECK(count_of(none.findings, "order-missing") == 1);
     CHECK(finding_of(none.findings, "order-inferred", "S-1").severity == Severity::notice);
     CHECK(none.strings[0].order == OrderFrom::inferred);
+}
+
+TEST_CASE("vet: numbers in tens are one finding, not one for each lamp") {
+    City city = clean_city();
+    for (Pole& pole : city.poles) pole.order = *pole.order * 10;
+    const VetResult result = vet(city);
+    CHECK(count_of(result.findings, "order-gap") == 1);
+    CHECK(finding_of(result.findings, "order-gap", "P-1").found ==
+          "1 to 9 missing before 10 in string S-1, and so on: 30 gaps in 30 numbers");
+    CHECK(result.strings[0].order == OrderFrom::given);
 }
 
 TEST_CASE("vet: spans over 120 m are named at their second pole") {

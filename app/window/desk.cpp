@@ -24,6 +24,17 @@ void Desk::open(ProjectLink link) {
     take_view();
 }
 
+void Desk::close() {
+    preview_.reset();
+    selection_.clear();
+    selected_.clear();
+    string_ = {};
+    scene_.reset();
+    link_ = {};
+    Q_EMIT selection_changed();
+    Q_EMIT closed();
+}
+
 void Desk::take_view() {
     scene_ = make_scene(link_.view());
     const PlanSettings& settings = view().plan.settings;

@@ -22,6 +22,8 @@ class Desk : public QObject {
     ~Desk() override;
 
     void open(ProjectLink link);
+    /// Lets the project go, so that its file is free; nothing is open then.
+    void close();
     [[nodiscard]] bool is_open() const { return scene_ != nullptr; }
     [[nodiscard]] const ProjectView& view() const { return *scene_->view; }
     [[nodiscard]] const Scene& scene() const { return *scene_; }
@@ -75,6 +77,7 @@ class Desk : public QObject {
 
   Q_SIGNALS:
     void view_changed();
+    void closed();
     void selection_changed();
     void year_changed();
     void preview_changed();

@@ -22,6 +22,7 @@ struct ProjectLink {
 };
 
 /// The callbacks of a real project, which they keep open as long as one of them is alive.
-[[nodiscard]] ProjectLink link_to(std::shared_ptr<OpenProject> project);
+/// @param printer  puts the orders on paper; null = tables and layers only
+[[nodiscard]] ProjectLink link_to(std::shared_ptr<OpenProject> project, std::shared_ptr<Printer> printer);
 
 }  // namespace unstring

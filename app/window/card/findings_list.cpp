@@ -11,7 +11,6 @@ namespace unstring {
 
 std::vector<Finding> all_findings(const ProjectView& view, const PhaseResult* phase) {
     std::vector<Finding> all = view.findings;
-    if (view.decide) all.insert(all.end(), view.decide->findings.begin(), view.decide->findings.end());
     if (phase != nullptr) all.insert(all.end(), phase->failures.begin(), phase->failures.end());
     return all;
 }

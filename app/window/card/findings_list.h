@@ -26,7 +26,7 @@ class FindingsList : public QWidget {
     std::vector<Finding> findings_;
 };
 
-/// The findings of gather and vet, and those of decide and phase as the plan stands.
+/// The findings of the steps as each last ran, and those of phase as the plan stands.
 [[nodiscard]] std::vector<Finding> all_findings(const ProjectView& view, const PhaseResult* phase);
 
 }  // namespace unstring

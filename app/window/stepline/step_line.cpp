@@ -54,7 +54,7 @@ StepLine::StepLine(Desk& desk, QWidget* parent) : QWidget(parent), desk_(desk) {
     connect(undo_, &QPushButton::clicked, this, [this] { desk_.undo(); });
     connect(redo_, &QPushButton::clicked, this, [this] { desk_.redo(); });
     connect(night_, &QPushButton::clicked, this, [this] { desk_.set_night(!desk_.look().is_night); });
-    for (const auto signal : {&Desk::view_changed, &Desk::step_changed, &Desk::look_changed}) connect(&desk_, signal, this, &StepLine::refresh);
+    for (const auto signal : {&Desk::view_changed, &Desk::closed, &Desk::step_changed, &Desk::look_changed}) connect(&desk_, signal, this, &StepLine::refresh);
     refresh();
 }
 

@@ -9,6 +9,8 @@
 
 #include "geo/imports/gathered.h"
 
+class QGridLayout;
+
 namespace unstring {
 
 struct GatherWish {
@@ -24,7 +26,7 @@ class GatherDialog : public QDialog {
     [[nodiscard]] GatherWish wish() const;
 
   private:
-    QLineEdit* add_line(class QGridLayout* grid, int row, const QString& name, const QString& what, const QString& needed, const char* object);
+    QLineEdit* add_line(QGridLayout* grid, int row, const QString& name, const QString& what, const QString& needed, const char* object);
     void check();
 
     QLineEdit* project_;

@@ -120,14 +120,6 @@ const HeadAnswer* answer_of(const MoneyInput& input, PoleIx pole, std::string_vi
     return at == shade->heads.end() ? nullptr : &*at;
 }
 
-/// What forbids any work at the pole in that year; empty = nothing.
-std::string owner_stop(const Pole& pole, int year) {
-    if (pole.owner != Owner::city && pole.consent == false) return "the pole's owner has refused consent";
-    if (pole.earliest_year && year < *pole.earliest_year)
-        return fmt::format("no work at this pole before {} (earliest_year)", *pole.earliest_year);
-    return {};
-}
-
 std::string solar_stop(const Pole& pole, const HeadAnswer* answer, const Head* head) {
     if (pole.solar_ok == false) return "solar_ok is no in the pole file";
     if (pole.critical && pole.solar_ok != true) return "critical pole: solar only where solar_ok says yes";
@@ -171,15 +163,14 @@ OptionCost pole_option(const MoneyInput& input, PoleIx pole_ix, Choice choice, i
     }
     const int from = std::max(year, horizon.first);
     add_keep_years(input, pole, fallback, horizon.first, std::min(from - 1, horizon.last), lines);
-    std::string stopped_by = owner_stop(pole, from);
     if (choice == Choice::rewire) {
         for (CashLine& line : rewire_works(input, pole, from)) lines.push_back(std::move(line));
         add_rewire_running(input, pole, from, lines);
-        return finished(std::move(stopped_by), std::move(lines));
+        return finished({}, std::move(lines));
     }
     const HeadAnswer* answer = head_name.empty() ? best : answer_of(input, pole_ix, head_name);
     const Head* head = answer == nullptr ? nullptr : find_head(input.catalog, answer->head);
-    if (stopped_by.empty()) stopped_by = solar_stop(pole, answer, head);
+    std::string stopped_by = solar_stop(pole, answer, head);
     if (head == nullptr || find_price_item(head->price_item) == nullptr) return finished(std::move(stopped_by), {});
     for (CashLine& line : solar_works(input, pole, *head, from)) lines.push_back(std::move(line));
     add_solar_running(input, pole, *head, answer->battery_years, from, lines);

@@ -25,8 +25,8 @@ struct MoneyInput {  ///< all by reference; they outlive the call
 /// Cost of a choice whose work falls in calendar year `year`: keep cost in the years before it, then capital, removal and
 /// the new light's running cost from that year to the horizon. For Choice::keep the year is not read: upkeep that rises,
 /// failures at the emergency price, and the conversion still owed at the horizon.
-/// possible = false with the reason in words where a hard check refuses it (shade, lumens, pole, consent, policy is not
-/// looked at here). @param head  solar only; empty = the shade step's best
+/// possible = false with the reason in words where a hard check refuses it (shade, lumens, pole; policy is not looked at here,
+/// and an owner's consent holds back the hand-out, not the plan). @param head  solar only; empty = the shade step's best
 [[nodiscard]] OptionCost pole_option(const MoneyInput& input, PoleIx pole, Choice choice, int year, std::string_view head = {});
 
 /// Cash lines of a string's own from first_year to the horizon: unit loss, cable loss (kW per year given), upkeep of the

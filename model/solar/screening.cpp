@@ -9,8 +9,6 @@ namespace unstring {
 std::string what_stops(const Pole& pole, const Head& head) {
     if (pole.solar_ok && !*pole.solar_ok) return "solar_ok is no at this pole";
     if (pole.critical && !pole.solar_ok) return "critical pole: solar only where solar_ok is yes";
-    if (pole.owner != Owner::city && pole.consent && !*pole.consent)
-        return fmt::format("owner is {}, and consent is no", text_of(pole.owner));
     if (pole.need_lm && head.lumens < *pole.need_lm)
         return fmt::format("{:.0f} lm are needed, the head gives {:.0f} lm", *pole.need_lm, head.lumens);
     if (pole.epa_allow_m2 && head.epa_m2 > *pole.epa_allow_m2)

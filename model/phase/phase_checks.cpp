@@ -80,6 +80,39 @@ class Checks {
             say("volts-over", string_id(s), fmt::format("{:.0f} V {}", facts_.at(s, t).state.volts, at_ends(t, n)),
                 fmt::format("at most {:.0f} V, the cable's class", class_v), "move a section to an earlier year", "strings");
         if (const auto [t, n] = when([&](std::size_t y) { return is_low(s, y); }); n > 0) check_low(s, t, n);
+        check_cutbacks(s);
+        check_tests(s);
+    }
+
+    void check_cutbacks(std::size_t s) {
+        const auto& cutbacks = facts_.loops[s].cutbacks;
+        std::vector<char> is_said(cutbacks.size(), 0);
+        const auto name = [&](int position) {
+            const auto& lamps = facts_.loops[s].lamps;
+            if (position == 0) return std::string("out");
+            if (position > static_cast<int>(lamps.size())) return std::string("return");
+            return facts_.city.poles[lamps[static_cast<std::size_t>(position - 1)].place()].id;
+        };
+        for (std::size_t t = 1; t <= last(); ++t)
+            for (const int place : facts_.at(s, t).state.used) {
+                const LoopCutBack& cutback = cutbacks[static_cast<std::size_t>(place)];
+                if (cutback.confirmed || is_said[static_cast<std::size_t>(place)] != 0) continue;
+                is_said[static_cast<std::size_t>(place)] = 1;
+                say("cutback-unconfirmed", string_id(s),
+                    fmt::format("{} to {}, in use from {}, {:.0f} m of new cable", name(cutback.a), name(cutback.b), facts_.year(t), cutback.new_cable_m),
+                    "a splice that was looked at", "survey it, then give it in the cut-back file", "strings");
+            }
+    }
+
+    void check_tests(std::size_t s) {
+        for (std::size_t t = 1; t <= last(); ++t) {
+            const TransformerIx unit = facts_.units.strings[s][t].unit;
+            if (!unit.is_valid() || unit == facts_.units.strings[s][t - 1].unit) continue;
+            const Transformer& row = facts_.city.transformers[unit.place()];
+            if (is_untested(row, facts_.year(t)))
+                say("untested-spare", row.id, fmt::format("goes to string {} in {}, tested: {}", string_id(s), facts_.year(t), row.tested.empty() ? "never" : row.tested),
+                    "a test in the five years before", "test it before it is moved", "transformers");
+        }
     }
 
     bool is_low(std::size_t s, std::size_t t) const {
@@ -186,6 +219,27 @@ class Checks {
             check_choice(i);
         }
         for (std::size_t s = 0; s < unreached.size(); ++s) check_unreached(s, unreached[s]);
+        check_money_for_rest(unreached);
+    }
+
+    /// What the poles without a year would take of the last year's money, beside what is left of it.
+    void check_money_for_rest(const std::vector<std::vector<std::size_t>>& unreached) {
+        if (result_.not_reached == 0 || result_.years.empty() || !result_.years.back().money_limit) return;
+        const PhaseYear& year = result_.years.back();
+        double needed = 0;
+        int poles = 0;
+        for (const auto& of_string : unreached)
+            for (const std::size_t i : of_string) {
+                const PolePlan& row = facts_.plan.poles[i];
+                if (row.choice != Choice::rewire && row.choice != Choice::solar) continue;
+                ++poles;
+                needed += to_dollars(book_.pole({PoleIx(i), row.choice, year.year, row.choice == Choice::solar ? row.head : std::string()}).capital_sum());
+            }
+        const double left = std::max(0.0, *year.money_limit - to_dollars(year.money));
+        if (poles == 0 || needed <= left) return;
+        say("money-short", fmt::format("year {}", year.year),
+            fmt::format("{} poles not reached want {:.0f} more, trench and transformers apart; {:.0f} is left, short by {:.0f}", poles, needed, left, needed - left),
+            fmt::format("at least {:.0f} in that year, or years after it", to_dollars(year.money) + needed), "raise money, or add years", "budget");
     }
 
     void check_unreached(std::size_t s, const std::vector<std::size_t>& poles) {

@@ -15,6 +15,16 @@ bool is_skipped(const StringLoop& loop, const StringState& state, int position) 
     });
 }
 
+StringAtYear at_year(const StringLoop& loop, const std::vector<char>& live, double ageing_frac) {
+    StringAtYear at;
+    at.state = string_state(loop, live);
+    at.aged_kva = at.state.lamps == 0 ? 0 : string_state(loop, live, ageing_frac).load_kva;
+    at.leg_is_live = live_legs(loop, at.state);
+    return at;
+}
+
+}  // namespace
+
 std::vector<char> live_legs(const StringLoop& loop, const StringState& state) {
     std::vector<char> live(loop.legs_m.size(), state.lamps > 0 ? 1 : 0);
     for (const int place : state.used) {
@@ -24,30 +34,21 @@ std::vector<char> live_legs(const StringLoop& loop, const StringState& state) {
     return live;
 }
 
-StringAtYear at_year(const StringLoop& loop, const std::vector<char>& live, double ageing_frac) {
-    StringAtYear at;
-    at.state = string_state(loop, live);
-    at.aged_kva = at.state.lamps == 0 ? 0 : string_state(loop, live, ageing_frac).load_kva;
-    at.leg_is_live = live_legs(loop, at.state);
-    return at;
-}
-
-void add_line_work(const StringLoop& loop, std::span<const int> lamp_year, int year, const StringAtYear& before, StringAtYear& at) {
-    for (std::size_t i = 0; i < lamp_year.size(); ++i) {
-        if (lamp_year[i] != year) continue;
-        ++at.left;
-        const bool cable_lives = at.state.lamps > 0 && !is_skipped(loop, at.state, static_cast<int>(i) + 1);
-        if (cable_lives && loop.burns[i] != 0) ++at.jumpers;
+LineWork line_work(const StringLoop& loop, std::span<const PoleIx> leaving, const StringState& before, const StringState& after) {
+    LineWork work;
+    if (after.lamps == 0) return work;
+    for (const PoleIx pole : leaving) {
+        const auto at = std::find(loop.lamps.begin(), loop.lamps.end(), pole);
+        const auto i = static_cast<std::size_t>(at - loop.lamps.begin());
+        if (at != loop.lamps.end() && loop.burns[i] != 0 && !is_skipped(loop, after, static_cast<int>(i) + 1)) ++work.jumpers;
     }
-    for (const int place : at.state.used) {
-        const auto& old = before.state.used;
-        if (std::find(old.begin(), old.end(), place) != old.end()) continue;
-        at.splices += splices_of(loop.cutbacks[static_cast<std::size_t>(place)]);
-        at.new_cable_m += loop.cutbacks[static_cast<std::size_t>(place)].new_cable_m;
+    for (const int place : after.used) {
+        if (std::find(before.used.begin(), before.used.end(), place) != before.used.end()) continue;
+        work.splices += splices_of(loop.cutbacks[static_cast<std::size_t>(place)]);
+        work.new_cable_m += loop.cutbacks[static_cast<std::size_t>(place)].new_cable_m;
     }
+    return work;
 }
-
-}  // namespace
 
 std::vector<StringAtYear> string_years(const StringLoop& loop, std::span<const int> lamp_year, int first_year, int years,
                                        double ageing_frac) {
@@ -64,9 +65,11 @@ std::vector<StringAtYear> string_years(const StringLoop& loop, std::span<const i
         }
         StringAtYear at = all.back();
         if (changes) at = at_year(loop, live, ageing_frac);
-        at.left = at.jumpers = at.splices = 0;
-        at.new_cable_m = 0;
-        add_line_work(loop, lamp_year, year, all.back(), at);
+        std::vector<PoleIx> leaving;
+        for (std::size_t i = 0; i < lamp_year.size(); ++i)
+            if (lamp_year[i] == year) leaving.push_back(loop.lamps[i]);
+        at.left = static_cast<int>(leaving.size());
+        at.work = line_work(loop, leaving, all.back().state, at.state);
         all.push_back(std::move(at));
     }
     return all;

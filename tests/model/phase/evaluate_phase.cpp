@@ -145,8 +145,8 @@ TEST_CASE("phase: a duct is live as long as the section beyond it is on the stri
     CHECK(duct_findings() == 0);
     for (PolePlan& row : city.plan.poles) row.year = row.year == 2029 ? 2027 : 0;
     CHECK(duct_findings() == 0);
-    city.plan.poles[3].year = 0;  // lamp 4 keeps the legs that lead to it live
-    CHECK(duct_findings() == 3);
+    city.plan.poles[3].year = 0;  // lamp 4 keeps the legs that lead to it live: three out, three back
+    CHECK(duct_findings() == 6);
     for (Pole& pole : city.city.poles) pole.spare_duct = true;
     CHECK(duct_findings() == 0);
 }

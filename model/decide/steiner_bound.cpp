@@ -79,7 +79,7 @@ class Cut {
 
 }  // namespace
 
-DualAscent raise_duals(const WorkGraph& graph, const std::vector<int>& first, const Progress& progress) {
+DualAscent raise_duals(const WorkGraph& graph, const Progress& progress) {
     DualAscent out;
     out.bound = graph.constant;
     out.reduced.resize(graph.edges.size() * 2);
@@ -88,10 +88,8 @@ DualAscent raise_duals(const WorkGraph& graph, const std::vector<int>& first, co
 
     using Key = std::pair<long, int>;
     std::priority_queue<Key, std::vector<Key>, std::greater<>> queue;
-    std::vector<char> is_first(graph.prize.size(), 0);
-    for (const int t : first) is_first[Place(t)] = 1;
     for (int t = 0; t < graph.size(); ++t)
-        if (t != graph.root && graph.prize[Place(t)] > 0) queue.emplace(is_first[Place(t)] ? 0 : graph.degree(t), t);
+        if (t != graph.root && graph.prize[Place(t)] > 0) queue.emplace(graph.degree(t), t);
 
     Cut cut(graph);
     while (!queue.empty() && !progress.is_cancelled()) {

@@ -16,8 +16,8 @@ struct DualAscent {
 };
 
 /// Raises the duals cut by cut, the prize vertex with the smallest cut first.
-/// @param first  vertices to be raised before all others (another order gives another bound); may be empty
-[[nodiscard]] DualAscent raise_duals(const WorkGraph& graph, const std::vector<int>& first, const Progress& progress);
+/// Other orders were tried (those left outside first, those that must be in first): each gave a weaker bound.
+[[nodiscard]] DualAscent raise_duals(const WorkGraph& graph, const Progress& progress);
 
 /// Vertices that the root reaches over arcs of reduced cost 0.
 [[nodiscard]] std::vector<char> reached_by_root(const WorkGraph& graph, const DualAscent& dual);

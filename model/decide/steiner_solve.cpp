@@ -62,19 +62,17 @@ struct Node {
 };
 
 /// Bound, tree, fixing in rounds. Nothing left: the node holds no tree cheaper than the best.
-std::optional<Node> work_through(Search& search, WorkGraph graph, int rounds, bool wide, long& work) {
+std::optional<Node> work_through(Search& search, WorkGraph graph, int rounds, int shakes, long& work) {
     Cost bound = graph.constant;
-    std::vector<int> first;
     for (int round = 0; round < rounds; ++round) {
-        DualAscent dual = raise_duals(graph, first, search.progress);
+        DualAscent dual = raise_duals(graph, search.progress);
         work += dual.work + static_cast<long>(graph.arcs.size()) * 4;
         if (search.progress.is_cancelled()) return Node{std::move(graph), std::max(bound, rounded_up(dual.bound, search.step))};
         bound = std::max(bound, rounded_up(dual.bound, search.step));
         if (search.best.exists && bound >= search.best.cost) return std::nullopt;
         Tree tree = first_tree(graph, dual, search.progress);
         work += static_cast<long>(graph.arcs.size()) * 20;
-        if (wide && round == rounds - 1 && graph.size() <= search.limits.exact_vertices)
-            shake(graph, tree, search.limits.shakes, search.progress);
+        if (round == 0) shake(graph, tree, shakes, search.progress);
         offer(search, graph, tree);
         if (bound >= search.best.cost) return std::nullopt;
         const Fixed fixed = fix_by_reduced_cost(graph, dual, search.best.cost);
@@ -89,7 +87,7 @@ std::optional<Node> work_through(Search& search, WorkGraph graph, int rounds, bo
             offer(search, graph, alone);
             return std::nullopt;
         }
-        if (!wide && after > before - before / 10) break;
+        if (after > before - before / 10) break;
     }
     return Node{std::move(graph), bound};
 }
@@ -124,7 +122,7 @@ Cost branch_and_bound(Search& search, Node start) {
             std::vector<char> gone(graph.prize.size(), 0);
             if (is_in) graph.prize[Place(v)] = graph.must_prize;
             else gone[Place(v)] = 1;
-            std::optional<Node> next = work_through(search, reduced(graph, search.chains, gone, {}), 3, false, work);
+            std::optional<Node> next = work_through(search, reduced(graph, search.chains, gone, {}), 3, 0, work);
             if (!next) continue;
             next->bound = std::max(next->bound, node.bound);
             open.push_back(std::move(*next));
@@ -136,6 +134,65 @@ Cost branch_and_bound(Search& search, Node start) {
     return bound;
 }
 
+/// The graph cut at its root: what hangs together without it, each with a root of its own and no constant.
+std::vector<WorkGraph> parts_at_root(const WorkGraph& graph) {
+    std::vector<int> part(graph.prize.size(), -1), number(graph.prize.size(), 0);
+    std::vector<WorkGraph> parts;
+    for (int start = 0; start < graph.size(); ++start) {
+        if (start == graph.root || part[Place(start)] >= 0) continue;
+        WorkGraph next;
+        next.must_prize = graph.must_prize;
+        next.prize.assign(1, graph.must_prize);
+        std::vector<int> stack{start};
+        part[Place(start)] = static_cast<int>(parts.size());
+        while (!stack.empty()) {
+            const int v = stack.back();
+            stack.pop_back();
+            number[Place(v)] = next.size();
+            next.prize.push_back(graph.prize[Place(v)]);
+            for (const Arc* a = graph.begin_of(v); a != graph.end_of(v); ++a) {
+                if (a->to == graph.root || part[Place(a->to)] >= 0) continue;
+                part[Place(a->to)] = static_cast<int>(parts.size());
+                stack.push_back(a->to);
+            }
+        }
+        parts.push_back(std::move(next));
+    }
+    for (const WorkEdge& edge : graph.edges) {
+        const int inner = edge.u == graph.root ? edge.v : edge.u;
+        WorkGraph& at = parts[Place(part[Place(inner)])];
+        at.edges.push_back({edge.u == graph.root ? 0 : number[Place(edge.u)], edge.v == graph.root ? 0 : number[Place(edge.v)], edge.cost, edge.chain});
+    }
+    for (WorkGraph& each : parts) index_arcs(each);
+    return parts;
+}
+
+/// What is left after fixing, part by part: each searched by itself, exactly where it is small.
+Cost solve_parts(Search& search, const Node& node) {
+    Cost bound = node.graph.constant, cost = node.graph.constant;
+    std::vector<int> edges;
+    const std::vector<WorkGraph> parts = parts_at_root(node.graph);
+    for (const WorkGraph& part : parts) {
+        Best best;
+        SteinerLimits limits = search.limits;
+        limits.branch_work = static_cast<long>(static_cast<double>(limits.branch_work) * static_cast<double>(part.edges.size()) /
+                                               static_cast<double>(node.graph.edges.size()));
+        Search inner{limits, search.progress, search.chains, best, search.step, search.root};
+        long work = 0;
+        const bool is_small = part.size() <= limits.exact_vertices;
+        std::optional<Node> left = work_through(inner, part, is_small ? 2 : 1, is_small ? limits.shakes : 0, work);
+        Cost part_bound = best.cost;
+        if (left && limits.branch_work > 0 && left->graph.size() <= limits.exact_vertices) part_bound = branch_and_bound(inner, std::move(*left));
+        else if (left) part_bound = std::min(best.cost, left->bound);
+        if (!best.exists) return std::min(node.bound, search.best.cost);  // cancelled
+        bound += part_bound;
+        cost += best.cost;
+        edges.insert(edges.end(), best.edges.begin(), best.edges.end());
+    }
+    if (cost < search.best.cost) search.best = {true, cost, search.root, std::move(edges)};
+    return std::min(std::max(bound, node.bound), search.best.cost);
+}
+
 /// Best tree with this root; bound on all of them. `best` may hold a cost to beat.
 Cost solve_rooted(const SteinerProblem& problem, int root, Cost constant, Search& search) {
     search.root = root;
@@ -143,11 +200,11 @@ Cost solve_rooted(const SteinerProblem& problem, int root, Cost constant, Search
     graph.constant += constant;
     graph = reduced(graph, search.chains, {}, {});
     long work = 0;
-    std::optional<Node> node = work_through(search, std::move(graph), std::max(1, search.limits.rounds), true, work);
+    std::optional<Node> node = work_through(search, std::move(graph), std::max(1, search.limits.rounds), 0, work);
     if (!node) return search.best.cost;
-    if (search.limits.branch_work > 0 && node->graph.size() <= search.limits.exact_vertices && !search.progress.is_cancelled())
-        return branch_and_bound(search, std::move(*node));
-    return std::min(node->bound, search.best.cost);
+    const bool is_searched = search.limits.branch_work > 0 || search.limits.shakes > 0;
+    if (!is_searched || search.progress.is_cancelled()) return std::min(node->bound, search.best.cost);
+    return solve_parts(search, *node);
 }
 
 /// No root given and none that has to be in: the best tree holds the vertex of the largest prize, or does not and then

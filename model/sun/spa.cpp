@@ -101,20 +101,13 @@ void topocentric(const SpaInput& input, SpaSun& sun) {
     sun.topocentric_hour_angle_deg = sun.hour_angle_deg - shift_deg;
 }
 
-double refraction_deg(const SpaInput& input, double elevation_deg) {
-    constexpr double kSunRadius_deg = 0.26667;
-    if (elevation_deg < -(kSunRadius_deg + input.refraction_deg)) return 0;
-    return input.pressure_hpa / 1010.0 * 283.0 / (273.0 + input.temp_c) * 1.02 /
-           (60.0 * tangent(elevation_deg + 10.3 / (elevation_deg + 5.11)));
-}
-
 void horizontal(const SpaInput& input, SpaSun& sun) {
     const double lat = input.place.lat_deg;
     const double dec = sun.topocentric_declination_deg;
     const double hour = sun.topocentric_hour_angle_deg;
     sun.elevation_deg =
         std::asin(std::clamp(sine(lat) * sine(dec) + cosine(lat) * cosine(dec) * cosine(hour), -1.0, 1.0)) / kRadPerDeg;
-    sun.refraction_deg = refraction_deg(input, sun.elevation_deg);
+    sun.refraction_deg = air_refraction_deg(input, sun.elevation_deg);
     sun.zenith_deg = 90.0 - sun.elevation_deg - sun.refraction_deg;
     sun.azimuth_deg = in_circle(angle(sine(hour), cosine(hour) * sine(lat) - tangent(dec) * cosine(lat)) + 180.0);
 }
@@ -130,6 +123,13 @@ double equation_of_time_min(double millennia, const SpaSun& sun) {
 }
 
 }  // namespace
+
+double air_refraction_deg(const SpaInput& input, double elevation_deg) {
+    constexpr double kSunRadius_deg = 0.26667;
+    if (elevation_deg < -(kSunRadius_deg + input.refraction_deg)) return 0;
+    return input.pressure_hpa / 1010.0 * 283.0 / (273.0 + input.temp_c) * 1.02 /
+           (60.0 * tangent(elevation_deg + 10.3 / (elevation_deg + 5.11)));
+}
 
 SpaSun spa_sun(const SpaInput& input) {
     const double days = input.days_since_2000;

@@ -36,4 +36,7 @@ struct SpaSun {
 
 [[nodiscard]] SpaSun spa_sun(const SpaInput& input);
 
+/// How much the air lifts the sun [deg] at a true elevation; 0 once it has set.
+[[nodiscard]] double air_refraction_deg(const SpaInput& input, double elevation_deg);
+
 }  // namespace unstring

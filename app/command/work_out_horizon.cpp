@@ -29,7 +29,7 @@ nlohmann::ordered_json points_json(const ScannedHorizon& horizon) {
 std::string steps_text(const HorizonOptions& given, double cell_m, const ScannedHorizon& horizon, double frac) {
     std::string text = fmt::format(
         "Inputs: raster {} with cells of {} m, at {}, {} m above the ground there; reach {} m, {} directions.\n"
-        "Each direction is marched in steps of one cell from {} m away; the height there is bilinear between the four\n"
+        "Each direction is marched in steps of half a cell from {} m away; the height there is bilinear between the four\n"
         "nearest cell centres; horizon = atan((height - {}) / distance), the steepest counts, the ground lies level.\n",
         given.raster, cell_m, given.at, given.height_m, given.reach_m, given.directions, cell_m, given.height_m);
     for (std::size_t i = 0; i < horizon.height_deg.size(); ++i)

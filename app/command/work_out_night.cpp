@@ -80,7 +80,7 @@ void add_work_out_night(CLI::App& work_out_app, WorkOutAnswer& answer) {
     const auto file = std::make_shared<std::string>();
     topic->add_option("file", *file, "a JSON file with place, weather, panel, battery and lamp")->required();
     topic->footer("Example: unstring work-out night lamp.json\n"
-                  "lamp.json: {\"lat\": 40, \"lon\": -75, \"clearness\": [.42,.46,.50,.52,.54,.57,.59,.58,.55,.51,.43,.39],\n"
+                  "lamp.json: {\"lat\": 40, \"lon\": -75, \"clearness\": [0.42,0.46,0.50,0.52,0.54,0.57,0.59,0.58,0.55,0.51,0.43,0.39],\n"
                   "  \"temp_c\": [0,2,7,12,17,22,25,24,19,13,6,1], \"panel_wp\": 100, \"battery_wh\": 400, \"led_w\": 12}");
     topic->callback([file, &answer] { work_out(*file, answer); });
 }

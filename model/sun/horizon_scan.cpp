@@ -42,20 +42,22 @@ ScannedHorizon scan_horizon(const HeightWindow& window, MapPoint place, double p
     found.height_deg.reserve(static_cast<std::size_t>(directions));
     const double column = (place.x_m - window.west_m) / window.cell_m - 0.5;
     const double row = (window.north_m - place.y_m) / window.cell_m - 0.5;
-    const int steps = static_cast<int>(std::floor(reach_m / window.cell_m + 1e-9));
+    constexpr int kStepsACell = 2;
+    const int steps = static_cast<int>(std::floor(kStepsACell * reach_m / window.cell_m + 1e-9));
     for (int direction = 0; direction < directions; ++direction) {
         const double azimuth_deg = 360.0 * direction / directions;
         const double east = exact_at_right_angles(std::sin(azimuth_deg * kRadPerDeg));
         const double north = exact_at_right_angles(std::cos(azimuth_deg * kRadPerDeg));
         double steepest = 0;  // tangent
         bool is_known = true;
-        for (int step = 1; step <= steps; ++step) {
-            const double height_m = bilinear_m(window, column + step * east, row - step * north);
+        for (int step = kStepsACell; step <= steps; ++step) {
+            const double cells = static_cast<double>(step) / kStepsACell;
+            const double height_m = bilinear_m(window, column + cells * east, row - cells * north);
             if (std::isnan(height_m)) {
                 is_known = false;
                 continue;
             }
-            steepest = std::max(steepest, (height_m - panel_m) / (step * window.cell_m));
+            steepest = std::max(steepest, (height_m - panel_m) / (cells * window.cell_m));
         }
         found.height_deg.push_back(static_cast<float>(std::atan(steepest) / kRadPerDeg));
         if (!is_known) found.unknown_deg.push_back(static_cast<float>(azimuth_deg));

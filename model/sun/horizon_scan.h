@@ -16,7 +16,7 @@ struct ScannedHorizon {
     std::vector<float> unknown_deg;  ///< directions in which a sample within reach had no height
 };
 
-/// Marches from one step (a cell) away from the point to reach_m, a step at a time; the ground counts as level.
+/// Marches from one cell away from the point to reach_m in steps of half a cell; the ground counts as level.
 /// Unknown samples are left out of the maximum and the direction is named.
 /// @param panel_m  height of the panel above the ground
 [[nodiscard]] ScannedHorizon scan_horizon(const HeightWindow& window, MapPoint place, double panel_m, double reach_m,

@@ -100,9 +100,9 @@ std::vector<StringYearCash> string_cash(const PhaseFacts& facts, std::size_t str
                 const Oil oil = facts.city.transformers[before.place()].oil;
                 cash.oil_suspect = oil == Oil::pcb || oil == Oil::unknown;
             }
-            cash.splices = at.work.splices;
-            cash.jumpers = at.work.jumpers;
-            cash.new_cable_m = at.work.new_cable_m;
+            cash.splices = at.splices;
+            cash.jumpers = at.jumpers;
+            cash.new_cable_m = at.new_cable_m;
         }
         all.push_back(cash);
     }

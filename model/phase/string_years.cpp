@@ -69,7 +69,10 @@ std::vector<StringAtYear> string_years(const StringLoop& loop, std::span<const i
         for (std::size_t i = 0; i < lamp_year.size(); ++i)
             if (lamp_year[i] == year) leaving.push_back(loop.lamps[i]);
         at.left = static_cast<int>(leaving.size());
-        at.work = line_work(loop, leaving, all.back().state, at.state);
+        const LineWork work = line_work(loop, leaving, all.back().state, at.state);
+        at.jumpers = work.jumpers;
+        at.splices = work.splices;
+        at.new_cable_m = work.new_cable_m;
         all.push_back(std::move(at));
     }
     return all;

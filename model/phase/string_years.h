@@ -19,7 +19,8 @@ struct StringAtYear {
     double aged_kva = 0;      ///< with the lamps' ageing: what a newly chosen transformer must carry
     std::vector<char> leg_is_live;  ///< n + 1
     int left = 0;             ///< lamps of the string that leave in the year
-    LineWork work;            ///< of the year
+    int jumpers = 0, splices = 0;  ///< line work of the year, as LineWork
+    double new_cable_m = 0;
 };
 
 /// Place 0 is today, place t the end of the plan's year t.

@@ -2,6 +2,10 @@
 
 #include "app/command/commands.h"
 #include "app/command/work_out.h"
+#include "app/command/work_out_horizon.h"
+#include "app/command/work_out_night.h"
+#include "app/command/work_out_sky.h"
+#include "app/command/work_out_sun.h"
 #include "app/command/work_out_trench.h"
 #include "app/command/work_out_years.h"
 
@@ -12,6 +16,10 @@ void add_work_out(CLI::App& app, CommandLine& line) {
     CLI::App* work_out = app.add_subcommand("work-out", "One calculation by itself, its inputs and steps shown");
     work_out->require_subcommand(1);
     work_out->footer("Example: unstring work-out worth --rate 0.03 --years 20");
+    add_work_out_sun(*work_out, *answer);
+    add_work_out_sky(*work_out, *answer);
+    add_work_out_night(*work_out, *answer);
+    add_work_out_horizon(*work_out, *answer);
     add_work_out_trench(*work_out, *answer);
     add_work_out_years(*work_out, *answer);
     work_out->callback([answer, &line] {

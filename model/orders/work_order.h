@@ -63,6 +63,7 @@ struct WorkOrder {
     std::vector<std::string> after;  ///< ids of orders that must be signed off before this one
     std::vector<std::string> findings;  ///< in words: open findings at its poles and string
     double hours = 0;
+    int issue = 1;  ///< printed on every page
 };
 
 /// Every order of the plan, or of one year (0 = all) and one crew (nullptr = all), by year, crew, string.

@@ -2,11 +2,17 @@
 
 #include "app/command/commands.h"
 #include "app/command/work_out.h"
+#include "app/command/work_out_drop.h"
 #include "app/command/work_out_horizon.h"
+#include "app/command/work_out_loop.h"
 #include "app/command/work_out_night.h"
+#include "app/command/work_out_route.h"
 #include "app/command/work_out_sky.h"
+#include "app/command/work_out_spares.h"
+#include "app/command/work_out_string.h"
 #include "app/command/work_out_sun.h"
 #include "app/command/work_out_trench.h"
+#include "app/command/work_out_worth.h"
 #include "app/command/work_out_years.h"
 
 namespace unstring {
@@ -16,12 +22,8 @@ void add_work_out(CLI::App& app, CommandLine& line) {
     CLI::App* work_out = app.add_subcommand("work-out", "One calculation by itself, its inputs and steps shown");
     work_out->require_subcommand(1);
     work_out->footer("Example: unstring work-out worth --rate 0.03 --years 20");
-    add_work_out_sun(*work_out, *answer);
-    add_work_out_sky(*work_out, *answer);
-    add_work_out_night(*work_out, *answer);
-    add_work_out_horizon(*work_out, *answer);
-    add_work_out_trench(*work_out, *answer);
-    add_work_out_years(*work_out, *answer);
+    for (const auto add : {add_work_out_sun, add_work_out_sky, add_work_out_night, add_work_out_horizon, add_work_out_string, add_work_out_loop, add_work_out_route, add_work_out_drop, add_work_out_worth, add_work_out_spares, add_work_out_trench, add_work_out_years})
+        add(*work_out, *answer);
     work_out->callback([answer, &line] {
         const Console console = line.console();
         if (answer->fault) {

@@ -1,5 +1,7 @@
 // What makes a step stale, and what does not.
 
+#include <algorithm>
+
 #include "tests/app/steps/planned_city.h"
 
 using namespace unstring;
@@ -65,9 +67,10 @@ TEST_CASE("staleness: a mark makes decide stale and its undo does not leave it s
     check_all_good(*project);
 
     next = project->view()->plan;
-    REQUIRE(next.poles[pole.place()].year != 0);
-    next.poles[pole.place()].year = next.settings.first_year;
-    next.poles[pole.place()].year_by = YearBy::hand;
+    const auto planned = std::find_if(next.poles.begin(), next.poles.end(), [](const PolePlan& row) { return row.year != 0; });
+    REQUIRE(planned != next.poles.end());
+    planned->year = planned->year == next.last_year() ? next.settings.first_year : planned->year + 1;
+    planned->year_by = YearBy::hand;
     REQUIRE(project->edit(next, "year by hand"));
     const StepStanding by_hand = standing(*project, Step::phase);
     CHECK((by_hand == StepStanding::by_hand || by_hand == StepStanding::stopped));

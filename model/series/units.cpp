@@ -66,6 +66,8 @@ OpenVolts open_volts(const Transformer& unit, double current_a) {
     return {kOpenTopFrac * loop_rating_kw(unit) * 1000 / current_a, true};
 }
 
+double tap_for(const Transformer& unit, double load_kva) { return smallest_tap(unit, load_kva).value_or(1); }
+
 UnitNeed unit_need(const City& city, const StringLoop& loop, double load_kva) {
     UnitNeed need{loop.current_a, load_kva, loop.cable_kv, {}, {}};
     if (const TransformerIx today = unit_today(city, loop.string); today.is_valid()) {

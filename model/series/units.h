@@ -38,6 +38,9 @@ struct OpenVolts {
 /// Rating that one loop may take: half of it for a unit that feeds two strings.
 [[nodiscard]] double loop_rating_kw(const Transformer& unit);
 [[nodiscard]] double min_frac_of(const Transformer& unit);
+/// The smallest tap whose share of the rating carries the load, 1 where none does. No file says which tap is in use: this
+/// one is taken, today and later.
+[[nodiscard]] double tap_for(const Transformer& unit, double load_kva);
 /// Open-circuit volts of one loop at the string's current.
 [[nodiscard]] OpenVolts open_volts(const Transformer& unit, double current_a);
 

@@ -1,57 +1,63 @@
-#include "model/vet/set_aside.h"
-
-#include <algorithm>
 #include <string>
+#include <string_view>
 #include <unordered_map>
+#include <unordered_set>
 #include <utility>
 
 #include "model/vet/vet_checks.h"
+#include "model/vet/vet_result.h"
 
 namespace unstring {
 namespace {
 
-/// The row first: of two records with one id only the one in that row is meant. A record without its row is named by id.
-template <class Record> bool is_named(const Record& record, const std::string& id, const Finding& finding) {
-    if (finding.row > 0 && record.from.row > 0)
-        return record.from.row == finding.row && record.from.file == finding.file && (finding.record.empty() || id == finding.record);
-    return !finding.record.empty() && id == finding.record;
+/// The records that the errors of one table name: by row where a finding has one (of two records with one id only that
+/// in the row is meant), else by id.
+struct NamedRecords {
+    std::unordered_multimap<long, const Finding*> by_row;
+    std::unordered_set<std::string_view> by_id;
+
+    [[nodiscard]] bool has(const std::string& id, const RowRef& from) const {
+        const auto [first, last] = by_row.equal_range(from.row);
+        for (auto at = first; at != last; ++at) {
+            const Finding& finding = *at->second;
+            if (finding.file == from.file && (finding.record.empty() || finding.record == id)) return true;
+        }
+        return by_id.contains(id);
+    }
+};
+
+NamedRecords records_of(const std::vector<Finding>& findings, std::string_view table) {
+    NamedRecords named;
+    for (const Finding& finding : findings) {
+        if (finding.severity != Severity::error || finding.table != table) continue;
+        if (finding.row > 0)
+            named.by_row.emplace(finding.row, &finding);
+        else if (!finding.record.empty())
+            named.by_id.insert(finding.record);
+    }
+    return named;
 }
 
-/// A cut-back has no id of its own: its findings name its string, and it by its row.
-std::string cutback_id(const CutBack& cutback) { return cutback.string_given; }
-
-template <class Table, class IdOf, class Visit> void visit_named(Table& table, IdOf id_of, const Finding& finding, Visit visit) {
-    for (auto& record : table)
-        if (is_named(record, id_of(record), finding)) visit(record);
-}
-
-/// Calls visit on each record that the finding names.
-template <class AnyCity, class Visit> void visit_records(AnyCity& city, const Finding& finding, Visit visit) {
-    const auto own_id = [](const auto& record) { return record.id; };
-    if (finding.table == kPolesTable) visit_named(city.poles, own_id, finding, visit);
-    if (finding.table == kCircuitsTable) visit_named(city.strings, own_id, finding, visit);
-    if (finding.table == kTransformersTable) visit_named(city.transformers, own_id, finding, visit);
-    if (finding.table == kServicesTable) visit_named(city.services, own_id, finding, visit);
-    if (finding.table == kCutbacksTable) visit_named(city.cutbacks, cutback_id, finding, visit);
+template <class Table, class IdOf>
+void set_aside_named(Table& records, std::string_view table, const std::vector<Finding>& findings, IdOf id_of) {
+    const NamedRecords named = records_of(findings, table);
+    for (auto& record : records)
+        if (named.has(id_of(record), record.from)) record.set_aside = true;
 }
 
 }  // namespace
 
 City set_aside_errors(City city, const std::vector<Finding>& findings) {
-    for (const Finding& finding : findings)
-        if (finding.severity == Severity::error) visit_records(city, finding, [](auto& record) { record.set_aside = true; });
+    const auto own_id = [](const auto& record) -> const std::string& { return record.id; };
+    set_aside_named(city.poles, kPolesTable, findings, own_id);
+    set_aside_named(city.strings, kCircuitsTable, findings, own_id);
+    set_aside_named(city.transformers, kTransformersTable, findings, own_id);
+    set_aside_named(city.services, kServicesTable, findings, own_id);
+    // A cut-back has no id of its own: its findings name its string, and it by its row.
+    set_aside_named(city.cutbacks, kCutbacksTable, findings, [](const CutBack& row) -> const std::string& { return row.string_given; });
     for (Pole& pole : city.poles)
         if (pole.string.is_valid() && city.strings[pole.string.place()].set_aside) pole.set_aside = true;
     return city;
-}
-
-bool is_set_aside(const City& city, const Finding& finding) {
-    bool any = false, all = true;
-    visit_records(city, finding, [&](const auto& record) {
-        any = true;
-        all = all && record.set_aside;
-    });
-    return any && all;
 }
 
 City with_wiring(City city, const std::vector<VetString>& strings) {

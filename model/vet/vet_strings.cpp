@@ -50,16 +50,17 @@ void vet_load(const StringUnderVet& string) {
         return;
     }
     const Transformer& unit = string.vet.city.transformers[string.today.transformer.place()];
-    const std::string load = fmt::format("{:.2f} kVA on {} of {:g} kW{}: {:.0f} %", string.state.load_kva, unit.id, loop_rating_kw(unit),
-                                         unit.strings.size() == 2 ? " a loop" : "", 100 * string.today.loading_frac);
+    const std::string tap = string.today.tap < 1 ? fmt::format(" at tap {:g}", string.today.tap) : "";
+    const std::string load = fmt::format("{:.2f} kVA on {} of {:g} kW{}{}: {:.0f} %", string.state.load_kva, unit.id, loop_rating_kw(unit),
+                                         unit.strings.size() == 2 ? " a loop" : "", tap, 100 * string.today.loading_frac);
     if (string.today.verdict == Verdict::over)
         string.add("load-over", load, "load within the unit's rating", "check lamps, cable length and nameplate; swap the unit");
     if (string.today.verdict == Verdict::low)
         string.add("load-low", load, fmt::format("at least {:.0f} %", 100 * min_frac_of(unit)),
-                   "check lamps and nameplate; a smaller unit or a lower tap would hold the current better");
+                   "check lamps and nameplate; a smaller unit would hold the current better");
     if (string.row.pulsing && string.today.loading_frac < kLightLoad_frac)
         string.add("pulsing-light", "pulsing on record, " + load, "half load or more where lamps pulse",
-                   "a smaller unit, a lower tap, or this string first");
+                   "a smaller unit, or this string first");
 }
 
 void vet_volts(const StringUnderVet& string) {
@@ -153,7 +154,8 @@ void set_state(const City& city, const StringLoop& loop, const StringState& stat
     if (string.transformer.is_valid()) {
         const Transformer& unit = city.transformers[string.transformer.place()];
         min_frac = min_frac_of(unit);
-        if (loop_rating_kw(unit) > 0) string.loading_frac = state.load_kva / loop_rating_kw(unit);
+        string.tap = tap_for(unit, state.load_kva);
+        if (loop_rating_kw(unit) > 0) string.loading_frac = state.load_kva / (loop_rating_kw(unit) * string.tap);
     }
     string.verdict = verdict_of(string.transformer.is_valid(), state.lamps, string.loading_frac, min_frac);
 }

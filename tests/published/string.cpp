@@ -55,10 +55,11 @@ TEST_CASE("string: rated volts are kilowatts over amperes") {
 }
 
 TEST_CASE("string: lamps that a unit carries at 90 % loading with 5 % for the cable") {
-    // Derived: floor(.9 x rating / 1.05 / lamp kVA) at pf .9 for 130, 188, 295 W; held here by the phasor sum, with cable of
-    // 5 % of the lamps' watts: that many lamps stay within 90 %, three more per cent do not.
+    // Derived: floor(.9 x rating / 1.05 / lamp watts), pf 1; held here by the phasor sum, with cable of 5 % of the lamps'
+    // watts: that many lamps stay within 90 %, two more do not.
     struct Carried { double kw; int lamps; double w; };
-    for (const Carried& row : {Carried{20, 91, 188}, Carried{20, 58, 295}, Carried{10, 45, 188}, Carried{10, 29, 295}, Carried{30, 136, 188}, Carried{30, 87, 295}}) {
+    for (const Carried& row : {Carried{20, 131, 130}, Carried{20, 91, 188}, Carried{20, 58, 295}, Carried{10, 65, 130}, Carried{10, 45, 188}, Carried{10, 29, 295}, Carried{30, 197, 130},
+                               Carried{30, 136, 188}, Carried{30, 87, 295}}) {
         const double ohm_per_m = cable_ohm_per_km_at(copper(8), kStringCableC) / 1000;
         const double cable_m = 0.05 * row.lamps * row.w / (6.6 * 6.6 * ohm_per_m);
         INFO(row.kw << " kW, " << row.lamps << " x " << row.w << " W");

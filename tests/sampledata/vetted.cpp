@@ -70,7 +70,7 @@ TEST_CASE("Quillhaven: vet finds no error") {
     for (const unstring::VetString& string : result.strings) {
         INFO(read.city.strings[string.string.place()].id);
         CHECK(string.lamps >= 30);
-        CHECK(string.verdict == unstring::Verdict::good);
+        CHECK((string.verdict == unstring::Verdict::good || string.verdict == unstring::Verdict::tight));
         CHECK(string.volts > 500);
         CHECK(string.volts < 5000);
     }

@@ -188,6 +188,11 @@ TEST_CASE("vet: load over the rating is an error of the string, load under the u
     CHECK(vet(city).strings[0].verdict == Verdict::over);
     city.transformers[0].rated_kw = 30;
     CHECK(finding_of(vet(city).findings, "load-low", "S-1").severity == Severity::warning);
+    city.transformers[0].taps = {1, 0.75, 0.5};
+    CHECK(vet(city).strings[0].tap == 0.5);
+    CHECK(vet(city).strings[0].loading_frac == Approx(7.23 / 15).margin(0.001));
+    CHECK(count_of(vet(city).findings, "load-low") == 0);
+    city.transformers[0].taps = {1};
     city.transformers[0].min_frac = 0.2;
     CHECK(count_of(vet(city).findings, "load-low") == 0);
     city.strings[0].pulsing = true;

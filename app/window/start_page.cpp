@@ -45,7 +45,11 @@ StartPage::StartPage(QWidget* parent) : QWidget(parent), look_(&day_look()) {
                                                           {"climate", "twelve months, or hours of one year", "needed for solar"},
                                                           {"budget", "money and crew hours of each year", "asked for in phase"}}};
     for (std::size_t i = 0; i < rows.size(); ++i)
-        for (std::size_t j = 0; j < 3; ++j) grid->addWidget(text_label(tr(rows[i][j]), 12.5, j == 0 ? Weight::bold : Weight::normal, this), int(i), int(j));
+        for (std::size_t j = 0; j < 3; ++j) {
+            QLabel* cell = text_label(tr(rows[i][j]), 12.5, j == 0 ? Weight::bold : Weight::normal, this);
+            cell->setWordWrap(false);
+            grid->addWidget(cell, int(i), int(j));
+        }
     grid->setColumnStretch(3, 1);
     column->addLayout(grid);
     column->addSpacing(14);
@@ -59,6 +63,7 @@ StartPage::StartPage(QWidget* parent) : QWidget(parent), look_(&day_look()) {
     buttons->addWidget(text_label(tr("or drop a project file on this window"), 12, Weight::normal, this), 1);
     column->addLayout(buttons);
     column->addStretch(1);
+    setFocusProxy(gather);
     connect(open, &QPushButton::clicked, this, &StartPage::open_wanted);
     connect(gather, &QPushButton::clicked, this, &StartPage::gather_wanted);
 }
@@ -90,7 +95,7 @@ void StartPage::paintEvent(QPaintEvent*) {
     painter.setPen(dead), painter.drawLine(QPointF(left, y), QPointF(left + 4 * pitch, y));
     painter.setPen(QPen(look_->ink, 2)), painter.drawLine(QPointF(left + 4.5 * pitch, y), QPointF(left + 13.6 * pitch, y));
     for (int i = 0; i < 13; ++i) {
-        const PoleSign sign = i < 2 ? PoleSign::solar : i < 5 ? PoleSign::rewire : i < 7 ? PoleSign::rewire : i < 10 ? PoleSign::solar : PoleSign::keep;
+        const PoleSign sign = i < 2 ? PoleSign::solar : i < 5 ? PoleSign::rewire : i < 6 ? PoleSign::rewire : i < 10 ? PoleSign::solar : PoleSign::keep;
         const int year = i < 5 ? 0 : 3;
         const QColor tone = sign == PoleSign::keep ? look_->sheet : year_tone(*look_, year, 8);
         painter.save();
@@ -106,8 +111,8 @@ void StartPage::paintEvent(QPaintEvent*) {
     painter.drawLine(QPointF(left + 4.5 * pitch, y - 15), QPointF(left + 4.5 * pitch, y + 15));
     draw_transformer(painter, look_->ink, look_->sheet, QPointF(left + 13.9 * pitch, y), 8);
     lead(left, true, tr("far end, converted first"));
-    lead(left + 7 * pitch, true, tr("notched disc: solar, in 2030"));
-    lead(left + 11 * pitch, true, tr("ring: kept"));
+    lead(left + 6 * pitch, true, tr("notched disc: solar, in 2030"));
+    lead(left + 12 * pitch, true, tr("ring: kept"));
     lead(left + 2 * pitch, false, tr("square: rewire, in 2027"));
     lead(left + 4.5 * pitch, false, QString());
     painter.drawText(QPointF(left + 4.5 * pitch, y + 60), tr("a boundary between years: drag it, and lamps change year"));

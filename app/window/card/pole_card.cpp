@@ -80,9 +80,14 @@ void PoleCard::build_keys(QWidget* parent) {
     solar_ = key(tr("S solar"), "mark_solar", tr("Mark as a wish of the staff: solar (key S)"), true);
     lock_ = key(tr("L lock"), "lock_choice", tr("Lock the mark, or else the choice of the plan (key L): decide follows it"), true);
     clear_ = key(tr("U clear"), "clear_marks", tr("Clear mark and lock (key U)"), false);
-    for (QPushButton* button : {keep_, rewire_, solar_, lock_, clear_}) marks->addWidget(button);
+    for (QPushButton* button : {keep_, rewire_, solar_}) marks->addWidget(button);
     marks->addStretch(1);
     rows->addLayout(marks);
+    auto* orders = new QHBoxLayout;
+    orders->setSpacing(6);
+    for (QPushButton* button : {lock_, clear_}) orders->addWidget(button);
+    orders->addStretch(1);
+    rows->addLayout(orders);
     auto* years = new QHBoxLayout;
     years->setSpacing(6);
     auto* word = new QLabel(tr("work year"), parent);

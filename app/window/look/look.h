@@ -29,7 +29,7 @@ enum class Weight { normal, strong, bold };
 
 /// Tone of a year in a plan of `years` years; more than eight are interpolated, fewer taken evenly.
 [[nodiscard]] QColor year_tone(const Look& look, int place, int years);
-/// The ink of a number on that tone: whichever of sheet's white or black has the higher contrast.
+/// The ink of a number on that tone, 4.5:1 or better.
 [[nodiscard]] QColor ink_on(const QColor& ground);
 /// WCAG 2.2 contrast of two opaque colours, 1 to 21.
 [[nodiscard]] double contrast_of(const QColor& a, const QColor& b);

@@ -8,6 +8,7 @@
 #include <algorithm>
 #include <cmath>
 
+#include "app/window/look/focus.h"
 #include "app/window/look/words.h"
 #include "app/window/map/map_view.h"
 
@@ -145,6 +146,16 @@ bool MapView::event(QEvent* event) {
     }
     QToolTip::hideText();
     return true;
+}
+
+void MapView::focusInEvent(QFocusEvent* event) {
+    shows_focus_ = is_by_keys(*event);
+    update();
+}
+
+void MapView::focusOutEvent(QFocusEvent*) {
+    shows_focus_ = false;
+    update();
 }
 
 }  // namespace unstring

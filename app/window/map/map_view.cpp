@@ -150,7 +150,7 @@ void MapView::paint_overlay(QPainter& painter) {
         painter.setFont(text_font(15));
         painter.drawText(rect(), Qt::AlignCenter, tr("No pole of this project has a place yet."));
     }
-    if (hasFocus()) {
+    if (shows_focus_) {
         painter.setPen(QPen(look.ink, 2));
         painter.setBrush(Qt::NoBrush);
         painter.drawRoundedRect(QRectF(rect()).adjusted(2, 2, -2, -2), 3, 3);

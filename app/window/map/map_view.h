@@ -39,6 +39,8 @@ class MapView : public QWidget {
     void mouseReleaseEvent(QMouseEvent* event) override;
     void mouseDoubleClickEvent(QMouseEvent* event) override;
     void keyPressEvent(QKeyEvent* event) override;
+    void focusInEvent(QFocusEvent* event) override;
+    void focusOutEvent(QFocusEvent* event) override;
     void leaveEvent(QEvent* event) override;
     bool event(QEvent* event) override;
 
@@ -73,6 +75,7 @@ class MapView : public QWidget {
     QPolygonF outline_;
     PoleIx hover_;
     QPointF pointer_;
+    bool shows_focus_ = false;  ///< the frame shows when the keys came here, not the mouse
 };
 
 }  // namespace unstring

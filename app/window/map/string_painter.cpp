@@ -83,7 +83,8 @@ void paint_station(QPainter& painter, const Desk& desk, const Camera& camera, St
     for (const QPointF shift : {QPointF(12, -6), QPointF(12, 16), QPointF(-12 - metrics.horizontalAdvance(name), -6), QPointF(-12 - metrics.horizontalAdvance(name), 16)}) {
         const QRectF box = metrics.tightBoundingRect(name).translated(at + shift).adjusted(-4, -3, 4, 3);
         const bool is_free = std::none_of(taken.begin(), taken.end(), [&box](const QRectF& other) { return other.intersects(box); });
-        if (!is_free && !is_chosen) continue;
+        const bool is_inside = QRectF(QPointF(), camera.size).contains(box);
+        if ((!is_free || !is_inside) && !(is_chosen && shift.y() > 0 && shift.x() < 0)) continue;
         QPainterPath text;
         text.addText(at + shift, font, name);
         painter.strokePath(text, QPen(look.block, 4, Qt::SolidLine, Qt::RoundCap, Qt::RoundJoin));
@@ -106,7 +107,7 @@ LiveLoop live_loop(const StringLoop& loop, const Plan& plan, int year) {
     LiveLoop live;
     std::vector<char> on(loop.lamps.size(), 1);
     for (std::size_t i = 0; i < loop.lamps.size(); ++i) {
-        on[i] = is_done_by(plan, loop.lamps[i], year) ? 0 : 1;
+        on[i] = loop.burns[i] != 0 && !is_done_by(plan, loop.lamps[i], year) ? 1 : 0;
         live.lamps += on[i];
     }
     live.legs.assign(loop.lamps.size() + 1, live.lamps > 0 ? 1 : 0);

@@ -7,6 +7,7 @@
 #include <array>
 #include <cmath>
 
+#include "app/window/look/focus.h"
 #include "app/window/look/words.h"
 
 namespace unstring {
@@ -82,7 +83,7 @@ void YearStrip::paintEvent(QPaintEvent*) {
     if (!desk_.is_open()) return;
     paint_legend(painter);
     paint_slider(painter);
-    if (!hasFocus()) return;
+    if (!shows_focus_) return;
     painter.setPen(QPen(desk_.look().ink, 2));
     painter.setBrush(Qt::NoBrush);
     painter.drawRoundedRect(QRectF(rect()).adjusted(2, 2, -2, -2), 3, 3);
@@ -252,6 +253,16 @@ void YearStrip::keyPressEvent(QKeyEvent* event) {
     case Qt::Key_Space: toggle_play(); break;
     default: QWidget::keyPressEvent(event);
     }
+}
+
+void YearStrip::focusInEvent(QFocusEvent* event) {
+    shows_focus_ = is_by_keys(*event);
+    update();
+}
+
+void YearStrip::focusOutEvent(QFocusEvent*) {
+    shows_focus_ = false;
+    update();
 }
 
 }  // namespace unstring

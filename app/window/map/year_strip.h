@@ -22,6 +22,8 @@ class YearStrip : public QWidget {
     void mousePressEvent(QMouseEvent* event) override;
     void mouseMoveEvent(QMouseEvent* event) override;
     void keyPressEvent(QKeyEvent* event) override;
+    void focusInEvent(QFocusEvent* event) override;
+    void focusOutEvent(QFocusEvent* event) override;
 
   private:
     struct Word {
@@ -41,6 +43,7 @@ class YearStrip : public QWidget {
     MapView& map_;
     std::vector<Word> words_;
     QTimer play_;
+    bool shows_focus_ = false;  ///< the frame shows when the keys came here, not the mouse
 };
 
 }  // namespace unstring

@@ -66,12 +66,12 @@ std::vector<Boundary> boundaries_of(const StringLoop& loop, const Plan& plan) {
         Boundary boundary;
         boundary.year = year;
         int left_on = 0;
-        for (int position = 1; position <= fold.lamps; ++position) left_on += is_off(loop, plan, position, year) ? 0 : 1;
+        for (int position = 1; position <= fold.lamps; ++position) left_on += loop.burns[std::size_t(position - 1)] == 0 || is_off(loop, plan, position, year) ? 0 : 1;
         if (left_on == 0) continue;  // the string ends here
         boundary.out_on = on_before(loop, plan, fold, true, year);
         boundary.ret_on = on_before(loop, plan, fold, false, year);
         boundary.next_year = year_inside(loop, plan, fold, boundary.out_on, boundary.ret_on);
-        boundary.is_nested = left_on == boundary.out_on + boundary.ret_on;
+        boundary.is_nested = left_on <= boundary.out_on + boundary.ret_on;
         boundary.cutback = cutback_at(loop, boundary.out_on, boundary.ret_on);
         if (boundary.cutback >= 0) boundary.stand = loop.cutbacks[std::size_t(boundary.cutback)].confirmed ? Stand::confirmed : Stand::candidate;
         boundaries.push_back(boundary);

@@ -6,6 +6,7 @@
 #include <algorithm>
 #include <cmath>
 
+#include "app/window/look/focus.h"
 #include "app/window/look/words.h"
 #include "app/window/rail/rail_view.h"
 
@@ -140,6 +141,16 @@ void RailView::keyPressEvent(QKeyEvent* event) {
     case Qt::Key_B: ++keyboard_boundary_, viewport()->update(); return;
     default: QAbstractScrollArea::keyPressEvent(event);
     }
+}
+
+void RailView::focusInEvent(QFocusEvent* event) {
+    shows_focus_ = is_by_keys(*event);
+    viewport()->update();
+}
+
+void RailView::focusOutEvent(QFocusEvent*) {
+    shows_focus_ = false;
+    viewport()->update();
 }
 
 }  // namespace unstring

@@ -11,8 +11,6 @@
 namespace unstring {
 namespace {
 
-constexpr double kNameWidth_px = 88;
-
 QPen thread_pen(const Look& look, bool is_live) {
     QPen pen(is_live ? look.ink : look.dead, is_live ? 1.5 : 1.2);
     if (!is_live) pen.setDashPattern({2.9, 2.9});
@@ -54,7 +52,7 @@ void RailView::paintEvent(QPaintEvent*) {
         const double x = row.edge(std::max(row.fold.out, row.fold.ret())) - 30;
         draw_tag(painter, look, QPointF(x, row.box.center().y() + 38), drag_text(), look.hand, viewport()->rect());
     }
-    if (hasFocus()) {
+    if (shows_focus_) {
         painter.setPen(QPen(look.ink, 2)), painter.setBrush(Qt::NoBrush);
         painter.drawRoundedRect(QRectF(viewport()->rect()).adjusted(2, 2, -2, -2), 3, 3);
     }
@@ -73,7 +71,7 @@ void RailView::paint_row(QPainter& painter, const RailRow& row) {
     painter.setPen(look.hair2);
     painter.drawLine(row.box.bottomLeft(), row.box.bottomRight());
     const QFont font = text_font(is_chosen ? 14 : 13, is_chosen ? Weight::bold : Weight::strong);
-    const QString name = QFontMetricsF(font).elidedText(to_q(desk_.view().city.strings[row.string.place()].id), Qt::ElideMiddle, kNameWidth_px);
+    const QString name = QFontMetricsF(font).elidedText(to_q(desk_.view().city.strings[row.string.place()].id), Qt::ElideMiddle, row.edge(std::max(row.fold.out, row.fold.ret())) - 56);
     painter.setFont(font), painter.setPen(look.ink);
     painter.drawText(QPointF(16, row.box.center().y() - 1), name);
     painter.setFont(text_font(11)), painter.setPen(look.ink2);

@@ -51,7 +51,7 @@ void RailView::take_view() {
     verticalScrollBar()->setRange(0, std::max(0, all - viewport()->height()));
     verticalScrollBar()->setPageStep(viewport()->height());
     verticalScrollBar()->setSingleStep(int(kRow_px));
-    columns_ = year_columns(viewport()->width(), desk_.plan().settings);
+    columns_ = year_columns(width(), desk_.plan().settings);  // the scroll bar stands in the right margin
     viewport()->update();
 }
 

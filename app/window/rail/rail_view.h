@@ -56,6 +56,8 @@ class RailView : public QAbstractScrollArea {
     void mouseMoveEvent(QMouseEvent* event) override;
     void mouseReleaseEvent(QMouseEvent* event) override;
     void keyPressEvent(QKeyEvent* event) override;
+    void focusInEvent(QFocusEvent* event) override;
+    void focusOutEvent(QFocusEvent* event) override;
     bool viewportEvent(QEvent* event) override;
 
   private:
@@ -86,6 +88,7 @@ class RailView : public QAbstractScrollArea {
     std::optional<BoundaryDrag> drag_;
     QTimer preview_timer_;         ///< one preview for all moves that came since the last one
     int keyboard_boundary_ = 0;    ///< place of the boundary that the arrow keys move
+    bool shows_focus_ = false;  ///< the frame shows when the keys came here, not the mouse
 };
 
 }  // namespace unstring

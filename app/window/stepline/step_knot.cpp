@@ -109,7 +109,7 @@ void StepKnot::paintEvent(QPaintEvent*) {
     paint_thread(painter, kWord_x + QFontMetricsF(text_font(15, Weight::bold)).horizontalAdvance(text()) + 8);
     const bool has_warnings = desk_.is_open() && desk_.view().steps[std::size_t(step_)].warnings + desk_.view().steps[std::size_t(step_)].errors > 0;
     painter.setFont(text_font(11, is_bad || is_running || has_warnings ? Weight::bold : Weight::normal));
-    const bool is_green = is_running || standing() == StepStanding::by_hand || !desk_.is_open();
+    const bool is_green = is_running || standing() == StepStanding::by_hand || (!desk_.is_open() && step_ == Step::gather);
     painter.setPen(is_bad ? look.trouble : is_green ? look.hand : look.ink2);
     painter.drawText(QPointF(kWord_x, 39), state_text());
     if (!hasFocus()) return;

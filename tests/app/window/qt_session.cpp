@@ -4,6 +4,7 @@
 
 #include <memory>
 
+#define CATCH_CONFIG_EXTERNAL_INTERFACES
 #include <catch2/catch.hpp>
 
 #include "app/window/look/look.h"

@@ -27,7 +27,6 @@ const char* words_of(SpanKind kind) {
 }
 
 bool is_dug(SpanKind kind) { return kind == SpanKind::trench_verge || kind == SpanKind::trench_paved || kind == SpanKind::bore; }
-bool has_civil_work(SpanKind kind) { return is_dug(kind) || kind == SpanKind::conduit; }
 
 const CircuitSpan& span_at(const OrderFacts& facts, int place) { return facts.decide.spans[static_cast<std::size_t>(place)]; }
 
@@ -119,7 +118,7 @@ std::optional<WorkOrder> civil_order(const OrderFacts& facts, const YearJob& job
     bool reuses_duct = false, sets_poles = false;
     for (const int place : job.spans) {
         const CircuitSpan& span = span_at(facts, place);
-        if (!has_civil_work(span.kind)) continue;
+        if (span_crew_hours(facts.input.city, facts.input.prices, span, job.year).civil <= 0) continue;
         add_span_work(facts, job, span, tasks, order);
         reuses_duct = reuses_duct || span.kind == SpanKind::conduit;
     }

@@ -60,6 +60,16 @@ std::vector<std::string> predecessors(const OrderFacts& facts, const std::map<in
     return list;
 }
 
+/// Another owner's consent, where it is not in hand, is the first hold point of every order that touches the pole.
+void add_consent(const OrderFacts& facts, WorkOrder& order) {
+    std::string poles;
+    for (const OrderPole& row : order.poles) {
+        const Pole& pole = facts.pole(row.pole);
+        if (pole.owner != Owner::city && pole.consent != true) poles += (poles.empty() ? "" : ", ") + pole.id;
+    }
+    if (!poles.empty()) order.steps.insert(order.steps.begin(), {"Owner's consent in writing; without it no work at " + poles, true, false});
+}
+
 }  // namespace
 
 const char* text_of(Crew crew) {
@@ -80,6 +90,7 @@ std::vector<WorkOrder> work_orders(const MoneyInput& input, const DecideResult& 
         for (const auto& make : {line_order, civil_order, electric_order, lighting_order})
             if (std::optional<WorkOrder> order = make(facts, job)) {
                 ids.insert(order->id);
+                add_consent(facts, *order);
                 all.emplace_back(&job, std::move(*order));
             }
     const auto by_span = builders(facts);

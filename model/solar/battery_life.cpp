@@ -8,6 +8,33 @@
 namespace unstring {
 namespace {
 
+/// Takes a series value by value and keeps where it turns.
+class TurnFinder {
+  public:
+    TurnFinder(float first, std::vector<Turn>& turns) : turns_(turns), before_(first) {
+        turns_.push_back({static_cast<double>(first), 0});
+    }
+    /// True when the value differs from the one before.
+    bool add(float value, std::size_t at) {
+        const float step = value - before_;
+        if (step == 0) return false;
+        if (step * way_ < 0) turns_.push_back({static_cast<double>(before_), moved_at_});
+        way_ = step > 0 ? 1.0F : -1.0F;
+        before_ = value;
+        moved_at_ = at;
+        return true;
+    }
+    void finish() {
+        if (moved_at_ > 0) turns_.push_back({static_cast<double>(before_), moved_at_});
+    }
+
+  private:
+    std::vector<Turn>& turns_;
+    float before_;
+    float way_ = 0;  ///< of the last step that moved
+    std::size_t moved_at_ = 0;
+};
+
 double range_of(const Turn& a, const Turn& b) { return std::abs(a.value - b.value); }
 
 /// Potential of the graphite anode [V] over the state of charge.
@@ -71,17 +98,12 @@ double cycle_stress(const SunYear& sun, const ChargeHistory& history, const std:
 
 }  // namespace
 
-std::vector<Turn> turning_points(std::span<const float> values, std::size_t stride) {
+std::vector<Turn> turning_points(std::span<const float> values) {
     std::vector<Turn> turns;
-    for (std::size_t i = 0; i * stride < values.size(); ++i) {
-        const auto value = static_cast<double>(values[i * stride]);
-        const std::size_t n = turns.size();
-        if (n >= 1 && turns[n - 1].value == value) continue;
-        if (n >= 2 && (turns[n - 1].value > turns[n - 2].value) == (value > turns[n - 1].value))
-            turns[n - 1] = {value, i};
-        else
-            turns.push_back({value, i});
-    }
+    if (values.empty()) return turns;
+    TurnFinder finder(values[0], turns);
+    for (std::size_t i = 1; i < values.size(); ++i) finder.add(values[i], i);
+    finder.finish();
     return turns;
 }
 
@@ -114,19 +136,19 @@ std::vector<Cycle> rainflow(std::span<const Turn> turns) {
 
 ChargeHistory charge_history(const SunYear& sun, std::span<const float> soc, std::size_t stride) {
     ChargeHistory history;
-    history.turns = turning_points(soc, stride);
-    const std::size_t hours = soc.size() / stride;
-    history.years = static_cast<double>(hours) / kHours;
-    constexpr float kStill = 1e-6F;
+    const std::size_t days = soc.size() / stride / 24;
+    history.years = static_cast<double>(days) / kDays;
+    TurnFinder finder(soc[0], history.turns);
     std::size_t moving_hours = 0;
-    for (std::size_t day = 0; day < hours / 24; ++day) {
+    for (std::size_t day = 0; day < days; ++day) {
         float sum = 0;
-        for (std::size_t h = day * 24; h < day * 24 + 24; ++h) {
-            sum += soc[h * stride];
-            if (h > 0 && std::abs(soc[h * stride] - soc[(h - 1) * stride]) > kStill) ++moving_hours;
+        for (std::size_t hour = day * 24; hour < day * 24 + 24; ++hour) {
+            sum += soc[hour * stride];
+            moving_hours += finder.add(soc[hour * stride], hour) ? 1 : 0;
         }
         history.mean_soc[static_cast<std::size_t>(sun.days[day % kDays].month - 1)] += static_cast<double>(sum);
     }
+    finder.finish();
     for (std::size_t month = 0; month < 12; ++month)
         history.mean_soc[month] /= 24.0 * days_in_month(static_cast<int>(month) + 1) * history.years;
     double moved = 0;

@@ -19,8 +19,7 @@ struct Turn {  ///< where a series turns; its first and last value count as turn
     double value = 0;
     std::size_t at = 0;
 };
-/// @param stride  every how many values one belongs to the series
-[[nodiscard]] std::vector<Turn> turning_points(std::span<const float> values, std::size_t stride = 1);
+[[nodiscard]] std::vector<Turn> turning_points(std::span<const float> values);
 
 /// Cycles of a series. Source: ASTM E1049-85 section 5.4.4. Checked in tests/published/battery.cpp.
 [[nodiscard]] std::vector<Cycle> rainflow(std::span<const Turn> turns);
@@ -45,7 +44,7 @@ struct ChargeHistory {
     double c_rate = 0;                  ///< mean of the hours in which the charge moves [1/h]
     double years = 0;
 };
-/// @param soc  hours of whole years; @param stride  every how many values one belongs to this battery
+/// @param soc  hours of whole years, one at the least; @param stride  every how many values one belongs to this battery
 [[nodiscard]] ChargeHistory charge_history(const SunYear& sun, std::span<const float> soc, std::size_t stride = 1);
 
 /// The first year at whose end a new battery has lost kEndOfLife, or the cap. Varying stress is added up in virtual time.

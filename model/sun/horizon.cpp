@@ -82,6 +82,8 @@ double HorizonProfile::height_before_deg(double azimuth_deg) const {
 double sky_view_frac(std::span<const HorizonProfile> profiles, double tilt_deg, double bearing_deg, double step_deg) {
     const double cos_tilt = std::cos(tilt_deg * kRadPerDeg);
     const double sin_tilt = std::sin(tilt_deg * kRadPerDeg);
+    const auto is_open = [](const HorizonProfile& profile) { return profile.is_open(); };
+    if (std::all_of(profiles.begin(), profiles.end(), is_open)) return 0.5 * (1.0 + cos_tilt);
     const std::vector<double> bounds = pieces(profiles);
     std::vector<PieceEnds> ends(profiles.size());
     double sum = 0;

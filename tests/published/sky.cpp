@@ -48,7 +48,8 @@ TEST_CASE("sky: a tilted panel under an open sky sees half of one plus the cosin
         double tilt_deg, frac;
     };
     for (const Row& row : {Row{5, .998097}, Row{10, .992404}, Row{15, .982963}, Row{30, .933013}, Row{90, .5}})
-        CHECK(view({}, row.tilt_deg, 77) == Approx(row.frac).margin(1e-6));
+        for (const HorizonProfile& open : {HorizonProfile(), uniform(0)})
+            CHECK(view(open, row.tilt_deg, 77) == Approx(row.frac).margin(1e-6));
 }
 
 TEST_CASE("sky: a tilted panel in a uniform horizon as high as its tilt or higher") {

@@ -41,6 +41,7 @@ QFont paper_font(Type type) {
     QFont font(family().name);
     font.setPixelSize(static_cast<int>(std::lround(points_of(type) * family().scale * kPoint)));
     font.setBold(type == Type::title || type == Type::heading || type == Type::tag || type == Type::strong);
+    font.setLetterSpacing(QFont::AbsoluteSpacing, 0.01 * kPoint);  // unseen, but no ligatures: Lato's cannot be searched or copied
     return font;
 }
 

@@ -29,7 +29,7 @@ nlohmann::ordered_json points_json(const ScannedHorizon& horizon) {
 std::string steps_text(const HorizonOptions& given, double cell_m, const ScannedHorizon& horizon, double frac) {
     std::string text = fmt::format(
         "Inputs: raster {} with cells of {} m, at {}, {} m above the ground there; reach {} m, {} directions.\n"
-        "Each direction is marched in steps of half a cell from {} m away; the height there is bilinear between the four\n"
+        "Each direction is marched in steps of a quarter cell from {} m away; the height there is bilinear between the four\n"
         "nearest cell centres; horizon = atan((height - {}) / distance), the steepest counts, the ground lies level.\n",
         given.raster, cell_m, given.at, given.height_m, given.reach_m, given.directions, cell_m, given.height_m);
     for (std::size_t i = 0; i < horizon.height_deg.size(); ++i)
@@ -65,7 +65,7 @@ void work_out(const HorizonOptions& given, WorkOutAnswer& answer) {
         answer.fault = window.error();
         return;
     }
-    const ScannedHorizon horizon = scan_horizon(*window, place, given.height_m, given.reach_m, given.directions);
+    const ScannedHorizon horizon = scan_horizon(*window, bounds_of(*window), place, given.height_m, given.reach_m, given.directions);
     const HorizonProfile profile = HorizonProfile::from_directions(horizon.height_deg);
     const double frac = sky_view_frac({&profile, 1}, 0, 0);
     answer.json["horizon"] = points_json(horizon);

@@ -103,7 +103,8 @@ Expected<CityLight> city_light(const ShadeInput& input, const ShadeTerms& terms)
     if (const auto checked = check_climate(input.climate); !checked) return tl::unexpected(checked.error());
     CityLight light;
     const LonLat centre = input.city.centre;
-    light.sun = make_sun_year(centre, DayModel::psa, terms.sun_step_min, std::round(centre.lon_deg / 15.0));
+    light.sun = make_sun_year(centre, DayModel::psa, terms.sun_step_min, std::round(centre.lon_deg / 15.0),
+                              Sampling::staggered);
     const auto clearness = monthly_clearness(light.sun, input.climate.ghi_kwh_m2_day);
     if (!clearness) return tl::unexpected(clearness.error());
     light.sky = make_hourly_sky(light.sun, generate_clearness(*clearness, terms.weather_years + kSettlingYears, 1),

@@ -97,9 +97,10 @@ Expected<void> scan_raster(const City& city, const std::vector<PoleIx>& poles, H
                               (static_cast<double>(tile.second) + 0.5) * kTile_m};
         const auto window = heights.window(centre, 0.5 * kTile_m + kReach_m + 2.0 * heights.cell_m());
         if (!window) return tl::unexpected(window.error());
+        const WindowBounds bounds = bounds_of(*window);
         tbb::parallel_for(std::size_t{0}, members.size(), [&](std::size_t k) {
             PoleHorizon& horizon = horizons[members[k]];
-            ScannedHorizon scanned = scan_horizon(*window, city.poles[poles[members[k]].place()].place,
+            ScannedHorizon scanned = scan_horizon(*window, bounds, city.poles[poles[members[k]].place()].place,
                                                   horizon.panel_height_m, kReach_m, kDirections);
             horizon.deciduous_deg = std::move(scanned.height_deg);
             horizon.unknown_deg = std::move(scanned.unknown_deg);

@@ -37,13 +37,24 @@ double height_at_m(const HeightWindow& window, MapPoint place) {
                       (window.north_m - place.y_m) / window.cell_m - 0.5);
 }
 
-ScannedHorizon scan_horizon(const HeightWindow& window, MapPoint place, double panel_m, double reach_m, int directions) {
+WindowBounds bounds_of(const HeightWindow& window) {
+    WindowBounds bounds{0, false};
+    for (const float height_m : window.height_m) {
+        bounds.has_unknown = bounds.has_unknown || std::isnan(height_m);
+        if (static_cast<double>(height_m) > bounds.highest_m) bounds.highest_m = static_cast<double>(height_m);
+    }
+    return bounds;
+}
+
+ScannedHorizon scan_horizon(const HeightWindow& window, const WindowBounds& bounds, MapPoint place, double panel_m,
+                            double reach_m, int directions) {
     ScannedHorizon found;
     found.height_deg.reserve(static_cast<std::size_t>(directions));
     const double column = (place.x_m - window.west_m) / window.cell_m - 0.5;
     const double row = (window.north_m - place.y_m) / window.cell_m - 0.5;
-    constexpr int kStepsACell = 2;
+    constexpr int kStepsACell = 4;
     const int steps = static_cast<int>(std::floor(kStepsACell * reach_m / window.cell_m + 1e-9));
+    const double most_cells = (bounds.highest_m - panel_m) / window.cell_m;  // above the panel
     for (int direction = 0; direction < directions; ++direction) {
         const double azimuth_deg = 360.0 * direction / directions;
         const double east = exact_at_right_angles(std::sin(azimuth_deg * kRadPerDeg));
@@ -52,6 +63,7 @@ ScannedHorizon scan_horizon(const HeightWindow& window, MapPoint place, double p
         bool is_known = true;
         for (int step = kStepsACell; step <= steps; ++step) {
             const double cells = static_cast<double>(step) / kStepsACell;
+            if (!bounds.has_unknown && steepest * cells >= most_cells) break;
             const double height_m = bilinear_m(window, column + cells * east, row - cells * north);
             if (std::isnan(height_m)) {
                 is_known = false;

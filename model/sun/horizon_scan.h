@@ -16,10 +16,18 @@ struct ScannedHorizon {
     std::vector<float> unknown_deg;  ///< directions in which a sample within reach had no height
 };
 
-/// Marches from one cell away from the point to reach_m in steps of half a cell; the ground counts as level.
+/// What a march may leave out: where nothing in the window is higher, and no height is missing, it ends early.
+struct WindowBounds {
+    double highest_m = 0;
+    bool has_unknown = true;
+};
+[[nodiscard]] WindowBounds bounds_of(const HeightWindow& window);
+
+/// Marches from one cell away from the point to reach_m in steps of a quarter cell; the ground counts as level.
 /// Unknown samples are left out of the maximum and the direction is named.
 /// @param panel_m  height of the panel above the ground
-[[nodiscard]] ScannedHorizon scan_horizon(const HeightWindow& window, MapPoint place, double panel_m, double reach_m,
-                                          int directions);
+/// @param bounds   of this window
+[[nodiscard]] ScannedHorizon scan_horizon(const HeightWindow& window, const WindowBounds& bounds, MapPoint place,
+                                          double panel_m, double reach_m, int directions);
 
 }  // namespace unstring

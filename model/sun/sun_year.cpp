@@ -66,7 +66,14 @@ SunStep sun_step(const SunPosition& sun) {
             static_cast<float>(std::cos(elevation) * std::cos(azimuth)), static_cast<float>(std::sin(elevation))};
 }
 
-void add_hour(SunYear& year, const Sky& sky, int day, int hour, int step_min) {
+/// Where in its step the sun of a day is taken: the golden section spreads any run of days evenly.
+double place_in_step(Sampling sampling, int day) {
+    if (sampling == Sampling::centres) return 0.5;
+    const double turned = 0.6180339887498949 * day;
+    return turned - std::floor(turned);
+}
+
+void add_hour(SunYear& year, const Sky& sky, int day, int hour, int step_min, double in_step) {
     const SunPosition centre = sky.at(day, hour + 0.5);
     const SunDay& today = year.days[static_cast<std::size_t>(day)];
     year.elevation_deg.push_back(centre.elevation_deg);
@@ -79,7 +86,7 @@ void add_hour(SunYear& year, const Sky& sky, int day, int hour, int step_min) {
             static_cast<float>(sky.at(day, hour + (k + 0.5) / kLampSteps).elevation_deg));
     const int steps = 60 / step_min;
     for (int k = 0; k < steps; ++k) {
-        const SunPosition sun = sky.at(day, hour + (k + 0.5) / steps);
+        const SunPosition sun = sky.at(day, hour + (k + in_step) / steps);
         if (sun.elevation_deg > 0) year.steps.push_back(sun_step(sun));
     }
     year.first_step.push_back(static_cast<std::uint32_t>(year.steps.size()));
@@ -109,14 +116,14 @@ std::uint32_t noon_hour(const SunYear& year, std::size_t day) {
 
 }  // namespace
 
-SunYear make_sun_year(LonLat place, DayModel model, int step_min, double clock_h) {
+SunYear make_sun_year(LonLat place, DayModel model, int step_min, double clock_h, Sampling sampling) {
     if (step_min < 1 || 60 % step_min != 0) throw std::logic_error("sun year: the step must divide an hour");
     const Sky sky(place, model, clock_h);
     SunYear year;
     year.first_step.push_back(0);
     for (int day = 0; day < kDays; ++day) {
         year.days[static_cast<std::size_t>(day)] = sun_day(sky, place.lat_deg, day);
-        for (int hour = 0; hour < 24; ++hour) add_hour(year, sky, day, hour, step_min);
+        for (int hour = 0; hour < 24; ++hour) add_hour(year, sky, day, hour, step_min, place_in_step(sampling, day));
         const auto first = static_cast<std::size_t>(day) * 24;
         normalise(std::span(year.global_share).subspan(first, 24));
         normalise(std::span(year.diffuse_share).subspan(first, 24));

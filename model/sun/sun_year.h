@@ -42,9 +42,14 @@ struct SunYear {
     [[nodiscard]] int month_of_hour(std::size_t hour) const { return days[hour / 24].month; }
 };
 
+enum class Sampling { centres, staggered };
+
 /// @param step_min  length of a sun step, a divisor of 60; 60 = the hour's centre alone
 /// @param clock_h   psa only: hours that the clock is ahead of UTC (0 = UTC)
-[[nodiscard]] SunYear make_sun_year(LonLat place, DayModel model, int step_min, double clock_h = 0);
+/// @param sampling  centres: the sun at the middle of each step. Staggered: each day at another place within the step, so
+///                  that a crown's edge which falls on the same minute for weeks is not counted wrongly for weeks.
+[[nodiscard]] SunYear make_sun_year(LonLat place, DayModel model, int step_min, double clock_h = 0,
+                                    Sampling sampling = Sampling::centres);
 
 /// Hours of a year with the sun below a height, by the 5-minute steps.
 [[nodiscard]] double hours_below(const SunYear& year, double elevation_deg);

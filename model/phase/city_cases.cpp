@@ -249,6 +249,25 @@ class Builder {
     std::size_t years_;
 };
 
+int place_of(const CityYears& city, StringIx string) {
+    for (std::size_t s = 0; s < city.strings.size(); ++s)
+        if (city.strings[s].string == string) return static_cast<int>(s);
+    return -1;
+}
+
+/// The year in which an item is paid if its string i does not come first: by another string, or by a hand year.
+int other_year(const SharedItem& item, std::size_t i, const std::vector<StringPlan>& now, int years) {
+    int other = item.fixed_t < 0 ? years : item.fixed_t;
+    for (std::size_t j = 0; j < item.firsts.size(); ++j) {
+        if (j == i) continue;
+        if (now.empty()) return i == 0 ? other : 0;  // at first it sits on the first of its strings
+        const int t = year_done(now[item.firsts[j].first], item.firsts[j].second);
+        const int own = year_done(now[item.firsts[i].first], item.firsts[i].second);
+        if (t >= 0 && (t != own || j < i)) other = std::min(other, t);
+    }
+    return other;
+}
+
 /// Puts an item's cost and use on a string's outermost section beyond it, as what it adds when it comes before `other_t`.
 void add_item(const SharedItem& item, std::size_t string, int section, int other_t, PackageCase& packages) {
     const double saved = other_t < packages.years ? item.cost[static_cast<std::size_t>(other_t)] : 0;
@@ -260,18 +279,84 @@ void add_item(const SharedItem& item, std::size_t string, int section, int other
     }
 }
 
+/// Which states of the duct's string leave its cable live.
+std::vector<std::vector<char>> live_states(const CityYears& city, const CircuitSpan& span, std::size_t string) {
+    const DuctLegs legs = duct_legs(city.loops[span.duct_string.place()], span);
+    std::vector<std::vector<char>> blocks;
+    for (const auto& year : city.legs[string]) {
+        blocks.emplace_back();
+        for (const std::vector<char>& live : year)
+            blocks.back().push_back(std::any_of(live.begin() + legs.first, live.begin() + legs.last + 1, [](char leg) { return leg != 0; }) ? 1 : 0);
+    }
+    return blocks;
+}
+
+bool has_fixed(const CityString& string) {
+    return std::any_of(string.fixed_year.begin(), string.fixed_year.end(), [](int year) { return year != 0; });
+}
+
+/// A duct of the string itself: a jump that leaves its cable live digs, in the years before `other_t`.
+void add_own_dig(const SharedItem& item, std::size_t s, int section, const std::vector<std::vector<char>>& live, int other_t, PackageCase& packages) {
+    PackageString& string = packages.strings[s];
+    for (std::size_t t = 0; t < static_cast<std::size_t>(std::min(other_t, packages.years)); ++t)
+        for (std::size_t n = 0; n <= static_cast<std::size_t>(section); ++n)
+            for (std::size_t next = static_cast<std::size_t>(section) + 1; next < live[t].size(); ++next) {
+                if (live[t][next] == 0) continue;
+                string.jump_cost[t][n][next - n - 1] += item.dig_cost[t];
+                for (std::size_t l = 0; l < kLimits; ++l) string.jump_use[t][n][next - n - 1][l] += item.dig_use[t][l];
+            }
+}
+
+/// A duct of another string: what the digging costs more while that one's cable is live, nothing from `other_t` on.
+PackageWait dig_wait(const SharedItem& item, std::size_t i, std::size_t blocking, std::vector<std::vector<char>> live, int other_t) {
+    PackageWait wait{item.firsts[i].first, item.firsts[i].second, blocking, std::move(live), item.dig_cost, item.dig_use};
+    for (std::size_t t = static_cast<std::size_t>(std::max(0, other_t)); t < wait.cost.size(); ++t) {
+        wait.cost[t] = 0;
+        wait.use[t] = Use{};
+    }
+    return wait;
+}
+
+/// A section that waits for another string's state; within one string it is a jump that is to be avoided.
+void add_wait(PackageWait wait, PackageCase& packages) {
+    if (wait.waiting != wait.blocking) {
+        packages.waits.push_back(std::move(wait));
+        return;
+    }
+    PackageString& string = packages.strings[wait.waiting];
+    for (std::size_t t = 0; t < wait.blocks.size(); ++t)
+        for (std::size_t n = 0; n <= static_cast<std::size_t>(wait.section); ++n)
+            for (std::size_t next = static_cast<std::size_t>(wait.section) + 1; next < wait.blocks[t].size(); ++next)
+                if (wait.blocks[t][next] != 0) string.jump_penalty[t][n][next - n - 1] += packages.wait_penalty;
+}
+
+/// Where a hand has set years, a live duct is an error to be avoided; else it is dug beside.
+void add_duct(const CityYears& city, const SharedItem& item, const std::vector<StringPlan>& now, PackageCase& packages) {
+    const CircuitSpan& span = city.decide.spans[static_cast<std::size_t>(item.span)];
+    const int in = place_of(city, span.duct_string);
+    if (in < 0) return;
+    const auto blocking = static_cast<std::size_t>(in);
+    const auto live = live_states(city, span, blocking);
+    for (std::size_t i = 0; i < item.firsts.size(); ++i) {
+        const auto [string, section] = item.firsts[i];
+        const int other_t = other_year(item, i, now, packages.years);
+        if (has_fixed(city.strings[blocking])) add_wait({string, section, blocking, live, {}, {}}, packages);
+        else if (string == blocking) add_own_dig(item, string, section, live, other_t, packages);
+        else packages.waits.push_back(dig_wait(item, i, blocking, live, other_t));
+    }
+    if (item.fixed_t < 0) return;
+    const auto t = static_cast<std::size_t>(item.fixed_t);
+    auto& penalty = packages.strings[blocking].state_penalty[t];
+    for (std::size_t n = 0; n < penalty.size(); ++n)
+        if (live[t][n] != 0)
+            for (double& each : penalty[n]) each += packages.wait_penalty;
+}
+
 void add_items(const CityYears& city, const std::vector<StringPlan>& now, PackageCase& packages) {
     for (const SharedItem& item : city.items) {
-        const int fixed_t = item.fixed_t < 0 ? packages.years : item.fixed_t;
-        for (std::size_t i = 0; i < item.firsts.size(); ++i) {
-            int other_t = fixed_t;
-            for (std::size_t j = 0; j < item.firsts.size(); ++j) {
-                if (j == i) continue;
-                if (now.empty()) other_t = i == 0 ? other_t : 0;  // at first it sits on the first of its strings
-                else if (const int t = year_done(now[item.firsts[j].first], item.firsts[j].second); t >= 0) other_t = std::min(other_t, t == year_done(now[item.firsts[i].first], item.firsts[i].second) && i < j ? other_t : t);
-            }
-            add_item(item, item.firsts[i].first, item.firsts[i].second, other_t, packages);
-        }
+        for (std::size_t i = 0; i < item.firsts.size(); ++i)
+            add_item(item, item.firsts[i].first, item.firsts[i].second, other_year(item, i, now, packages.years), packages);
+        if (!item.dig_cost.empty()) add_duct(city, item, now, packages);
         if (item.fixed_t < 0) continue;
         for (std::size_t l = 0; l < kLimits; ++l)
             packages.limit[static_cast<std::size_t>(item.fixed_t)][l] -= item.use[static_cast<std::size_t>(item.fixed_t)][l];
@@ -298,49 +383,6 @@ void take_fixed(const CityYears& city, PackageCase& packages) {
     }
 }
 
-/// A section that waits for another string's state, or for its own.
-void add_wait(const PackageWait& wait, PackageCase& packages) {
-    if (wait.waiting != wait.blocking) {
-        packages.waits.push_back(wait);
-        return;
-    }
-    PackageString& string = packages.strings[wait.waiting];
-    for (std::size_t t = 0; t < wait.blocks.size(); ++t)
-        for (std::size_t n = 0; n <= static_cast<std::size_t>(wait.section); ++n)
-            for (std::size_t next = static_cast<std::size_t>(wait.section) + 1; next < wait.blocks[t].size(); ++next)
-                if (wait.blocks[t][next] != 0) string.jump_penalty[t][n][next - n - 1] += packages.wait_penalty;
-}
-
-int place_of(const CityYears& city, StringIx string) {
-    for (std::size_t s = 0; s < city.strings.size(); ++s)
-        if (city.strings[s].string == string) return static_cast<int>(s);
-    return -1;
-}
-
-void add_duct_waits(const CityYears& city, PackageCase& packages) {
-    for (const SharedItem& item : city.items) {
-        if (item.span < 0) continue;
-        const CircuitSpan& span = city.decide.spans[static_cast<std::size_t>(item.span)];
-        if (is_free_of_duct(city.input.city, span)) continue;
-        const int in = place_of(city, span.duct_string);
-        if (in < 0) continue;
-        const auto blocking = static_cast<std::size_t>(in);
-        const DuctLegs legs = duct_legs(city.loops[span.duct_string.place()], span);
-        std::vector<std::vector<char>> blocks;
-        for (const auto& year : city.legs[blocking]) {
-            blocks.emplace_back();
-            for (const std::vector<char>& live : year)
-                blocks.back().push_back(std::any_of(live.begin() + legs.first, live.begin() + legs.last + 1, [](char leg) { return leg != 0; }) ? 1 : 0);
-        }
-        for (const auto& [string, section] : item.firsts) add_wait({string, section, blocking, blocks}, packages);
-        if (item.fixed_t < 0) continue;
-        auto& penalty = packages.strings[blocking].state_penalty[static_cast<std::size_t>(item.fixed_t)];
-        for (std::size_t n = 0; n < penalty.size(); ++n)
-            if (blocks[static_cast<std::size_t>(item.fixed_t)][n] != 0)
-                for (double& each : penalty[n]) each += packages.wait_penalty;
-    }
-}
-
 void add_control_waits(const CityYears& city, PackageCase& packages) {
     for (std::size_t a = 0; a < city.strings.size(); ++a) {
         const std::string& from = city.input.city.strings[city.strings[a].string.place()].control_from;
@@ -358,13 +400,39 @@ void add_control_waits(const CityYears& city, PackageCase& packages) {
             section = at == sections.end() ? -1 : static_cast<int>(at - sections.begin());
         }
         if (section < 0) continue;
-        PackageWait wait{b, section, a, {}};
+        PackageWait wait{b, section, a, {}, {}, {}};
         for (const auto& year : city.states[a]) {
             wait.blocks.emplace_back();
             for (const StringState& state : year) wait.blocks.back().push_back(state.lamps > 0 ? 1 : 0);
         }
-        add_wait(wait, packages);
+        add_wait(std::move(wait), packages);
     }
+}
+
+/// See bound_case: exact where one string alone has the item, else equal shares at prices that are never too high.
+void add_item_to_bound(const CityYears& city, const SharedItem& item, BoundCase& bound) {
+    PackageCase& packages = bound.packages;
+    const double share = 1.0 / static_cast<double>(item.firsts.size() + (item.fixed_t >= 0 ? 1 : 0));
+    const bool is_one_strings = item.firsts.size() == 1 && item.fixed_t < 0;
+    const bool may_dig = !item.dig_cost.empty();
+    const int in = may_dig ? place_of(city, city.decide.spans[static_cast<std::size_t>(item.span)].duct_string) : -1;
+    const bool digs_exactly = is_one_strings && in >= 0 && static_cast<std::size_t>(in) == item.firsts[0].first && !has_fixed(city.strings[item.firsts[0].first]);
+    double cheapest = kNever;
+    for (std::size_t t = 0; t < static_cast<std::size_t>(packages.years); ++t) {
+        const double here = item.cost[t] + (may_dig && !digs_exactly ? std::min(0.0, item.dig_cost[t]) : 0);
+        cheapest = is_one_strings ? here : std::min(cheapest, here);
+        for (const auto& [string, section] : item.firsts) {
+            const auto k = static_cast<std::size_t>(section);
+            packages.strings[string].work_cost[t][k] += share * cheapest;
+            if (!is_one_strings) continue;
+            for (std::size_t l = 0; l < kLimits; ++l)
+                packages.strings[string].work_use[t][k][l] += item.use[t][l] + (may_dig && !digs_exactly ? std::min(0.0, item.dig_use[t][l]) : 0);
+        }
+        if (static_cast<int>(t) == item.fixed_t) bound.fixed_cost += share * cheapest;
+    }
+    if (digs_exactly)
+        add_own_dig(item, item.firsts[0].first, item.firsts[0].second, live_states(city, city.decide.spans[static_cast<std::size_t>(item.span)], static_cast<std::size_t>(in)),
+                    packages.years, packages);
 }
 
 }  // namespace
@@ -373,7 +441,6 @@ PackageCase search_case(const CityYears& city, const std::vector<StringPlan>& no
     PackageCase packages = Builder(city, For::search).run();
     add_items(city, now, packages);
     take_fixed(city, packages);
-    add_duct_waits(city, packages);
     add_control_waits(city, packages);
     return packages;
 }
@@ -393,21 +460,7 @@ BoundCase bound_case(const CityYears& city, bool all_reached, bool all_carried) 
                 if (all_carried) by_class.back() = kNever;
         }
     }
-    for (const SharedItem& item : city.items) {
-        const double share = 1.0 / static_cast<double>(item.firsts.size() + (item.fixed_t >= 0 ? 1 : 0));
-        const bool is_one_strings = item.firsts.size() == 1 && item.fixed_t < 0;  // paid with that section, exactly
-        double cheapest = kNever;
-        for (std::size_t t = 0; t < static_cast<std::size_t>(packages.years); ++t) {
-            cheapest = is_one_strings ? item.cost[t] : std::min(cheapest, item.cost[t]);
-            for (const auto& [string, section] : item.firsts) {
-                const auto k = static_cast<std::size_t>(section);
-                packages.strings[string].work_cost[t][k] += share * cheapest;
-                if (is_one_strings)
-                    for (std::size_t l = 0; l < kLimits; ++l) packages.strings[string].work_use[t][k][l] += item.use[t][l];
-            }
-            if (static_cast<int>(t) == item.fixed_t) bound.fixed_cost += share * cheapest;
-        }
-    }
+    for (const SharedItem& item : city.items) add_item_to_bound(city, item, bound);
     std::vector<char> moves(city.input.city.poles.size(), 0);
     for (const CityString& string : city.strings)
         for (const CitySection& section : string.sections)

@@ -33,6 +33,8 @@ struct SharedItem {
     int fixed_t = -1;                                 ///< earliest hand year beyond, 0-based; -1 = none
     std::vector<double> cost;                         ///< [t] present value
     std::vector<Use> use;                             ///< [t]
+    std::vector<double> dig_cost;                     ///< [t] more, where its duct is live; empty = no duct to wait for
+    std::vector<Use> dig_use;                         ///< [t]
     int span = -1;                                    ///< place in decide.spans, -1 = a connection
 };
 

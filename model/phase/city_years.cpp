@@ -100,9 +100,15 @@ void add_items(CityYears& city, const std::vector<Place>& places) {
         if (item.firsts.empty() && item.fixed_t < 0) continue;
         item.span = static_cast<int>(i);
         for (std::size_t t = 0; t < years; ++t) {
-            const YearCash& cash = city.book.span(i, city.year(t));
-            item.cost.push_back(cash.cost);
-            item.use.push_back(use_of(cash, span_crew_hours(records, city.input.prices, city.decide.spans[i], city.year(t))));
+            const CircuitSpan& span = city.decide.spans[i];
+            const double cost = city.book.span(i, city.year(t), false).cost;
+            item.cost.push_back(cost);
+            item.use.push_back(use_of(city.book.span(i, city.year(t), false), span_crew_hours(records, city.input.prices, span, city.year(t))));
+            if (is_free_of_duct(records, span)) continue;
+            Use more = use_of(city.book.span(i, city.year(t), true), span_crew_hours(records, city.input.prices, dug_span(span), city.year(t)));
+            for (std::size_t l = 0; l < kLimits; ++l) more[l] -= item.use.back()[l];
+            item.dig_cost.push_back(city.book.span(i, city.year(t), true).cost - cost);
+            item.dig_use.push_back(more);
         }
         city.items.push_back(std::move(item));
     }

@@ -3,12 +3,27 @@
 
 #include "model/finding.h"
 #include "model/phase/phase_facts.h"
+#include "model/phase/phase_result.h"
 
 namespace unstring {
 
-/// Spans that reuse old conduit while the series cable in it is still live at the end of the year in which they are
-/// built; none where the duct has a spare one beside it. One finding a span.
-[[nodiscard]] std::vector<Finding> live_duct_findings(const PhaseFacts& facts);
+enum class DuctState {
+    free,  ///< no duct is reused, or its cable is dead by the end of the year in which the span is built
+    dug,   ///< live, and every year that makes it so is the solver's: the span is dug beside it and priced as trench
+    live,  ///< live by a year that a hand has set: an error until someone decides
+};
+
+/// One for each span of decide. Live is judged at the end of the year in which the span is built.
+[[nodiscard]] std::vector<DuctState> duct_states(const PhaseFacts& facts);
+
+/// duct-live for each span that is live; one notice duct-dug for each string and year in which spans are dug.
+[[nodiscard]] std::vector<Finding> duct_findings(const PhaseFacts& facts);
+
+/// The span as trench, in the surface over its duct.
+[[nodiscard]] CircuitSpan dug_span(CircuitSpan span);
+
+/// Decide's circuits as phase builds them: spans_dug as trench. For orders and drawings.
+[[nodiscard]] DecideResult as_built(DecideResult decide, const PhaseResult& phase);
 
 /// The leg of the string's loop that lies in a span's old conduit (legs are numbered by the position before them); -1 =
 /// it cannot be told. The legs between the two poles in wiring order, where others lie between: the first of them.

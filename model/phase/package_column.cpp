@@ -31,6 +31,7 @@ struct LinearCharge {
     }
     double steer(double /*penalty*/) const { return 0; }
     double section(int /*t*/, int /*k*/) const { return 0; }
+    void add_section_use(int /*t*/, int /*k*/, Use& /*use*/) const {}
     double state(int /*t*/, int /*n*/) const { return 0; }
 };
 
@@ -61,6 +62,9 @@ struct RoomCharge {
     double steer(double penalty) const { return penalty; }
     double section(int t, int k) const {
         return room.section_penalty.empty() ? 0 : room.section_penalty[static_cast<std::size_t>(t)][static_cast<std::size_t>(k)];
+    }
+    void add_section_use(int t, int k, Use& use) const {
+        if (!room.section_use.empty()) use = plus(use, room.section_use[static_cast<std::size_t>(t)][static_cast<std::size_t>(k)]);
     }
     double state(int t, int n) const {
         return room.state_penalty.empty() ? 0 : room.state_penalty[static_cast<std::size_t>(t)][static_cast<std::size_t>(n)];
@@ -133,6 +137,7 @@ template <class Charge> class ColumnSearch {
                     work += string_.work_cost[year][static_cast<std::size_t>(next - 1)];
                     use = plus(use, string_.work_use[year][static_cast<std::size_t>(next - 1)]);
                     work += charge_.section(t, next - 1);
+                    charge_.add_section_use(t, next - 1, use);
                 }
                 if (next < least(t)) continue;
                 const double whole = work + jump_cost(t, n, next) + charge_.state(t, next);

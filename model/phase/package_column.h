@@ -26,6 +26,7 @@ struct Room {
     std::vector<std::vector<char>> unit_is_there;  ///< [t][class] one more may be in service without a purchase
     Use over_price{};                              ///< of a unit of over-run
     std::vector<std::vector<double>> section_penalty;  ///< [t][k] of doing section k in year t: it waits for another string
+    std::vector<std::vector<Use>> section_use;         ///< [t][k] that it takes more for the same reason
     std::vector<std::vector<double>> state_penalty;    ///< [t][n] of being there: another string's section waits for it
 };
 

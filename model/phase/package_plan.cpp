@@ -66,6 +66,16 @@ PackagePlan add_up(const PackageCase& packages, std::vector<StringPlan> strings,
             if (figures.in_class[t] != kNoClass) ++in_service[t][static_cast<std::size_t>(figures.in_class[t])];
         }
     }
+    for (const PackageWait& wait : packages.waits) {
+        if (!is_broken(wait, strings)) continue;
+        if (wait.cost.empty()) {
+            plan.penalty += packages.wait_penalty;
+            continue;
+        }
+        const auto t = static_cast<std::size_t>(year_done(strings[wait.waiting], wait.section));
+        plan.cost += wait.cost[t];
+        for (std::size_t l = 0; l < kLimits; ++l) use[t][l] += wait.use[t][l];
+    }
     plan.bought = buy(packages, in_service, plan);
     for (std::size_t t = 0; t < years; ++t)
         for (std::size_t l = 0; l < kLimits; ++l) {
@@ -74,8 +84,6 @@ PackagePlan add_up(const PackageCase& packages, std::vector<StringPlan> strings,
             plan.over.push_back({static_cast<int>(t), l, by});
             plan.penalty += by * over_price[l];
         }
-    for (const PackageWait& wait : packages.waits)
-        if (is_broken(wait, strings)) plan.penalty += packages.wait_penalty;
     plan.strings = std::move(strings);
     return plan;
 }

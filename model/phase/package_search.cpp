@@ -53,32 +53,41 @@ class Hand {
         }
     }
 
+    double price_of(const PackageWait& wait, std::size_t t) const { return wait.cost.empty() ? packages_.wait_penalty : wait.cost[t]; }
+
     void add_waits(std::size_t s, Room& room) const {
         const auto sections = static_cast<std::size_t>(packages_.strings[s].sections);
         for (const PackageWait& wait : packages_.waits) {
+            const bool is_others = wait.waiting != s && wait.blocking != s && has_[wait.waiting] != 0 && has_[wait.blocking] != 0;
+            if (is_others && !wait.use.empty() && is_broken(wait, plans_)) {
+                const auto t = static_cast<std::size_t>(year_done(plans_[wait.waiting], wait.section));
+                for (std::size_t l = 0; l < kLimits; ++l) room.use[t][l] -= wait.use[t][l];
+            }
             const bool waits = wait.waiting == s && has_[wait.blocking] != 0;
             const bool blocks = wait.blocking == s && has_[wait.waiting] != 0;
             if (!waits && !blocks) continue;
             if (room.section_penalty.empty()) {
                 room.section_penalty.assign(used_.size(), std::vector<double>(sections, 0));
                 room.state_penalty.assign(used_.size(), std::vector<double>(sections + 1, 0));
+                room.section_use.assign(used_.size(), std::vector<Use>(sections, Use{}));
             }
-            if (waits)
-                for (std::size_t t = 0; t < used_.size(); ++t)
-                    if (wait.blocks[t][static_cast<std::size_t>(plans_[wait.blocking].done[t])] != 0)
-                        room.section_penalty[t][static_cast<std::size_t>(wait.section)] += packages_.wait_penalty;
+            const auto k = static_cast<std::size_t>(wait.section);
+            for (std::size_t t = 0; waits && t < used_.size(); ++t) {
+                if (wait.blocks[t][static_cast<std::size_t>(plans_[wait.blocking].done[t])] == 0) continue;
+                room.section_penalty[t][k] += price_of(wait, t);
+                for (std::size_t l = 0; l < kLimits && !wait.use.empty(); ++l) room.section_use[t][k][l] += wait.use[t][l];
+            }
             if (!blocks) continue;
             const int done = year_done(plans_[wait.waiting], wait.section);
             if (done < 0) continue;
             const auto t = static_cast<std::size_t>(done);
             for (std::size_t n = 0; n <= sections; ++n)
-                if (wait.blocks[t][n] != 0) room.state_penalty[t][n] += packages_.wait_penalty;
+                if (wait.blocks[t][n] != 0) room.state_penalty[t][n] += price_of(wait, t);
         }
     }
 
     Room room(std::size_t s) const {
         Room room;
-        add_waits(s, room);
         room.over_price = over_price_;
         room.use = packages_.limit;
         room.unit_is_there.assign(used_.size(), std::vector<char>(static_cast<std::size_t>(packages_.classes), 0));
@@ -90,6 +99,7 @@ class Hand {
                 room.unit_is_there[t][c] = units_wanting(packages_, t, c, in_service_[t][c] + 1) <= held[c];
             }
         }
+        add_waits(s, room);
         return room;
     }
 

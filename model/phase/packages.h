@@ -42,13 +42,15 @@ struct PackageString {
     std::vector<double> left_penalty;     ///< [n] steers the search away from stopping at n < sections; no cost; may be empty
 };
 
-/// A section that may not be done while another string is in certain states: a duct that its cable still occupies, a
+/// A section that may not be done, or not at its price, while another string is in certain states: a duct that its cable still occupies, a
 /// control that another string still needs.
 struct PackageWait {
     std::size_t waiting = 0;  ///< string
     int section = 0;          ///< of the waiting string
     std::size_t blocking = 0; ///< string, another one (within one string a wait is part of jump_penalty)
     std::vector<std::vector<char>> blocks;  ///< [t][n] the section may not be done in year t that ends in this state
+    std::vector<double> cost;  ///< [t] where it may be done all the same, at this cost more; empty = it may not
+    std::vector<Use> use;      ///< [t] and this use more; empty with cost
 };
 
 struct PackageCase {

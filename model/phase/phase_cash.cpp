@@ -1,5 +1,7 @@
 #include "model/phase/phase_cash.h"
 
+#include "model/phase/duct_live.h"
+
 #include <algorithm>
 #include <map>
 #include <numeric>
@@ -34,6 +36,7 @@ void CashBook::use(const PlanSettings& settings) {
     plan_.settings = settings;
     poles_.assign(std::max<std::size_t>(1, input_.city.poles.size()), {});
     spans_.assign(decide_.spans.size(), {});
+    dug_spans_ = spans_;
     connections_.assign(input_.city.services.size(), {});
 }
 
@@ -74,11 +77,13 @@ const YearCash& CashBook::pole(const PoleAsk& ask) {
     return poles_[ask.pole.place()].back().cash;
 }
 
-const YearCash& CashBook::span(std::size_t place, int year) {
-    for (const auto& [known, cash] : spans_[place])
+const YearCash& CashBook::span(std::size_t place, int year, bool dug) {
+    auto& known_years = (dug ? dug_spans_ : spans_)[place];
+    for (const auto& [known, cash] : known_years)
         if (known == year) return cash;
-    spans_[place].emplace_back(year, year_cash(plan_.settings, span_lines(input(), decide_.spans[place], year)));
-    return spans_[place].back().second;
+    const CircuitSpan& span = decide_.spans[place];
+    known_years.emplace_back(year, year_cash(plan_.settings, span_lines(input(), dug ? dug_span(span) : span, year)));
+    return known_years.back().second;
 }
 
 const YearCash& CashBook::connection(ServiceIx service, int year) {

@@ -37,7 +37,8 @@ class CashBook {
     /// Works out what is asked and not yet known, in parallel.
     void warm(const std::vector<PoleAsk>& asks);
     [[nodiscard]] const YearCash& pole(const PoleAsk& ask);
-    [[nodiscard]] const YearCash& span(std::size_t place, int year);
+    /// @param dug  as trench beside its old duct
+    [[nodiscard]] const YearCash& span(std::size_t place, int year, bool dug);
     [[nodiscard]] const YearCash& connection(ServiceIx service, int year);
 
     [[nodiscard]] std::vector<CashLine> pole_lines(const PoleAsk& ask) const;
@@ -58,7 +59,7 @@ class CashBook {
     const DecideResult& decide_;
     Plan plan_;  ///< settings only
     std::vector<std::vector<Known>> poles_;
-    std::vector<std::vector<std::pair<int, YearCash>>> spans_, connections_;
+    std::vector<std::vector<std::pair<int, YearCash>>> spans_, dug_spans_, connections_;
 };
 
 }  // namespace unstring

@@ -23,7 +23,7 @@ class Checks {
         for (std::size_t s = 0; s < facts_.loops.size(); ++s)
             if (!facts_.loops[s].lamps.empty()) check_string(s);
         for (const Finding& finding : facts_.units.findings) result_.failures.push_back(finding);
-        for (Finding& finding : live_duct_findings(facts_)) result_.failures.push_back(std::move(finding));
+        for (Finding& finding : duct_findings(facts_)) result_.failures.push_back(std::move(finding));
         check_controls();
         check_critical();
         check_limits();

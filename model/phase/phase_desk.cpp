@@ -2,6 +2,7 @@
 
 #include <algorithm>
 
+#include "model/phase/duct_live.h"
 #include "model/phase/failure_drill.h"
 #include "model/phase/phase_cash.h"
 #include "model/phase/phase_checks.h"
@@ -101,11 +102,12 @@ PhaseDesk::~PhaseDesk() = default;
 PhaseResult PhaseDesk::evaluate(const Plan& plan, bool with_lines) {
     Inside& in = *inside_;
     in.book.use(plan.settings);
-    PhaseFacts facts{in.input.city, in.input.prices, plan, in.decide, in.loops, in.kinds, {}, {}, {}, {}, {}};
+    PhaseFacts facts{in.input.city, in.input.prices, plan, in.decide, in.loops, in.kinds, {}, {}, {}, {}, {}, {}};
     for (std::size_t i = 0; i < in.input.city.poles.size(); ++i) facts.pole_year.push_back(work_year(in.input.city, plan, PoleIx(i)));
     for (std::size_t s = 0; s < in.loops.size(); ++s) facts.states.push_back(&in.states_of(s, plan, facts.pole_year));
     facts.span_year = span_years(in.decide, plan, facts.pole_year);
     facts.connection_year = connection_years(in.decide, plan, facts.pole_year);
+    facts.duct = duct_states(facts);
     facts.units = unit_years(in.input.city, in.loops, in.kinds, facts.states, plan.units, plan.settings.first_year, plan.settings.years);
 
     PhaseResult result;
@@ -114,6 +116,8 @@ PhaseResult PhaseDesk::evaluate(const Plan& plan, bool with_lines) {
     fill_years(facts, result);
     result.sections = in.sections;
     result.moves = facts.units.moves;
+    for (std::size_t i = 0; i < facts.duct.size(); ++i)
+        if (facts.duct[i] == DuctState::dug) result.spans_dug.push_back(static_cast<int>(i));
     check_phase(facts, in.book, result);
     result.pole_year = std::move(facts.pole_year);
     return result;

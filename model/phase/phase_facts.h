@@ -11,6 +11,8 @@
 
 namespace unstring {
 
+enum class DuctState;  // model/phase/duct_live.h
+
 struct PhaseFacts {
     const City& city;
     const PriceBook& prices;
@@ -23,6 +25,7 @@ struct PhaseFacts {
     UnitYears units;
     std::vector<int> span_year;        ///< [span] earliest year of any pole beyond, 0 = not built
     std::vector<int> connection_year;  ///< [circuit] likewise
+    std::vector<DuctState> duct;       ///< [span]
 
     [[nodiscard]] int years() const { return plan.settings.years; }
     [[nodiscard]] int year(std::size_t t) const { return plan.settings.first_year + static_cast<int>(t) - 1; }

@@ -4,6 +4,7 @@
 
 #include "model/money/hours.h"
 #include "model/money/works.h"
+#include "model/phase/duct_live.h"
 
 namespace unstring {
 namespace {
@@ -122,8 +123,10 @@ void fill_ledger(const PhaseFacts& facts, CashBook& book, bool with_lines, Phase
     }
     for (std::size_t i = 0; i < facts.decide.spans.size(); ++i) {
         if (facts.span_year[i] == 0) continue;
-        sum.add(book.span(i, facts.span_year[i]));
-        if (with_lines) sum.add_lines(span_lines(book.input(), facts.decide.spans[i], facts.span_year[i]));
+        const bool dug = facts.duct[i] == DuctState::dug;
+        sum.add(book.span(i, facts.span_year[i], dug));
+        const CircuitSpan& span = facts.decide.spans[i];
+        if (with_lines) sum.add_lines(span_lines(book.input(), dug ? dug_span(span) : span, facts.span_year[i]));
     }
     for (std::size_t i = 0; i < facts.decide.circuits.size(); ++i) {
         if (facts.connection_year[i] == 0 || !facts.decide.circuits[i].service.is_valid()) continue;
@@ -162,8 +165,11 @@ std::vector<CrewHours> hours_of(const PhaseFacts& facts) {
         add(at(facts.pole_year[i]), crew_hours(pole_hours(facts.prices, facts.city.poles[i], facts.plan.poles[i].choice, facts.pole_year[i])));
     }
     for (std::size_t i = 0; i < facts.decide.spans.size(); ++i)
-        if (facts.span_year[i] != 0)
-            add(at(facts.span_year[i]), span_crew_hours(facts.city, facts.prices, facts.decide.spans[i], facts.span_year[i]));
+        if (facts.span_year[i] != 0) {
+            const CircuitSpan& span = facts.decide.spans[i];
+            const bool dug = facts.duct[i] == DuctState::dug;
+            add(at(facts.span_year[i]), span_crew_hours(facts.city, facts.prices, dug ? dug_span(span) : span, facts.span_year[i]));
+        }
     for (std::size_t i = 0; i < facts.decide.circuits.size(); ++i)
         if (facts.connection_year[i] != 0 && facts.decide.circuits[i].service.is_valid())
             add(at(facts.connection_year[i]), connection_crew_hours(facts.city, facts.prices, facts.decide.circuits[i].service, facts.connection_year[i]));

@@ -65,6 +65,7 @@ struct PhaseResult {
     std::vector<StringYear> string_years; ///< by string, then year; year first_year - 1 = today
     std::vector<UnitMove> moves;
     std::vector<Section> sections;
+    std::vector<int> spans_dug;  ///< places in DecideResult::spans: conduit whose cable is live when it is built, dug instead
     std::vector<int> pole_year;  ///< one per pole of the city: calendar year, 0 = none
     int not_reached = 0;
     double cost = 0, bound = 0;  ///< dollars, present value

@@ -22,6 +22,8 @@ void open_once() {
     CPLSetConfigOption("GML_SKIP_RESOLVE_ELEMS", "ALL");
     CPLSetConfigOption("OGR_SQLITE_LOAD_EXTENSIONS", "");
     CPLSetConfigOption("OGR_GEOJSON_MAX_OBJ_SIZE", "200");
+    CPLSetConfigOption("OGR_XLSX_HEADERS", "FORCE");  // the first row names the columns, as in CSV
+    CPLSetConfigOption("OGR_ODS_HEADERS", "FORCE");
     CPLSetConfigOption("PROJ_NETWORK", "OFF");
     GDALAllRegister();
 }
@@ -39,7 +41,7 @@ const char* const* raster_drivers() {
 }
 
 const char* const* vector_drivers() {
-    static constexpr std::array<const char*, 13> kDrivers = {"GPKG", "ESRI Shapefile", "GeoJSON", "GeoJSONSeq", "FlatGeobuf", "KML", "GML",
+    static constexpr std::array<const char*, 13> kDrivers = {"GPKG", "ESRI Shapefile", "GeoJSON", "GeoJSONSeq", "FlatGeobuf", "LIBKML", "GML",
                                                              "MapInfo File", "OpenFileGDB", "GPX", "XLSX", "ODS", nullptr};
     return kDrivers.data();
 }

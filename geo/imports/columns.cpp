@@ -80,8 +80,11 @@ bool has_word(std::string_view words, std::string_view word) {
     return false;
 }
 
+constexpr std::size_t kShapefileName = 10;  ///< letters that a Shapefile keeps of a column's name
+
 bool sounds_like(const Field& field, std::string_view column) {
     const std::string name = normalised(column);
+    if (column.size() == kShapefileName && normalised(field.name.substr(0, kShapefileName)) == name) return true;
     if (name == normalised(field.name) || has_word(field.synonyms, name)) return true;
     const UnitWord* unit = unit_of(column);
     if (unit == nullptr || field.kind == FieldKind::text || !(takes(field.kind, unit->kind) || unit->kind == FieldKind::number)) return false;
@@ -92,12 +95,14 @@ bool sounds_like(const Field& field, std::string_view column) {
 }
 
 FieldColumn with_unit(const Field& field, std::size_t column, std::string_view name, const ColumnMap& map) {
-    FieldColumn found{column, 1, false};
+    const bool is_length = field.kind == FieldKind::length_m || field.kind == FieldKind::coordinate;
+    FieldColumn found{column, 1, false, is_length && map.length_m.has_value()};
     const UnitWord* unit = unit_of(name);
     if (unit != nullptr && takes(field.kind, unit->kind)) {
         found.to_si = unit->to_si;
         found.says_unit = true;
-    } else if (map.length_m && (field.kind == FieldKind::length_m || field.kind == FieldKind::coordinate)) {
+        found.is_told = true;
+    } else if (map.length_m && is_length) {
         found.to_si = *map.length_m;
     }
     return found;

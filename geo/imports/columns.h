@@ -38,6 +38,7 @@ struct FieldColumn {
     std::optional<std::size_t> column;
     double to_si = 1;          ///< by which a number of this column is multiplied
     bool says_unit = false;    ///< the column's own name carries its unit ("X_ft")
+    bool is_told = false;      ///< the unit is known: by the name, or by the user's map
 };
 
 struct Columns {

@@ -78,6 +78,33 @@ TEST_CASE("columns: the map goes before names and guesses, and null leaves a fie
     CHECK_FALSE(columns->has("order"));
 }
 
+TEST_CASE("columns: names that a Shapefile cut at ten letters are known") {
+    const Table table = table_of("poles", {"pole_id", "epa_allow_", "earliest_y", "secondary_", "attachment"});
+    const auto columns = match_columns(table, {});
+    REQUIRE(columns);
+    CHECK(columns->unused.empty());
+    CHECK(column_of(table, *columns, "earliest_year") == "earliest_y");
+    CHECK(column_of(table, *columns, "secondary_here") == "secondary_");
+}
+
+TEST_CASE("columns: heights that can only be feet are read as feet and said, once told they are believed") {
+    const TempFolder folder;
+    GatherFiles files;
+    files.poles = folder.write("poles.csv", "pole_id,easting,northing,Mount Ht,Arm\nA,400000,3760000,30,6\nB,400030,3760000,25,\nC,400060,3760000,35,8\n");
+    files.crs = "EPSG:32609";
+    const auto guessed = read_files(files, nullptr, {});
+    REQUIRE(guessed);
+    CHECK(*guessed->city.poles[0].mount_m == Approx(9.144));
+    CHECK(*guessed->city.poles[0].arm_m == Approx(1.8288));
+    REQUIRE(guessed->findings.size() == 1);
+    CHECK(guessed->findings[0].code == "unit-guessed");
+    files.columns = folder.write("map.json", R"({"units": {"length": "m"}})");
+    const auto told = read_files(files, nullptr, {});
+    REQUIRE(told);
+    CHECK(*told->city.poles[0].mount_m == 30);
+    CHECK(told->findings.empty());
+}
+
 TEST_CASE("columns: a map that cannot be meant is refused by key") {
     const TempFolder folder;
     const auto fault_of = [&](const char* json) { return read_column_map(folder.write("map.json", json)).error(); };

@@ -3,6 +3,7 @@
 #include <algorithm>
 #include <chrono>
 
+#include "model/decide/circuit_limits.h"
 #include "model/decide/decide_reasons.h"
 #include "model/decide/joint.h"
 #include "model/decide/plan_tree.h"
@@ -46,6 +47,26 @@ double all_of(const GroundGraph& graph, std::vector<PoleCase> cases, Choice choi
     return to_dollars(solve_joint(graph, cases, quick_limits(), progress).cost);
 }
 
+/// What larger wire adds to the edges' price: the spans as they are now against the edges that they lie on.
+Cents larger_wire(const MoneyInput& input, const GroundGraph& graph, const JointPlan& plan, const DecideResult& result) {
+    Cents sum = 0;
+    for (const CircuitSpan& span : result.spans) sum += to_cents(present_value(span_lines(input, span, input.plan.decide_year())));
+    for (const int e : plan.edges)
+        if (!graph.edges[Place(e)].service.is_valid()) sum -= graph.edges[Place(e)].cost;
+    return sum;
+}
+
+void set_volts(const MoneyInput& input, const std::vector<double>& volts, DecideResult& result) {
+    for (const Circuit& circuit : result.circuits) {
+        const double source = source_volts(input.city, circuit.service);
+        for (const PoleIx pole : circuit.poles) {
+            const auto at = std::lower_bound(result.poles.begin(), result.poles.end(), pole, [](const PoleDecision& each, PoleIx wanted) { return each.pole < wanted; });
+            at->volts = volts[pole.place()];
+            at->drop_frac = at->volts > 0 ? 1 - at->volts / source : 0;
+        }
+    }
+}
+
 void count(DecideResult& result) {
     for (const PoleDecision& each : result.poles) {
         result.keep += each.choice == Choice::keep ? 1 : 0;
@@ -71,15 +92,19 @@ Expected<DecideResult> decide_city(const MoneyInput& input, const Progress& prog
     settle_modes(input, *cases, result);
     progress.at(0.3);
 
-    const JointPlan plan = solve_joint(graph, *cases, plan_limits(), progress);
+    const JointPlan joint = solve_joint(graph, *cases, plan_limits(), progress);
     if (progress.is_cancelled()) return tl::unexpected(cancelled());
     progress.at(0.7);
+    const JointPlan plan = keep_limits(input, graph, *cases, joint, result.findings, progress);
     result.feasible = result.feasible && plan.feasible;
     lay_out(input, graph, *cases, plan, result);
+    const std::vector<double> volts = size_circuits(input, result);
     result.poles = pole_decisions(input, *cases, plan, marginal_shares(graph, *cases, plan));
+    set_volts(input, volts, result);
     count(result);
-    result.cost = to_dollars(plan.cost);
+    result.cost = to_dollars(plan.cost + larger_wire(input, graph, plan, result));
     result.bound = to_dollars(plan.bound);
+    result.limits_price = result.cost - to_dollars(joint.cost);
     progress.at(0.8);
 
     result.all_rewire_cost = all_of(graph, *cases, Choice::rewire, result.all_rewire_not_possible, progress);

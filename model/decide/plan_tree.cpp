@@ -11,44 +11,6 @@ namespace {
 
 using Place = std::size_t;
 
-struct Rooted {  ///< the chosen tree seen from the root
-    std::vector<int> order;             ///< vertices, the nearer to the root first
-    std::vector<int> parent, edge;      ///< -1 at the root and outside
-    std::vector<int> lamps;             ///< rewired poles at the vertex and beyond
-    std::vector<char> is_rewired;
-};
-
-Rooted rooted(const GroundGraph& graph, const std::vector<PoleCase>& cases, const JointPlan& plan) {
-    Rooted out;
-    out.parent.assign(graph.places.size(), -1);
-    out.edge.assign(graph.places.size(), -1);
-    out.lamps.assign(graph.places.size(), 0);
-    out.is_rewired.assign(graph.places.size(), 0);
-    std::vector<std::vector<int>> at(graph.places.size());
-    for (const int e : plan.edges) {
-        at[Place(graph.edges[Place(e)].u)].push_back(e);
-        at[Place(graph.edges[Place(e)].v)].push_back(e);
-    }
-    out.order.push_back(GroundGraph::kRoot);
-    for (Place i = 0; i < out.order.size(); ++i) {
-        const int v = out.order[i];
-        for (const int e : at[Place(v)]) {
-            if (e == out.edge[Place(v)]) continue;
-            const int w = graph.edges[Place(e)].u == v ? graph.edges[Place(e)].v : graph.edges[Place(e)].u;
-            out.parent[Place(w)] = v;
-            out.edge[Place(w)] = e;
-            out.order.push_back(w);
-        }
-    }
-    for (Place i = 0; i < cases.size(); ++i) {
-        const int v = graph.vertex_of[cases[i].pole.place()];
-        if (plan.choices[i] == Choice::rewire && v >= 0 && out.parent[Place(v)] >= 0) out.lamps[Place(v)] = out.is_rewired[Place(v)] = 1;
-    }
-    for (auto v = out.order.rbegin(); v != out.order.rend(); ++v)
-        if (out.parent[Place(*v)] >= 0) out.lamps[Place(out.parent[Place(*v)])] += out.lamps[Place(*v)];
-    return out;
-}
-
 Cents capital_of(const std::vector<CashLine>& lines) {
     Cents sum = 0;
     for (const CashLine& line : lines)
@@ -83,16 +45,47 @@ std::vector<int> lay_spans(const MoneyInput& input, const GroundGraph& graph, co
 
 }  // namespace
 
+Rooted rooted(const GroundGraph& graph, const std::vector<PoleCase>& cases, const JointPlan& plan) {
+    Rooted out;
+    out.parent.assign(graph.places.size(), -1);
+    out.edge.assign(graph.places.size(), -1);
+    out.lamps.assign(graph.places.size(), 0);
+    out.is_rewired.assign(graph.places.size(), 0);
+    out.source.assign(graph.places.size(), -1);
+    std::vector<std::vector<int>> at(graph.places.size());
+    for (const int e : plan.edges) {
+        at[Place(graph.edges[Place(e)].u)].push_back(e);
+        at[Place(graph.edges[Place(e)].v)].push_back(e);
+    }
+    out.order.push_back(GroundGraph::kRoot);
+    for (Place i = 0; i < out.order.size(); ++i) {
+        const int v = out.order[i];
+        for (const int e : at[Place(v)]) {
+            if (e == out.edge[Place(v)]) continue;
+            const int w = graph.edges[Place(e)].u == v ? graph.edges[Place(e)].v : graph.edges[Place(e)].u;
+            out.parent[Place(w)] = v;
+            out.edge[Place(w)] = e;
+            out.source[Place(w)] = v == GroundGraph::kRoot ? w : out.source[Place(v)];
+            out.order.push_back(w);
+        }
+    }
+    for (Place i = 0; i < cases.size(); ++i) {
+        const int v = graph.vertex_of[cases[i].pole.place()];
+        if (plan.choices[i] == Choice::rewire && v >= 0 && out.parent[Place(v)] >= 0) out.lamps[Place(v)] = out.is_rewired[Place(v)] = 1;
+    }
+    for (auto v = out.order.rbegin(); v != out.order.rend(); ++v)
+        if (out.parent[Place(*v)] >= 0) out.lamps[Place(out.parent[Place(*v)])] += out.lamps[Place(*v)];
+    return out;
+}
+
 void lay_out(const MoneyInput& input, const GroundGraph& graph, const std::vector<PoleCase>& cases, const JointPlan& plan, DecideResult& result) {
     const Rooted tree = rooted(graph, cases, plan);
     std::vector<ServiceIx> service_of(graph.places.size());
     const std::vector<int> span_at = lay_spans(input, graph, tree, service_of, result);
     std::map<int, std::size_t> circuit_at;  // by the first vertex under the root
-    std::vector<int> source(graph.places.size(), -1);
     for (const int v : tree.order) {
         if (v == GroundGraph::kRoot || tree.lamps[Place(v)] == 0) continue;
-        source[Place(v)] = tree.parent[Place(v)] == GroundGraph::kRoot ? v : source[Place(tree.parent[Place(v)])];
-        const auto [found, is_new] = circuit_at.emplace(source[Place(v)], result.circuits.size());
+        const auto [found, is_new] = circuit_at.emplace(tree.source[Place(v)], result.circuits.size());
         if (is_new) {
             Circuit circuit;
             circuit.service = service_of[Place(v)];

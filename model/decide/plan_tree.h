@@ -5,6 +5,15 @@
 
 namespace unstring {
 
+struct Rooted {  ///< the chosen tree seen from the root
+    std::vector<int> order;             ///< its vertices, the nearer to the root first
+    std::vector<int> parent, edge;      ///< one per vertex of the graph, -1 at the root and outside
+    std::vector<int> lamps;             ///< rewired poles at the vertex and beyond
+    std::vector<int> source;            ///< first vertex under the root on the way: a service, or a pole with a tap; -1 outside
+    std::vector<char> is_rewired;
+};
+[[nodiscard]] Rooted rooted(const GroundGraph& graph, const std::vector<PoleCase>& cases, const JointPlan& plan);
+
 /// Spans (parent before child), circuits and their poles, trench metres and new services of the chosen plan into `result`.
 void lay_out(const MoneyInput& input, const GroundGraph& graph, const std::vector<PoleCase>& cases, const JointPlan& plan, DecideResult& result);
 

@@ -3,6 +3,7 @@
 #include <algorithm>
 #include <cmath>
 #include <limits>
+#include <numeric>
 #include <stdexcept>
 
 #include <fmt/format.h>
@@ -179,6 +180,26 @@ void make_thinner(const Problem& problem, std::vector<std::size_t>& chosen, Radi
     }
 }
 
+/// The same in one pass, for circuits of many spans: each span in turn takes the cheapest size that the exact sweep allows,
+/// the span with most to save first.
+void make_thinner_once(const Problem& problem, std::vector<std::size_t>& chosen, RadialResult& volts) {
+    std::vector<std::size_t> order(chosen.size());
+    std::iota(order.begin(), order.end(), std::size_t{0});
+    const auto most = [&](std::size_t i) { return (problem.price_m[chosen[i]] - problem.price_m.front()) * problem.spans[i].length_m; };
+    std::stable_sort(order.begin(), order.end(), [&](std::size_t a, std::size_t b) { return most(a) > most(b); });
+    for (const std::size_t i : order) {
+        for (std::size_t c = 0; problem.price_m[c] < problem.price_m[chosen[i]]; ++c) {
+            std::vector<std::size_t> next = chosen;
+            next[i] = c;
+            RadialResult answer = solve_radial(problem.radial(next));
+            if (!problem.keeps_limits(answer)) continue;
+            chosen = std::move(next);
+            volts = std::move(answer);
+            break;
+        }
+    }
+}
+
 /// Sizes that may be protected by the device, cheapest first.
 void fill_cables(Problem& problem, int device_a) {
     problem.cables.clear();
@@ -243,7 +264,9 @@ SizingResult size_wires(const std::vector<SizingSpan>& spans, const SizingLimits
     if (!problem.keeps_limits(sized.volts))
         return refused(fmt::format("drop {:.1f} % with AWG {}, {:.1f} % allowed", 100 * sized.volts.worst_drop_frac,
                                    awg_text(problem.cables[sized.chosen.front()].awg), 100 * problem.drop_v / limits.source_v));
-    make_thinner(problem, sized.chosen, sized.volts);
+    constexpr std::size_t kFewSpans = 16;
+    if (spans.size() <= kFewSpans) make_thinner(problem, sized.chosen, sized.volts);
+    else make_thinner_once(problem, sized.chosen, sized.volts);
     return finished(problem, sized, device_a);
 }
 

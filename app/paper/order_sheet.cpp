@@ -51,8 +51,8 @@ void paint_order(Sheet& sheet, const WorkOrder& order) {
     paint_sketch(sheet, order);
     paint_cautions(sheet, order);
     paint_poles(sheet, order);
-    paint_steps(sheet, order);
     paint_readings(sheet, order);
+    paint_steps(sheet, order);
     paint_stores(sheet, order);
     paint_return(sheet, order);
 }

@@ -39,13 +39,13 @@ std::string orders_table(const std::vector<WorkOrder>& orders) {
                                 "transformer_id", "planned_volts_before", "planned_volts_after", "lamp_volts", "open_circuit_v", "open_circuit_from", "lights_due_on",
                                 "after_orders", "done", "date", "order", "amps", "volts", "insulation_mohm", "duct_found", "head_fitted", "serial", "battery_date", "note"});
     for (const WorkOrder& order : orders) {
-        const bool is_line = order.crew == Crew::line && order.open_circuit_v > 0;
+        const bool has_open = order.open_circuit_v > 0, is_line = has_open && order.crew == Crew::line;
         const auto volts = [&](double value) { return is_line ? fmt::format("{:.1f}", value) : std::string(); };
         const auto row = [&](std::size_t place, const OrderPole& pole) {
             text += csv_row({order.id, fmt::format("{}", order.year), text_of(order.crew), order.string_id, place == 0 ? "" : fmt::format("{}", place), pole.id,
                              pole.street, pole.task, pole.head, pole.warning, pole.volts > 0 ? fmt::format("{:.2f}", pole.volts) : "", fmt::format("{:.2f}", order.hours),
-                             order.unit_id, volts(order.planned_volts_before), volts(order.planned_volts_after), volts(order.lamp_volts), volts(order.open_circuit_v),
-                             !is_line ? "" : order.open_circuit_is_estimate ? "estimate" : "nameplate", order.switch_on_time, joined(order.after), "", "", "", "", "", "",
+                             order.unit_id, volts(order.planned_volts_before), volts(order.planned_volts_after), volts(order.lamp_volts),
+                             has_open ? fmt::format("{:.0f}", order.open_circuit_v) : "", !has_open ? "" : order.open_circuit_is_estimate ? "estimate" : "nameplate", order.switch_on_time, joined(order.after), "", "", "", "", "", "",
                              "", "", "", "", ""});
         };
         if (order.poles.empty()) row(0, OrderPole());

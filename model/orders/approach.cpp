@@ -3,6 +3,8 @@
 #include <array>
 #include <utility>
 
+#include <fmt/format.h>
+
 namespace unstring {
 
 double approach_distance_m(double volts) {
@@ -18,6 +20,12 @@ std::string glove_class(double volts) {
     for (const auto& [up_to_v, name] : kRows)
         if (volts <= up_to_v) return name;
     return "beyond class 4";
+}
+
+std::string approach_text(double volts) {
+    const double distance_m = approach_distance_m(volts);
+    const std::string distance = distance_m < 0 ? "ask the owner" : distance_m == 0 ? "no contact" : fmt::format("{:.2f} m", distance_m);
+    return fmt::format("{}, glove class {}", distance, glove_class(volts));
 }
 
 }  // namespace unstring

@@ -13,4 +13,7 @@ namespace unstring {
 /// Source: 29 CFR 1910.137 table I-4, from memory.
 [[nodiscard]] std::string glove_class(double volts);
 
+/// "0.63 m, glove class 1"
+[[nodiscard]] std::string approach_text(double volts);
+
 }  // namespace unstring

@@ -47,26 +47,47 @@ PoleIx row_of(const OrderFacts& facts, const YearJob& job, const CircuitSpan& sp
     return at == span.poles_beyond.end() ? PoleIx() : *at;
 }
 
-using Tasks = std::map<PoleIx, std::string>;
+struct Part {  ///< "wire AWG 8" .. "from 07-275": pieces of one kind from one place are one part
+    std::string what, from;
+    double length_m = 0;  ///< 0 = not by length
+    int boxes = 0;
+};
+using Tasks = std::map<PoleIx, std::vector<Part>>;
 
-void add_task(Tasks& tasks, PoleIx pole, const std::string& text) {
-    std::string& task = tasks[pole];
-    task += (task.empty() ? "" : "; ") + text;
+void add_task(Tasks& tasks, PoleIx pole, Part part) {
+    std::vector<Part>& parts = tasks[pole];
+    const auto same = std::find_if(parts.begin(), parts.end(), [&](const Part& each) { return each.what == part.what && each.from == part.from; });
+    if (same == parts.end()) {
+        parts.push_back(std::move(part));
+        return;
+    }
+    same->length_m += part.length_m;
+    same->boxes += part.boxes;
+}
+
+std::string task_text(const std::vector<Part>& parts) {
+    std::string text;
+    for (const Part& part : parts) {
+        text += (text.empty() ? "" : "; ") + part.what;
+        if (part.length_m > 0) text += fmt::format(" {:.0f} m", std::max(1.0, part.length_m));
+        if (!part.from.empty()) text += " from " + part.from;
+        if (part.boxes > 0) text += fmt::format(", {} pull box{}", part.boxes, part.boxes == 1 ? "" : "es");
+    }
+    return text;
 }
 
 /// Rows in the job's working order.
 void add_rows(const OrderFacts& facts, const YearJob& job, const Tasks& tasks, WorkOrder& order) {
     for (const PoleIx pole : job.poles) {
         const auto at = tasks.find(pole);
-        if (at != tasks.end()) order.poles.push_back(order_pole(facts, job, pole, at->second));
+        if (at != tasks.end()) order.poles.push_back(order_pole(facts, job, pole, task_text(at->second)));
     }
 }
 
 void add_span_work(const OrderFacts& facts, const YearJob& job, const CircuitSpan& span, Tasks& tasks, WorkOrder& order) {
-    std::string text = fmt::format("{} {:.0f} m from {}", words_of(span.kind), span.length_m, from_text(facts, span));
-    if (span.boxes > 0) text += fmt::format(", {} pull box{}", span.boxes, span.boxes == 1 ? "" : "es");
-    if (span.duct_string.is_valid()) text += fmt::format(" (cable of {} dead and pulled first)", facts.input.city.strings[span.duct_string.place()].id);
-    add_task(tasks, row_of(facts, job, span), text);
+    std::string what = words_of(span.kind);
+    if (span.duct_string.is_valid()) what += fmt::format(" (cable of {} dead and pulled first)", facts.input.city.strings[span.duct_string.place()].id);
+    add_task(tasks, row_of(facts, job, span), {std::move(what), from_text(facts, span), span.length_m, span.boxes});
     if (is_dug(span.kind)) add_material(order, "conduit", "m", span.length_m);
     add_material(order, "pull box", "each", span.boxes);
     order.hours += span_crew_hours(facts.input.city, facts.input.prices, span, job.year).civil;
@@ -79,9 +100,8 @@ bool has_live_base(const WorkOrder& order) {
 void add_wire(const OrderFacts& facts, const YearJob& job, const CircuitSpan& span, Tasks& tasks, WorkOrder& order) {
     const bool is_piece = span.kind == SpanKind::tap || span.kind == SpanKind::service;
     const std::string from = from_text(facts, span);
-    add_task(tasks, row_of(facts, job, span),
-             is_piece ? fmt::format("{} at {}", words_of(span.kind), from)
-                      : fmt::format("wire AWG {}, {:.0f} m from {}{}", awg_text(span.awg), span.length_m, from, span.kind == SpanKind::aerial ? ", aerial" : ""));
+    const std::string what = is_piece ? std::string(words_of(span.kind)) : fmt::format("{}wire AWG {},", span.kind == SpanKind::aerial ? "aerial " : "", awg_text(span.awg));
+    add_task(tasks, row_of(facts, job, span), {what, from, is_piece ? 0 : span.length_m, 0});
     if (!is_piece) add_material(order, fmt::format("wire, three conductors AWG {} and ground{}", awg_text(span.awg), span.kind == SpanKind::aerial ? ", aerial" : ""), "m", span.length_m);
     else add_material(order, "tap connector set", "each", 1);
     order.hours += span_crew_hours(facts.input.city, facts.input.prices, span, job.year).electric;
@@ -125,7 +145,7 @@ std::optional<WorkOrder> civil_order(const OrderFacts& facts, const YearJob& job
     for (const PoleIx pole : job.poles) {
         const double hours = pole_hours(facts.input.prices, facts.pole(pole), facts.plan(pole).choice, job.year).civil;
         if (hours <= 0) continue;
-        add_task(tasks, pole, "new pole and footing only where the inspection fails this one");
+        add_task(tasks, pole, {"new pole and footing only where the inspection fails this one", {}, 0, 0});
         order.hours += hours;
         sets_poles = true;
     }
@@ -143,7 +163,7 @@ std::optional<WorkOrder> electric_order(const OrderFacts& facts, const YearJob& 
     Tasks tasks;
     for (const PoleIx pole : job.poles) {
         if (facts.plan(pole).choice != Choice::rewire) continue;
-        add_task(tasks, pole, "base: splice, fuse, bond");
+        add_task(tasks, pole, {"base: splice, fuse, bond", {}, 0, 0});
         order.hours += pole_hours(facts.input.prices, facts.pole(pole), Choice::rewire, job.year).electric;
         add_material(order, "fuse and holder", "each", 1);
         add_material(order, "bonding set", "each", 1);

@@ -13,8 +13,6 @@
 namespace unstring {
 namespace {
 
-constexpr double kVoltsPerKilovolt = 1000;
-
 std::string pole_name(const OrderFacts& facts, const StringLoop& loop, int position) {
     if (position <= 0) return "station out";
     if (position > static_cast<int>(loop.lamps.size())) return "station return";
@@ -57,6 +55,12 @@ std::string controlled_strings(const OrderFacts& facts, const YearJob& job) {
 
 bool is_two_loop(const City& city, TransformerIx unit) { return unit.is_valid() && city.transformers[unit.place()].strings.size() > 1; }
 
+std::string strings_of(const City& city, TransformerIx unit) {
+    std::string text;
+    for (const StringIx string : city.transformers[unit.place()].strings) text += (text.empty() ? "" : ", ") + city.strings[string.place()].id;
+    return text + ": one clearance darkens both";
+}
+
 bool is_oil_suspect(const City& city, TransformerIx unit) {
     if (!unit.is_valid()) return false;
     const Oil oil = city.transformers[unit.place()].oil;
@@ -77,28 +81,9 @@ double lamp_volts(const StringLoop& loop, const YearJob& job) {
     return count == 0 ? 0 : sum / count;
 }
 
-/// The higher of the units that stand in the station during the work; without one, the cable's class.
-OpenVolts open_circuit(const City& city, const StringLoop& loop, const YearJob& job) {
-    OpenVolts open{loop.cable_kv * kVoltsPerKilovolt, true};
-    bool has_unit = false;
-    for (const TransformerIx unit : {job.unit_before, job.unit_after}) {
-        if (!unit.is_valid()) continue;
-        const OpenVolts each = open_volts(city.transformers[unit.place()], loop.current_a);
-        if (!has_unit || each.volts > open.volts) open = each;
-        has_unit = true;
-    }
-    return open;
-}
-
 /// Current within which a string may stay on, 6.40 to 6.70 A at 6.6 A; other currents in proportion.
 /// Source: UFC 3-535-01 table 15-3.
 std::string current_band(double current_a) { return fmt::format("{:.2f}-{:.2f} A", current_a * 6.40 / 6.6, current_a * 6.70 / 6.6); }
-
-std::string approach_text(double volts) {
-    const double distance_m = approach_distance_m(volts);
-    const std::string distance = distance_m < 0 ? "ask the owner" : distance_m == 0 ? "no contact" : fmt::format("{:.2f} m", distance_m);
-    return fmt::format("{}, glove class {}", distance, glove_class(volts));
-}
 
 void add_readings(const OrderFacts& facts, const YearJob& job, WorkOrder& order) {
     const City& city = facts.input.city;
@@ -108,15 +93,10 @@ void add_readings(const OrderFacts& facts, const YearJob& job, WorkOrder& order)
     order.planned_volts_before = job.before.volts;
     order.planned_volts_after = job.after.volts;
     order.lamp_volts = lamp_volts(loop, job);
-    const OpenVolts open = open_circuit(city, loop, job);
-    order.open_circuit_v = open.volts;
-    order.open_circuit_is_estimate = open.is_estimate;
     fact("RO transformer", order.unit_id.empty() ? "none known" : order.unit_id);
     fact("primary circuit", string.primary_feeder);
     fact("switch number", "");
     fact("person in charge of the clearance, number", "");
-    fact("open-circuit kV", fmt::format("{:.1f}{}", open.volts / kVoltsPerKilovolt, open.is_estimate ? " (estimate)" : " (nameplate)"));
-    fact("approach distance, gloves", approach_text(open.volts));
     fact("amperes after", current_band(loop.current_a) + " or stop");
     fact("volts, planned", fmt::format("{:.0f} before, {:.0f} after, change {:+.0f}", job.before.volts, job.after.volts, job.after.volts - job.before.volts));
     fact("load, planned", fmt::format("{:.2f} kVA before, {:.2f} after", job.before.load_kva, job.after.load_kva));
@@ -124,6 +104,7 @@ void add_readings(const OrderFacts& facts, const YearJob& job, WorkOrder& order)
     fact("lamps", fmt::format("{} before, {} after", job.before.lamps, job.after.lamps));
     fact("live cable, planned", fmt::format("{:.0f} m before, {:.0f} after", job.before.cable_m, job.after.cable_m));
     fact("cut-backs", cutback_text(facts, job));
+    if (is_two_loop(city, job.unit_before)) fact("strings of this transformer", strings_of(city, job.unit_before));
     if (string.asfound_v) fact("last reading on record", fmt::format("{:.0f} V {}", *string.asfound_v, string.asfound_date));
     for (const UnitMove& move : facts.phase.moves)
         if (move.year == job.year && (move.from == string.id || move.to == string.id) && move.transformer.is_valid())
@@ -163,7 +144,7 @@ std::optional<WorkOrder> line_order(const OrderFacts& facts, const YearJob& job)
     words.unit_id = order.unit_id;
     words.cutbacks = cutback_text(facts, job);
     words.swap = swap_text(facts, job);
-    words.open_kv = fmt::format("{:.1f}{}", order.open_circuit_v / kVoltsPerKilovolt, order.open_circuit_is_estimate ? " (estimate)" : "");
+    words.open_kv = open_kv_text(order);
     words.approach = approach_text(order.open_circuit_v);
     words.band = current_band(loop.current_a);
     words.change_v = job.after.volts - job.before.volts;

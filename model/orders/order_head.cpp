@@ -4,13 +4,16 @@
 #include <fmt/format.h>
 
 #include "model/money/new_light.h"
+#include "model/orders/approach.h"
 #include "model/orders/crew_orders.h"
 #include "model/orders/step_texts.h"
 #include "model/orders/switch_on.h"
+#include "model/series/units.h"
 
 namespace unstring {
 namespace {
 
+constexpr double kVoltsPerKilovolt = 1000;
 constexpr double kRestoreBefore_h = 1.5;  // start restoring so long before the lights are due on (assumption)
 
 std::vector<LoopBead> beads(const OrderFacts& facts, const YearJob& job) {
@@ -29,6 +32,27 @@ std::vector<LoopBead> beads(const OrderFacts& facts, const YearJob& job) {
         all.push_back(std::move(bead));
     }
     return all;
+}
+
+/// The higher of the units that stand in the station during the work; without one, the cable's class.
+OpenVolts open_circuit(const City& city, const StringLoop& loop, const YearJob& job) {
+    OpenVolts open{loop.cable_kv * kVoltsPerKilovolt, true};
+    bool has_unit = false;
+    for (const TransformerIx unit : {job.unit_before, job.unit_after}) {
+        if (!unit.is_valid()) continue;
+        const OpenVolts each = open_volts(city.transformers[unit.place()], loop.current_a);
+        if (!has_unit || each.volts > open.volts) open = each;
+        has_unit = true;
+    }
+    return open;
+}
+
+void add_open_circuit(const OrderFacts& facts, const YearJob& job, WorkOrder& order) {
+    const OpenVolts open = open_circuit(facts.input.city, facts.loops[job.string.place()], job);
+    order.open_circuit_v = open.volts;
+    order.open_circuit_is_estimate = open.is_estimate;
+    order.facts.emplace_back("open-circuit kV", open_kv_text(order) + (open.is_estimate ? "" : " (nameplate)"));
+    order.facts.emplace_back("approach distance, gloves", approach_text(open.volts));
 }
 
 /// Lights due on, each month, and the hour at which restoring must begin.
@@ -68,6 +92,10 @@ std::string traffic_note(const OrderFacts& facts, const YearJob& job) {
 
 }  // namespace
 
+std::string open_kv_text(const WorkOrder& order) {
+    return fmt::format("{:.1f}{}", order.open_circuit_v / kVoltsPerKilovolt, order.open_circuit_is_estimate ? " (estimate)" : "");
+}
+
 void add_material(WorkOrder& order, const std::string& what, const std::string& unit, double quantity) {
     if (quantity <= 0) return;
     const auto same = [&](const Material& each) { return each.what == what && each.unit == unit; };
@@ -102,6 +130,7 @@ WorkOrder order_head(const OrderFacts& facts, const YearJob& job, Crew crew) {
     const TransformerIx unit = job.unit_before.is_valid() ? job.unit_before : job.unit_after;
     if (unit.is_valid()) order.unit_id = city.transformers[unit.place()].id;
     order.loop = beads(facts, job);
+    add_open_circuit(facts, job, order);
     order.facts.emplace_back("traffic", traffic_note(facts, job));
     add_switch_on(facts, order);
     for (const char* blank : {"locate ticket, valid to", "permit, valid to", "emergency number", "nearest hospital"}) order.facts.emplace_back(blank, "");

@@ -55,8 +55,8 @@ struct StringState {
 };
 
 /// State with the lamps for which live[i] != 0 (i = position - 1): energised loop by the cut-backs, phasor sum; cable at
-/// 25 C. Poles down count neither as lamps nor as a reason to keep the loop; a cut-back is used only where a lamp between
-/// its ends has left. Nothing left that burns: all zero.
+/// 25 C. Poles down count neither as lamps nor as a reason to keep the loop; a cut-back is used only where a lamp that
+/// burnt has left between its ends. Nothing left that burns: all zero.
 /// @param ageing_frac  multiplies each lamp's watts and volts by 1 + ageing_frac
 [[nodiscard]] StringState string_state(const StringLoop& loop, const std::vector<char>& live, double ageing_frac = 0);
 

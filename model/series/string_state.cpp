@@ -7,15 +7,17 @@
 namespace unstring {
 namespace {
 
-/// Lamps that have left, counted below each position.
-std::vector<int> count_left_before(const std::vector<char>& live) {
+/// Lamps that burnt and have left, counted below each position. A pole that is down has left nothing: nobody spliced
+/// the loop across it.
+std::vector<int> count_left_before(const StringLoop& loop, const std::vector<char>& live) {
     std::vector<int> before(live.size() + 2, 0);
-    for (std::size_t p = 1; p <= live.size(); ++p) before[p + 1] = before[p] + (live[p - 1] == 0 ? 1 : 0);
+    for (std::size_t p = 1; p <= live.size(); ++p)
+        before[p + 1] = before[p] + (live[p - 1] == 0 && loop.burns[p - 1] != 0 ? 1 : 0);
     return before;
 }
 
 EnergisedLoop loop_of_state(const StringLoop& loop, const std::vector<char>& live, const std::vector<char>& burning) {
-    const std::vector<int> left_before = count_left_before(live);
+    const std::vector<int> left_before = count_left_before(loop, live);
     std::vector<LoopCutBack> usable;
     std::vector<int> place_of;
     for (std::size_t k = 0; k < loop.cutbacks.size(); ++k) {

@@ -28,11 +28,6 @@ bool has_finite_place(bool has_place, MapPoint place) {
     return has_place && std::isfinite(place.x_m) && std::isfinite(place.y_m);
 }
 
-bool uses_pole_of_plan(const City& city, const ServicePoint& service) {
-    const PoleIx pole = find_pole(city, service.pole_given);
-    return pole.is_valid() && city.poles[pole.place()].has_place;
-}
-
 }  // namespace
 
 void vet_places(const VetInput& vet) {
@@ -56,9 +51,8 @@ void vet_places(const VetInput& vet) {
         if (service.set_aside) continue;
         if (has_finite_place(service.has_place, service.place))
             vet_place(vet, kServicesTable, service.from, service.id, service.place);
-        else if (!uses_pole_of_plan(vet.city, service))
-            vet.add("place-missing", kServicesTable, service.from, service.id,
-                    service.pole_given.empty() ? "no coordinates, no pole" : "pole " + service.pole_given + ", which is not there",
+        else if (service.pole_given.empty())  // a pole that is not there, or has no place, has a finding of its own
+            vet.add("place-missing", kServicesTable, service.from, service.id, "no coordinates, no pole",
                     "easting and northing, or a pole that has them", "survey the service point, or set it aside");
     }
 }

@@ -119,6 +119,8 @@ TEST_CASE("string state: a pole that is down is jumpered, draws nothing, and doe
     CHECK(today.lamps == 6);
     CHECK(today.load_kw == Approx((6 * 188 + today.cable_w) / 1000));
     CHECK(today.cable_m == Approx(sum(loop.legs_m)));
+    const StringState without_down = string_state(loop, {1, 1, 1, 0, 0, 0, 0, 1, 1, 1});
+    CHECK(without_down.cable_m == today.cable_m);
     std::vector<char> only_down(10, 0);
     only_down[3] = 1;
     CHECK(string_state(loop, only_down).cable_m == 0);

@@ -84,6 +84,20 @@ TEST_CASE("vet: a place that is missing, exchanged or far away") {
     CHECK(count_of(result.findings, "span-long") == 0);
 }
 
+TEST_CASE("vet: a service point needs coordinates or a pole") {
+    City city = clean_city();
+    ServicePoint service;
+    service.id = "SV-1";
+    city.services = {service};
+    service.id = "SV-2";
+    service.pole_given = "P-3";
+    city.services.push_back(service);
+    const VetResult result = vet(city);
+    CHECK(finding_of(result.findings, "place-missing", "SV-1").table == "services");
+    CHECK(count_of(result.findings, "place-missing") == 1);
+    CHECK(set_aside_errors(city, result.findings).services[0].set_aside);
+}
+
 TEST_CASE("vet: poles, units and cut-backs of a string that is not there") {
     City city = clean_city();
     city.poles[0].string = {};

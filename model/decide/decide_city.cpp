@@ -3,9 +3,12 @@
 #include <algorithm>
 #include <chrono>
 
+#include <fmt/format.h>
+
 #include "model/decide/circuit_limits.h"
 #include "model/decide/decide_reasons.h"
 #include "model/decide/joint.h"
+#include "model/decide/may_stay.h"
 #include "model/decide/plan_tree.h"
 #include "model/decide/pole_cases.h"
 #include "model/decide/span_cost.h"
@@ -67,6 +70,19 @@ void set_volts(const MoneyInput& input, const std::vector<double>& volts, Decide
     }
 }
 
+/// Which strings stay and why, at each of their poles.
+void say_stays(const MoneyInput& input, const std::vector<StringCost>& strings, DecideResult& result) {
+    std::vector<Cents> saving(input.city.strings.size(), 0);
+    for (const StringCost& string : strings)
+        if (string.stays) saving[string.string.place()] = string.saving;
+    for (PoleDecision& each : result.poles) {
+        const StringIx string = input.city.poles[each.pole.place()].string;
+        if (each.choice != Choice::keep || saving[string.place()] <= 0) continue;
+        each.numbers["string_saving"] = to_dollars(saving[string.place()]);
+        each.reason += fmt::format(" String {} stays: ending it would cost {:.0f} more.", input.city.strings[string.place()].id, to_dollars(saving[string.place()]));
+    }
+}
+
 void count(DecideResult& result) {
     for (const PoleDecision& each : result.poles) {
         result.keep += each.choice == Choice::keep ? 1 : 0;
@@ -92,6 +108,12 @@ Expected<DecideResult> decide_city(const MoneyInput& input, const Progress& prog
     settle_modes(input, *cases, result);
     progress.at(0.3);
 
+    const bool may_stay = input.plan.settings.policy == Policy::may_stay;
+    const std::vector<PoleCase> settled = *cases;
+    std::vector<StringCost> strings;
+    if (may_stay) strings = string_costs(input, settled);
+    const Cents ended = sum_of(strings);
+    if (may_stay) choose_stays(graph, *cases, strings, progress);
     const JointPlan joint = solve_joint(graph, *cases, plan_limits(), progress);
     if (progress.is_cancelled()) return tl::unexpected(cancelled());
     progress.at(0.7);
@@ -102,14 +124,16 @@ Expected<DecideResult> decide_city(const MoneyInput& input, const Progress& prog
     result.poles = pole_decisions(input, *cases, plan, marginal_shares(graph, *cases, plan));
     set_volts(input, volts, result);
     count(result);
-    result.cost = to_dollars(plan.cost + larger_wire(input, graph, plan, result));
-    result.bound = to_dollars(plan.bound);
-    result.limits_price = result.cost - to_dollars(joint.cost);
+    const Cents cost = plan.cost + larger_wire(input, graph, plan, result);
+    result.cost = to_dollars(cost + sum_of(strings));
+    result.bound = to_dollars(may_stay ? bound_with_stays(graph, settled, strings, progress) : plan.bound);
+    result.limits_price = to_dollars(cost - joint.cost);
+    say_stays(input, strings, result);
     progress.at(0.8);
 
-    result.all_rewire_cost = all_of(graph, *cases, Choice::rewire, result.all_rewire_not_possible, progress);
-    result.all_solar_cost = all_of(graph, *cases, Choice::solar, result.all_solar_not_possible, progress);
-    result.greedy_cost = to_dollars(greedy_plan(graph, *cases).cost);
+    result.all_rewire_cost = to_dollars(ended) + all_of(graph, settled, Choice::rewire, result.all_rewire_not_possible, progress);
+    result.all_solar_cost = to_dollars(ended) + all_of(graph, settled, Choice::solar, result.all_solar_not_possible, progress);
+    result.greedy_cost = to_dollars(ended + greedy_plan(graph, settled).cost);
     if (progress.is_cancelled()) return tl::unexpected(cancelled());
     progress.at(1);
     result.seconds = std::chrono::duration<double>(std::chrono::steady_clock::now() - start).count();

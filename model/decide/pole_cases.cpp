@@ -74,6 +74,7 @@ class Modes {
         if (string_must_stay(each)) each.mode = Mode::keep;
         else if (can_rewire) each.mode = can_solar ? Mode::open : Mode::rewire;
         else if (can_solar) each.mode = Mode::solar;
+        else if (input_.plan.settings.policy == Policy::may_stay) each.mode = Mode::keep;
         else {
             each.mode = Mode::stuck;
             result_.feasible = false;

@@ -40,7 +40,8 @@ Context new_context() {
 /// "32611" and "epsg:32611" are taken as "EPSG:32611".
 std::string spelled(const std::string& crs) {
     const auto is_number = [](std::string_view text) {
-        return !text.empty() && text.size() <= 9 && std::all_of(text.begin(), text.end(), [](char c) { return c >= '0' && c <= '9'; });
+        return !text.empty() && text.size() <= 9 &&
+               std::all_of(text.begin(), text.end(), [](char c) { return c >= '0' && c <= '9'; });
     };
     if (is_number(crs)) return "EPSG:" + crs;
     if (crs.size() > 5 && is_number(std::string_view(crs).substr(5)) && crs[4] == ':' &&
@@ -50,14 +51,22 @@ std::string spelled(const std::string& crs) {
 }
 
 Fault unknown(const std::string& crs, std::string found) {
-    return {FaultCode::crs_unknown, {}, 0, "crs", crs.size() > 80 ? crs.substr(0, 77) + "..." : crs + (found.empty() ? "" : ": ") + found,
-            "a coordinate system of the EPSG registry", "give --crs EPSG:n"};
+    return {FaultCode::crs_unknown,
+            {},
+            0,
+            "crs",
+            crs.size() > 80 ? crs.substr(0, 77) + "..." : crs + (found.empty() ? "" : ": ") + found,
+            "a coordinate system of the EPSG registry",
+            "give --crs EPSG:n"};
 }
 
 /// Only codes and WKT: a file name or a PROJ pipeline from outside is never handed on.
 bool is_safe_definition(const std::string& crs) {
-    if (crs.starts_with("EPSG:") || crs.starts_with("ESRI:") || crs.starts_with("OGC:") || crs.starts_with("IGNF:")) return crs.size() < 32;
-    for (const char* word : {"PROJC", "GEOGC", "PROJCS", "GEOGCS", "COMPD", "COMPOUND", "BOUNDCRS", "GEODCRS"})
+    if (crs.starts_with("EPSG:") || crs.starts_with("ESRI:") || crs.starts_with("OGC:") ||
+        crs.starts_with("IGNF:"))
+        return crs.size() < 32;
+    for (const char* word :
+         {"PROJC", "GEOGC", "PROJCS", "GEOGCS", "COMPD", "COMPOUND", "BOUNDCRS", "GEODCRS"})
         if (crs.starts_with(word)) return true;
     return false;
 }
@@ -72,9 +81,12 @@ Pj create(PJ_CONTEXT* context, const std::string& crs) {
 Pj horizontal(PJ_CONTEXT* context, Pj pj) {
     for (int depth = 0; pj && depth < 4; ++depth) {
         const PJ_TYPE type = proj_get_type(pj.get());
-        if (type == PJ_TYPE_BOUND_CRS) pj.reset(proj_get_source_crs(context, pj.get()));
-        else if (type == PJ_TYPE_COMPOUND_CRS) pj.reset(proj_crs_get_sub_crs(context, pj.get(), 0));
-        else break;
+        if (type == PJ_TYPE_BOUND_CRS)
+            pj.reset(proj_get_source_crs(context, pj.get()));
+        else if (type == PJ_TYPE_COMPOUND_CRS)
+            pj.reset(proj_crs_get_sub_crs(context, pj.get(), 0));
+        else
+            break;
     }
     return pj;
 }
@@ -82,14 +94,17 @@ Pj horizontal(PJ_CONTEXT* context, Pj pj) {
 std::string code_of(PJ_CONTEXT* context, const PJ* pj) {
     if (const char* code = proj_get_id_code(pj, 0)) {
         const char* authority = proj_get_id_auth_name(pj, 0);
-        if (authority != nullptr && std::string_view(authority) == "EPSG") return fmt::format("EPSG:{}", code);
+        if (authority != nullptr && std::string_view(authority) == "EPSG")
+            return fmt::format("EPSG:{}", code);
     }
     int* confidence = nullptr;
-    const std::unique_ptr<PJ_OBJ_LIST, ListEnd> matches(proj_identify(context, pj, "EPSG", nullptr, &confidence));
+    const std::unique_ptr<PJ_OBJ_LIST, ListEnd> matches(
+        proj_identify(context, pj, "EPSG", nullptr, &confidence));
     std::string found;
     if (matches && proj_list_get_count(matches.get()) > 0 && confidence[0] >= 90) {
         const Pj best(proj_list_get(context, matches.get(), 0));
-        if (const char* code = best ? proj_get_id_code(best.get(), 0) : nullptr) found = fmt::format("EPSG:{}", code);
+        if (const char* code = best ? proj_get_id_code(best.get(), 0) : nullptr)
+            found = fmt::format("EPSG:{}", code);
     }
     proj_int_list_destroy(confidence);
     return found;
@@ -98,7 +113,8 @@ std::string code_of(PJ_CONTEXT* context, const PJ* pj) {
 std::optional<double> unit_of(PJ_CONTEXT* context, const PJ* crs) {
     const Pj axes(proj_crs_get_coordinate_system(context, crs));
     double factor = 0;
-    if (!axes || !proj_cs_get_axis_info(context, axes.get(), 0, nullptr, nullptr, nullptr, &factor, nullptr, nullptr, nullptr))
+    if (!axes || !proj_cs_get_axis_info(context, axes.get(), 0, nullptr, nullptr, nullptr, &factor, nullptr,
+                                        nullptr, nullptr))
         return std::nullopt;
     return factor;
 }
@@ -108,8 +124,10 @@ std::string metric_sibling(const std::string& crs) {
     const Context context = new_context();
     const Pj feet = horizontal(context.get(), create(context.get(), crs));
     if (!feet) return {};
-    const Pj with_axes(proj_crs_alter_cs_linear_unit(context.get(), feet.get(), "metre", 1.0, "EPSG", "9001"));
-    const Pj converted(with_axes ? proj_crs_alter_parameters_linear_unit(context.get(), with_axes.get(), "metre", 1.0, "EPSG", "9001", 1)
+    const Pj with_axes(
+        proj_crs_alter_cs_linear_unit(context.get(), feet.get(), "metre", 1.0, "EPSG", "9001"));
+    const Pj converted(with_axes ? proj_crs_alter_parameters_linear_unit(context.get(), with_axes.get(),
+                                                                         "metre", 1.0, "EPSG", "9001", 1)
                                  : nullptr);
     // Without its old name, by which the registry would answer the system in feet again.
     const Pj metres(converted ? proj_alter_name(context.get(), converted.get(), "unknown") : nullptr);
@@ -135,13 +153,14 @@ Expected<GridNorth> grid_north(const std::string& crs, MapPoint at) {
     if (!south || !north) return tl::unexpected(unknown(crs, "the point is outside of it"));
     const double lat = here->y_m * kRadPerDeg;
     constexpr double kAxis_m = 6378137.0, kEccentricity2 = 0.00669437999014;
-    const double radius_m = kAxis_m * (1 - kEccentricity2) / std::pow(1 - kEccentricity2 * std::sin(lat) * std::sin(lat), 1.5);
+    const double radius_m =
+        kAxis_m * (1 - kEccentricity2) / std::pow(1 - kEccentricity2 * std::sin(lat) * std::sin(lat), 1.5);
     const double ground_m = 2 * kSmallStep_deg * kRadPerDeg * radius_m;
     const double dx = north->x_m - south->x_m, dy = north->y_m - south->y_m;
     return GridNorth{-std::atan2(dx, dy) / kRadPerDeg, std::hypot(dx, dy) / ground_m};
 }
 
-}  // namespace
+} // namespace
 
 struct CrsTransform::Inside {
     Context context;
@@ -181,14 +200,16 @@ Expected<CrsFacts> crs_facts(const std::string& crs) {
     CrsFacts facts;
     const PJ_TYPE type = proj_get_type(pj.get());
     facts.is_geographic = type == PJ_TYPE_GEOGRAPHIC_2D_CRS || type == PJ_TYPE_GEOGRAPHIC_3D_CRS;
-    if (!facts.is_geographic && type != PJ_TYPE_PROJECTED_CRS) return tl::unexpected(unknown(crs, "neither projected nor geographic"));
+    if (!facts.is_geographic && type != PJ_TYPE_PROJECTED_CRS)
+        return tl::unexpected(unknown(crs, "neither projected nor geographic"));
     facts.code = code_of(context.get(), pj.get());
     if (const char* name = proj_get_name(pj.get())) facts.name = name;
     const auto unit = unit_of(context.get(), pj.get());
     if (!unit) return tl::unexpected(unknown(crs, "no axes"));
     facts.unit_m = facts.is_geographic ? 1.0 : *unit;
     double west = 0, south = 0, east = 0, north = 0;
-    if (proj_get_area_of_use(context.get(), pj.get(), &west, &south, &east, &north, nullptr) && west >= -360) {
+    if (proj_get_area_of_use(context.get(), pj.get(), &west, &south, &east, &north, nullptr) &&
+        west >= -360) {
         facts.south_west = {west, south};
         facts.north_east = {east, north};
     }
@@ -239,4 +260,4 @@ std::string crs_wkt(const std::string& crs) {
     return text != nullptr ? text : "";
 }
 
-}  // namespace unstring
+} // namespace unstring

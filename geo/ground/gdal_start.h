@@ -1,5 +1,6 @@
 #pragma once
-// How GDAL is used here: listed drivers, local files, nothing fetched, errors as Faults and never on the console.
+// How GDAL is used here: listed drivers, local files, nothing fetched, errors as Faults and never on the
+// console.
 
 namespace unstring {
 
@@ -10,4 +11,4 @@ void start_gdal();
 [[nodiscard]] const char* const* raster_drivers();
 [[nodiscard]] const char* const* vector_drivers();
 
-}  // namespace unstring
+} // namespace unstring

@@ -12,4 +12,4 @@ namespace unstring {
 /// @fault file_missing, file_broken, crs_unknown (not georeferenced)
 [[nodiscard]] Expected<std::unique_ptr<HeightSource>> open_height_raster(const std::string& path);
 
-}  // namespace unstring
+} // namespace unstring

@@ -1,5 +1,6 @@
 #pragma once
-// A height raster as a file: opened under the rules for foreign files, and what is known of it before any cell is read.
+// A height raster as a file: opened under the rules for foreign files, and what is known of it before any
+// cell is read.
 
 #include <cstddef>
 #include <memory>
@@ -18,13 +19,14 @@ struct RasterEnd {
 using RasterFile = std::unique_ptr<GDALDataset, RasterEnd>;
 
 struct RasterFacts {
-    std::string crs;  ///< "EPSG:n" or WKT; empty where the file says none
-    double west_m = 0, north_m = 0;  ///< outer edges, in the raster's own system
+    std::string crs;                ///< "EPSG:n" or WKT; empty where the file says none
+    double west_m = 0, north_m = 0; ///< outer edges, in the raster's own system
     double cell_m = 1;
     std::size_t columns = 0, rows = 0;
 
     [[nodiscard]] MapPoint middle() const {
-        return {west_m + cell_m * static_cast<double>(columns) / 2, north_m - cell_m * static_cast<double>(rows) / 2};
+        return {west_m + cell_m * static_cast<double>(columns) / 2,
+                north_m - cell_m * static_cast<double>(rows) / 2};
     }
 };
 
@@ -35,4 +37,4 @@ struct RasterFacts {
 [[nodiscard]] Expected<RasterFacts> raster_facts(const std::string& path);
 [[nodiscard]] Expected<RasterFacts> raster_facts(GDALDataset& raster, const std::string& path);
 
-}  // namespace unstring
+} // namespace unstring

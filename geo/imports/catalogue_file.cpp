@@ -28,13 +28,15 @@ struct BadField {
 };
 
 std::string shown(const Json& value) {
-    return value.is_structured() ? std::string(value.is_array() ? "a list" : "an object") : value.dump().substr(0, 60);
+    return value.is_structured() ? std::string(value.is_array() ? "a list" : "an object")
+                                 : value.dump().substr(0, 60);
 }
 
 /// The fields of one object; every fault names its path, "heads[2].panel_wp".
 class Fields {
-  public:
-    Fields(const Json& object, std::string path, const std::string& file) : object_(object), path_(std::move(path)), file_(file) {
+public:
+    Fields(const Json& object, std::string path, const std::string& file)
+        : object_(object), path_(std::move(path)), file_(file) {
         if (!object_.is_object()) refuse({}, shown(object_), "an object");
     }
 
@@ -42,11 +44,13 @@ class Fields {
         const Json* value = find(key);
         if (value == nullptr && is_needed) refuse(key, "nothing", "a text");
         if (value == nullptr) return {};
-        if (!value->is_string() || value->get_ref<const std::string&>().size() > 1000) refuse(key, shown(*value), "a text");
+        if (!value->is_string() || value->get_ref<const std::string&>().size() > 1000)
+            refuse(key, shown(*value), "a text");
         return value->get<std::string>();
     }
 
-    [[nodiscard]] double number(const char* key, double low, double high, std::optional<double> otherwise = {}) const {
+    [[nodiscard]] double number(const char* key, double low, double high,
+                                std::optional<double> otherwise = {}) const {
         const Json* value = find(key);
         if (value == nullptr && otherwise) return *otherwise;
         const std::string wanted = fmt::format("a number from {:g} to {:g}", low, high);
@@ -68,7 +72,8 @@ class Fields {
         if (value == nullptr) return {};
         if (!value->is_array() || value->size() > 100'000) refuse(key, shown(*value), "a list");
         std::vector<Fields> items;
-        for (std::size_t i = 0; i < value->size(); ++i) items.emplace_back((*value)[i], fmt::format("{}[{}]", path_of(key), i), file_);
+        for (std::size_t i = 0; i < value->size(); ++i)
+            items.emplace_back((*value)[i], fmt::format("{}[{}]", path_of(key), i), file_);
         return items;
     }
 
@@ -89,12 +94,16 @@ class Fields {
         return at == object_.end() || at->is_null() ? nullptr : &*at;
     }
 
-    [[noreturn]] void refuse(const char* key, std::string found, std::string wanted, FaultCode code = FaultCode::value_unreadable) const {
-        throw BadField{{code, file_, 0, key != nullptr ? path_of(key) : path_, std::move(found), std::move(wanted), "mend the catalogue"}};
+    [[noreturn]] void refuse(const char* key, std::string found, std::string wanted,
+                             FaultCode code = FaultCode::value_unreadable) const {
+        throw BadField{{code, file_, 0, key != nullptr ? path_of(key) : path_, std::move(found),
+                        std::move(wanted), "mend the catalogue"}};
     }
 
-  private:
-    [[nodiscard]] std::string path_of(const char* key) const { return path_.empty() ? key : fmt::format("{}.{}", path_, key); }
+private:
+    [[nodiscard]] std::string path_of(const char* key) const {
+        return path_.empty() ? key : fmt::format("{}.{}", path_, key);
+    }
 
     const Json& object_;
     std::string path_;
@@ -102,8 +111,11 @@ class Fields {
 };
 
 LampKind lamp_kind(const Fields& in) {
-    constexpr std::array<std::pair<const char*, LampKind>, 5> kKinds = {{{"hps", LampKind::hps}, {"filament", LampKind::filament},
-                                                                         {"lps", LampKind::lps}, {"mv", LampKind::mv}, {"led", LampKind::led}}};
+    constexpr std::array<std::pair<const char*, LampKind>, 5> kKinds = {{{"hps", LampKind::hps},
+                                                                         {"filament", LampKind::filament},
+                                                                         {"lps", LampKind::lps},
+                                                                         {"mv", LampKind::mv},
+                                                                         {"led", LampKind::led}}};
     const std::string word = in.text("kind", true);
     for (const auto& [text, kind] : kKinds)
         if (word == text) return kind;
@@ -111,7 +123,8 @@ LampKind lamp_kind(const Fields& in) {
 }
 
 Lamp lamp(const Fields& in) {
-    return {in.text("fixture", true), in.texts("aliases"), in.number("system_w", 0.1, 5000), in.number("pf", 0.05, 1, 0.9), lamp_kind(in)};
+    return {in.text("fixture", true), in.texts("aliases"), in.number("system_w", 0.1, 5000),
+            in.number("pf", 0.05, 1, 0.9), lamp_kind(in)};
 }
 
 Head head(const Fields& in) {
@@ -124,7 +137,8 @@ Head head(const Fields& in) {
     head.led_w = in.number("led_w", 0.1, 1000);
     head.lumens = in.number("lumens", 1, 2e5);
     for (const Fields& step : in.list("dimming"))
-        head.dimming.push_back({step.number("from_h", 0, 24), step.number("to_h", 0, 24), step.number("frac", 0, 1)});
+        head.dimming.push_back(
+            {step.number("from_h", 0, 24), step.number("to_h", 0, 24), step.number("frac", 0, 1)});
     head.epa_m2 = in.number("epa_m2", 0, 50);
     head.mass_kg = in.number("mass_kg", 0, 1000, 0);
     head.price_item = in.text("price_item", true);
@@ -134,42 +148,53 @@ Head head(const Fields& in) {
     head.cct_k = in.number("cct_k", 0, 20000, 0);
     head.domestic = in.flag("domestic");
     head.ies = in.text("ies", false);
-    for (const auto& [key, item] : {std::pair{"price_item", &head.price_item}, std::pair{"battery_item", &head.battery_item}}) {
+    for (const auto& [key, item] :
+         {std::pair{"price_item", &head.price_item}, std::pair{"battery_item", &head.battery_item}}) {
         const auto items = price_items();
-        const bool is_known = item->empty() || std::any_of(items.begin(), items.end(), [&](const PriceItem& each) { return each.item == *item; });
+        const bool is_known =
+            item->empty() || std::any_of(items.begin(), items.end(),
+                                         [&](const PriceItem& each) { return each.item == *item; });
         if (!is_known) in.refuse(key, *item, "an item of the price list", FaultCode::value_unknown);
     }
     return head;
 }
 
 Luminaire luminaire(const Fields& in) {
-    return {in.text("luminaire", true), in.number("led_w", 0.1, 2000), in.number("pf", 0.05, 1, 0.95), in.number("lumens", 1, 5e5),
-            in.text("price_item", true), in.text("ies", false)};
+    return {in.text("luminaire", true),  in.number("led_w", 0.1, 2000), in.number("pf", 0.05, 1, 0.95),
+            in.number("lumens", 1, 5e5), in.text("price_item", true),   in.text("ies", false)};
 }
 
 Cable cable(const Fields& in) {
     const Json* size = in.find("awg");
-    const auto awg = size == nullptr ? std::nullopt : read_awg(size->is_string() ? size->get<std::string>() : size->dump());
-    if (!awg) in.refuse("awg", size == nullptr ? "nothing" : shown(*size), "a wire size such as 8 or \"1/0\"");
+    const auto awg = size == nullptr ? std::nullopt
+                                     : read_awg(size->is_string() ? size->get<std::string>() : size->dump());
+    if (!awg)
+        in.refuse("awg", size == nullptr ? "nothing" : shown(*size), "a wire size such as 8 or \"1/0\"");
     const std::string metal = in.text("metal", true);
     if (metal != "cu" && metal != "al") in.refuse("metal", metal, "cu or al", FaultCode::value_unknown);
-    return {*awg, metal == "cu" ? Metal::copper : Metal::aluminium, in.number("ohm_per_km", 1e-6, 1000), in.number("x_ohm_per_km", 0, 10, 0),
-            in.number("area_mm2", 0, 1e5, 0), in.number("ampacity_a", 0, 1e5, 0)};
+    return {*awg,
+            metal == "cu" ? Metal::copper : Metal::aluminium,
+            in.number("ohm_per_km", 1e-6, 1000),
+            in.number("x_ohm_per_km", 0, 10, 0),
+            in.number("area_mm2", 0, 1e5, 0),
+            in.number("ampacity_a", 0, 1e5, 0)};
 }
 
-template <class Record, class Read> void take_list(const Fields& in, const char* key, std::vector<Record>& into, const Read& read) {
+template <class Record, class Read>
+void take_list(const Fields& in, const char* key, std::vector<Record>& into, const Read& read) {
     if (in.find(key) == nullptr) return;
     into.clear();
     for (const Fields& item : in.list(key)) into.push_back(read(item));
 }
 
-}  // namespace
+} // namespace
 
 Expected<Catalog> parse_catalogue(std::string_view text, const std::string& file, const Catalog& defaults) {
     if (text.starts_with("\xEF\xBB\xBF")) text.remove_prefix(3);
     const Json json = Json::parse(text, nullptr, false);
     if (json.is_discarded())
-        return tl::unexpected(Fault{FaultCode::file_broken, file, 0, {}, "no JSON", "a catalogue in JSON", "mend the catalogue"});
+        return tl::unexpected(Fault{
+            FaultCode::file_broken, file, 0, {}, "no JSON", "a catalogue in JSON", "mend the catalogue"});
     try {
         const Fields in(json, {}, file);
         Catalog catalog = defaults;
@@ -197,4 +222,4 @@ Catalog default_catalog() {
     return *catalog;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -14,10 +14,12 @@ namespace unstring {
 
 /// A catalogue from JSON; a list that the file does not have ("heads") is taken from `defaults` as a whole.
 /// @param file  named in faults
-/// @fault file_broken (no JSON), value_unreadable (a field that is missing, no number, or out of its range), value_unknown
-[[nodiscard]] Expected<Catalog> parse_catalogue(std::string_view json, const std::string& file, const Catalog& defaults);
+/// @fault file_broken (no JSON), value_unreadable (a field that is missing, no number, or out of its range),
+/// value_unknown
+[[nodiscard]] Expected<Catalog> parse_catalogue(std::string_view json, const std::string& file,
+                                                const Catalog& defaults);
 
 /// @fault as parse_catalogue, file_missing
 [[nodiscard]] Expected<Catalog> read_catalogue(const std::string& path, const Catalog& defaults);
 
-}  // namespace unstring
+} // namespace unstring

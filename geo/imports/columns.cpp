@@ -21,47 +21,63 @@ constexpr double kSquareFoot_m2 = kMetresPerFoot * kMetresPerFoot;
 std::string normalised(std::string_view name) {
     std::string out;
     for (const char c : name) {
-        if (c >= 'A' && c <= 'Z') out += static_cast<char>(c + 32);
-        else if ((c >= 'a' && c <= 'z') || (c >= '0' && c <= '9')) out += c;
+        if (c >= 'A' && c <= 'Z')
+            out += static_cast<char>(c + 32);
+        else if ((c >= 'a' && c <= 'z') || (c >= '0' && c <= '9'))
+            out += c;
     }
     return out;
 }
 
 struct UnitWord {
     std::string_view word;
-    FieldKind kind;  ///< of a field that it may convert; number: the unit is the field's own
+    FieldKind kind; ///< of a field that it may convert; number: the unit is the field's own
     double to_si;
 };
 
 // The last word of a column's name. Longer words stand before those that they end with.
-constexpr std::array kUnitWords = {
-    UnitWord{"ftus", FieldKind::length_m, kMetresPerSurveyFoot}, UnitWord{"usft", FieldKind::length_m, kMetresPerSurveyFoot},
-    UnitWord{"feet", FieldKind::length_m, kMetresPerFoot},       UnitWord{"sqft", FieldKind::area_m2, kSquareFoot_m2},
-    UnitWord{"ft2", FieldKind::area_m2, kSquareFoot_m2},         UnitWord{"ft", FieldKind::length_m, kMetresPerFoot},
-    UnitWord{"metres", FieldKind::length_m, 1},                  UnitWord{"meters", FieldKind::length_m, 1},
-    UnitWord{"sqm", FieldKind::area_m2, 1},                      UnitWord{"m2", FieldKind::area_m2, 1},
-    UnitWord{"m", FieldKind::length_m, 1},                       UnitWord{"watts", FieldKind::number, 1},
-    UnitWord{"kva", FieldKind::number, 1},                       UnitWord{"kw", FieldKind::number, 1},
-    UnitWord{"kv", FieldKind::number, 1},                        UnitWord{"amps", FieldKind::number, 1},
-    UnitWord{"volts", FieldKind::number, 1},                     UnitWord{"mohm", FieldKind::number, 1},
-    UnitWord{"deg", FieldKind::number, 1},                       UnitWord{"lm", FieldKind::number, 1},
-    UnitWord{"hours", FieldKind::number, 1},                     UnitWord{"w", FieldKind::number, 1},
-    UnitWord{"a", FieldKind::number, 1},                         UnitWord{"v", FieldKind::number, 1},
-    UnitWord{"h", FieldKind::number, 1},                         UnitWord{"c", FieldKind::number, 1}};
+constexpr std::array kUnitWords = {UnitWord{"ftus", FieldKind::length_m, kMetresPerSurveyFoot},
+                                   UnitWord{"usft", FieldKind::length_m, kMetresPerSurveyFoot},
+                                   UnitWord{"feet", FieldKind::length_m, kMetresPerFoot},
+                                   UnitWord{"sqft", FieldKind::area_m2, kSquareFoot_m2},
+                                   UnitWord{"ft2", FieldKind::area_m2, kSquareFoot_m2},
+                                   UnitWord{"ft", FieldKind::length_m, kMetresPerFoot},
+                                   UnitWord{"metres", FieldKind::length_m, 1},
+                                   UnitWord{"meters", FieldKind::length_m, 1},
+                                   UnitWord{"sqm", FieldKind::area_m2, 1},
+                                   UnitWord{"m2", FieldKind::area_m2, 1},
+                                   UnitWord{"m", FieldKind::length_m, 1},
+                                   UnitWord{"watts", FieldKind::number, 1},
+                                   UnitWord{"kva", FieldKind::number, 1},
+                                   UnitWord{"kw", FieldKind::number, 1},
+                                   UnitWord{"kv", FieldKind::number, 1},
+                                   UnitWord{"amps", FieldKind::number, 1},
+                                   UnitWord{"volts", FieldKind::number, 1},
+                                   UnitWord{"mohm", FieldKind::number, 1},
+                                   UnitWord{"deg", FieldKind::number, 1},
+                                   UnitWord{"lm", FieldKind::number, 1},
+                                   UnitWord{"hours", FieldKind::number, 1},
+                                   UnitWord{"w", FieldKind::number, 1},
+                                   UnitWord{"a", FieldKind::number, 1},
+                                   UnitWord{"v", FieldKind::number, 1},
+                                   UnitWord{"h", FieldKind::number, 1},
+                                   UnitWord{"c", FieldKind::number, 1}};
 
 bool takes(FieldKind field, FieldKind unit) {
     if (field == FieldKind::coordinate) return unit == FieldKind::length_m;
     return field == unit;
 }
 
-/// The unit that a column's name ends with, set off by a blank, a stroke or a bracket ("X_ft", "Mount Ht (ft)").
+/// The unit that a column's name ends with, set off by a blank, a stroke or a bracket ("X_ft", "Mount Ht
+/// (ft)").
 const UnitWord* unit_of(std::string_view column) {
     const std::size_t last = column.find_last_not_of(" _-()[].");
     if (last == std::string_view::npos) return nullptr;
     const std::size_t before = column.find_last_of(" _-([.", last);
     if (before == std::string_view::npos) return nullptr;
     const std::string word = normalised(column.substr(before + 1, last - before));
-    const auto unit = std::find_if(kUnitWords.begin(), kUnitWords.end(), [&](const UnitWord& each) { return each.word == word; });
+    const auto unit = std::find_if(kUnitWords.begin(), kUnitWords.end(),
+                                   [&](const UnitWord& each) { return each.word == word; });
     return unit == kUnitWords.end() ? nullptr : &*unit;
 }
 
@@ -80,14 +96,17 @@ bool has_word(std::string_view words, std::string_view word) {
     return false;
 }
 
-constexpr std::size_t kShapefileName = 10;  ///< letters that a Shapefile keeps of a column's name
+constexpr std::size_t kShapefileName = 10; ///< letters that a Shapefile keeps of a column's name
 
 bool sounds_like(const Field& field, std::string_view column) {
     const std::string name = normalised(column);
-    if (column.size() == kShapefileName && normalised(field.name.substr(0, kShapefileName)) == name) return true;
+    if (column.size() == kShapefileName && normalised(field.name.substr(0, kShapefileName)) == name)
+        return true;
     if (name == normalised(field.name) || has_word(field.synonyms, name)) return true;
     const UnitWord* unit = unit_of(column);
-    if (unit == nullptr || field.kind == FieldKind::text || !(takes(field.kind, unit->kind) || unit->kind == FieldKind::number)) return false;
+    if (unit == nullptr || field.kind == FieldKind::text ||
+        !(takes(field.kind, unit->kind) || unit->kind == FieldKind::number))
+        return false;
     const std::string bare = without_unit(column, *unit);
     std::string field_bare = normalised(field.name);
     if (const UnitWord* own = unit_of(field.name)) field_bare = without_unit(field.name, *own);
@@ -115,7 +134,7 @@ std::optional<std::size_t> column_named(const Table& table, std::string_view nam
 }
 
 class Matcher {
-  public:
+public:
     Matcher(const Table& table, const ColumnMap& map)
         : table_(table), map_(map), fields_(fields_of(table.name)), is_taken_(table.columns.size(), false) {}
 
@@ -124,14 +143,15 @@ class Matcher {
         if (auto told = match_told(); !told) return tl::unexpected(told.error());
         for (const Field& field : fields_)
             if (is_open(field))
-                if (const auto column = column_named(table_, field.name); column && !is_taken_[*column]) take(field, *column);
+                if (const auto column = column_named(table_, field.name); column && !is_taken_[*column])
+                    take(field, *column);
         match_guessed();
         for (std::size_t i = 0; i < table_.columns.size(); ++i)
             if (!is_taken_[i] && !table_.columns[i].empty()) result_.unused.push_back(table_.columns[i]);
         return std::move(result_);
     }
 
-  private:
+private:
     Expected<void> match_told() {
         const auto told = map_.columns.find(table_.name);
         if (told == map_.columns.end()) return {};
@@ -142,8 +162,11 @@ class Matcher {
             if (name->second.empty()) continue;
             const auto column = column_named(table_, name->second);
             if (!column)
-                return tl::unexpected(Fault{FaultCode::column_missing, table_.file, 1, std::string(field.name), fmt::format("no column \"{}\"", name->second),
-                                            fmt::format("one of: {}", fmt::join(table_.columns, ", ")), "mend the map given with --columns"});
+                return tl::unexpected(Fault{FaultCode::column_missing, table_.file, 1,
+                                            std::string(field.name),
+                                            fmt::format("no column \"{}\"", name->second),
+                                            fmt::format("one of: {}", fmt::join(table_.columns, ", ")),
+                                            "mend the map given with --columns"});
             take(field, *column);
         }
         return {};
@@ -162,7 +185,8 @@ class Matcher {
     }
 
     [[nodiscard]] bool is_open(const Field& field) const {
-        return !result_.at(field.name).column && std::find(closed_.begin(), closed_.end(), field.name) == closed_.end();
+        return !result_.at(field.name).column &&
+               std::find(closed_.begin(), closed_.end(), field.name) == closed_.end();
     }
 
     void take(const Field& field, std::size_t column) {
@@ -174,12 +198,14 @@ class Matcher {
     const ColumnMap& map_;
     std::span<const Field> fields_;
     std::vector<bool> is_taken_;
-    std::vector<std::string_view> closed_;  ///< fields that the map speaks of
+    std::vector<std::string_view> closed_; ///< fields that the map speaks of
     Columns result_;
 };
 
 Fault map_fault(const std::string& path, std::string field, std::string found, std::string wanted) {
-    return {FaultCode::value_unknown, path, 0, std::move(field), std::move(found), std::move(wanted), "mend the map given with --columns"};
+    return {
+        FaultCode::value_unknown,           path, 0, std::move(field), std::move(found), std::move(wanted),
+        "mend the map given with --columns"};
 }
 
 std::string names_of(std::span<const Field> fields) {
@@ -189,33 +215,45 @@ std::string names_of(std::span<const Field> fields) {
 }
 
 Expected<void> read_units(const nlohmann::json& units, const std::string& path, ColumnMap& map) {
-    if (!units.is_object()) return tl::unexpected(map_fault(path, "units", units.dump().substr(0, 60), "{\"length\": \"ft\"}"));
+    if (!units.is_object())
+        return tl::unexpected(map_fault(path, "units", units.dump().substr(0, 60), "{\"length\": \"ft\"}"));
     for (const auto& [kind, unit] : units.items()) {
         const std::string word = unit.is_string() ? unit.get<std::string>() : unit.dump().substr(0, 60);
         if (kind != "length") return tl::unexpected(map_fault(path, "units", kind, "length"));
-        if (word == "m") map.length_m = 1;
-        else if (word == "ft") map.length_m = kMetresPerFoot;
-        else if (word == "ftUS") map.length_m = kMetresPerSurveyFoot;
-        else return tl::unexpected(map_fault(path, "units.length", word, "m, ft or ftUS"));
+        if (word == "m")
+            map.length_m = 1;
+        else if (word == "ft")
+            map.length_m = kMetresPerFoot;
+        else if (word == "ftUS")
+            map.length_m = kMetresPerSurveyFoot;
+        else
+            return tl::unexpected(map_fault(path, "units.length", word, "m, ft or ftUS"));
     }
     return {};
 }
 
-Expected<void> read_table_map(const nlohmann::json& entries, const std::string& table, const std::string& path, ColumnMap& map) {
+Expected<void> read_table_map(const nlohmann::json& entries, const std::string& table,
+                              const std::string& path, ColumnMap& map) {
     const auto fields = fields_of(table);
-    if (fields.empty()) return tl::unexpected(map_fault(path, table, table, "a table such as poles or circuits, or \"units\""));
-    if (!entries.is_object()) return tl::unexpected(map_fault(path, table, entries.dump().substr(0, 60), "{\"field\": \"column\"}"));
+    if (fields.empty())
+        return tl::unexpected(
+            map_fault(path, table, table, "a table such as poles or circuits, or \"units\""));
+    if (!entries.is_object())
+        return tl::unexpected(
+            map_fault(path, table, entries.dump().substr(0, 60), "{\"field\": \"column\"}"));
     for (const auto& [field, column] : entries.items()) {
-        const bool is_known = std::any_of(fields.begin(), fields.end(), [&](const Field& each) { return each.name == field; });
+        const bool is_known =
+            std::any_of(fields.begin(), fields.end(), [&](const Field& each) { return each.name == field; });
         if (!is_known) return tl::unexpected(map_fault(path, table + "." + field, field, names_of(fields)));
         if (!column.is_string() && !column.is_null())
-            return tl::unexpected(map_fault(path, table + "." + field, column.dump().substr(0, 60), "the name of a column"));
+            return tl::unexpected(
+                map_fault(path, table + "." + field, column.dump().substr(0, 60), "the name of a column"));
         map.columns[table][field] = column.is_null() ? std::string() : column.get<std::string>();
     }
     return {};
 }
 
-}  // namespace
+} // namespace
 
 const FieldColumn& Columns::at(std::string_view field) const {
     const auto found = fields.find(field);
@@ -226,11 +264,17 @@ const FieldColumn& Columns::at(std::string_view field) const {
 Expected<ColumnMap> read_column_map(const std::string& path) {
     const auto text = read_local_file(path, kMaxMapFile);
     if (!text) return tl::unexpected(text.error());
-    const std::string_view body = text->starts_with("\xEF\xBB\xBF") ? std::string_view(*text).substr(3) : *text;
+    const std::string_view body =
+        text->starts_with("\xEF\xBB\xBF") ? std::string_view(*text).substr(3) : *text;
     const nlohmann::json json = nlohmann::json::parse(body, nullptr, false);
     if (!json.is_object())
-        return tl::unexpected(Fault{FaultCode::file_broken, path, 0, {}, json.is_discarded() ? "no JSON" : "no JSON object",
-                                    R"({"poles": {"pole_id": "PoleNum"}, "units": {"length": "ft"}})", "mend the map given with --columns"});
+        return tl::unexpected(Fault{FaultCode::file_broken,
+                                    path,
+                                    0,
+                                    {},
+                                    json.is_discarded() ? "no JSON" : "no JSON object",
+                                    R"({"poles": {"pole_id": "PoleNum"}, "units": {"length": "ft"}})",
+                                    "mend the map given with --columns"});
     ColumnMap map;
     for (const auto& [key, value] : json.items()) {
         auto done = key == "units" ? read_units(value, path, map) : read_table_map(value, key, path, map);
@@ -239,6 +283,8 @@ Expected<ColumnMap> read_column_map(const std::string& path) {
     return map;
 }
 
-Expected<Columns> match_columns(const Table& table, const ColumnMap& map) { return Matcher(table, map).match(); }
+Expected<Columns> match_columns(const Table& table, const ColumnMap& map) {
+    return Matcher(table, map).match();
+}
 
-}  // namespace unstring
+} // namespace unstring

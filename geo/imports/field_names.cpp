@@ -10,18 +10,24 @@ namespace {
 using enum FieldKind;
 
 constexpr std::array kPoles = {
-    Field{"pole_id", text, "pole poleid polenum polenumber poleno poletag tag tagno assetid asset facilityid structureid lightid lampid id"},
-    Field{"string_id", text, "string stringid stringno circuit circuitid circuitno cktid ckt loop loopid seriescircuit seriesid feedingcircuit"},
+    Field{"pole_id", text,
+          "pole poleid polenum polenumber poleno poletag tag tagno assetid asset facilityid structureid "
+          "lightid lampid id"},
+    Field{"string_id", text,
+          "string stringid stringno circuit circuitid circuitno cktid ckt loop loopid seriescircuit seriesid "
+          "feedingcircuit"},
     Field{"order", number, "wiringorder sequence seq seqno sequenceno position pos lamporder orderonstring"},
     Field{"easting", coordinate, "x xcoord xcoordinate pointx east eastcoord coordx e"},
     Field{"northing", coordinate, "y ycoord ycoordinate pointy north northcoord coordy n"},
     Field{"lon", coordinate, "longitude long lng xlon londeg ddlon"},
     Field{"lat", coordinate, "latitude ylat latdeg ddlat"},
     Field{"status", text, "polestatus state lifecycle assetstatus"},
-    Field{"fixture", text, "lamp lamptype luminaire luminairetype fixturetype lighttype head headtype bulb bulbtype"},
+    Field{"fixture", text,
+          "lamp lamptype luminaire luminairetype fixturetype lighttype head headtype bulb bulbtype"},
     Field{"lamp_w", number, "lampwatts lampwatt watts watt wattage lampwattage systemw systemwatts power"},
     Field{"lamp_pf", number, "pf powerfactor cosphi lamppowerfactor"},
-    Field{"mount_m", length_m, "mount mounting mountheight mountingheight mounth mntht mtght mountht lightheight"},
+    Field{"mount_m", length_m,
+          "mount mounting mountheight mountingheight mounth mntht mtght mountht lightheight"},
     Field{"arm_m", length_m, "arm armlength bracket bracketlength armlen mastarm"},
     Field{"arm_deg", number, "armbearing armazimuth armdirection bracketbearing armdir"},
     Field{"pole_kind", text, "polekind poletype polematerial material kind"},
@@ -68,7 +74,9 @@ constexpr std::array kCircuits = {
 };
 
 constexpr std::array kTransformers = {
-    Field{"transformer_id", text, "transformer transformerid transformerno unit unitid unitno rotid rotransformer regulatorid regulator assetid id"},
+    Field{"transformer_id", text,
+          "transformer transformerid transformerno unit unitid unitno rotid rotransformer regulatorid "
+          "regulator assetid id"},
     Field{"rated_kw", number, "rated rating kwrating ratingkw size kw"},
     Field{"output_a", number, "output outputamps outputcurrent secondaryamps amps"},
     Field{"min_frac", number, "minfrac minload minloadfrac"},
@@ -183,7 +191,7 @@ constexpr std::array kAsbuilt = {
     Field{"note", text, "notes remark remarks comment"},
 };
 
-}  // namespace
+} // namespace
 
 std::span<const Field> fields_of(std::string_view table) {
     if (table == "poles") return kPoles;
@@ -202,4 +210,4 @@ std::span<const Field> fields_of(std::string_view table) {
     return {};
 }
 
-}  // namespace unstring
+} // namespace unstring

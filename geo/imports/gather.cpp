@@ -1,5 +1,5 @@
-// Reads all files of one call in the order of their references: tables as text, then the coordinate system of all of
-// them together, then records, then what the records say of each other.
+// Reads all files of one call in the order of their references: tables as text, then the coordinate system of
+// all of them together, then records, then what the records say of each other.
 
 #include <algorithm>
 #include <array>
@@ -18,6 +18,7 @@
 #include "geo/imports/project_crs.h"
 #include "geo/imports/read_records.h"
 #include "geo/imports/references.h"
+#include "geo/imports/text_encoding.h"
 #include "geo/imports/text_table.h"
 #include "geo/imports/vector_table.h"
 #include "resources/resources.h"
@@ -27,7 +28,7 @@ namespace {
 
 struct TableFile {
     const char* name;
-    std::string GatherFiles::* path;
+    std::string GatherFiles::*path;
     ShapeKind shapes;
 };
 
@@ -49,7 +50,8 @@ constexpr std::array kTables = {
 
 bool is_text_file(const std::string& path) {
     std::string end = std::filesystem::path(path).extension().string();
-    std::transform(end.begin(), end.end(), end.begin(), [](unsigned char c) { return static_cast<char>(std::tolower(c)); });
+    std::transform(end.begin(), end.end(), end.begin(),
+                   [](unsigned char c) { return static_cast<char>(std::tolower(c)); });
     return end == ".csv" || end == ".txt" || end == ".tsv" || end == ".epw" || end.empty();
 }
 
@@ -59,7 +61,8 @@ PriceBook default_prices() {
     const auto columns = table ? match_columns(*table, {}) : Expected<Columns>(tl::unexpected(table.error()));
     if (!columns) throw std::logic_error("the carried price book: " + fault_text(columns.error()));
     const auto done = read_prices({std::move(*table), *columns, {}}, book);
-    if (!done || !book.findings.empty()) throw std::logic_error("the carried price book has a row that cannot be read");
+    if (!done || !book.findings.empty())
+        throw std::logic_error("the carried price book has a row that cannot be read");
     return book.prices;
 }
 
@@ -71,10 +74,13 @@ Gathered new_city() {
 }
 
 class Gathering {
-  public:
-    Gathering(const GatherFiles& files, const Progress& progress, Gathered& out) : files_(files), progress_(progress), out_(out) {}
+public:
+    Gathering(const GatherFiles& files, const Progress& progress, Gathered& out)
+        : files_(files), progress_(progress), out_(out) {}
 
     Expected<void> run() {
+        if (!files_.encoding.empty())
+            if (auto known = check_encoding(files_.encoding); !known) return known;
         if (!files_.columns.empty()) {
             auto map = read_column_map(files_.columns);
             if (!map) return tl::unexpected(map.error());
@@ -90,9 +96,10 @@ class Gathering {
         return settle_centre(out_.city);
     }
 
-  private:
+private:
     [[nodiscard]] const ReadyTable* find(std::string_view name) const {
-        const auto at = std::find_if(tables_.begin(), tables_.end(), [&](const ReadyTable& table) { return table.table.name == name; });
+        const auto at = std::find_if(tables_.begin(), tables_.end(),
+                                     [&](const ReadyTable& table) { return table.table.name == name; });
         return at == tables_.end() ? nullptr : &*at;
     }
 
@@ -135,15 +142,24 @@ class Gathering {
 
     Expected<void> read_table(const TableFile& each, const std::string& path) {
         auto table = is_text_file(path) ? read_text_table(path, each.name, files_.encoding, out_.findings)
-                                        : read_vector_table(path, each.name, each.shapes, files_.encoding, out_.findings, out_.notes);
+                                        : read_vector_table(path, each.name, each.shapes, files_.encoding,
+                                                            out_.findings, out_.notes);
         if (!table) return tl::unexpected(table.error());
         auto columns = match_columns(*table, map_);
         if (!columns) return tl::unexpected(columns.error());
         auto placed = look_at_places(*table, *columns, files_.crs);
         if (!placed) {
             if (!files_.crs.empty() && table->crs.empty())
-                return tl::unexpected(Fault{FaultCode::bad_usage, {}, 0, "--crs", files_.crs, "a projected or geographic system of the EPSG registry", "give --crs EPSG:n"});
-            return tl::unexpected(placed.error());
+                return tl::unexpected(Fault{FaultCode::bad_usage,
+                                            {},
+                                            0,
+                                            "--crs",
+                                            files_.crs,
+                                            "a projected or geographic system of the EPSG registry",
+                                            "give --crs EPSG:n"});
+            Fault fault = placed.error();
+            if (fault.file.empty()) fault.file = path;
+            return tl::unexpected(fault);
         }
         tables_.push_back({std::move(*table), std::move(*columns), std::move(*placed)});
         return {};
@@ -168,14 +184,17 @@ class Gathering {
 
     Expected<void> check_raster(const RasterFacts& raster) {
         if (raster.crs.empty()) {
-            out_.notes.push_back("canopy: the raster says no coordinate system; taken to be of the project's");
+            out_.notes.push_back(
+                "canopy: the raster says no coordinate system; taken to be of the project's");
             return {};
         }
         const auto facts = crs_facts(raster.crs);
         if (!facts) return tl::unexpected(facts.error());
         if (out_.city.crs.empty() || facts->code == out_.city.crs) return {};
-        return tl::unexpected(Fault{FaultCode::crs_unknown, files_.canopy, 0, "canopy", facts->code.empty() ? facts->name : facts->code, out_.city.crs,
-                                    fmt::format("warp it: gdalwarp -t_srs {} {} canopy.tif", out_.city.crs, files_.canopy)});
+        return tl::unexpected(
+            Fault{FaultCode::crs_unknown, files_.canopy, 0, "canopy",
+                  facts->code.empty() ? facts->name : facts->code, out_.city.crs,
+                  fmt::format("warp it: gdalwarp -t_srs {} {} canopy.tif", out_.city.crs, files_.canopy)});
     }
 
     /// Tables of an earlier call, when the poles of this one changed the project's system.
@@ -191,8 +210,10 @@ class Gathering {
         for (ServicePoint& service : out_.city.services) move(service.place);
         for (Street& street : out_.city.streets) std::for_each(street.line.begin(), street.line.end(), move);
         for (CanopyArea& area : out_.city.canopy) std::for_each(area.ring.begin(), area.ring.end(), move);
-        for (Obstacle& obstacle : out_.city.obstacles) std::for_each(obstacle.ring.begin(), obstacle.ring.end(), move);
-        out_.notes.push_back(fmt::format("coordinates: the tables of earlier calls were moved from {} to {}", before, out_.city.crs));
+        for (Obstacle& obstacle : out_.city.obstacles)
+            std::for_each(obstacle.ring.begin(), obstacle.ring.end(), move);
+        out_.notes.push_back(fmt::format("coordinates: the tables of earlier calls were moved from {} to {}",
+                                         before, out_.city.crs));
         return {};
     }
 
@@ -218,7 +239,7 @@ class Gathering {
             out_.canopy_fingerprint.clear();
             return read_canopy_areas(table, out_);
         }
-        return {};  // asbuilt is compared after the references are settled
+        return {}; // asbuilt is compared after the references are settled
     }
 
     Expected<void> read_all_records() {
@@ -238,7 +259,7 @@ class Gathering {
     std::list<ReadyTable> tables_;
 };
 
-}  // namespace
+} // namespace
 
 Expected<Gathered> read_files(const GatherFiles& files, const Gathered* earlier, const Progress& progress) {
     Gathered out = earlier != nullptr ? *earlier : new_city();
@@ -249,4 +270,4 @@ Expected<Gathered> read_files(const GatherFiles& files, const Gathered* earlier,
     return out;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -20,14 +20,16 @@ bool is_outside_path(const std::string& path) {
 }
 
 Fault missing(const std::string& path, std::string found, std::string remedy) {
-    return {FaultCode::file_missing, path, 0, {}, std::move(found), "a readable file on this machine", std::move(remedy)};
+    return {FaultCode::file_missing, path, 0, {}, std::move(found), "a readable file on this machine",
+            std::move(remedy)};
 }
 
-}  // namespace
+} // namespace
 
 Expected<std::uintmax_t> local_file_size(const std::string& path, std::uintmax_t max_bytes) {
     if (is_outside_path(path))
-        return tl::unexpected(missing(path, "a network or archive path", "copy the file to this machine first"));
+        return tl::unexpected(
+            missing(path, "a network or archive path", "copy the file to this machine first"));
     std::error_code error;
     const auto status = std::filesystem::status(path, error);
     if (error || !std::filesystem::exists(status))
@@ -39,8 +41,13 @@ Expected<std::uintmax_t> local_file_size(const std::string& path, std::uintmax_t
     const std::uintmax_t size = std::filesystem::file_size(path, error);
     if (error) return tl::unexpected(missing(path, error.message(), "check the permissions"));
     if (size > max_bytes)
-        return tl::unexpected(Fault{FaultCode::file_broken, path, 0, {}, fmt::format("{} bytes", size),
-                                    fmt::format("at most {} bytes", max_bytes), "split the file"});
+        return tl::unexpected(Fault{FaultCode::file_broken,
+                                    path,
+                                    0,
+                                    {},
+                                    fmt::format("{} bytes", size),
+                                    fmt::format("at most {} bytes", max_bytes),
+                                    "split the file"});
     return size;
 }
 
@@ -66,9 +73,10 @@ Expected<std::string> content_fingerprint(const std::string& path) {
         stream.read(block.data(), static_cast<std::streamsize>(block.size()));
         XXH3_128bits_update(state.get(), block.data(), static_cast<std::size_t>(stream.gcount()));
     }
-    if (stream.bad()) return tl::unexpected(missing(path, "a file that cannot be read to its end", "check the disk"));
+    if (stream.bad())
+        return tl::unexpected(missing(path, "a file that cannot be read to its end", "check the disk"));
     const XXH128_hash_t hash = XXH3_128bits_digest(state.get());
     return fmt::format("{:016x}{:016x}", hash.high64, hash.low64);
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -1,5 +1,6 @@
 #pragma once
-// What may be opened at all: ordinary files on this machine, of a bounded size. Nothing is fetched over a network.
+// What may be opened at all: ordinary files on this machine, of a bounded size. Nothing is fetched over a
+// network.
 
 #include <cstdint>
 #include <string>
@@ -9,7 +10,8 @@
 namespace unstring {
 
 /// @return the size in bytes of an ordinary local file
-/// @fault file_missing (none there, no permission, a folder, a network or archive path), file_broken (over max_bytes)
+/// @fault file_missing (none there, no permission, a folder, a network or archive path), file_broken (over
+/// max_bytes)
 [[nodiscard]] Expected<std::uintmax_t> local_file_size(const std::string& path, std::uintmax_t max_bytes);
 
 /// The whole content. @fault as local_file_size
@@ -18,4 +20,4 @@ namespace unstring {
 /// A hash of the whole content (XXH3, 128 bits, as 32 hexadecimal digits): changes when the content does.
 [[nodiscard]] Expected<std::string> content_fingerprint(const std::string& path);
 
-}  // namespace unstring
+} // namespace unstring

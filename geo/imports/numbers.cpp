@@ -23,7 +23,8 @@ std::string_view without_sign(std::string_view text) {
     return text;
 }
 
-/// Whether one mark in a cell could set off thousands: 1-3 digits that are not a lone zero, then groups of three.
+/// Whether one mark in a cell could set off thousands: 1-3 digits that are not a lone zero, then groups of
+/// three.
 bool could_be_thousands(std::string_view cell, char mark) {
     cell = without_sign(cell);
     const auto first = cell.find(mark);
@@ -35,7 +36,8 @@ bool could_be_thousands(std::string_view cell, char mark) {
     return (cell.size() - first) % 4 == 0;
 }
 
-/// Length of a grouping sign at `at`: blank, apostrophe, no-break blank (U+00A0), narrow no-break blank (U+202F).
+/// Length of a grouping sign at `at`: blank, apostrophe, no-break blank (U+00A0), narrow no-break blank
+/// (U+202F).
 std::size_t group_sign(std::string_view text, std::size_t at) {
     if (text[at] == ' ' || text[at] == '\'') return 1;
     if (text.substr(at).starts_with("\xC2\xA0")) return 2;
@@ -44,7 +46,8 @@ std::size_t group_sign(std::string_view text, std::size_t at) {
 }
 
 /// The cell with a point as its mark and without grouping; nothing where the groups are not of three digits.
-std::optional<std::size_t> plain_form(std::string_view cell, DecimalMark mark, std::array<char, kLongestNumber>& out) {
+std::optional<std::size_t> plain_form(std::string_view cell, DecimalMark mark,
+                                      std::array<char, kLongestNumber>& out) {
     const char decimal = mark == DecimalMark::point ? '.' : ',';
     const char grouping = mark == DecimalMark::point ? ',' : '.';
     std::size_t size = 0, since_group = 0, digits = 0;
@@ -53,7 +56,8 @@ std::optional<std::size_t> plain_form(std::string_view cell, DecimalMark mark, s
     for (std::size_t at = 0; at < cell.size();) {
         const std::size_t sign = cell[at] == grouping ? 1 : group_sign(cell, at);
         if (sign > 0) {
-            if (is_past_mark || digits == 0 || !(has_groups ? since_group == 3 : digits <= 3)) return std::nullopt;
+            if (is_past_mark || digits == 0 || !(has_groups ? since_group == 3 : digits <= 3))
+                return std::nullopt;
             has_groups = true;
             since_group = 0;
             at += sign;
@@ -75,13 +79,14 @@ std::optional<std::size_t> plain_form(std::string_view cell, DecimalMark mark, s
     return size;
 }
 
-}  // namespace
+} // namespace
 
 void DecimalEvidence::add(std::string_view cell) {
     const std::size_t points = count_of(cell, '.');
     const std::size_t commas = count_of(cell, ',');
     if (points + commas == 0) return;
-    if (!std::all_of(cell.begin(), cell.end(), [](char c) { return is_digit(c) || c == '.' || c == ',' || c == '-' || c == '+'; }))
+    if (!std::all_of(cell.begin(), cell.end(),
+                     [](char c) { return is_digit(c) || c == '.' || c == ',' || c == '-' || c == '+'; }))
         return;
     if (points > 0 && commas > 0) {
         ++(cell.rfind('.') > cell.rfind(',') ? point : comma);
@@ -93,8 +98,10 @@ void DecimalEvidence::add(std::string_view cell) {
         if (is_grouped) ++(mark == ',' ? point : comma);
         return;
     }
-    if (is_grouped) ++either;
-    else ++(mark == '.' ? point : comma);
+    if (is_grouped)
+        ++either;
+    else
+        ++(mark == '.' ? point : comma);
 }
 
 void DecimalEvidence::add(const DecimalEvidence& other) {
@@ -127,8 +134,10 @@ bool is_blank_cell(std::string_view cell) {
     constexpr std::array<std::string_view, 6> kBlank = {"", "-", "n/a", "na", "null", "<null>"};
     if (cell.size() > 6) return false;
     std::array<char, 6> lower{};
-    std::transform(cell.begin(), cell.end(), lower.begin(), [](char c) { return c >= 'A' && c <= 'Z' ? static_cast<char>(c + 32) : c; });
-    return std::find(kBlank.begin(), kBlank.end(), std::string_view(lower.data(), cell.size())) != kBlank.end();
+    std::transform(cell.begin(), cell.end(), lower.begin(),
+                   [](char c) { return c >= 'A' && c <= 'Z' ? static_cast<char>(c + 32) : c; });
+    return std::find(kBlank.begin(), kBlank.end(), std::string_view(lower.data(), cell.size())) !=
+           kBlank.end();
 }
 
-}  // namespace unstring
+} // namespace unstring

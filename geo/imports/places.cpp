@@ -11,7 +11,7 @@ namespace unstring {
 namespace {
 
 constexpr double kAnyNumber = 1e9;
-constexpr double kWidestCity_deg = 3;  ///< numbers that spread further are not taken for degrees
+constexpr double kWidestCity_deg = 3; ///< numbers that spread further are not taken for degrees
 constexpr const char* kWgs84 = "EPSG:4326";
 
 double middle(std::vector<double> values) {
@@ -66,7 +66,8 @@ bool look_like_degrees(const Coordinates& all) {
     if (all.x.empty() || !spreads_like_a_city(all.x) || !spreads_like_a_city(all.y)) return false;
     const double x = std::abs(middle(all.x)), y = std::abs(middle(all.y));
     const auto is_whole = [](double value) { return value == std::floor(value); };
-    const bool all_whole = std::all_of(all.x.begin(), all.x.end(), is_whole) && std::all_of(all.y.begin(), all.y.end(), is_whole);
+    const bool all_whole = std::all_of(all.x.begin(), all.x.end(), is_whole) &&
+                           std::all_of(all.y.begin(), all.y.end(), is_whole);
     return !all_whole && ((x <= 180 && y <= 90) || (x <= 90 && y <= 180));
 }
 
@@ -78,7 +79,9 @@ Placed find_fields(const Table& table, const Columns& columns) {
     }
     const bool is_circuits = table.name == "circuits";
     const std::string x = is_circuits ? "station_e" : "easting", y = is_circuits ? "station_n" : "northing";
-    const auto has = [&](const std::string& field) { return columns.fields.contains(field) && columns.has(field); };
+    const auto has = [&](const std::string& field) {
+        return columns.fields.contains(field) && columns.has(field);
+    };
     if (has(x) && has(y)) return {Placed::Kind::columns, x, y, {}, {}, 1};
     if (has("lon") && has("lat")) return {Placed::Kind::lon_lat, "lon", "lat", {}, {}, 1};
     return placed;
@@ -96,13 +99,14 @@ Expected<double> column_factor(const Columns& columns, const Placed& placed) {
     return x.to_si / facts->unit_m;
 }
 
-}  // namespace
+} // namespace
 
 Expected<Placed> look_at_places(const Table& table, const Columns& columns, const std::string& user_crs) {
     Placed placed = find_fields(table, columns);
     if (placed.kind == Placed::Kind::none) return placed;
     if (!table.crs.empty()) {
-        if (auto done = set_crs(placed, columns, table.crs, "file"); !done) return tl::unexpected(done.error());
+        if (auto done = set_crs(placed, columns, table.crs, "file"); !done)
+            return tl::unexpected(done.error());
         return placed;
     }
     if (placed.kind == Placed::Kind::lon_lat) {
@@ -122,7 +126,8 @@ Expected<Placed> look_at_places(const Table& table, const Columns& columns, cons
     return placed;
 }
 
-Expected<void> set_crs(Placed& placed, const Columns& columns, const std::string& crs, const std::string& crs_from) {
+Expected<void> set_crs(Placed& placed, const Columns& columns, const std::string& crs,
+                       const std::string& crs_from) {
     placed.crs = crs;
     placed.crs_from = crs_from;
     if (placed.kind != Placed::Kind::columns) return {};
@@ -138,7 +143,8 @@ std::optional<Xy> middle_of(const Table& table, const Columns& columns, const Pl
     return Xy{middle(std::move(all.x)), middle(std::move(all.y))};
 }
 
-Expected<PlaceReader> PlaceReader::make(TableReader& in, const Placed& placed, const std::string& project_crs) {
+Expected<PlaceReader> PlaceReader::make(TableReader& in, const Placed& placed,
+                                        const std::string& project_crs) {
     std::optional<CrsTransform> transform;
     if (placed.kind != Placed::Kind::none && placed.crs != project_crs) {
         auto made = CrsTransform::make(placed.crs, project_crs);
@@ -160,17 +166,27 @@ std::optional<MapPoint> PlaceReader::projected(double x, double y) const {
     return (*transform_)(x, y);
 }
 
+std::optional<MapPoint> PlaceReader::projected_or_said(double x, double y) const {
+    const auto place = projected(x, y);
+    if (!place)
+        in_->add_finding("number-unreadable", fmt::format("coordinates {}, {}", x, y),
+                         fmt::format("a place in {}", placed_.crs.substr(0, 40)),
+                         "mend the coordinates; the record is without a place until then");
+    return place;
+}
+
 std::optional<MapPoint> PlaceReader::operator()() const {
     if (placed_.kind == Placed::Kind::shapes) {
         const Shape& shape = in_->table().shapes[in_->row()];
-        if (shape.kind != ShapeKind::point || shape.parts.empty() || shape.parts.front().empty()) return std::nullopt;
-        return projected(shape.parts.front().front().x, shape.parts.front().front().y);
+        if (shape.kind != ShapeKind::point || shape.parts.empty() || shape.parts.front().empty())
+            return std::nullopt;
+        return projected_or_said(shape.parts.front().front().x, shape.parts.front().front().y);
     }
     if (!x_ || !y_) return std::nullopt;
     const auto x = x_->as_given();
     const auto y = y_->as_given();
     if (!x || !y) return std::nullopt;
-    return projected(*x * placed_.to_crs_unit, *y * placed_.to_crs_unit);
+    return projected_or_said(*x * placed_.to_crs_unit, *y * placed_.to_crs_unit);
 }
 
 std::vector<std::vector<MapPoint>> PlaceReader::parts(const Shape& shape) const {
@@ -185,4 +201,4 @@ std::vector<std::vector<MapPoint>> PlaceReader::parts(const Shape& shape) const 
     return all;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -6,11 +6,15 @@ namespace {
 
 struct CircuitFields {
     explicit CircuitFields(TableReader& in)
-        : id(in, "string_id"), control_from(in, "control_from"), feeder(in, "primary_feeder"), date(in, "asfound_date"),
-          awg(in, "cable_awg"), current_a(in, "current_a", 0, 100), cable_kv(in, "cable_kv", 0, 50), length_m(in, "length_m", 0, 1e6),
-          faults_year(in, "faults_year", 0, 1000), asfound_a(in, "asfound_a", 0, 1000), asfound_v(in, "asfound_v", 0, 1e5),
-          insulation(in, "insulation_mohm", 0, 1e7), kind(in, "kind", "series or parallel", "multiple=parallel"),
-          control(in, "control", "photocell, relay or clock", "photo-cell=photocell pec=photocell timer=clock timeclock=clock time-clock=clock cascade=relay"),
+        : id(in, "string_id"), control_from(in, "control_from"), feeder(in, "primary_feeder"),
+          date(in, "asfound_date"), awg(in, "cable_awg"), current_a(in, "current_a", 0, 100),
+          cable_kv(in, "cable_kv", 0, 50), length_m(in, "length_m", 0, 1e6),
+          faults_year(in, "faults_year", 0, 1000), asfound_a(in, "asfound_a", 0, 1000),
+          asfound_v(in, "asfound_v", 0, 1e5), insulation(in, "insulation_mohm", 0, 1e7),
+          kind(in, "kind", "series or parallel", "multiple=parallel"),
+          control(in, "control", "photocell, relay or clock",
+                  "photo-cell=photocell pec=photocell timer=clock timeclock=clock time-clock=clock "
+                  "cascade=relay"),
           pulsing(in, "pulsing") {}
 
     TextField id, control_from, feeder, date, awg;
@@ -24,8 +28,8 @@ std::optional<int> awg_of(TableReader& in, const std::string& cell) {
     if (is_blank_cell(cell)) return std::nullopt;
     auto awg = read_awg(cell);
     if (!awg)
-        in.add_finding("number-unreadable", in.shown("cable_awg") + " \"" + cell.substr(0, 40) + "\"", "a wire size such as 8 or 1/0",
-                       "mend the cell; the field is left empty until then");
+        in.add_finding("number-unreadable", in.shown("cable_awg") + " \"" + cell.substr(0, 40) + "\"",
+                       "a wire size such as 8 or 1/0", "mend the cell; the field is left empty until then");
     return awg;
 }
 
@@ -51,7 +55,7 @@ SeriesString read_circuit(TableReader& in, const CircuitFields& fields, const Pl
     return string;
 }
 
-}  // namespace
+} // namespace
 
 Expected<void> read_circuits(const ReadyTable& from, Gathered& out) {
     if (auto has_id = need_column(from, "string_id"); !has_id) return has_id;
@@ -67,4 +71,4 @@ Expected<void> read_circuits(const ReadyTable& from, Gathered& out) {
     return {};
 }
 
-}  // namespace unstring
+} // namespace unstring

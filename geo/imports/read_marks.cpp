@@ -12,10 +12,11 @@ Expected<void> read_marks(const ReadyTable& from, Gathered& out) {
     const NumberField year(in, "year", 1900, 2300);
     out.marks.clear();
     read_rows(in, "pole_id", out, [&] {
-        out.marks.push_back({id(), mark().value_or(Choice::undecided), lock().value_or(false), year.whole(), who.unless_blank(), note(), in.from()});
+        out.marks.push_back({id(), mark().value_or(Choice::undecided), lock().value_or(false), year.whole(),
+                             who.unless_blank(), note(), in.from()});
         return true;
     });
     return {};
 }
 
-}  // namespace unstring
+} // namespace unstring

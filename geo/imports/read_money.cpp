@@ -13,7 +13,8 @@ constexpr double kMostMoney = 1e12;
 
 const PriceItem* find_item(const std::string& name) {
     const auto items = price_items();
-    const auto at = std::find_if(items.begin(), items.end(), [&](const PriceItem& item) { return item.item == name; });
+    const auto at =
+        std::find_if(items.begin(), items.end(), [&](const PriceItem& item) { return item.item == name; });
     return at == items.end() ? nullptr : &*at;
 }
 
@@ -21,9 +22,10 @@ bool is_length(std::string_view unit) { return unit == "ft" || unit == "m"; }
 
 struct PriceFields {
     explicit PriceFields(TableReader& in)
-        : item(in, "item"), unit(in, "unit"), note(in, "note"), date(in, "date"), low(in, "low", 0, kMostMoney),
-          base(in, "base", 0, kMostMoney), high(in, "high", 0, kMostMoney), from_year(in, "from_year", 1900, 2300),
-          to_year(in, "to_year", 1900, 2300), change(in, "change_frac_year", -0.5, 1) {}
+        : item(in, "item"), unit(in, "unit"), note(in, "note"), date(in, "date"),
+          low(in, "low", 0, kMostMoney), base(in, "base", 0, kMostMoney), high(in, "high", 0, kMostMoney),
+          from_year(in, "from_year", 1900, 2300), to_year(in, "to_year", 1900, 2300),
+          change(in, "change_frac_year", -0.5, 1) {}
     TextField item, unit, note, date;
     NumberField low, base, high, from_year, to_year, change;
 };
@@ -35,19 +37,23 @@ std::optional<PriceRow> read_price(TableReader& in, const PriceFields& fields) {
     std::replace(row.item.begin(), row.item.end(), '-', '_');
     const PriceItem* item = find_item(row.item);
     if (item == nullptr) {
-        in.add_finding("value-unknown", "item \"" + fields.item().substr(0, 40) + "\"", "an item of the price list",
+        in.add_finding("value-unknown", "item \"" + fields.item().substr(0, 40) + "\"",
+                       "an item of the price list",
                        "see the list with gather --help-prices; the row is left out");
         return std::nullopt;
     }
     row.unit = fields.unit.unless_blank();
     if (row.unit.empty()) row.unit = item->unit;
     if (row.unit != item->unit && !(is_length(row.unit) && is_length(item->unit))) {
-        in.add_finding("value-unknown", "unit \"" + row.unit.substr(0, 40) + "\"", std::string(item->unit), "give the price in that unit; the row is left out");
+        in.add_finding("value-unknown", "unit \"" + row.unit.substr(0, 40) + "\"", std::string(item->unit),
+                       "give the price in that unit; the row is left out");
         return std::nullopt;
     }
     const auto base = fields.base();
     if (!base) {
-        if (is_blank_cell(in.cell("base"))) in.add_finding("number-unreadable", "base blank", "a price", "give the price; the row is left out");
+        if (is_blank_cell(in.cell("base")))
+            in.add_finding("number-unreadable", "base blank", "a price",
+                           "give the price; the row is left out");
         return std::nullopt;
     }
     row.base = *base;
@@ -62,7 +68,7 @@ std::optional<PriceRow> read_price(TableReader& in, const PriceFields& fields) {
     return row;
 }
 
-}  // namespace
+} // namespace
 
 Expected<void> read_prices(const ReadyTable& from, Gathered& out) {
     for (const char* field : {"item", "base"})
@@ -83,8 +89,10 @@ Expected<void> read_budget(const ReadyTable& from, Gathered& out) {
     if (auto has_year = need_column(from, "year"); !has_year) return has_year;
     TableReader in(from.table, from.columns, out.findings, out.notes);
     const TextField fund(in, "fund"), wards(in, "wards"), kinds(in, "kinds"), spend_by(in, "spend_by");
-    const NumberField year(in, "year", 1900, 2300), money(in, "money", 0, kMostMoney), match(in, "match_frac", 0, 1);
-    const NumberField line_h(in, "line_h", 0, 1e7), civil_h(in, "civil_h", 0, 1e7), lighting_h(in, "lighting_h", 0, 1e7), electric_h(in, "electric_h", 0, 1e7);
+    const NumberField year(in, "year", 1900, 2300), money(in, "money", 0, kMostMoney),
+        match(in, "match_frac", 0, 1);
+    const NumberField line_h(in, "line_h", 0, 1e7), civil_h(in, "civil_h", 0, 1e7),
+        lighting_h(in, "lighting_h", 0, 1e7), electric_h(in, "electric_h", 0, 1e7);
     out.city.budget.clear();
     read_rows(in, "year", out, [&] {
         const auto calendar_year = year.whole();
@@ -108,4 +116,4 @@ Expected<void> read_budget(const ReadyTable& from, Gathered& out) {
     return {};
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -1,6 +1,6 @@
 #pragma once
-// One function a table: its rows into records. Each keeps every row that has an id, counts the rest, and leaves what is
-// wrong with the records to vet; only what could not be read is a finding here.
+// One function a table: its rows into records. Each keeps every row that has an id, counts the rest, and
+// leaves what is wrong with the records to vet; only what could not be read is a finding here.
 
 #include "geo/imports/columns.h"
 #include "geo/imports/gathered.h"
@@ -9,7 +9,7 @@
 
 namespace unstring {
 
-struct ReadyTable {  ///< a table whose columns and coordinates are understood
+struct ReadyTable { ///< a table whose columns and coordinates are understood
     Table table;
     Columns columns;
     Placed placed;
@@ -30,9 +30,10 @@ Expected<void> read_budget(const ReadyTable& from, Gathered& out);
 Expected<void> read_prices(const ReadyTable& from, Gathered& out);
 Expected<void> read_marks(const ReadyTable& from, Gathered& out);
 
-/// Walks the rows of a table: for each row with a text in its id field `take` makes and keeps a record; rows without
-/// are `row-broken`. Sets the row count.
-template <class Take> void read_rows(TableReader& in, std::string_view id_field, Gathered& out, const Take& take) {
+/// Walks the rows of a table: for each row with a text in its id field `take` makes and keeps a record; rows
+/// without are `row-broken`. Sets the row count.
+template <class Take>
+void read_rows(TableReader& in, std::string_view id_field, Gathered& out, const Take& take) {
     const Table& table = in.table();
     RowCount& count = out.rows[table.name];
     count = {table.read, 0, 0};
@@ -41,7 +42,8 @@ template <class Take> void read_rows(TableReader& in, std::string_view id_field,
         in.set_record({});
         const std::string_view id = id_field.empty() ? std::string_view("row") : in.cell(id_field);
         if (id.empty()) {
-            in.add_finding("row-broken", in.shown(id_field) + " blank", "an id", "give the record its id; the row is left out until then");
+            in.add_finding("row-broken", in.shown(id_field) + " blank", "an id",
+                           "give the record its id; the row is left out until then");
             continue;
         }
         if (!id_field.empty()) in.set_record(id);
@@ -53,4 +55,4 @@ template <class Take> void read_rows(TableReader& in, std::string_view id_field,
 /// @fault column_missing naming the columns that there are
 [[nodiscard]] Expected<void> need_column(const ReadyTable& from, std::string_view field);
 
-}  // namespace unstring
+} // namespace unstring

@@ -9,8 +9,11 @@ Expected<void> read_services(const ReadyTable& from, Gathered& out) {
     const auto place_of = PlaceReader::make(in, from.placed, out.city.crs);
     if (!place_of) return tl::unexpected(place_of.error());
     const TextField id(in, "service_id"), pole(in, "pole_id");
-    const WordField<ServiceKind> kind(in, "kind", "service, circuit-end or candidate", "existing=service end=circuit-end circuitend=circuit-end proposed=candidate");
-    const NumberField volts(in, "volts", 1, 1000), free_kva(in, "free_kva", 0, 1e5), lead_weeks(in, "lead_weeks", 0, 1000);
+    const WordField<ServiceKind> kind(
+        in, "kind", "service, circuit-end or candidate",
+        "existing=service end=circuit-end circuitend=circuit-end proposed=candidate");
+    const NumberField volts(in, "volts", 1, 1000), free_kva(in, "free_kva", 0, 1e5),
+        lead_weeks(in, "lead_weeks", 0, 1000);
     out.city.services.clear();
     read_rows(in, "service_id", out, [&] {
         ServicePoint service;
@@ -36,7 +39,8 @@ Expected<void> read_cutbacks(const ReadyTable& from, Gathered& out) {
         if (auto has = need_column(from, field); !has) return has;
     TableReader in(from.table, from.columns, out.findings, out.notes);
     const TextField string(in, "string_id"), pole_a(in, "pole_a"), pole_b(in, "pole_b");
-    const WordField<CutBackKind> kind(in, "kind", "pullbox, trench or crossing", "pull-box=pullbox box=pullbox bore=crossing");
+    const WordField<CutBackKind> kind(in, "kind", "pullbox, trench or crossing",
+                                      "pull-box=pullbox box=pullbox bore=crossing");
     const YesNoField confirmed(in, "confirmed");
     const NumberField new_cable_m(in, "new_cable_m", 0, 1e5);
     out.city.cutbacks.clear();
@@ -55,4 +59,4 @@ Expected<void> read_cutbacks(const ReadyTable& from, Gathered& out) {
     return {};
 }
 
-}  // namespace unstring
+} // namespace unstring

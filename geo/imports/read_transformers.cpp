@@ -9,13 +9,16 @@ namespace {
 
 struct UnitFields {
     explicit UnitFields(TableReader& in)
-        : id(in, "transformer_id"), taps(in, "taps"), made(in, "made"), tested(in, "tested"), string(in, "string_id"),
-          rated_kw(in, "rated_kw", 0.1, 1000), output_a(in, "output_a", 0.1, 100), min_frac(in, "min_frac", 0, 1),
-          open_v(in, "open_v", 0, 1e5), primary_v(in, "primary_v", 0, 1e5),
-          build(in, "build", "moving-coil or static", "movingcoil=moving-coil mc=moving-coil solid-state=static resonant=static"),
-          mount(in, "mount", "pole, pad or vault", "polemount=pole pole-mount=pole padmount=pad pad-mount=pad underground=vault"),
+        : id(in, "transformer_id"), taps(in, "taps"), made(in, "made"), tested(in, "tested"),
+          string(in, "string_id"), rated_kw(in, "rated_kw", 0.1, 1000), output_a(in, "output_a", 0.1, 100),
+          min_frac(in, "min_frac", 0, 1), open_v(in, "open_v", 0, 1e5), primary_v(in, "primary_v", 0, 1e5),
+          build(in, "build", "moving-coil or static",
+                "movingcoil=moving-coil mc=moving-coil solid-state=static resonant=static"),
+          mount(in, "mount", "pole, pad or vault",
+                "polemount=pole pole-mount=pole padmount=pad pad-mount=pad underground=vault"),
           oil(in, "oil", "none, mineral, pcb or unknown", "dry=none askarel=pcb"),
-          state(in, "state", "in-service, spare or scrapped", "inservice=in-service active=in-service in-use=in-service scrap=scrapped") {}
+          state(in, "state", "in-service, spare or scrapped",
+                "inservice=in-service active=in-service in-use=in-service scrap=scrapped") {}
 
     TextField id, taps, made, tested, string;
     NumberField rated_kw, output_a, min_frac, open_v, primary_v;
@@ -39,7 +42,8 @@ std::optional<std::vector<double>> taps_of(std::string cell) {
         at = end + 1;
         if (word.empty() || word == "%") continue;
         const std::string_view digits = std::string_view(word).substr(0, word.find('%'));
-        const auto value = read_number(digits, digits.find(',') == std::string_view::npos ? DecimalMark::point : DecimalMark::comma);
+        const auto value = read_number(
+            digits, digits.find(',') == std::string_view::npos ? DecimalMark::point : DecimalMark::comma);
         if (!value) return std::nullopt;
         const double tap = *value > 1 ? *value / 100 : *value;
         if (tap < kSmallestTap || tap > 1) return std::nullopt;
@@ -54,8 +58,8 @@ std::optional<std::vector<double>> taps_of(std::string cell) {
 std::vector<double> read_taps(TableReader& in, const std::string& cell) {
     if (is_blank_cell(cell)) return {1};
     if (auto taps = taps_of(cell)) return *taps;
-    in.add_finding("number-unreadable", in.shown("taps") + " \"" + cell.substr(0, 40) + "\"", "fractions such as 1;.9;.75",
-                   "mend the cell; only the full tap is taken until then");
+    in.add_finding("number-unreadable", in.shown("taps") + " \"" + cell.substr(0, 40) + "\"",
+                   "fractions such as 1;.9;.75", "mend the cell; only the full tap is taken until then");
     return {1};
 }
 
@@ -83,10 +87,11 @@ Transformer read_unit(TableReader& in, const UnitFields& fields) {
 /// A second row of one unit that names another string: the unit has two loops.
 bool is_second_loop(const Transformer& first, const Transformer& row) {
     return first.id == row.id && first.strings_given.size() == 1 && row.strings_given.size() == 1 &&
-           first.strings_given != row.strings_given && first.rated_kw == row.rated_kw && first.output_a == row.output_a;
+           first.strings_given != row.strings_given && first.rated_kw == row.rated_kw &&
+           first.output_a == row.output_a;
 }
 
-}  // namespace
+} // namespace
 
 Expected<void> read_transformers(const ReadyTable& from, Gathered& out) {
     if (auto has_id = need_column(from, "transformer_id"); !has_id) return has_id;
@@ -96,12 +101,15 @@ Expected<void> read_transformers(const ReadyTable& from, Gathered& out) {
     units.clear();
     read_rows(in, "transformer_id", out, [&] {
         Transformer row = read_unit(in, fields);
-        const auto first = std::find_if(units.begin(), units.end(), [&](const Transformer& unit) { return is_second_loop(unit, row); });
-        if (first != units.end()) first->strings_given.push_back(row.strings_given.front());
-        else units.push_back(std::move(row));
+        const auto first = std::find_if(units.begin(), units.end(),
+                                        [&](const Transformer& unit) { return is_second_loop(unit, row); });
+        if (first != units.end())
+            first->strings_given.push_back(row.strings_given.front());
+        else
+            units.push_back(std::move(row));
         return true;
     });
     return {};
 }
 
-}  // namespace unstring
+} // namespace unstring

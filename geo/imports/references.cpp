@@ -16,7 +16,8 @@ std::string alike_form(std::string_view name) {
         if (c >= 'a' && c <= 'z') c = static_cast<char>(c - 32);
         const bool is_kept = is_digit(c) || (c >= 'A' && c <= 'Z') || static_cast<unsigned char>(c) >= 0x80U;
         const bool begins_number = out.empty() || !is_digit(out.back());
-        const bool is_leading_zero = c == '0' && begins_number && i + 1 < name.size() && is_digit(name[i + 1]);
+        const bool is_leading_zero =
+            c == '0' && begins_number && i + 1 < name.size() && is_digit(name[i + 1]);
         if (is_kept && !is_leading_zero) out += c;
     }
     return out;
@@ -37,24 +38,27 @@ std::string only_number(std::string_view name) {
 void add_once(std::unordered_map<std::string, StringIx>& names, std::string name, StringIx string) {
     if (name.empty()) return;
     const auto [at, is_new] = names.emplace(std::move(name), string);
-    if (!is_new && at->second != string) at->second = StringIx();  // two that fit: neither
+    if (!is_new && at->second != string) at->second = StringIx(); // two that fit: neither
 }
 
 class Resolver {
-  public:
+public:
     explicit Resolver(Gathered& out) : out_(out), names_(out.city) {
         for (std::size_t i = 0; i < out.city.poles.size(); ++i) poles_.emplace(out.city.poles[i].id, i);
     }
 
     void poles() {
-        for (Pole& pole : out_.city.poles) pole.string = string_of(pole.string_given, pole.id, pole.from, "poles");
+        for (Pole& pole : out_.city.poles)
+            pole.string = string_of(pole.string_given, pole.id, pole.from, "poles");
     }
 
     void transformers() {
         for (Transformer& unit : out_.city.transformers) {
             unit.strings.clear();
             for (const std::string& given : unit.strings_given)
-                if (const StringIx string = string_of(given, unit.id, unit.from, "transformers"); string.is_valid()) unit.strings.push_back(string);
+                if (const StringIx string = string_of(given, unit.id, unit.from, "transformers");
+                    string.is_valid())
+                    unit.strings.push_back(string);
         }
     }
 
@@ -62,7 +66,8 @@ class Resolver {
         for (CutBack& cutback : out_.city.cutbacks) {
             cutback.string = string_of(cutback.string_given, cutback.string_given, cutback.from, "cutbacks");
             for (const std::string& end : {cutback.pole_a, cutback.pole_b})
-                if (end != "out" && end != "return" && !has_pole(end)) say_pole_unknown(end, cutback.from, cutback.string_given, "cutbacks");
+                if (end != "out" && end != "return" && !has_pole(end))
+                    say_pole_unknown(end, cutback.from, cutback.string_given, "cutbacks");
         }
     }
 
@@ -93,22 +98,26 @@ class Resolver {
         std::erase_if(out_.marks, is_lost);
     }
 
-  private:
+private:
     [[nodiscard]] bool has_pole(const std::string& id) const { return poles_.contains(id); }
 
-    StringIx string_of(const std::string& given, const std::string& record, const RowRef& from, const char* table) {
+    StringIx string_of(const std::string& given, const std::string& record, const RowRef& from,
+                       const char* table) {
         if (given.empty()) return {};
         const StringIx string = names_.find(given);
         if (!string.is_valid()) return string;
         const std::string& id = out_.city.strings[string.place()].id;
         if (id != given)
-            out_.findings.push_back(make_finding("string-name-variant", from.file, from.row, record, fmt::format("string \"{}\"", given),
-                                                 fmt::format("\"{}\"", id), fmt::format("taken as {}; write it alike", id), table));
+            out_.findings.push_back(make_finding(
+                "string-name-variant", from.file, from.row, record, fmt::format("string \"{}\"", given),
+                fmt::format("\"{}\"", id), fmt::format("taken as {}; write it alike", id), table));
         return string;
     }
 
-    void say_pole_unknown(const std::string& pole, const RowRef& from, const std::string& record, const char* table) {
-        out_.findings.push_back(make_finding("pole-unknown", from.file, from.row, record, pole.empty() ? "no pole" : fmt::format("pole \"{}\"", pole),
+    void say_pole_unknown(const std::string& pole, const RowRef& from, const std::string& record,
+                          const char* table) {
+        out_.findings.push_back(make_finding("pole-unknown", from.file, from.row, record,
+                                             pole.empty() ? "no pole" : fmt::format("pole \"{}\"", pole),
                                              "a pole of the poles file", "mend the id", table));
     }
 
@@ -117,7 +126,7 @@ class Resolver {
     std::unordered_map<std::string, std::size_t> poles_;
 };
 
-}  // namespace
+} // namespace
 
 StringNames::StringNames(const City& city) {
     for (std::size_t i = 0; i < city.strings.size(); ++i) {
@@ -142,7 +151,8 @@ StringIx StringNames::find(std::string_view given) const {
 
 void resolve_references(Gathered& out) {
     std::erase_if(out.findings, [](const Finding& finding) {
-        return finding.code == "string-name-variant" || (finding.code == "pole-unknown" && finding.table != "asbuilt");
+        return finding.code == "string-name-variant" ||
+               (finding.code == "pole-unknown" && finding.table != "asbuilt");
     });
     Resolver resolver(out);
     resolver.poles();
@@ -152,4 +162,4 @@ void resolve_references(Gathered& out) {
     resolver.marks();
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -1,6 +1,7 @@
 #pragma once
-// Fields of a record out of the cells of a row. What cannot be read is a finding with row and column, and the field is
-// left empty. One reader serves one table; a field is bound to its column once, then asked row by row.
+// Fields of a record out of the cells of a row. What cannot be read is a finding with row and column, and the
+// field is left empty. One reader serves one table; a field is bound to its column once, then asked row by
+// row.
 
 #include <optional>
 #include <string>
@@ -16,10 +17,11 @@
 namespace unstring {
 
 class TableReader {
-  public:
-    /// Says in `notes` which columns were matched by guess and which are not used, and gives a `unit-guessed` notice for
-    /// each column whose unit was told by its name alone. All four must outlive the reader.
-    TableReader(const Table& table, const Columns& columns, std::vector<Finding>& findings, std::vector<std::string>& notes);
+public:
+    /// Says in `notes` which columns were matched by guess and which are not used, and gives a `unit-guessed`
+    /// notice for each column whose unit was told by its name alone. All four must outlive the reader.
+    TableReader(const Table& table, const Columns& columns, std::vector<Finding>& findings,
+                std::vector<std::string>& notes);
 
     void go_to(std::size_t row) { row_ = row; }
     [[nodiscard]] std::size_t row() const { return row_; }
@@ -40,30 +42,32 @@ class TableReader {
     /// The column's own name, for findings.
     [[nodiscard]] std::string shown(std::string_view field) const;
 
-  private:
+private:
     const Table& table_;
     const Columns& columns_;
     std::vector<Finding>& findings_;
     std::vector<std::string>& notes_;
     std::size_t row_ = 0;
     std::string record_;
-    DecimalEvidence evidence_;  ///< of all columns of numbers
+    DecimalEvidence evidence_; ///< of all columns of numbers
 };
 
 class TextField {
-  public:
+public:
     TextField(const TableReader& in, std::string_view field) : in_(in), column_(in.columns().at(field)) {}
     [[nodiscard]] std::string operator()() const { return std::string(in_.cell(column_)); }
     /// The same with "n/a", "null" and their like as nothing.
-    [[nodiscard]] std::string unless_blank() const { return is_blank_cell(in_.cell(column_)) ? std::string() : (*this)(); }
+    [[nodiscard]] std::string unless_blank() const {
+        return is_blank_cell(in_.cell(column_)) ? std::string() : (*this)();
+    }
 
-  private:
+private:
     const TableReader& in_;
     const FieldColumn& column_;
 };
 
 class NumberField {
-  public:
+public:
     /// Numbers outside low..high are not taken: a finding, like letters. Bounds are in SI, after the unit.
     NumberField(TableReader& in, std::string_view field, double low, double high);
     [[nodiscard]] std::optional<double> operator()() const;
@@ -73,7 +77,7 @@ class NumberField {
     [[nodiscard]] bool is_there() const { return column_.column.has_value(); }
     [[nodiscard]] const FieldColumn& column() const { return column_; }
 
-  private:
+private:
     [[nodiscard]] std::optional<double> read(double factor) const;
     TableReader& in_;
     std::string field_;
@@ -82,14 +86,16 @@ class NumberField {
     double low_, high_;
 };
 
-/// A word of a closed list, without regard to case, blanks and underscores; other words are `value-unknown` findings.
-template <class Value> class WordField {
-  public:
+/// A word of a closed list, without regard to case, blanks and underscores; other words are `value-unknown`
+/// findings.
+template <class Value>
+class WordField {
+public:
     WordField(TableReader& in, std::string_view field, std::string_view wanted, std::string_view also = {})
         : in_(in), field_(field), column_(in.columns().at(field)), wanted_(wanted), also_(also) {}
     [[nodiscard]] std::optional<Value> operator()() const;
 
-  private:
+private:
     TableReader& in_;
     std::string field_;
     const FieldColumn& column_;
@@ -97,11 +103,12 @@ template <class Value> class WordField {
 };
 
 class YesNoField {
-  public:
-    YesNoField(TableReader& in, std::string_view field) : in_(in), field_(field), column_(in.columns().at(field)) {}
+public:
+    YesNoField(TableReader& in, std::string_view field)
+        : in_(in), field_(field), column_(in.columns().at(field)) {}
     [[nodiscard]] std::optional<bool> operator()() const;
 
-  private:
+private:
     TableReader& in_;
     std::string field_;
     const FieldColumn& column_;
@@ -109,16 +116,18 @@ class YesNoField {
 
 /// Lower case, blanks and underscores as hyphens: "Direct Buried" is "direct-buried".
 [[nodiscard]] std::string list_word(std::string_view cell);
-/// The list word that another word stands for, by "word=listed word=listed"; the word itself where there is none.
+/// The list word that another word stands for, by "word=listed word=listed"; the word itself where there is
+/// none.
 [[nodiscard]] std::string meant_word(std::string word, std::string_view also);
 
-template <class Value> std::optional<Value> WordField<Value>::operator()() const {
+template <class Value>
+std::optional<Value> WordField<Value>::operator()() const {
     const std::string_view cell = in_.cell(column_);
     if (is_blank_cell(cell)) return std::nullopt;
     auto value = read_word<Value>(meant_word(list_word(cell), also_));
     if (!value)
-        in_.add_finding("value-unknown", in_.shown(field_) + " \"" + std::string(cell.substr(0, 40)) + "\"", std::string(wanted_),
-                        "mend the cell; the field is taken as unknown until then");
+        in_.add_finding("value-unknown", in_.shown(field_) + " \"" + std::string(cell.substr(0, 40)) + "\"",
+                        std::string(wanted_), "mend the cell; the field is taken as unknown until then");
     return value;
 }
 
@@ -128,4 +137,4 @@ template <class Value> std::optional<Value> WordField<Value>::operator()() const
 /// "8", "#8", "AWG 8" are 8; "1/0" is 0, "2/0" -1, "4/0" -3. Nothing for anything else.
 [[nodiscard]] std::optional<int> read_awg(std::string_view cell);
 
-}  // namespace unstring
+} // namespace unstring

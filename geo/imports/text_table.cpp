@@ -17,12 +17,12 @@ constexpr std::size_t kMaxCell = 64 * 1024;
 constexpr std::size_t kMaxRows = 5'000'000;
 constexpr std::size_t kMaxColumns = 2'000;
 constexpr std::uintmax_t kMaxFile = 2ULL << 30U;
-constexpr std::size_t kRowsToJudge = 500;  ///< records that the delimiter is judged by
+constexpr std::size_t kRowsToJudge = 500; ///< records that the delimiter is judged by
 
 struct Record {
     std::vector<std::string_view> cells;
-    std::size_t next = 0;  ///< where the next record begins
-    long lines = 1;        ///< physical lines that this one takes
+    std::size_t next = 0; ///< where the next record begins
+    long lines = 1;       ///< physical lines that this one takes
     const char* broken = nullptr;
 };
 
@@ -34,8 +34,10 @@ std::string_view trimmed(std::string_view text) {
 
 /// Steps over one line end (LF, CRLF or a lone CR).
 std::size_t after_line_end(std::string_view text, std::size_t at) {
-    if (at < text.size() && text[at] == '\r') ++at;
-    else if (at < text.size() && text[at] == '\n') return at + 1;
+    if (at < text.size() && text[at] == '\r')
+        ++at;
+    else if (at < text.size() && text[at] == '\n')
+        return at + 1;
     if (at > 0 && at < text.size() && text[at - 1] == '\r' && text[at] == '\n') ++at;
     return at;
 }
@@ -47,8 +49,9 @@ std::size_t line_end(std::string_view text, std::size_t at) {
 
 /// Reads records out of one buffer; doubled quotes are folded in place, so that every cell is a view into it.
 class RecordReader {
-  public:
-    RecordReader(char* text, std::size_t size, char delimiter) : text_(text), view_(text, size), delimiter_(delimiter) {}
+public:
+    RecordReader(char* text, std::size_t size, char delimiter)
+        : text_(text), view_(text, size), delimiter_(delimiter) {}
 
     void read(std::size_t at, Record& record) {
         record.cells.clear();
@@ -74,7 +77,7 @@ class RecordReader {
         record.next = after_line_end(view_, at);
     }
 
-  private:
+private:
     [[nodiscard]] bool is_quote_at(std::size_t at) const {
         while (at < view_.size() && view_[at] == ' ') ++at;
         return at < view_.size() && view_[at] == '"';
@@ -82,7 +85,8 @@ class RecordReader {
 
     std::size_t plain_cell(std::size_t at, Record& record) const {
         std::size_t end = at;
-        while (end < view_.size() && view_[end] != delimiter_ && view_[end] != '\n' && view_[end] != '\r') ++end;
+        while (end < view_.size() && view_[end] != delimiter_ && view_[end] != '\n' && view_[end] != '\r')
+            ++end;
         if (end - at > kMaxCell) record.broken = "a cell of more than 64 KiB";
         record.cells.push_back(trimmed(view_.substr(at, end - at)));
         return end;
@@ -96,20 +100,23 @@ class RecordReader {
         std::size_t close = at;
         while (true) {
             if (close >= view_.size() || close - begin > kMaxCell) {
-                record.broken = close >= view_.size() ? "a quote that is not closed" : "a cell of more than 64 KiB";
+                record.broken =
+                    close >= view_.size() ? "a quote that is not closed" : "a cell of more than 64 KiB";
                 return close;
             }
             if (view_[close] == '"') {
                 if (close + 1 >= view_.size() || view_[close + 1] != '"') break;
                 ++close;
-            } else if (view_[close] == '\n' || (view_[close] == '\r' && (close + 1 >= view_.size() || view_[close + 1] != '\n'))) {
+            } else if (view_[close] == '\n' ||
+                       (view_[close] == '\r' && (close + 1 >= view_.size() || view_[close + 1] != '\n'))) {
                 ++lines;
             }
             ++close;
         }
         std::size_t after = close + 1;
         while (after < view_.size() && view_[after] == ' ') ++after;
-        if (after < view_.size() && view_[after] != delimiter_ && view_[after] != '\n' && view_[after] != '\r') {
+        if (after < view_.size() && view_[after] != delimiter_ && view_[after] != '\n' &&
+            view_[after] != '\r') {
             record.broken = "text after a closing quote";
             return after;
         }
@@ -122,7 +129,7 @@ class RecordReader {
         std::size_t to = begin;
         for (std::size_t from = begin; from < end; ++from) {
             text_[to++] = text_[from];
-            if (text_[from] == '"') ++from;  // the second of a doubled quote
+            if (text_[from] == '"') ++from; // the second of a doubled quote
         }
         // What is left over becomes blanks inside the quotes and is never looked at again.
         return trimmed({text_ + begin, to - begin});
@@ -134,13 +141,13 @@ class RecordReader {
 };
 
 bool is_blank(const Record& record) {
-    return record.broken == nullptr &&
-           std::all_of(record.cells.begin(), record.cells.end(), [](std::string_view cell) { return cell.empty(); });
+    return record.broken == nullptr && std::all_of(record.cells.begin(), record.cells.end(),
+                                                   [](std::string_view cell) { return cell.empty(); });
 }
 
 struct Score {
-    std::size_t alike = 0;    ///< records with as many cells as the first
-    std::size_t columns = 1;  ///< of the first
+    std::size_t alike = 0;   ///< records with as many cells as the first
+    std::size_t columns = 1; ///< of the first
 };
 
 Score score_of(std::string sample, char delimiter) {
@@ -158,7 +165,8 @@ Score score_of(std::string sample, char delimiter) {
     return score;
 }
 
-/// The delimiter by which most rows have the header's number of cells; among equals the one that makes more columns.
+/// The delimiter by which most rows have the header's number of cells; among equals the one that makes more
+/// columns.
 char find_delimiter(std::string_view text) {
     std::string sample(text.substr(0, 1U << 20U));
     char best = ',';
@@ -178,13 +186,16 @@ Fault broken(const std::string& file, std::string found, std::string wanted, std
 }
 
 void set_columns(Table& table, Record& header, std::vector<Finding>& findings, long line) {
-    while (header.cells.size() > 1 && header.cells.back().empty()) header.cells.pop_back();  // a delimiter at the line's end
+    while (header.cells.size() > 1 && header.cells.back().empty())
+        header.cells.pop_back(); // a delimiter at the line's end
     for (const std::string_view cell : header.cells) {
         std::string name(cell);
-        const bool is_twice = !name.empty() && std::find(table.columns.begin(), table.columns.end(), name) != table.columns.end();
+        const bool is_twice = !name.empty() && std::find(table.columns.begin(), table.columns.end(), name) !=
+                                                   table.columns.end();
         if (is_twice)
-            findings.push_back(make_finding("column-twice", table.file, line, name, fmt::format("column \"{}\" twice", name),
-                                            "each column once", "the first one is read; rename the other", table.name));
+            findings.push_back(make_finding("column-twice", table.file, line, name,
+                                            fmt::format("column \"{}\" twice", name), "each column once",
+                                            "the first one is read; rename the other", table.name));
         table.columns.push_back(is_twice ? std::string() : std::move(name));
     }
 }
@@ -196,12 +207,14 @@ bool fits(Record& record, std::size_t columns) {
 }
 
 void add_broken(Table& table, const Record& record, long line, std::vector<Finding>& findings) {
-    const std::string found = record.broken != nullptr ? record.broken : fmt::format("{} cells", record.cells.size());
-    findings.push_back(make_finding("row-broken", table.file, line, {}, found, fmt::format("{} cells", table.columns.size()),
+    const std::string found =
+        record.broken != nullptr ? record.broken : fmt::format("{} cells", record.cells.size());
+    findings.push_back(make_finding("row-broken", table.file, line, {}, found,
+                                    fmt::format("{} cells", table.columns.size()),
                                     "mend the row; it is left out until then", table.name));
 }
 
-}  // namespace
+} // namespace
 
 Expected<Table> parse_text_table(std::string utf8, const std::string& file, const std::string& name,
                                  std::vector<Finding>& findings) {
@@ -217,15 +230,19 @@ Expected<Table> parse_text_table(std::string utf8, const std::string& file, cons
         reader.read(at, record);
         if (is_blank(record)) continue;
         if (record.cells.size() > kMaxColumns)
-            return tl::unexpected(broken(file, fmt::format("more than {} columns in line {}", kMaxColumns, line),
-                                         "a table of poles, circuits or prices", "check the file and its delimiter"));
+            return tl::unexpected(
+                broken(file, fmt::format("more than {} columns in line {}", kMaxColumns, line),
+                       "a table of poles, circuits or prices", "check the file and its delimiter"));
         if (table.columns.empty()) {
-            if (record.broken != nullptr) return tl::unexpected(broken(file, record.broken, "column names in the first row", "mend the first row"));
+            if (record.broken != nullptr)
+                return tl::unexpected(
+                    broken(file, record.broken, "column names in the first row", "mend the first row"));
             set_columns(table, record, findings, line);
             continue;
         }
         if (static_cast<std::size_t>(++table.read) > kMaxRows)
-            return tl::unexpected(broken(file, fmt::format("more than {} rows", kMaxRows), "fewer rows", "split the file"));
+            return tl::unexpected(
+                broken(file, fmt::format("more than {} rows", kMaxRows), "fewer rows", "split the file"));
         if (record.broken != nullptr || !fits(record, table.columns.size())) {
             add_broken(table, record, line, findings);
             continue;
@@ -234,7 +251,8 @@ Expected<Table> parse_text_table(std::string utf8, const std::string& file, cons
         table.lines.push_back(line);
     }
     if (table.columns.empty())
-        return tl::unexpected(broken(file, "an empty file", "column names in the first row", "export the table again"));
+        return tl::unexpected(
+            broken(file, "an empty file", "column names in the first row", "export the table again"));
     return table;
 }
 
@@ -245,9 +263,10 @@ Expected<Table> read_text_table(const std::string& path, const std::string& name
     auto text = decode_text(std::move(*bytes), encoding, path);
     if (!text) return tl::unexpected(text.error());
     if (text->is_guessed)
-        findings.push_back(make_finding("encoding-guessed", path, text->sample_line, {}, fmt::format("read as {}: \"{}\"", text->encoding, text->sample),
+        findings.push_back(make_finding("encoding-guessed", path, text->sample_line, {},
+                                        fmt::format("read as {}: \"{}\"", text->encoding, text->sample),
                                         "UTF-8", "look at the sample; give --encoding if it is wrong", name));
     return parse_text_table(std::move(text->utf8), path, name, findings);
 }
 
-}  // namespace unstring
+} // namespace unstring

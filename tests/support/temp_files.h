@@ -11,10 +11,11 @@
 namespace unstring::test {
 
 class TempFolder {
-  public:
+public:
     TempFolder() {
         static int number = 0;
-        path_ = std::filesystem::temp_directory_path() / ("unstring-test-" + std::to_string(::getpid()) + "-" + std::to_string(++number));
+        path_ = std::filesystem::temp_directory_path() /
+                ("unstring-test-" + std::to_string(::getpid()) + "-" + std::to_string(++number));
         std::filesystem::create_directories(path_);
     }
     ~TempFolder() {
@@ -31,8 +32,8 @@ class TempFolder {
     }
     [[nodiscard]] std::string path(const std::string& name) const { return (path_ / name).string(); }
 
-  private:
+private:
     std::filesystem::path path_;
 };
 
-}  // namespace unstring::test
+} // namespace unstring::test

@@ -13,8 +13,8 @@ TEST_CASE("crs: a place gets the UTM zone that it lies in") {
     CHECK(fitting_utm({179.99, -1}) == "EPSG:32760");
     CHECK(fitting_utm({180, 1}) == "EPSG:32601");
     CHECK(fitting_utm({-180, 1}) == "EPSG:32601");
-    CHECK(fitting_utm({5.3, 60.4}) == "EPSG:32632");   // south-west Norway lies in a widened zone
-    CHECK(fitting_utm({15.6, 78.2}) == "EPSG:32633");  // Svalbard
+    CHECK(fitting_utm({5.3, 60.4}) == "EPSG:32632");  // south-west Norway lies in a widened zone
+    CHECK(fitting_utm({15.6, 78.2}) == "EPSG:32633"); // Svalbard
 }
 
 TEST_CASE("crs: a system in feet gives way to the same projection in metres") {
@@ -37,7 +37,8 @@ TEST_CASE("crs: systems in metres and true to scale stay, degrees and pseudo-Mer
 }
 
 TEST_CASE("crs: what is no code and no WKT never reaches the library") {
-    for (const char* bad : {"", "EPSG:0", "EPSG:999999999", "nonsense", "+proj=utm +zone=9", "+init=file:/etc/passwd", "/etc/hostname", "EPSG:5773"}) {
+    for (const char* bad : {"", "EPSG:0", "EPSG:999999999", "nonsense", "+proj=utm +zone=9",
+                            "+init=file:/etc/passwd", "/etc/hostname", "EPSG:5773"}) {
         INFO(bad);
         const auto facts = crs_facts(bad);
         REQUIRE_FALSE(facts);

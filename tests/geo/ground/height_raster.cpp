@@ -12,13 +12,14 @@ using unstring::test::TempFolder;
 
 namespace {
 
-// Four columns, three rows, cells of 2 m; south-west corner at 400000, 3760000. Heights 1..12 from the north-west,
-// one of them nodata.
+// Four columns, three rows, cells of 2 m; south-west corner at 400000, 3760000. Heights 1..12 from the
+// north-west, one of them nodata.
 std::string grid(const TempFolder& folder) {
-    return folder.write("canopy.asc", "ncols 4\nnrows 3\nxllcorner 400000\nyllcorner 3760000\ncellsize 2\nNODATA_value -9999\n1 2 3 4\n5 -9999 7 8\n9 10 11 12\n");
+    return folder.write("canopy.asc", "ncols 4\nnrows 3\nxllcorner 400000\nyllcorner 3760000\ncellsize "
+                                      "2\nNODATA_value -9999\n1 2 3 4\n5 -9999 7 8\n9 10 11 12\n");
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("height raster: a window holds the cells whose centres lie within reach, north row first") {
     const TempFolder folder;
@@ -56,8 +57,10 @@ TEST_CASE("height raster: cells beyond the edge are not a number, far away ones 
 TEST_CASE("height raster: files that are none, and windows without bound, are refused") {
     const TempFolder folder;
     CHECK(open_height_raster(folder.path("none.tif")).error().code == FaultCode::file_missing);
-    CHECK(open_height_raster("/vsicurl/http://example.invalid/a.tif").error().code == FaultCode::file_missing);
-    CHECK(open_height_raster(folder.write("text.tif", "not a raster")).error().code == FaultCode::file_broken);
+    CHECK(open_height_raster("/vsicurl/http://example.invalid/a.tif").error().code ==
+          FaultCode::file_missing);
+    CHECK(open_height_raster(folder.write("text.tif", "not a raster")).error().code ==
+          FaultCode::file_broken);
     CHECK(open_height_raster(folder.path("")).error().code == FaultCode::file_missing);
     auto raster = open_height_raster(grid(folder));
     CHECK((*raster)->window({400000, 3760006}, 1e7).error().code == FaultCode::bad_usage);

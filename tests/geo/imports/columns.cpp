@@ -25,10 +25,12 @@ std::string column_of(const Table& table, const Columns& columns, const char* fi
     return at ? table.columns[*at] : std::string();
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("columns: the words of the field are matched without case, blanks, strokes and units") {
-    const Table table = table_of("poles", {"PoleNum", "CKT_ID", "Seq No.", "X_ft", "Y_ft", "LAMP WATTS", "Lamp Type", "Mounting Height (ft)", "Street Name", "EPA_sqft", "REMARKS", "FOO"});
+    const Table table =
+        table_of("poles", {"PoleNum", "CKT_ID", "Seq No.", "X_ft", "Y_ft", "LAMP WATTS", "Lamp Type",
+                           "Mounting Height (ft)", "Street Name", "EPA_sqft", "REMARKS", "FOO"});
     const auto columns = match_columns(table, {});
     REQUIRE(columns);
     CHECK(column_of(table, *columns, "pole_id") == "PoleNum");
@@ -57,19 +59,22 @@ TEST_CASE("columns: our own names are taken before any guess") {
 }
 
 TEST_CASE("columns: every field's own name is found as its own column, in every table") {
-    for (const char* name : {"poles", "circuits", "transformers", "cutbacks", "services", "streets", "canopy", "obstacles", "climate", "budget", "prices", "marks", "asbuilt"}) {
+    for (const char* name : {"poles", "circuits", "transformers", "cutbacks", "services", "streets", "canopy",
+                             "obstacles", "climate", "budget", "prices", "marks", "asbuilt"}) {
         std::vector<std::string> names;
         for (const Field& field : fields_of(name)) names.emplace_back(field.name);
         const Table table = table_of(name, names);
         const auto columns = match_columns(table, {});
         REQUIRE(columns);
-        for (const Field& field : fields_of(name)) CHECK(column_of(table, *columns, std::string(field.name).c_str()) == field.name);
+        for (const Field& field : fields_of(name))
+            CHECK(column_of(table, *columns, std::string(field.name).c_str()) == field.name);
     }
 }
 
 TEST_CASE("columns: the map goes before names and guesses, and null leaves a field out") {
     const TempFolder folder;
-    const auto map = read_column_map(folder.write("map.json", R"({"poles": {"pole_id": "Other", "order": null}})"));
+    const auto map =
+        read_column_map(folder.write("map.json", R"({"poles": {"pole_id": "Other", "order": null}})"));
     REQUIRE(map);
     const Table table = table_of("poles", {"pole_id", "Other", "order"});
     const auto columns = match_columns(table, *map);
@@ -79,7 +84,8 @@ TEST_CASE("columns: the map goes before names and guesses, and null leaves a fie
 }
 
 TEST_CASE("columns: names that a Shapefile cut at ten letters are known") {
-    const Table table = table_of("poles", {"pole_id", "epa_allow_", "earliest_y", "secondary_", "attachment"});
+    const Table table =
+        table_of("poles", {"pole_id", "epa_allow_", "earliest_y", "secondary_", "attachment"});
     const auto columns = match_columns(table, {});
     REQUIRE(columns);
     CHECK(columns->unused.empty());
@@ -90,7 +96,9 @@ TEST_CASE("columns: names that a Shapefile cut at ten letters are known") {
 TEST_CASE("columns: heights that can only be feet are read as feet and said, once told they are believed") {
     const TempFolder folder;
     GatherFiles files;
-    files.poles = folder.write("poles.csv", "pole_id,easting,northing,Mount Ht,Arm\nA,400000,3760000,30,6\nB,400030,3760000,25,\nC,400060,3760000,35,8\n");
+    files.poles = folder.write(
+        "poles.csv", "pole_id,easting,northing,Mount "
+                     "Ht,Arm\nA,400000,3760000,30,6\nB,400030,3760000,25,\nC,400060,3760000,35,8\n");
     files.crs = "EPSG:32609";
     const auto guessed = read_files(files, nullptr, {});
     REQUIRE(guessed);
@@ -107,7 +115,9 @@ TEST_CASE("columns: heights that can only be feet are read as feet and said, onc
 
 TEST_CASE("columns: a map that cannot be meant is refused by key") {
     const TempFolder folder;
-    const auto fault_of = [&](const char* json) { return read_column_map(folder.write("map.json", json)).error(); };
+    const auto fault_of = [&](const char* json) {
+        return read_column_map(folder.write("map.json", json)).error();
+    };
     CHECK(fault_of("{").code == FaultCode::file_broken);
     CHECK(fault_of("[1]").code == FaultCode::file_broken);
     CHECK(fault_of(R"({"pole": {}})").code == FaultCode::value_unknown);

@@ -12,7 +12,7 @@ DecimalEvidence evidence_of(std::initializer_list<const char*> cells) {
     return evidence;
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("numbers: points and commas are told apart by the column that they stand in") {
     CHECK(judge_mark(evidence_of({"1,5", "2,25"}), {}, ',') == DecimalMark::comma);
@@ -36,7 +36,9 @@ TEST_CASE("numbers: thousands may be set off by the other mark, blanks or apostr
     CHECK(read_number("1.234.567,5", DecimalMark::comma) == 1234567.5);
     CHECK(read_number("1 234,5", DecimalMark::comma) == 1234.5);
     CHECK(read_number("1'234.5", DecimalMark::point) == 1234.5);
-    CHECK(read_number("1\xC2\xA0" "234", DecimalMark::point) == 1234);
+    CHECK(read_number("1\xC2\xA0"
+                      "234",
+                      DecimalMark::point) == 1234);
     CHECK(read_number("-12,345", DecimalMark::point) == -12345);
     CHECK_FALSE(read_number("12,34", DecimalMark::point));
     CHECK_FALSE(read_number("1,2345", DecimalMark::point));
@@ -45,7 +47,8 @@ TEST_CASE("numbers: thousands may be set off by the other mark, blanks or apostr
 }
 
 TEST_CASE("numbers: what is no number is nothing, never zero") {
-    for (const char* cell : {"", "abc", "1.2.3", "12ft", "nan", "inf", "1e999", "--1", "0x10", "1,", "1 2", ".", "+", "1e", "1-2"}) {
+    for (const char* cell : {"", "abc", "1.2.3", "12ft", "nan", "inf", "1e999", "--1", "0x10", "1,", "1 2",
+                             ".", "+", "1e", "1-2"}) {
         INFO(cell);
         CHECK_FALSE(read_number(cell, DecimalMark::point));
     }

@@ -29,11 +29,14 @@ Fault fault_of(const GatherFiles& files) {
 }
 
 long count_of(const Gathered& city, const std::string& code) {
-    return std::count_if(city.findings.begin(), city.findings.end(), [&](const Finding& finding) { return finding.code == code; });
+    return std::count_if(city.findings.begin(), city.findings.end(),
+                         [&](const Finding& finding) { return finding.code == code; });
 }
 
-constexpr const char* kPoles = "pole_id,string_id,easting,northing\nP1,C-12,400000,3760000\nP2,c12,400030,3760000\nP3,12,400060,3760000\nP4,C-99,400090,3760000\n";
-constexpr const char* kCircuits = "string_id,kind,current_a,station_e,station_n,cable_awg\nC-12,series,6.6,399990,3760000,8\nP-13,parallel,,,,1/0\n";
+constexpr const char* kPoles = "pole_id,string_id,easting,northing\nP1,C-12,400000,3760000\nP2,c12,400030,"
+                               "3760000\nP3,12,400060,3760000\nP4,C-99,400090,3760000\n";
+constexpr const char* kCircuits = "string_id,kind,current_a,station_e,station_n,cable_awg\nC-12,series,6.6,"
+                                  "399990,3760000,8\nP-13,parallel,,,,1/0\n";
 
 GatherFiles poles_and_circuits(const TempFolder& folder) {
     GatherFiles files;
@@ -43,7 +46,7 @@ GatherFiles poles_and_circuits(const TempFolder& folder) {
     return files;
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("strings: a name that differs in case, strokes or letters is taken as the one meant, and said so") {
     const TempFolder folder;
@@ -51,7 +54,7 @@ TEST_CASE("strings: a name that differs in case, strokes or letters is taken as 
     for (int i = 0; i < 3; ++i) CHECK(city.city.poles[static_cast<std::size_t>(i)].string == StringIx(0));
     CHECK_FALSE(city.city.poles[3].string.is_valid());
     CHECK(count_of(city, "string-name-variant") == 2);
-    CHECK(count_of(city, "string-unknown") == 0);  // vet says it, of the record
+    CHECK(count_of(city, "string-unknown") == 0); // vet says it, of the record
 }
 
 TEST_CASE("strings: a name that fits two strings is taken as neither") {
@@ -75,12 +78,15 @@ TEST_CASE("circuits: wire sizes, stations and defaults are read") {
     CHECK(count_of(city, "number-unreadable") == 0);
 }
 
-TEST_CASE("transformers: two rows with two strings are one two-loop unit, two alike stay two for vet to see") {
+TEST_CASE(
+    "transformers: two rows with two strings are one two-loop unit, two alike stay two for vet to see") {
     const TempFolder folder;
     GatherFiles files = poles_and_circuits(folder);
-    files.transformers = folder.write("transformers.csv", "transformer_id,rated_kw,output_a,taps,string_id,state,tested\n"
-                                                          "T1,20,6.6,1;.9;.75,C-12,in-service,2024-05-31\nT1,20,6.6,1;.9;.75,P-13,in-service,\n"
-                                                          "T2,10,6.6,100/90/75,,,31.05.2024\nT2,15,6.6,,,,5/31/2024\nT3,10,6.6,1;2x,,,\n");
+    files.transformers =
+        folder.write("transformers.csv",
+                     "transformer_id,rated_kw,output_a,taps,string_id,state,tested\n"
+                     "T1,20,6.6,1;.9;.75,C-12,in-service,2024-05-31\nT1,20,6.6,1;.9;.75,P-13,in-service,\n"
+                     "T2,10,6.6,100/90/75,,,31.05.2024\nT2,15,6.6,,,,5/31/2024\nT3,10,6.6,1;2x,,,\n");
     const Gathered city = must_read(files);
     REQUIRE(city.city.transformers.size() == 4);
     CHECK(city.city.transformers[0].strings == std::vector<StringIx>{StringIx(0), StringIx(1)});
@@ -100,7 +106,9 @@ TEST_CASE("transformers: two rows with two strings are one two-loop unit, two al
 TEST_CASE("lists: a word that is not in its list is a finding and the field stays unknown") {
     const TempFolder folder;
     GatherFiles files;
-    files.poles = folder.write("poles.csv", "pole_id,easting,northing,duct,critical,owner,status\nP1,400000,3760000,weird,maybe,,Not Ours\nP2,400030,3760000,Direct Buried,Y,Utility,removed\n");
+    files.poles = folder.write("poles.csv",
+                               "pole_id,easting,northing,duct,critical,owner,status\nP1,400000,3760000,weird,"
+                               "maybe,,Not Ours\nP2,400030,3760000,Direct Buried,Y,Utility,removed\n");
     files.crs = "EPSG:32609";
     const Gathered city = must_read(files);
     CHECK(count_of(city, "value-unknown") == 2);
@@ -115,7 +123,9 @@ TEST_CASE("lists: a word that is not in its list is a finding and the field stay
 TEST_CASE("services: a pole in place of coordinates gives the place; an unknown pole is said") {
     const TempFolder folder;
     GatherFiles files = poles_and_circuits(folder);
-    files.services = folder.write("services.csv", "service_id,kind,easting,northing,pole_id,volts,free_kva\nS1,circuit-end,,,P2,240,7.5\nS2,candidate,400000,3760010,,,\nS3,service,,,P9,,\n");
+    files.services =
+        folder.write("services.csv", "service_id,kind,easting,northing,pole_id,volts,free_kva\nS1,circuit-"
+                                     "end,,,P2,240,7.5\nS2,candidate,400000,3760010,,,\nS3,service,,,P9,,\n");
     const Gathered city = must_read(files);
     CHECK(city.city.services[0].place == MapPoint{400030, 3760000});
     CHECK(city.city.services[0].kind == ServiceKind::circuit_end);
@@ -127,8 +137,10 @@ TEST_CASE("services: a pole in place of coordinates gives the place; an unknown 
 TEST_CASE("marks and cut-backs: unknown poles are said, a mark of one is set aside") {
     const TempFolder folder;
     GatherFiles files = poles_and_circuits(folder);
-    files.marks = folder.write("marks.csv", "pole_id,mark,lock,year,who,note\nP1,Solar,1,2029,anna,\nP9,keep,0,,,\nP2,paint,0,,,\n");
-    files.cutbacks = folder.write("cutbacks.csv", "string_id,pole_a,pole_b,kind,confirmed,new_cable_m\nC-12,P1,P3,pullbox,yes,12\nC12,P9,return,,no,\n");
+    files.marks = folder.write(
+        "marks.csv", "pole_id,mark,lock,year,who,note\nP1,Solar,1,2029,anna,\nP9,keep,0,,,\nP2,paint,0,,,\n");
+    files.cutbacks = folder.write("cutbacks.csv", "string_id,pole_a,pole_b,kind,confirmed,new_cable_m\nC-12,"
+                                                  "P1,P3,pullbox,yes,12\nC12,P9,return,,no,\n");
     const Gathered city = must_read(files);
     REQUIRE(city.marks.size() == 2);
     CHECK(city.marks[0].mark == Choice::solar);
@@ -145,35 +157,44 @@ TEST_CASE("marks and cut-backs: unknown poles are said, a mark of one is set asi
     CHECK(city.city.cutbacks[1].string == StringIx(0));
 }
 
-TEST_CASE("climate: twelve months in any order, blanks filled and said; anything else is refused with the row") {
+TEST_CASE(
+    "climate: twelve months in any order, blanks filled and said; anything else is refused with the row") {
     const TempFolder folder;
     GatherFiles files;
     std::string rows = "month,ghi,temp_c,albedo\n";
-    for (int month = 12; month >= 1; --month) rows += std::to_string(month) + "," + std::to_string(month) + ".5,10,\n";
+    for (int month = 12; month >= 1; --month)
+        rows += std::to_string(month) + "," + std::to_string(month) + ".5,10,\n";
     files.climate = folder.write("climate.csv", rows);
     const Gathered city = must_read(files);
     REQUIRE(city.climate);
     CHECK(city.climate->ghi_kwh_m2_day[0] == 1.5);
     CHECK(city.climate->ghi_kwh_m2_day[11] == 12.5);
     CHECK(city.climate->albedo[3] == 0.2);
-    CHECK(std::any_of(city.notes.begin(), city.notes.end(), [](const std::string& note) { return note.starts_with("climate: no albedo"); }));
+    CHECK(std::any_of(city.notes.begin(), city.notes.end(),
+                      [](const std::string& note) { return note.starts_with("climate: no albedo"); }));
     files.climate = folder.write("twice.csv", rows + "3,4,10,\n");
     CHECK(fault_of(files).row == 14);
     files.climate = folder.write("short.csv", "month,ghi,temp_c\n1,2,3\n");
     CHECK(fault_of(files).found == "no month 2");
     files.climate = folder.write("odd.csv", "month,ghi,temp_c\n1,99,3\n");
     CHECK(fault_of(files).field == "ghi_kwh_m2_day");
-    files.climate = folder.write("hourly.csv", "time,ghi_w_m2,dni_w_m2,dhi_w_m2,temp_c\n2020-01-01T00:00,0,0,0,5\n");
+    files.climate =
+        folder.write("hourly.csv", "time,ghi_w_m2,dni_w_m2,dhi_w_m2,temp_c\n2020-01-01T00:00,0,0,0,5\n");
     CHECK(fault_of(files).found == "an hourly weather file");
-    files.climate = folder.write("site.epw", "LOCATION,Quillhaven,-,-,invented,000000,34.0,-130.0,-9.0,10.0\nDESIGN CONDITIONS,0\n");
+    files.climate = folder.write(
+        "site.epw", "LOCATION,Quillhaven,-,-,invented,000000,34.0,-130.0,-9.0,10.0\nDESIGN CONDITIONS,0\n");
     CHECK(fault_of(files).found == "an hourly weather file");
 }
 
-TEST_CASE("prices: the file goes over the default book, and what is no item of the list is left out and said") {
+TEST_CASE(
+    "prices: the file goes over the default book, and what is no item of the list is left out and said") {
     const TempFolder folder;
     const Gathered before = must_read({});
     GatherFiles files;
-    files.prices = folder.write("prices.csv", "item,unit,low,base,high,note,date,from_year,to_year,change_frac_year\npull_box,each,900,1300,2100,,,,,\nunicorn,each,1,2,3,,,,,\npull_box,each,,1500,,,,2030,,0.02\ntrench_soft,each,1,2,3,,,,,\nled_head,,,,,,,,,\n");
+    files.prices = folder.write("prices.csv",
+                                "item,unit,low,base,high,note,date,from_year,to_year,change_frac_year\npull_"
+                                "box,each,900,1300,2100,,,,,\nunicorn,each,1,2,3,,,,,\npull_box,each,,1500,,,"
+                                ",2030,,0.02\ntrench_soft,each,1,2,3,,,,,\nled_head,,,,,,,,,\n");
     const Gathered city = must_read(files, &before);
     CHECK(city.prices.at("pull_box", 2027) == Approx(1300));
     CHECK(city.prices.at("pull_box", 2031) == Approx(1530));
@@ -188,7 +209,9 @@ TEST_CASE("prices: the file goes over the default book, and what is no item of t
 TEST_CASE("budget: blank money and hours are no limit, not zero") {
     const TempFolder folder;
     GatherFiles files;
-    files.budget = folder.write("budget.csv", "year,money,fund,line_h\n2027,\"1,600,000\",street,900\n2028,,,\n2029,0,,0\nsoon,1,,\n");
+    files.budget =
+        folder.write("budget.csv",
+                     "year,money,fund,line_h\n2027,\"1,600,000\",street,900\n2028,,,\n2029,0,,0\nsoon,1,,\n");
     const Gathered city = must_read(files);
     REQUIRE(city.city.budget.size() == 3);
     CHECK(city.city.budget[0].money == 1600000);
@@ -202,10 +225,12 @@ TEST_CASE("budget: blank money and hours are no limit, not zero") {
 TEST_CASE("as-built: what differs from the records is said, and the records stay as they are") {
     const TempFolder folder;
     GatherFiles files = poles_and_circuits(folder);
-    files.poles = folder.write("poles.csv", "pole_id,string_id,order,easting,northing,duct\nP1,C-12,1,400000,3760000,assumed\nP2,C-12,2,400030,3760000,\n");
-    files.asbuilt = folder.write("asbuilt.csv", "pole_id,done,date,order,amps,volts,duct_found\nP1,yes,2027-03-01,4,6.55,,bad\nP2,no,,2,5.1,,\nP9,yes,,,,,\n");
+    files.poles = folder.write("poles.csv", "pole_id,string_id,order,easting,northing,duct\nP1,C-12,1,400000,"
+                                            "3760000,assumed\nP2,C-12,2,400030,3760000,\n");
+    files.asbuilt = folder.write("asbuilt.csv", "pole_id,done,date,order,amps,volts,duct_found\nP1,yes,2027-"
+                                                "03-01,4,6.55,,bad\nP2,no,,2,5.1,,\nP9,yes,,,,,\n");
     const Gathered city = must_read(files);
-    CHECK(count_of(city, "reading-differs") == 3);  // order and duct of P1, amperes of P2
+    CHECK(count_of(city, "reading-differs") == 3); // order and duct of P1, amperes of P2
     CHECK(count_of(city, "pole-unknown") == 1);
     CHECK(city.city.poles[0].order == 1);
     CHECK(city.rows.at("asbuilt").read == 3);
@@ -243,16 +268,24 @@ TEST_CASE("catalogue: the carried one is whole, and every price item that it nam
 
 TEST_CASE("catalogue: a list in the file replaces the default one, a wrong field is named by its path") {
     const Catalog defaults = default_catalog();
-    const auto lamps = parse_catalogue(R"({"lamps": [{"fixture": "X1", "system_w": 55, "kind": "led"}]})", "c.json", defaults);
+    const auto lamps = parse_catalogue(R"({"lamps": [{"fixture": "X1", "system_w": 55, "kind": "led"}]})",
+                                       "c.json", defaults);
     REQUIRE(lamps);
     CHECK(lamps->lamps.size() == 1);
     CHECK(lamps->heads.size() == defaults.heads.size());
-    const auto field_of = [&](const char* json) { return parse_catalogue(json, "c.json", defaults).error().field; };
+    const auto field_of = [&](const char* json) {
+        return parse_catalogue(json, "c.json", defaults).error().field;
+    };
     CHECK(field_of(R"({"lamps": [{"fixture": "X1", "kind": "led"}]})") == "lamps[0].system_w");
-    CHECK(field_of(R"({"lamps": [{"fixture": "X1", "system_w": "55", "kind": "led"}]})") == "lamps[0].system_w");
-    CHECK(field_of(R"({"lamps": [{"fixture": "X1", "system_w": -1, "kind": "led"}]})") == "lamps[0].system_w");
+    CHECK(field_of(R"({"lamps": [{"fixture": "X1", "system_w": "55", "kind": "led"}]})") ==
+          "lamps[0].system_w");
+    CHECK(field_of(R"({"lamps": [{"fixture": "X1", "system_w": -1, "kind": "led"}]})") ==
+          "lamps[0].system_w");
     CHECK(field_of(R"({"lamps": [{"fixture": "X1", "system_w": 5, "kind": "neon"}]})") == "lamps[0].kind");
-    CHECK(field_of(R"({"heads": [{"head": "H", "panel_wp": 90, "battery_wh": 600, "led_w": 20, "lumens": 3000, "epa_m2": 0.4, "price_item": "gold"}]})") == "heads[0].price_item");
+    CHECK(
+        field_of(
+            R"({"heads": [{"head": "H", "panel_wp": 90, "battery_wh": 600, "led_w": 20, "lumens": 3000, "epa_m2": 0.4, "price_item": "gold"}]})") ==
+        "heads[0].price_item");
     CHECK(field_of(R"({"heads": {}})") == "heads");
     CHECK(parse_catalogue("[]", "c.json", defaults).error().code == FaultCode::value_unreadable);
     CHECK(parse_catalogue("{", "c.json", defaults).error().code == FaultCode::file_broken);

@@ -31,7 +31,7 @@ std::string in_quotes(const std::string& cell) {
     return out + "\"";
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("text table: the delimiter is the one by which most rows have the header's cells") {
     CHECK(parsed("a,b\n1,2\n").table.delimiter == ',');
@@ -41,8 +41,10 @@ TEST_CASE("text table: the delimiter is the one by which most rows have the head
     CHECK(parsed("a,b;c\n\"x;y\",2\n\"p;q\",3\n").table.delimiter == ',');
 }
 
-TEST_CASE("text table: line ends of any kind, blank lines and a missing last line end make no rows and lose none") {
-    for (const char* text : {"a,b\n1,2\n\n3,4\n", "a,b\r\n1,2\r\n\r\n3,4", "a,b\r1,2\r\r3,4\r", "\n\na,b\n1,2\n,\n3,4"}) {
+TEST_CASE(
+    "text table: line ends of any kind, blank lines and a missing last line end make no rows and lose none") {
+    for (const char* text :
+         {"a,b\n1,2\n\n3,4\n", "a,b\r\n1,2\r\n\r\n3,4", "a,b\r1,2\r\r3,4\r", "\n\na,b\n1,2\n,\n3,4"}) {
         const auto [table, findings] = parsed(text);
         REQUIRE(table.rows() == 2);
         CHECK(table.read == 2);
@@ -66,7 +68,8 @@ TEST_CASE("text table: cells over 64 KiB and rows without end are refused before
     CHECK(table.rows() == 1);
     CHECK(findings.size() == 1);
     std::vector<Finding> ignored;
-    CHECK(parse_text_table("a" + std::string(5'000, ',') + "\n", "t.csv", "poles", ignored).error().code == FaultCode::file_broken);
+    CHECK(parse_text_table("a" + std::string(5'000, ',') + "\n", "t.csv", "poles", ignored).error().code ==
+          FaultCode::file_broken);
 }
 
 TEST_CASE("text table: of two columns of one name the first is read and the other is said") {
@@ -101,7 +104,8 @@ TEST_CASE("text table: whatever is written in quotes comes back, for random cell
         const auto [table, findings] = parsed(text);
         REQUIRE(findings.empty());
         REQUIRE(table.rows() == 10);
-        for (std::size_t i = 0; i < cells.size(); ++i) REQUIRE(std::string(table.cell(i / 3, i % 3)) == cells[i]);
+        for (std::size_t i = 0; i < cells.size(); ++i)
+            REQUIRE(std::string(table.cell(i / 3, i % 3)) == cells[i]);
     }
 }
 
@@ -116,14 +120,22 @@ TEST_CASE("text table: random bytes end in a table or a fault, and every row is 
         std::vector<Finding> findings;
         const auto table = parse_text_table(text, "t.csv", "poles", findings);
         if (!table) continue;
-        const long broken = std::count_if(findings.begin(), findings.end(), [](const Finding& each) { return each.code == "row-broken"; });
+        const long broken = std::count_if(findings.begin(), findings.end(),
+                                          [](const Finding& each) { return each.code == "row-broken"; });
         REQUIRE(table->read == static_cast<long>(table->rows()) + broken);
     }
 }
 
 TEST_CASE("encoding: marks, UTF-8, the one given, else a guess with a sample") {
-    CHECK(decode_text("\xEF\xBB\xBF" "ab", "", "f")->utf8 == "ab");
-    CHECK(decode_text(std::string("\xFF\xFE" "a\0\xE9\0", 6), "", "f")->utf8 == "a\xC3\xA9");
+    CHECK(decode_text("\xEF\xBB\xBF"
+                      "ab",
+                      "", "f")
+              ->utf8 == "ab");
+    CHECK(decode_text(std::string("\xFF\xFE"
+                                  "a\0\xE9\0",
+                                  6),
+                      "", "f")
+              ->utf8 == "a\xC3\xA9");
     CHECK(decode_text("r\xC3\xA9", "", "f")->encoding == "UTF-8");
     CHECK(decode_text("r\xC3\xA9", "ISO-8859-15", "f")->encoding == "UTF-8");
     CHECK(decode_text("\xA4", "ISO-8859-15", "f")->utf8 == "\xE2\x82\xAC");

@@ -255,27 +255,13 @@ int place_of(const CityYears& city, StringIx string) {
     return -1;
 }
 
-/// The year in which an item is paid if its string i does not come first: by another string, or by a hand year.
-int other_year(const SharedItem& item, std::size_t i, const std::vector<StringPlan>& now, int years) {
-    int other = item.fixed_t < 0 ? years : item.fixed_t;
-    for (std::size_t j = 0; j < item.firsts.size(); ++j) {
-        if (j == i) continue;
-        if (now.empty()) return i == 0 ? other : 0;  // at first it sits on the first of its strings
-        const int t = year_done(now[item.firsts[j].first], item.firsts[j].second);
-        const int own = year_done(now[item.firsts[i].first], item.firsts[i].second);
-        if (t >= 0 && (t != own || j < i)) other = std::min(other, t);
-    }
-    return other;
-}
-
-/// Puts an item's cost and use on a string's outermost section beyond it, as what it adds when it comes before `other_t`.
-void add_item(const SharedItem& item, std::size_t string, int section, int other_t, PackageCase& packages) {
-    const double saved = other_t < packages.years ? item.cost[static_cast<std::size_t>(other_t)] : 0;
-    for (int t = 0; t < std::min(other_t, packages.years); ++t) {
-        const auto year = static_cast<std::size_t>(t);
-        packages.strings[string].work_cost[year][static_cast<std::size_t>(section)] += item.cost[year] - saved;
-        Use& use = packages.strings[string].work_use[year][static_cast<std::size_t>(section)];
-        for (std::size_t l = 0; l < kLimits; ++l) use[l] += item.use[year][l];
+/// Puts an item that one string alone has on its outermost section beyond it.
+void add_to_section(const SharedItem& item, PackageCase& packages) {
+    const auto [string, section] = item.firsts[0];
+    for (std::size_t t = 0; t < item.cost.size(); ++t) {
+        packages.strings[string].work_cost[t][static_cast<std::size_t>(section)] += item.cost[t];
+        Use& use = packages.strings[string].work_use[t][static_cast<std::size_t>(section)];
+        for (std::size_t l = 0; l < kLimits; ++l) use[l] += item.use[t][l];
     }
 }
 
@@ -295,26 +281,16 @@ bool has_fixed(const CityString& string) {
     return std::any_of(string.fixed_year.begin(), string.fixed_year.end(), [](int year) { return year != 0; });
 }
 
-/// A duct of the string itself: a jump that leaves its cable live digs, in the years before `other_t`.
-void add_own_dig(const SharedItem& item, std::size_t s, int section, const std::vector<std::vector<char>>& live, int other_t, PackageCase& packages) {
+/// A duct of the string itself: a jump that leaves its cable live digs.
+void add_own_dig(const SharedItem& item, std::size_t s, int section, const std::vector<std::vector<char>>& live, PackageCase& packages) {
     PackageString& string = packages.strings[s];
-    for (std::size_t t = 0; t < static_cast<std::size_t>(std::min(other_t, packages.years)); ++t)
+    for (std::size_t t = 0; t < live.size(); ++t)
         for (std::size_t n = 0; n <= static_cast<std::size_t>(section); ++n)
             for (std::size_t next = static_cast<std::size_t>(section) + 1; next < live[t].size(); ++next) {
                 if (live[t][next] == 0) continue;
                 string.jump_cost[t][n][next - n - 1] += item.dig_cost[t];
                 for (std::size_t l = 0; l < kLimits; ++l) string.jump_use[t][n][next - n - 1][l] += item.dig_use[t][l];
             }
-}
-
-/// A duct of another string: what the digging costs more while that one's cable is live, nothing from `other_t` on.
-PackageWait dig_wait(const SharedItem& item, std::size_t i, std::size_t blocking, std::vector<std::vector<char>> live, int other_t) {
-    PackageWait wait{item.firsts[i].first, item.firsts[i].second, blocking, std::move(live), item.dig_cost, item.dig_use};
-    for (std::size_t t = static_cast<std::size_t>(std::max(0, other_t)); t < wait.cost.size(); ++t) {
-        wait.cost[t] = 0;
-        wait.use[t] = Use{};
-    }
-    return wait;
 }
 
 /// A section that waits for another string's state; within one string it is a jump that is to be avoided.
@@ -330,36 +306,25 @@ void add_wait(PackageWait wait, PackageCase& packages) {
                 if (wait.blocks[t][next] != 0) string.jump_penalty[t][n][next - n - 1] += packages.wait_penalty;
 }
 
-/// Where a hand has set years, a live duct is an error to be avoided; else it is dug beside.
-void add_duct(const CityYears& city, const SharedItem& item, const std::vector<StringPlan>& now, PackageCase& packages) {
-    const CircuitSpan& span = city.decide.spans[static_cast<std::size_t>(item.span)];
-    const int in = place_of(city, span.duct_string);
-    if (in < 0) return;
-    const auto blocking = static_cast<std::size_t>(in);
-    const auto live = live_states(city, span, blocking);
-    for (std::size_t i = 0; i < item.firsts.size(); ++i) {
-        const auto [string, section] = item.firsts[i];
-        const int other_t = other_year(item, i, now, packages.years);
-        if (has_fixed(city.strings[blocking])) add_wait({string, section, blocking, live, {}, {}}, packages);
-        else if (string == blocking) add_own_dig(item, string, section, live, other_t, packages);
-        else packages.waits.push_back(dig_wait(item, i, blocking, live, other_t));
-    }
-    if (item.fixed_t < 0) return;
-    const auto t = static_cast<std::size_t>(item.fixed_t);
-    auto& penalty = packages.strings[blocking].state_penalty[t];
-    for (std::size_t n = 0; n < penalty.size(); ++n)
-        if (live[t][n] != 0)
-            for (double& each : penalty[n]) each += packages.wait_penalty;
-}
-
-void add_items(const CityYears& city, const std::vector<StringPlan>& now, PackageCase& packages) {
-    for (const SharedItem& item : city.items) {
-        for (std::size_t i = 0; i < item.firsts.size(); ++i)
-            add_item(item, item.firsts[i].first, item.firsts[i].second, other_year(item, i, now, packages.years), packages);
-        if (!item.dig_cost.empty()) add_duct(city, item, now, packages);
-        if (item.fixed_t < 0) continue;
-        for (std::size_t l = 0; l < kLimits; ++l)
-            packages.limit[static_cast<std::size_t>(item.fixed_t)][l] -= item.use[static_cast<std::size_t>(item.fixed_t)][l];
+void add_items(const CityYears& city, PackageCase& packages) {
+    for (const SharedItem& given : city.items) {
+        const CircuitSpan* span = given.dig_cost.empty() ? nullptr : &city.decide.spans[static_cast<std::size_t>(given.span)];
+        const int in = span == nullptr ? -1 : place_of(city, span->duct_string);
+        const bool is_own = in < 0 || (given.firsts.size() == 1 && given.firsts[0].first == static_cast<std::size_t>(in));
+        const bool hand = in >= 0 && has_fixed(city.strings[static_cast<std::size_t>(in)]);
+        if (given.firsts.size() == 1 && given.fixed_t < 0 && is_own && !hand) {
+            add_to_section(given, packages);
+            if (in >= 0) add_own_dig(given, given.firsts[0].first, given.firsts[0].second, live_states(city, *span, static_cast<std::size_t>(in)), packages);
+            continue;
+        }
+        PackageItem item{given.firsts, given.fixed_t, given.cost, given.use, in, {}, given.dig_cost, given.dig_use};
+        if (in >= 0) item.live = live_states(city, *span, static_cast<std::size_t>(in));
+        // Where a hand has set years, a live duct is an error, not a trench.
+        if (hand || (in >= 0 && given.fixed_t >= 0)) {
+            item.dig_cost.assign(item.dig_cost.size(), packages.wait_penalty);
+            item.dig_use.assign(item.dig_use.size(), Use{});
+        }
+        packages.items.push_back(std::move(item));
     }
 }
 
@@ -400,7 +365,7 @@ void add_control_waits(const CityYears& city, PackageCase& packages) {
             section = at == sections.end() ? -1 : static_cast<int>(at - sections.begin());
         }
         if (section < 0) continue;
-        PackageWait wait{b, section, a, {}, {}, {}};
+        PackageWait wait{b, section, a, {}};
         for (const auto& year : city.states[a]) {
             wait.blocks.emplace_back();
             for (const StringState& state : year) wait.blocks.back().push_back(state.lamps > 0 ? 1 : 0);
@@ -431,15 +396,14 @@ void add_item_to_bound(const CityYears& city, const SharedItem& item, BoundCase&
         if (static_cast<int>(t) == item.fixed_t) bound.fixed_cost += share * cheapest;
     }
     if (digs_exactly)
-        add_own_dig(item, item.firsts[0].first, item.firsts[0].second, live_states(city, city.decide.spans[static_cast<std::size_t>(item.span)], static_cast<std::size_t>(in)),
-                    packages.years, packages);
+        add_own_dig(item, item.firsts[0].first, item.firsts[0].second, live_states(city, city.decide.spans[static_cast<std::size_t>(item.span)], static_cast<std::size_t>(in)), packages);
 }
 
 }  // namespace
 
-PackageCase search_case(const CityYears& city, const std::vector<StringPlan>& now) {
+PackageCase search_case(const CityYears& city) {
     PackageCase packages = Builder(city, For::search).run();
-    add_items(city, now, packages);
+    add_items(city, packages);
     take_fixed(city, packages);
     add_control_waits(city, packages);
     return packages;

@@ -61,8 +61,8 @@ struct CityYears {
 [[nodiscard]] Expected<std::unique_ptr<CityYears>> city_years(const MoneyInput& input, const DecideResult& decide, const PhaseChoices& choices,
                                                               CashBook& book, const Progress& progress);
 
-/// For the search: each shared item sits on the string that `now` (may be empty) has reach it first.
-[[nodiscard]] PackageCase search_case(const CityYears& city, const std::vector<StringPlan>& now);
+/// For the search. An item that one string alone has sits on its section, the others are items of the case.
+[[nodiscard]] PackageCase search_case(const CityYears& city);
 
 /// For the bound: no plan of whole sections from the far end inward costs less than its strings one by one and
 /// `fixed_cost` together. A shared item is paid in the earliest year of any string beyond it; here each of those strings

@@ -30,9 +30,8 @@ struct LinearCharge {
         return cls == kNoClass ? 0 : prices.unit[static_cast<std::size_t>(t)][static_cast<std::size_t>(cls)];
     }
     double steer(double /*penalty*/) const { return 0; }
-    double section(int /*t*/, int /*k*/) const { return 0; }
-    void add_section_use(int /*t*/, int /*k*/, Use& /*use*/) const {}
-    double state(int /*t*/, int /*n*/) const { return 0; }
+    double section(int /*t*/, int /*k*/, Use& /*use*/) const { return 0; }
+    double arrival(int /*t*/, int /*n*/, int /*next*/, Use& /*use*/) const { return 0; }
 };
 
 /// Over-runs of what the others leave, charged steeply.
@@ -60,14 +59,20 @@ struct RoomCharge {
         return bought_before ? 0 : price;
     }
     double steer(double penalty) const { return penalty; }
-    double section(int t, int k) const {
-        return room.section_penalty.empty() ? 0 : room.section_penalty[static_cast<std::size_t>(t)][static_cast<std::size_t>(k)];
+    double section(int t, int k, Use& use) const {
+        if (room.section_cost.empty()) return 0;
+        const auto year = static_cast<std::size_t>(t), place = static_cast<std::size_t>(k);
+        use = plus(use, room.section_use[year][place]);
+        return room.section_cost[year][place];
     }
-    void add_section_use(int t, int k, Use& use) const {
-        if (!room.section_use.empty()) use = plus(use, room.section_use[static_cast<std::size_t>(t)][static_cast<std::size_t>(k)]);
-    }
-    double state(int t, int n) const {
-        return room.state_penalty.empty() ? 0 : room.state_penalty[static_cast<std::size_t>(t)][static_cast<std::size_t>(n)];
+    double arrival(int t, int n, int next, Use& use) const {
+        if (room.section_cost.empty()) return 0;
+        const auto year = static_cast<std::size_t>(t), to = static_cast<std::size_t>(next), from = static_cast<std::size_t>(n);
+        double cost = room.state_cost[year][to];
+        use = plus(use, room.state_use[year][to]);
+        if (next == n || room.jump_cost.empty()) return cost;
+        use = plus(use, room.jump_use[year][from][to - from - 1]);
+        return cost + room.jump_cost[year][from][to - from - 1];
     }
 };
 
@@ -136,12 +141,11 @@ template <class Charge> class ColumnSearch {
                     }
                     work += string_.work_cost[year][static_cast<std::size_t>(next - 1)];
                     use = plus(use, string_.work_use[year][static_cast<std::size_t>(next - 1)]);
-                    work += charge_.section(t, next - 1);
-                    charge_.add_section_use(t, next - 1, use);
+                    work += charge_.section(t, next - 1, use);
                 }
                 if (next < least(t)) continue;
-                const double whole = work + jump_cost(t, n, next) + charge_.state(t, next);
-                const Use whole_use = with_jump(t, n, next, use);
+                Use whole_use = with_jump(t, n, next, use);
+                const double whole = work + jump_cost(t, n, next) + charge_.arrival(t, n, next, whole_use);
                 if (next == string_.sections && string_.ends[year] != 0) finish(t, n, whole, whole_use, before);
                 else carry_on(t, n, next, whole, whole_use, before);
             }

@@ -25,9 +25,13 @@ struct Room {
     std::vector<Use> use;                          ///< [t][limit] left; may be negative
     std::vector<std::vector<char>> unit_is_there;  ///< [t][class] one more may be in service without a purchase
     Use over_price{};                              ///< of a unit of over-run
-    std::vector<std::vector<double>> section_penalty;  ///< [t][k] of doing section k in year t: it waits for another string
-    std::vector<std::vector<Use>> section_use;         ///< [t][k] that it takes more for the same reason
-    std::vector<std::vector<double>> state_penalty;    ///< [t][n] of being there: another string's section waits for it
+    /// What the string adds to shared items, and the waits that it would break. Empty = nothing.
+    std::vector<std::vector<double>> section_cost;    ///< [t][k] of doing section k in year t
+    std::vector<std::vector<Use>> section_use;        ///< [t][k]
+    std::vector<std::vector<double>> state_cost;      ///< [t][n] of being there at the end of year t
+    std::vector<std::vector<Use>> state_use;          ///< [t][n]
+    std::vector<std::vector<std::vector<double>>> jump_cost;  ///< as PackageString::jump_cost
+    std::vector<std::vector<std::vector<Use>>> jump_use;
 };
 
 struct ColumnLimits {  ///< of a branch of the exact search

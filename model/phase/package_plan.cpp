@@ -39,6 +39,17 @@ int year_done(const StringPlan& plan, int section) {
     return -1;
 }
 
+int item_year(const PackageItem& item, const std::vector<StringPlan>& strings, const std::vector<char>* counts) {
+    const int never = static_cast<int>(item.cost.size());
+    int first = item.fixed_t < 0 ? never : item.fixed_t;
+    for (const auto& [string, section] : item.firsts) {
+        if (counts != nullptr && (*counts)[string] == 0) continue;
+        const int t = year_done(strings[string], section);
+        if (t >= 0) first = std::min(first, t);
+    }
+    return first;
+}
+
 bool is_broken(const PackageWait& wait, const std::vector<StringPlan>& strings) {
     const int t = year_done(strings[wait.waiting], wait.section);
     if (t < 0) return false;
@@ -66,15 +77,15 @@ PackagePlan add_up(const PackageCase& packages, std::vector<StringPlan> strings,
             if (figures.in_class[t] != kNoClass) ++in_service[t][static_cast<std::size_t>(figures.in_class[t])];
         }
     }
-    for (const PackageWait& wait : packages.waits) {
-        if (!is_broken(wait, strings)) continue;
-        if (wait.cost.empty()) {
-            plan.penalty += packages.wait_penalty;
-            continue;
-        }
-        const auto t = static_cast<std::size_t>(year_done(strings[wait.waiting], wait.section));
-        plan.cost += wait.cost[t];
-        for (std::size_t l = 0; l < kLimits; ++l) use[t][l] += wait.use[t][l];
+    for (const PackageWait& wait : packages.waits)
+        if (is_broken(wait, strings)) plan.penalty += packages.wait_penalty;
+    for (const PackageItem& item : packages.items) {
+        const int paid = item_year(item, strings, nullptr);
+        if (paid >= packages.years) continue;
+        const auto t = static_cast<std::size_t>(paid);
+        const bool digs = item.duct_string >= 0 && item.live[t][static_cast<std::size_t>(strings[static_cast<std::size_t>(item.duct_string)].done[t])] != 0;
+        plan.cost += item.cost[t] + (digs ? item.dig_cost[t] : 0);
+        for (std::size_t l = 0; l < kLimits; ++l) use[t][l] += item.use[t][l] + (digs ? item.dig_use[t][l] : 0);
     }
     plan.bought = buy(packages, in_service, plan);
     for (std::size_t t = 0; t < years; ++t)

@@ -11,6 +11,8 @@ namespace unstring {
 
 /// The year (0-based) at whose end a section is done; -1 = never.
 [[nodiscard]] int year_done(const StringPlan& plan, int section);
+/// The year in which an item is paid; years of the case = never. @param counts  strings that count, null = all
+[[nodiscard]] int item_year(const PackageItem& item, const std::vector<StringPlan>& strings, const std::vector<char>* counts);
 [[nodiscard]] bool is_broken(const PackageWait& wait, const std::vector<StringPlan>& strings);
 
 /// Steep enough that no saving pays for an over-run: a year's limit over-run whole costs over_weight dearest plans.

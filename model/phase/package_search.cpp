@@ -53,37 +53,103 @@ class Hand {
         }
     }
 
-    double price_of(const PackageWait& wait, std::size_t t) const { return wait.cost.empty() ? packages_.wait_penalty : wait.cost[t]; }
+    void open_extras(std::size_t s, Room& room) const {
+        if (!room.section_cost.empty()) return;
+        const auto sections = static_cast<std::size_t>(packages_.strings[s].sections);
+        room.section_cost.assign(used_.size(), std::vector<double>(sections, 0));
+        room.section_use.assign(used_.size(), std::vector<Use>(sections, Use{}));
+        room.state_cost.assign(used_.size(), std::vector<double>(sections + 1, 0));
+        room.state_use.assign(used_.size(), std::vector<Use>(sections + 1, Use{}));
+    }
+
+    static void add(Use& sum, const Use& more, double sign) {
+        for (std::size_t l = 0; l < kLimits; ++l) sum[l] += sign * more[l];
+    }
 
     void add_waits(std::size_t s, Room& room) const {
-        const auto sections = static_cast<std::size_t>(packages_.strings[s].sections);
         for (const PackageWait& wait : packages_.waits) {
-            const bool is_others = wait.waiting != s && wait.blocking != s && has_[wait.waiting] != 0 && has_[wait.blocking] != 0;
-            if (is_others && !wait.use.empty() && is_broken(wait, plans_)) {
-                const auto t = static_cast<std::size_t>(year_done(plans_[wait.waiting], wait.section));
-                for (std::size_t l = 0; l < kLimits; ++l) room.use[t][l] -= wait.use[t][l];
-            }
             const bool waits = wait.waiting == s && has_[wait.blocking] != 0;
             const bool blocks = wait.blocking == s && has_[wait.waiting] != 0;
             if (!waits && !blocks) continue;
-            if (room.section_penalty.empty()) {
-                room.section_penalty.assign(used_.size(), std::vector<double>(sections, 0));
-                room.state_penalty.assign(used_.size(), std::vector<double>(sections + 1, 0));
-                room.section_use.assign(used_.size(), std::vector<Use>(sections, Use{}));
-            }
-            const auto k = static_cast<std::size_t>(wait.section);
-            for (std::size_t t = 0; waits && t < used_.size(); ++t) {
-                if (wait.blocks[t][static_cast<std::size_t>(plans_[wait.blocking].done[t])] == 0) continue;
-                room.section_penalty[t][k] += price_of(wait, t);
-                for (std::size_t l = 0; l < kLimits && !wait.use.empty(); ++l) room.section_use[t][k][l] += wait.use[t][l];
-            }
-            if (!blocks) continue;
-            const int done = year_done(plans_[wait.waiting], wait.section);
+            open_extras(s, room);
+            for (std::size_t t = 0; waits && t < used_.size(); ++t)
+                if (wait.blocks[t][static_cast<std::size_t>(plans_[wait.blocking].done[t])] != 0)
+                    room.section_cost[t][static_cast<std::size_t>(wait.section)] += packages_.wait_penalty;
+            const int done = blocks ? year_done(plans_[wait.waiting], wait.section) : -1;
             if (done < 0) continue;
             const auto t = static_cast<std::size_t>(done);
-            for (std::size_t n = 0; n <= sections; ++n)
-                if (wait.blocks[t][n] != 0) room.state_penalty[t][n] += price_of(wait, t);
+            for (std::size_t n = 0; n < wait.blocks[t].size(); ++n)
+                if (wait.blocks[t][n] != 0) room.state_cost[t][n] += packages_.wait_penalty;
         }
+    }
+
+    bool is_live(const PackageItem& item, std::size_t t) const {
+        const auto in = static_cast<std::size_t>(item.duct_string);
+        return item.duct_string >= 0 && has_[in] != 0 && item.live[t][static_cast<std::size_t>(plans_[in].done[t])] != 0;
+    }
+
+    /// What each shared item takes already, by the other strings, and what this one would add by coming first or by
+    /// keeping its duct live.
+    void add_items(std::size_t s, Room& room) const {
+        for (const PackageItem& item : packages_.items) {
+            const int paid = item_year(item, plans_, &has_);  // s itself is out
+            const bool is_paid = paid < packages_.years;
+            const auto year = static_cast<std::size_t>(paid);
+            if (is_paid) add(room.use[year], item.use[year], -1);
+            if (is_paid && item.duct_string != static_cast<int>(s) && is_live(item, year)) add(room.use[year], item.dig_use[year], -1);
+            const auto first = std::find_if(item.firsts.begin(), item.firsts.end(), [&](const auto& each) { return each.first == s; });
+            const int section = first == item.firsts.end() ? -1 : first->second;
+            if (section >= 0) add_first(item, s, section, paid, room);
+            if (item.duct_string == static_cast<int>(s)) add_own_duct(item, s, section, paid, room);
+        }
+    }
+
+    void add_first(const PackageItem& item, std::size_t s, int section, int paid, Room& room) const {
+        open_extras(s, room);
+        const bool is_paid = paid < packages_.years;
+        const auto later = static_cast<std::size_t>(paid);
+        double saved = is_paid ? item.cost[later] : 0;
+        if (is_paid && item.duct_string != static_cast<int>(s) && is_live(item, later)) saved += item.dig_cost[later];
+        for (std::size_t t = 0; t < std::min(later, used_.size()); ++t) {
+            const bool digs = item.duct_string != static_cast<int>(s) && is_live(item, t);
+            room.section_cost[t][static_cast<std::size_t>(section)] += item.cost[t] + (digs ? item.dig_cost[t] : 0) - saved;
+            add(room.section_use[t][static_cast<std::size_t>(section)], item.use[t], 1);
+            if (digs) add(room.section_use[t][static_cast<std::size_t>(section)], item.dig_use[t], 1);
+        }
+    }
+
+    /// The duct is this string's own: live at the year in which others pay, or in which it comes first itself.
+    void add_own_duct(const PackageItem& item, std::size_t s, int section, int paid, Room& room) const {
+        open_extras(s, room);
+        if (paid < packages_.years) {
+            const auto t = static_cast<std::size_t>(paid);
+            const std::size_t upto = section < 0 ? item.live[t].size() : static_cast<std::size_t>(section) + 1;
+            for (std::size_t n = 0; n < upto; ++n) {
+                if (item.live[t][n] == 0) continue;
+                room.state_cost[t][n] += item.dig_cost[t];
+                add(room.state_use[t][n], item.dig_use[t], 1);
+            }
+        }
+        if (section < 0) return;
+        if (room.jump_cost.empty()) open_jumps(s, room);
+        for (std::size_t t = 0; t < used_.size() && static_cast<int>(t) <= paid; ++t)
+            for (std::size_t n = 0; n <= static_cast<std::size_t>(section); ++n)
+                for (std::size_t next = static_cast<std::size_t>(section) + 1; next < item.live[t].size(); ++next) {
+                    if (item.live[t][next] == 0) continue;
+                    room.jump_cost[t][n][next - n - 1] += item.dig_cost[t];
+                    add(room.jump_use[t][n][next - n - 1], item.dig_use[t], 1);
+                }
+    }
+
+    void open_jumps(std::size_t s, Room& room) const {
+        const auto sections = static_cast<std::size_t>(packages_.strings[s].sections);
+        room.jump_cost.assign(used_.size(), std::vector<std::vector<double>>(sections));
+        room.jump_use.assign(used_.size(), std::vector<std::vector<Use>>(sections));
+        for (std::size_t t = 0; t < used_.size(); ++t)
+            for (std::size_t n = 0; n < sections; ++n) {
+                room.jump_cost[t][n].assign(sections - n, 0);
+                room.jump_use[t][n].assign(sections - n, Use{});
+            }
     }
 
     Room room(std::size_t s) const {
@@ -100,6 +166,7 @@ class Hand {
             }
         }
         add_waits(s, room);
+        add_items(s, room);
         return room;
     }
 

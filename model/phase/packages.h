@@ -8,6 +8,7 @@
 
 #include <array>
 #include <limits>
+#include <utility>
 #include <vector>
 
 namespace unstring {
@@ -42,15 +43,25 @@ struct PackageString {
     std::vector<double> left_penalty;     ///< [n] steers the search away from stopping at n < sections; no cost; may be empty
 };
 
-/// A section that may not be done, or not at its price, while another string is in certain states: a duct that its cable still occupies, a
-/// control that another string still needs.
+/// A section that may not be done while another string is in certain states: a control that it still needs.
 struct PackageWait {
     std::size_t waiting = 0;  ///< string
     int section = 0;          ///< of the waiting string
     std::size_t blocking = 0; ///< string, another one (within one string a wait is part of jump_penalty)
     std::vector<std::vector<char>> blocks;  ///< [t][n] the section may not be done in year t that ends in this state
-    std::vector<double> cost;  ///< [t] where it may be done all the same, at this cost more; empty = it may not
-    std::vector<Use> use;      ///< [t] and this use more; empty with cost
+};
+
+/// Work that several strings share, a trench: paid whole in the earliest year of any of them, dearer where the duct that
+/// it would reuse is still live.
+struct PackageItem {
+    std::vector<std::pair<std::size_t, int>> firsts;  ///< (string, its outermost section that needs it)
+    int fixed_t = -1;           ///< year in which it is needed whatever the strings do, -1 = none
+    std::vector<double> cost;   ///< [t]
+    std::vector<Use> use;       ///< [t]
+    int duct_string = -1;       ///< whose cable lies in the duct, -1 = none is waited for
+    std::vector<std::vector<char>> live;  ///< [t][n] of that string
+    std::vector<double> dig_cost;         ///< [t] more where it is live
+    std::vector<Use> dig_use;             ///< [t]
 };
 
 struct PackageCase {
@@ -59,6 +70,7 @@ struct PackageCase {
     double pool_factor = 1;                   ///< in service x this <= owned + bought
     std::vector<std::vector<double>> owned;   ///< [t][class]
     std::vector<double> buy_cost;             ///< [t] of one whole unit, there from year t on; kNever = none to be had
+    std::vector<PackageItem> items;
     std::vector<PackageWait> waits;           ///< kept by the search at wait_penalty, left out of bounds
     double wait_penalty = 1e7;
     double over_weight = 10;                  ///< a limit over-run by its whole costs this many dearest plans

@@ -12,8 +12,8 @@
 namespace unstring {
 namespace {
 
-constexpr int kRounds = 4;         ///< shared items are put on the string that reaches them first, and again
-constexpr int kSearchRounds = 1500;
+constexpr int kStarts = 3;         ///< searches from scratch, each with its own seed
+constexpr int kSearchRounds = 1200;
 
 Fault stopped() { return {FaultCode::cancelled, {}, 0, {}, "stopped by the user", {}, "run phase again"}; }
 
@@ -54,19 +54,15 @@ Expected<PhaseOutcome> phase_plan(const MoneyInput& input, const DecideResult& d
 
     PhaseDesk desk(input, decide);
     PhaseOutcome best;
-    std::vector<StringPlan> now;
-    for (int round = 0; round < kRounds; ++round) {
-        const PackageCase packages = search_case(**city, now);
+    const PackageCase packages = search_case(**city);
+    for (int start_no = 0; start_no < kStarts; ++start_no) {
         Progress part = progress;
-        part.on_progress = [&](double done) { progress.at(0.15 + 0.7 * (round + done) / kRounds); };
-        const PackagePlan found = search_packages(packages, {kSearchRounds, static_cast<unsigned>(round + 1), now}, part);
+        part.on_progress = [&](double done) { progress.at(0.15 + 0.7 * (start_no + done) / kStarts); };
+        const PackagePlan found = search_packages(packages, {kSearchRounds, static_cast<unsigned>(start_no + 1), {}}, part);
         if (progress.is_cancelled()) return tl::unexpected(stopped());
         Plan plan = with_years(**city, packages, found.strings);
         PhaseResult result = desk.evaluate(plan, false);
-        const bool is_first = round == 0;
-        if (is_first || is_better(result, best.result)) best = {std::move(plan), std::move(result)};
-        if (!is_first && found.strings == now) break;
-        now = found.strings;
+        if (start_no == 0 || is_better(result, best.result)) best = {std::move(plan), std::move(result)};
     }
     best.result = desk.evaluate(best.plan, true);
     best.result.bound = bound_of(**city, best.result, progress);

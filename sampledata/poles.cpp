@@ -55,15 +55,15 @@ void set_duct(const Town& town, const Block& block, PoleRow& pole) {
               {5, static_cast<std::uint64_t>(block.from.column), static_cast<std::uint64_t>(block.from.row),
                block.from.row == block.to.row ? 1U : 0U});
     const double roll = dice.unit();
-    pole.duct = roll < 0.10   ? "proven"
-                : roll < 0.26 ? "inspected"
-                : roll < 0.54 ? "assumed"
-                : roll < 0.80 ? "unknown"
-                : roll < 0.88 ? "bad"
+    pole.duct = roll < 0.05   ? "proven"
+                : roll < 0.15 ? "inspected"
+                : roll < 0.37 ? "assumed"
+                : roll < 0.67 ? "unknown"
+                : roll < 0.80 ? "bad"
                               : "direct-buried";
     const bool can_have_spare = pole.duct == "proven" || pole.duct == "inspected" || pole.duct == "assumed";
     const double spare = dice.unit();
-    pole.spare_duct = can_have_spare && spare < 0.2 ? "yes" : spare < 0.7 ? "no" : "";
+    pole.spare_duct = can_have_spare && spare < 0.12 ? "yes" : spare < 0.7 ? "no" : "";
 }
 
 void set_owner(Dice& dice, PoleRow& pole) {

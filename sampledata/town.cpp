@@ -141,7 +141,7 @@ Road road_of(const Town& town, const Block& block) {
               {2, east ? 1U : 0U, static_cast<std::uint64_t>(east ? block.from.row : block.from.column)});
     // Whole streets are repaved together.
     if (dice.chance(0.45)) road.repave_year = 2027 + dice.below(10);
-    road.is_paved = road.road_class == RoadClass::arterial || quarter.building_m > 9;
+    road.is_paved = road.road_class != RoadClass::local || quarter.building_m > 9;
     road.is_avenue = quarter.trees_frac > 0.25 && road.road_class != RoadClass::arterial &&
                      dice.chance(0.3 + 0.5 * quarter.trees_frac);
     return road;

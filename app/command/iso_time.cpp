@@ -29,9 +29,9 @@ int days_of(int year, int month) {
 }
 
 bool take_date(std::string_view& text, Instant& at) {
-    return take_number(text, 4, at.year) && take(text, '-') && take_number(text, 2, at.month) && take(text, '-') &&
-           take_number(text, 2, at.day) && at.month >= 1 && at.month <= 12 && at.day >= 1 &&
-           at.day <= days_of(at.year, at.month);
+    return take_number(text, 4, at.year) && take(text, '-') && take_number(text, 2, at.month) &&
+           take(text, '-') && take_number(text, 2, at.day) && at.month >= 1 && at.month <= 12 &&
+           at.day >= 1 && at.day <= days_of(at.year, at.month);
 }
 
 bool take_fraction(std::string_view& text, double& second) {
@@ -65,7 +65,7 @@ bool take_zone(std::string_view& text, Instant& at) {
     if (text.empty()) return true;
     at.has_zone = true;
     if (take(text, 'Z') || take(text, 'z')) return true;
-    const double sign = text.front() == '-' ? 1 : -1;  // a clock that is behind is added to
+    const double sign = text.front() == '-' ? 1 : -1; // a clock that is behind is added to
     if (!take(text, '+') && !take(text, '-')) return false;
     int hour = 0;
     int minute = 0;
@@ -77,7 +77,7 @@ bool take_zone(std::string_view& text, Instant& at) {
     return true;
 }
 
-}  // namespace
+} // namespace
 
 std::optional<Instant> read_iso_time(std::string_view text) {
     Instant at;
@@ -87,4 +87,4 @@ std::optional<Instant> read_iso_time(std::string_view text) {
     return at;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -18,7 +18,8 @@ Monthly months_of(JsonFields& fields, std::string_view key, double low, double h
     if (values.size() == months.size())
         std::copy(values.begin(), values.end(), months.begin());
     else
-        fields.refuse(key, fmt::format("{} numbers", values.size()), "12, January first", "give one for each month");
+        fields.refuse(key, fmt::format("{} numbers", values.size()), "12, January first",
+                      "give one for each month");
     return months;
 }
 
@@ -46,7 +47,8 @@ HorizonProfile profile_of(JsonFields& fields, std::string_view key) {
         return {};
     }
     for (const nlohmann::json& point : list) {
-        if (!point.is_array() || point.size() != 2 || !is_angle(point[0], -360, 360) || !is_angle(point[1], -90, 90)) {
+        if (!point.is_array() || point.size() != 2 || !is_angle(point[0], -360, 360) ||
+            !is_angle(point[1], -90, 90)) {
             refuse(point);
             return {};
         }
@@ -66,11 +68,14 @@ std::vector<DimStep> dimming_of(JsonFields& fields, const std::string& path) {
     for (std::size_t i = 0; i < list.size(); ++i) {
         JsonFields step(list[i], path, fmt::format("dimming[{}]", i));
         step.only({"from_h", "to_h", "frac"});
-        steps.push_back({step.number("from_h", 0, 24), step.number("to_h", 0, 24), step.number("frac", 0, 1)});
+        steps.push_back(
+            {step.number("from_h", 0, 24), step.number("to_h", 0, 24), step.number("frac", 0, 1)});
         if (steps.back().to_h <= steps.back().from_h)
-            step.refuse("to_h", fmt::format("{}", steps.back().to_h), "more than from_h", "hours after switch-on");
+            step.refuse("to_h", fmt::format("{}", steps.back().to_h), "more than from_h",
+                        "hours after switch-on");
         if (step.fault())
-            fields.refuse(step.fault()->field, step.fault()->found, step.fault()->wanted, step.fault()->remedy);
+            fields.refuse(step.fault()->field, step.fault()->found, step.fault()->wanted,
+                          step.fault()->remedy);
     }
     return steps;
 }
@@ -81,8 +86,8 @@ void read_canopy(JsonFields& fields, NightCase& night) {
     night.layers.deciduous_beam = fields.has("canopy_beam")
                                       ? months_of(fields, "canopy_beam", 0, 1)
                                       : canopy_through(Leaf::deciduous, night.place.lat_deg);
-    night.layers.deciduous_diffuse =
-        fields.has("canopy_diffuse") ? months_of(fields, "canopy_diffuse", 0, 1) : night.layers.deciduous_beam;
+    night.layers.deciduous_diffuse = fields.has("canopy_diffuse") ? months_of(fields, "canopy_diffuse", 0, 1)
+                                                                  : night.layers.deciduous_beam;
 }
 
 void read_battery(JsonFields& fields, NightCase& night) {
@@ -100,12 +105,14 @@ void read_choices(JsonFields& fields, NightCase& night) {
         fields.refuse("weather", weather, "mean or generated", "check its spelling");
     night.weather = weather == "generated" ? Weather::generated : Weather::mean;
     const std::string model = fields.text_or("day_model", "cooper");
-    if (model != "cooper" && model != "psa") fields.refuse("day_model", model, "cooper or psa", "check its spelling");
+    if (model != "cooper" && model != "psa")
+        fields.refuse("day_model", model, "cooper or psa", "check its spelling");
     night.day_model = model == "psa" ? DayModel::psa : DayModel::cooper;
     night.years = fields.has("years") ? static_cast<int>(fields.integer("years", 1, 200)) : 1;
     night.seed = fields.has("seed") ? static_cast<std::uint64_t>(fields.integer("seed", 0, 1L << 52)) : 1;
     night.day_to_day = fields.number_or("ar1", kDayToDay, -0.99, 0.99);
-    night.sun_step_min = fields.has("sun_step_min") ? static_cast<int>(fields.integer("sun_step_min", 1, 60)) : 5;
+    night.sun_step_min =
+        fields.has("sun_step_min") ? static_cast<int>(fields.integer("sun_step_min", 1, 60)) : 5;
     if (60 % std::max(1, night.sun_step_min) != 0)
         fields.refuse("sun_step_min", fmt::format("{}", night.sun_step_min), "a divisor of 60", "5 is usual");
 }
@@ -132,22 +139,27 @@ void read_clearness(JsonFields& fields, NightCase& night) {
         const bool is_dark_month = outside[month] <= 0 && ghi[month] == 0;
         night.clearness[month] = is_dark_month ? 0.4 : clearness;
         if (!is_dark_month && (outside[month] <= 0 || clearness < low || clearness > high))
-            fields.refuse(fmt::format("ghi_kwh_m2_day[{}]", month), fmt::format("{}", ghi[month]),
-                          fmt::format("{:.3f} to {:.3f}", low * outside[month] / 1000, high * outside[month] / 1000),
-                          "outside the atmosphere there is no more; check unit and latitude");
+            fields.refuse(
+                fmt::format("ghi_kwh_m2_day[{}]", month), fmt::format("{}", ghi[month]),
+                fmt::format("{:.3f} to {:.3f}", low * outside[month] / 1000, high * outside[month] / 1000),
+                "outside the atmosphere there is no more; check unit and latitude");
     }
 }
 
-}  // namespace
+} // namespace
 
 Expected<NightCase> read_night_file(const std::string& path) {
     const auto json = read_json_file(path);
     if (!json) return tl::unexpected(json.error());
     JsonFields fields(*json, path);
-    fields.only({"lat", "lon", "clearness", "ghi_kwh_m2_day", "temp_c", "temp_swing_k", "albedo", "panel_wp",
-                 "tilt_deg", "bearing_deg", "battery_wh", "led_w", "dimming", "switch_deg", "charge_frac",
-                 "discharge_frac", "soc_min", "panel_frac", "temp_coeff", "cold_charge_c", "horizon", "canopy",
-                 "canopy_beam", "canopy_diffuse", "years", "seed", "weather", "ar1", "day_model", "sun_step_min"});
+    fields.only({"lat",       "lon",          "clearness",   "ghi_kwh_m2_day",
+                 "temp_c",    "temp_swing_k", "albedo",      "panel_wp",
+                 "tilt_deg",  "bearing_deg",  "battery_wh",  "led_w",
+                 "dimming",   "switch_deg",   "charge_frac", "discharge_frac",
+                 "soc_min",   "panel_frac",   "temp_coeff",  "cold_charge_c",
+                 "horizon",   "canopy",       "canopy_beam", "canopy_diffuse",
+                 "years",     "seed",         "weather",     "ar1",
+                 "day_model", "sun_step_min"});
     NightCase night;
     night.place = {fields.number_or("lon", 0, -180, 180), fields.number("lat", -90, 90)};
     read_choices(fields, night);
@@ -171,4 +183,4 @@ Expected<NightCase> read_night_file(const std::string& path) {
     return night;
 }
 
-}  // namespace unstring
+} // namespace unstring

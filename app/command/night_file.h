@@ -11,4 +11,4 @@ namespace unstring {
 /// @fault file_missing, file_broken, value_unreadable (field named)
 [[nodiscard]] Expected<NightCase> read_night_file(const std::string& path);
 
-}  // namespace unstring
+} // namespace unstring

@@ -15,11 +15,12 @@ std::optional<double> read_whole(const std::string& text) {
     return value;
 }
 
-}  // namespace
+} // namespace
 
 Expected<std::vector<double>> read_list(const std::string& option, const std::string& text, std::size_t least,
                                         std::size_t most, const std::string& wanted) {
-    const Fault fault{FaultCode::bad_usage, {}, 0, option, text, wanted, "numbers with commas between, no blanks"};
+    const Fault fault{
+        FaultCode::bad_usage, {}, 0, option, text, wanted, "numbers with commas between, no blanks"};
     std::vector<double> values;
     for (std::size_t from = 0; from <= text.size();) {
         const std::size_t comma = std::min(text.find(',', from), text.size());
@@ -35,8 +36,13 @@ Expected<std::vector<double>> read_list(const std::string& option, const std::st
 std::optional<Fault> out_of_range(const std::string& option, double value, double low, double high,
                                   const std::string& remedy) {
     if (value >= low && value <= high) return std::nullopt;
-    return Fault{FaultCode::bad_usage, {}, 0, option, fmt::format("{}", value), fmt::format("{} to {}", low, high),
+    return Fault{FaultCode::bad_usage,
+                 {},
+                 0,
+                 option,
+                 fmt::format("{}", value),
+                 fmt::format("{} to {}", low, high),
                  remedy};
 }
 
-}  // namespace unstring
+} // namespace unstring

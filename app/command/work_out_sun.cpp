@@ -20,19 +20,22 @@ struct SunOptions {
 std::optional<Fault> check(const SunOptions& given, const std::vector<double>& at) {
     auto fault = out_of_range("--at (latitude)", at[0], -90, 90, "latitude first, then longitude");
     if (!fault) fault = out_of_range("--at (longitude)", at[1], -180, 180, "degrees, east positive");
-    if (!fault && at.size() > 2) fault = out_of_range("--at (elevation)", at[2], -500, 9000, "metres above the sea");
-    if (!fault) fault = out_of_range("--pressure-hpa", given.pressure_hpa, 0, 1200, "0 leaves refraction out");
+    if (!fault && at.size() > 2)
+        fault = out_of_range("--at (elevation)", at[2], -500, 9000, "metres above the sea");
+    if (!fault)
+        fault = out_of_range("--pressure-hpa", given.pressure_hpa, 0, 1200, "0 leaves refraction out");
     if (!fault) fault = out_of_range("--temp-c", given.temp_c, -100, 70, "degrees Celsius");
     if (!fault) fault = out_of_range("--delta-t", given.delta_t_s, -8000, 8000, "seconds");
     return fault;
 }
 
 std::string inputs_text(const SunOptions& given, const SpaInput& input, const Instant& time) {
-    return fmt::format("Inputs: {} N, {} E, {} m, {}{}, {} hPa, {} C, terrestrial minus universal time {} s.\n"
-                       "days since 2000-01-01 12:00 UTC  {:.8f}\n",
-                       input.place.lat_deg, input.place.lon_deg, input.elevation_m, given.time,
-                       time.has_zone ? "" : " (no zone given: UTC)", given.pressure_hpa, given.temp_c, given.delta_t_s,
-                       input.days_since_2000);
+    return fmt::format(
+        "Inputs: {} N, {} E, {} m, {}{}, {} hPa, {} C, terrestrial minus universal time {} s.\n"
+        "days since 2000-01-01 12:00 UTC  {:.8f}\n",
+        input.place.lat_deg, input.place.lon_deg, input.elevation_m, given.time,
+        time.has_zone ? "" : " (no zone given: UTC)", given.pressure_hpa, given.temp_c, given.delta_t_s,
+        input.days_since_2000);
 }
 
 void answer_spa(const SpaInput& input, WorkOutAnswer& answer) {
@@ -52,8 +55,8 @@ void answer_spa(const SpaInput& input, WorkOutAnswer& answer) {
         sun.earth_longitude_deg, sun.earth_latitude_deg, sun.radius_au, sun.nutation_longitude_deg,
         sun.nutation_obliquity_deg, sun.obliquity_deg, sun.apparent_longitude_deg, sun.ascension_deg,
         sun.declination_deg, sun.sidereal_deg, sun.hour_angle_deg, sun.topocentric_hour_angle_deg,
-        sun.topocentric_declination_deg, sun.elevation_deg, sun.refraction_deg, sun.zenith_deg, sun.azimuth_deg,
-        sun.equation_of_time_min);
+        sun.topocentric_declination_deg, sun.elevation_deg, sun.refraction_deg, sun.zenith_deg,
+        sun.azimuth_deg, sun.equation_of_time_min);
 }
 
 void answer_psa(const SpaInput& input, WorkOutAnswer& answer) {
@@ -82,7 +85,12 @@ void work_out(const SunOptions& given, WorkOutAnswer& answer) {
     if (answer.fault) return;
     const auto time = read_iso_time(given.time);
     if (!time) {
-        answer.fault = Fault{FaultCode::bad_usage, {}, 0, "--time", given.time, "an ISO 8601 instant",
+        answer.fault = Fault{FaultCode::bad_usage,
+                             {},
+                             0,
+                             "--time",
+                             given.time,
+                             "an ISO 8601 instant",
                              "write it as 2003-10-17T12:30:30-07:00"};
         return;
     }
@@ -100,22 +108,25 @@ void work_out(const SunOptions& given, WorkOutAnswer& answer) {
         answer_spa(input, answer);
 }
 
-}  // namespace
+} // namespace
 
 void add_work_out_sun(CLI::App& work_out_app, WorkOutAnswer& answer) {
     CLI::App* topic = work_out_app.add_subcommand("sun", "where the sun stands at an instant");
     const auto given = std::make_shared<SunOptions>();
     topic->add_option("--at", given->at, "LAT,LON[,ELEV_M] in degrees, north and east positive")->required();
     topic->add_option("--time", given->time, "instant, ISO 8601; without a zone it is UTC")->required();
-    topic->add_option("--pressure-hpa", given->pressure_hpa, "air pressure, for refraction")->capture_default_str();
+    topic->add_option("--pressure-hpa", given->pressure_hpa, "air pressure, for refraction")
+        ->capture_default_str();
     topic->add_option("--temp-c", given->temp_c, "air temperature, for refraction")->capture_default_str();
-    topic->add_option("--delta-t", given->delta_t_s, "terrestrial minus universal time, s (spa)")->capture_default_str();
+    topic->add_option("--delta-t", given->delta_t_s, "terrestrial minus universal time, s (spa)")
+        ->capture_default_str();
     topic->add_option("--method", given->method, "spa: exact, psa: the fast one of the shade step")
         ->check(CLI::IsMember({"spa", "psa"}))
         ->capture_default_str();
-    topic->footer("Example: unstring work-out sun --at 39.742476,-105.1786,1830.14 --time 2003-10-17T12:30:30-07:00 "
-                  "--pressure-hpa 820 --temp-c 11 --delta-t 67");
+    topic->footer(
+        "Example: unstring work-out sun --at 39.742476,-105.1786,1830.14 --time 2003-10-17T12:30:30-07:00 "
+        "--pressure-hpa 820 --temp-c 11 --delta-t 67");
     topic->callback([given, &answer] { work_out(*given, answer); });
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -9,10 +9,11 @@ namespace {
 constexpr double kDark_wh = 1e-9;
 using Lanes = std::array<double, kLanes>;
 
-/// One hour of all lanes. What is wanted in vain is added to `unmet`; use never sinks the charge below the floor, and a
-/// floor that has risen above the charge leaves it where it is.
-inline void one_hour(const double* yield, const double* charge_frac, const double* wanted, const double* floor,
-                     const Lanes& panel_wp, const Lanes& capacity, Lanes& charge, Lanes& unmet) {
+/// One hour of all lanes. What is wanted in vain is added to `unmet`; use never sinks the charge below the
+/// floor, and a floor that has risen above the charge leaves it where it is.
+inline void one_hour(const double* yield, const double* charge_frac, const double* wanted,
+                     const double* floor, const Lanes& panel_wp, const Lanes& capacity, Lanes& charge,
+                     Lanes& unmet) {
     for (std::size_t l = 0; l < kLanes; ++l) {
         const double filled = charge[l] + yield[l] * panel_wp[l] * charge_frac[l];
         const double full = filled < capacity[l] ? filled : capacity[l];
@@ -37,8 +38,9 @@ struct NightCount {
 
 /// The run over the years, one day at a time.
 class Runner {
-  public:
-    Runner(const SunYear& sun, const BatteryGroup& group, std::span<const double> yield, const Lanes& panel_wp)
+public:
+    Runner(const SunYear& sun, const BatteryGroup& group, std::span<const double> yield,
+           const Lanes& panel_wp)
         : sun_(sun), group_(group), yield_(yield), panel_wp_(panel_wp), charge_(group.capacity_wh) {
         for (std::size_t l = 0; l < kLanes; ++l) per_capacity_[l] = 1.0 / charge_[l];
     }
@@ -56,11 +58,12 @@ class Runner {
             hours(year, noon, day * 24 + 24, soc, unmet);
         }
         if (!is_reported) return;
-        for (std::size_t l = 0; l < kLanes; ++l) runs[l].unmet_kwh += unmet[l] * group_.discharge_frac[l] / 1000.0;
+        for (std::size_t l = 0; l < kLanes; ++l)
+            runs[l].unmet_kwh += unmet[l] * group_.discharge_frac[l] / 1000.0;
     }
     [[nodiscard]] const Lanes& charge() const { return charge_; }
 
-  private:
+private:
     void hours(std::size_t year, std::size_t from, std::size_t to, float* soc, Lanes& year_unmet) {
         Lanes unmet{};
         Lanes charge = charge_;
@@ -70,7 +73,8 @@ class Runner {
                      group_.wanted_wh.data() + of_year, group_.floor_wh.data() + of_year, panel_wp_,
                      group_.capacity_wh, charge, unmet);
             if (soc == nullptr) continue;
-            for (std::size_t l = 0; l < kLanes; ++l) soc[of_year + l] = static_cast<float>(charge[l] * per_capacity_[l]);
+            for (std::size_t l = 0; l < kLanes; ++l)
+                soc[of_year + l] = static_cast<float>(charge[l] * per_capacity_[l]);
         }
         charge_ = charge;
         for (std::size_t l = 0; l < kLanes; ++l) {
@@ -90,21 +94,24 @@ class Runner {
 
 /// What each lane's panel gives per calendar month, mean of the reported years.
 std::array<std::array<double, 12>, kLanes> supply_kwh(const SunYear& sun, std::span<const double> yield,
-                                                      const Lanes& panel_wp, std::size_t first_year, std::size_t years) {
+                                                      const Lanes& panel_wp, std::size_t first_year,
+                                                      std::size_t years) {
     std::array<std::array<double, 12>, kLanes> supply{};
     for (std::size_t day = first_year * kDays; day < years * kDays; ++day) {
         const SunDay& today = sun.days[day % kDays];
         Lanes sum{};
         for (std::size_t h = today.first_lit; h < today.end_lit; ++h)
             for (std::size_t l = 0; l < kLanes; ++l) sum[l] += yield[(day * 24 + h) * kLanes + l];
-        for (std::size_t l = 0; l < kLanes; ++l) supply[l][static_cast<std::size_t>(today.month - 1)] += sum[l];
+        for (std::size_t l = 0; l < kLanes; ++l)
+            supply[l][static_cast<std::size_t>(today.month - 1)] += sum[l];
     }
     for (std::size_t l = 0; l < kLanes; ++l)
-        for (double& month : supply[l]) month *= panel_wp[l] / 1000.0 / static_cast<double>(years - first_year);
+        for (double& month : supply[l])
+            month *= panel_wp[l] / 1000.0 / static_cast<double>(years - first_year);
     return supply;
 }
 
-}  // namespace
+} // namespace
 
 double usable_frac(double temp_c) {
     if (temp_c >= 25) return 1;
@@ -114,7 +121,8 @@ double usable_frac(double temp_c) {
 
 double BatteryRun::dark_a_year() const {
     if (dark_in_year.empty()) return 0;
-    return std::accumulate(dark_in_year.begin(), dark_in_year.end(), 0.0) / static_cast<double>(dark_in_year.size());
+    return std::accumulate(dark_in_year.begin(), dark_in_year.end(), 0.0) /
+           static_cast<double>(dark_in_year.size());
 }
 
 BatteryGroup::BatteryGroup()
@@ -152,7 +160,8 @@ std::array<BatteryRun, kLanes> run_batteries(const SunYear& sun, const BatteryGr
         const bool is_reported = year >= first_year;
         if (is_reported)
             for (BatteryRun& run : runs) run.dark_in_year.push_back(0);
-        float* soc_of_year = is_reported && soc != nullptr ? soc + (year - first_year) * kHours * kLanes : nullptr;
+        float* soc_of_year =
+            is_reported && soc != nullptr ? soc + (year - first_year) * kHours * kLanes : nullptr;
         runner.year(year, is_reported, soc_of_year, runs);
     }
     const auto supply = supply_kwh(sun, yield_wh_per_wp, panel_wp, first_year, years);
@@ -164,4 +173,4 @@ std::array<BatteryRun, kLanes> run_batteries(const SunYear& sun, const BatteryGr
     return runs;
 }
 
-}  // namespace unstring
+} // namespace unstring

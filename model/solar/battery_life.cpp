@@ -10,7 +10,7 @@ namespace {
 
 /// Takes a series value by value and keeps where it turns.
 class TurnFinder {
-  public:
+public:
     TurnFinder(float first, std::vector<Turn>& turns) : turns_(turns), before_(first) {
         turns_.push_back({static_cast<double>(first), 0});
     }
@@ -28,10 +28,10 @@ class TurnFinder {
         if (moved_at_ > 0) turns_.push_back({static_cast<double>(before_), moved_at_});
     }
 
-  private:
+private:
     std::vector<Turn>& turns_;
     float before_;
-    float way_ = 0;  ///< of the last step that moved
+    float way_ = 0; ///< of the last step that moved
     std::size_t moved_at_ = 0;
 };
 
@@ -63,10 +63,10 @@ double heat_of_cycles(double temp_c) {
 
 double wear_of_depth(double depth, double c_rate) { return 4.38e-8 + 1.55e-8 * depth + 1.68e-7 * c_rate; }
 
-/// wear_of_depth raised to the power in which stress adds up, between 65 places: it is all but linear in the depth, so
-/// that the error stays below 1e-5 of the value.
+/// wear_of_depth raised to the power in which stress adds up, between 65 places: it is all but linear in the
+/// depth, so that the error stays below 1e-5 of the value.
 class WearTable {
-  public:
+public:
     explicit WearTable(double c_rate) {
         for (std::size_t i = 0; i < wear_.size(); ++i)
             wear_[i] = std::pow(wear_of_depth(static_cast<double>(i) / kPieces, c_rate), 1.0 / kCyclePower);
@@ -77,7 +77,7 @@ class WearTable {
         return wear_[from] + (wear_[from + 1] - wear_[from]) * (place - static_cast<double>(from));
     }
 
-  private:
+private:
     static constexpr double kPieces = 64;
     std::array<double, 65> wear_;
 };
@@ -96,7 +96,7 @@ double cycle_stress(const SunYear& sun, const ChargeHistory& history, const std:
     return stress;
 }
 
-}  // namespace
+} // namespace
 
 std::vector<Turn> turning_points(std::span<const float> values) {
     std::vector<Turn> turns;
@@ -111,7 +111,7 @@ std::vector<Cycle> rainflow(std::span<const Turn> turns) {
     std::vector<Cycle> cycles;
     cycles.reserve(turns.size());
     std::vector<Turn> open;
-    std::size_t start = 0;  // the turns before it are done with
+    std::size_t start = 0; // the turns before it are done with
     for (const Turn& turn : turns) {
         open.push_back(turn);
         while (open.size() - start >= 3) {
@@ -119,7 +119,7 @@ std::vector<Cycle> rainflow(std::span<const Turn> turns) {
             const double last = range_of(open[n - 1], open[n - 2]);
             const double before = range_of(open[n - 2], open[n - 3]);
             if (last < before) break;
-            if (n - start == 3) {  // the range before holds the start: half a cycle, and the start moves on
+            if (n - start == 3) { // the range before holds the start: half a cycle, and the start moves on
                 cycles.push_back({before, 0.5, open[n - 2].at});
                 ++start;
             } else {
@@ -146,13 +146,15 @@ ChargeHistory charge_history(const SunYear& sun, std::span<const float> soc, std
             sum += soc[hour * stride];
             moving_hours += finder.add(soc[hour * stride], hour) ? 1 : 0;
         }
-        history.mean_soc[static_cast<std::size_t>(sun.days[day % kDays].month - 1)] += static_cast<double>(sum);
+        history.mean_soc[static_cast<std::size_t>(sun.days[day % kDays].month - 1)] +=
+            static_cast<double>(sum);
     }
     finder.finish();
     for (std::size_t month = 0; month < 12; ++month)
         history.mean_soc[month] /= 24.0 * days_in_month(static_cast<int>(month) + 1) * history.years;
     double moved = 0;
-    for (std::size_t i = 1; i < history.turns.size(); ++i) moved += range_of(history.turns[i], history.turns[i - 1]);
+    for (std::size_t i = 1; i < history.turns.size(); ++i)
+        moved += range_of(history.turns[i], history.turns[i - 1]);
     if (moving_hours > 0) history.c_rate = moved / static_cast<double>(moving_hours);
     return history;
 }
@@ -166,7 +168,8 @@ double cycle_rate(double temp_c, double depth, double c_rate) {
     return wear_of_depth(depth, c_rate) * heat_of_cycles(temp_c);
 }
 
-double battery_life_yr(const SunYear& sun, const ChargeHistory& history, const std::array<double, 12>& temp_c) {
+double battery_life_yr(const SunYear& sun, const ChargeHistory& history,
+                       const std::array<double, 12>& temp_c) {
     const double calendar = calendar_stress(history, temp_c);
     const double cycles = cycle_stress(sun, history, temp_c) / history.years;
     for (double year = 1; year < kLifeCap_yr; ++year) {
@@ -176,4 +179,4 @@ double battery_life_yr(const SunYear& sun, const ChargeHistory& history, const s
     return kLifeCap_yr;
 }
 
-}  // namespace unstring
+} // namespace unstring

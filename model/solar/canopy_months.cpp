@@ -8,9 +8,10 @@ Monthly canopy_through(Leaf leaf, double lat_deg, const CanopyTerms& terms) {
     if (leaf == Leaf::evergreen) return through;
     for (std::size_t month = 0; month < 12; ++month) {
         const double leaves = terms.leaves[lat_deg < 0 ? (month + 6) % 12 : month];
-        through[month] = terms.deciduous_leaf_off + leaves * (terms.deciduous_leaf_on - terms.deciduous_leaf_off);
+        through[month] =
+            terms.deciduous_leaf_off + leaves * (terms.deciduous_leaf_on - terms.deciduous_leaf_off);
     }
     return through;
 }
 
-}  // namespace unstring
+} // namespace unstring

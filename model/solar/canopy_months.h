@@ -6,10 +6,11 @@
 
 namespace unstring {
 
-struct CanopyTerms {  ///< shares of the beam let through
-    double deciduous_leaf_on = 0.05, deciduous_leaf_off = 0.45;  ///< J. Konarska et al., Theor. Appl. Climatol. 117
-                                                                 ///< (2014) 363-376: .013-.053 and .40-.52 (from memory)
-    double evergreen = 0.07;                                     ///< conifers .05-.10
+struct CanopyTerms { ///< shares of the beam let through
+    double deciduous_leaf_on = 0.05,
+           deciduous_leaf_off = 0.45; ///< J. Konarska et al., Theor. Appl. Climatol. 117
+                                      ///< (2014) 363-376: .013-.053 and .40-.52 (from memory)
+    double evergreen = 0.07;          ///< conifers .05-.10
     /// Share of the leaves that are out, January first, on the northern half of the Earth.
     Monthly leaves = {0, 0, 0, .3, .8, 1, 1, 1, .9, .6, .2, 0};
 };
@@ -17,4 +18,4 @@ struct CanopyTerms {  ///< shares of the beam let through
 /// @param lat_deg  south of the equator the year of the leaves is turned by six months
 [[nodiscard]] Monthly canopy_through(Leaf leaf, double lat_deg, const CanopyTerms& terms = {});
 
-}  // namespace unstring
+} // namespace unstring

@@ -20,8 +20,13 @@ namespace {
 constexpr double kNoSun_wh_m2 = 100;
 
 Fault climate_fault(std::string_view field, std::size_t month, double found, std::string wanted) {
-    return {FaultCode::value_unreadable, {}, 0, fmt::format("{} of month {}", field, month + 1),
-            fmt::format("{}", found), std::move(wanted), "check the climate file, its units and the place of the poles"};
+    return {FaultCode::value_unreadable,
+            {},
+            0,
+            fmt::format("{} of month {}", field, month + 1),
+            fmt::format("{}", found),
+            std::move(wanted),
+            "check the climate file, its units and the place of the poles"};
 }
 
 Expected<void> check_climate(const Climate& climate) {
@@ -37,11 +42,17 @@ Expected<void> check_climate(const Climate& climate) {
 Expected<std::vector<const Head*>> wanted_heads(const ShadeInput& input) {
     for (const std::string& name : input.heads)
         if (find_head(input.catalog, name) == nullptr)
-            return tl::unexpected(Fault{FaultCode::value_unknown, {}, 0, "head", name, "a head of the catalogue",
+            return tl::unexpected(Fault{FaultCode::value_unknown,
+                                        {},
+                                        0,
+                                        "head",
+                                        name,
+                                        "a head of the catalogue",
                                         "see the heads of catalogue.json"});
     std::vector<const Head*> heads;
     for (const Head& head : input.catalog.heads)
-        if (input.heads.empty() || std::find(input.heads.begin(), input.heads.end(), head.head) != input.heads.end())
+        if (input.heads.empty() ||
+            std::find(input.heads.begin(), input.heads.end(), head.head) != input.heads.end())
             heads.push_back(&head);
     return heads;
 }
@@ -78,7 +89,7 @@ std::vector<SunDirection> sun_directions(const SunYear& sun, double convergence_
     return directions;
 }
 
-}  // namespace
+} // namespace
 
 Expected<Monthly> monthly_clearness(const SunYear& sun, const Monthly& ghi_kwh_m2_day) {
     const Monthly outside = monthly_outside_wh_m2(sun);
@@ -88,10 +99,10 @@ Expected<Monthly> monthly_clearness(const SunYear& sun, const Monthly& ghi_kwh_m
         const double most = outside[month] * kClearnessMeanMax;
         const double least = outside[month] < kNoSun_wh_m2 ? 0 : outside[month] * kClearnessMeanMin;
         if (!(ghi_wh >= least && ghi_wh <= std::max(most, kNoSun_wh_m2)))
-            return tl::unexpected(climate_fault(
-                "ghi_kwh_m2_day", month, ghi_kwh_m2_day[month],
-                fmt::format("{:.2f} to {:.2f}: outside the atmosphere it is {:.2f}", least / 1000.0, most / 1000.0,
-                            outside[month] / 1000.0)));
+            return tl::unexpected(
+                climate_fault("ghi_kwh_m2_day", month, ghi_kwh_m2_day[month],
+                              fmt::format("{:.2f} to {:.2f}: outside the atmosphere it is {:.2f}",
+                                          least / 1000.0, most / 1000.0, outside[month] / 1000.0)));
         clearness[month] = outside[month] < kNoSun_wh_m2 ? 0.4 : ghi_wh / outside[month];
     }
     return clearness;
@@ -107,8 +118,8 @@ Expected<CityLight> city_light(const ShadeInput& input, const ShadeTerms& terms)
                               Sampling::staggered);
     const auto clearness = monthly_clearness(light.sun, input.climate.ghi_kwh_m2_day);
     if (!clearness) return tl::unexpected(clearness.error());
-    light.sky = make_hourly_sky(light.sun, generate_clearness(*clearness, terms.weather_years + kSettlingYears, 1),
-                                kSettlingYears);
+    light.sky = make_hourly_sky(
+        light.sun, generate_clearness(*clearness, terms.weather_years + kSettlingYears, 1), kSettlingYears);
     light.air_c = hourly_air_c(light.sun, input.climate.temp_c, terms.temp_swing_k);
     light.directions = sun_directions(light.sun, input.city.convergence_deg);
     light.temp_c = input.climate.temp_c;
@@ -116,9 +127,9 @@ Expected<CityLight> city_light(const ShadeInput& input, const ShadeTerms& terms)
     light.deciduous = canopy_through(Leaf::deciduous, centre.lat_deg);
     light.evergreen = canopy_through(Leaf::evergreen, centre.lat_deg);
     for (std::size_t first = 0; first < heads->size(); first += kLanes)
-        light.groups.push_back(
-            head_group(std::span(*heads).subspan(first, std::min(kLanes, heads->size() - first)), light, terms));
+        light.groups.push_back(head_group(
+            std::span(*heads).subspan(first, std::min(kLanes, heads->size() - first)), light, terms));
     return light;
 }
 
-}  // namespace unstring
+} // namespace unstring

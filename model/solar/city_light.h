@@ -1,5 +1,6 @@
 #pragma once
-// Everything of the shade step that is the same for all poles: the sun, the weather, the heads' lamps and batteries.
+// Everything of the shade step that is the same for all poles: the sun, the weather, the heads' lamps and
+// batteries.
 
 #include <vector>
 
@@ -15,7 +16,7 @@ namespace unstring {
 /// Up to kLanes heads of the catalogue, run side by side.
 struct HeadGroup {
     std::vector<const Head*> heads;
-    BatteryGroup fresh, worn;  ///< the batteries new, and at the end of their lives
+    BatteryGroup fresh, worn; ///< the batteries new, and at the end of their lives
 };
 
 /// Where a step of the sun falls among the horizon's directions.
@@ -28,7 +29,7 @@ struct CityLight {
     SunYear sun;
     HourlySky sky;
     std::vector<double> air_c;
-    std::vector<SunDirection> directions;  ///< one per step of the sun
+    std::vector<SunDirection> directions; ///< one per step of the sun
     std::vector<HeadGroup> groups;
     Monthly temp_c{}, albedo{}, deciduous{}, evergreen{};
 };
@@ -39,4 +40,4 @@ struct CityLight {
 /// Monthly clearness of a climate at a place. @fault value_unreadable
 [[nodiscard]] Expected<Monthly> monthly_clearness(const SunYear& sun, const Monthly& ghi_kwh_m2_day);
 
-}  // namespace unstring
+} // namespace unstring

@@ -9,14 +9,14 @@ double dimmed_frac(std::span<const DimStep> dimming, double lit_h) {
     return 1;
 }
 
-}  // namespace
+} // namespace
 
 std::vector<double> lamp_load_wh(const SunYear& sun, double led_w, std::span<const DimStep> dimming,
                                  double switch_deg) {
     std::vector<double> load(kHours, 0.0);
     constexpr double kStep_h = 1.0 / kLampSteps;
     // The first hours of the year belong to a night that began on its last afternoon: start at that noon.
-    double lit_since_h = -1;  // of the night that runs
+    double lit_since_h = -1; // of the night that runs
     const std::size_t start = sun.noon[kDays - 1];
     for (std::size_t n = 0; n < kHours; ++n) {
         const std::size_t hour = (start + n) % kHours;
@@ -31,4 +31,4 @@ std::vector<double> lamp_load_wh(const SunYear& sun, double led_w, std::span<con
     return load;
 }
 
-}  // namespace unstring
+} // namespace unstring

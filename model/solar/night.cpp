@@ -24,7 +24,7 @@ std::vector<double> day_clearness(const NightCase& input) {
 
 double sum_of(std::span<const double> values) { return std::accumulate(values.begin(), values.end(), 0.0); }
 
-}  // namespace
+} // namespace
 
 std::vector<double> hourly_air_c(const SunYear& sun, const Monthly& temp_c, double swing_k) {
     std::vector<double> air(kHours);
@@ -51,11 +51,13 @@ NightAnswer run_night(const NightCase& input) {
     const SunYear sun = make_sun_year(input.place, input.day_model, input.sun_step_min);
     const HourlySky sky = make_hourly_sky(sun, day_clearness(input), kSettlingYears);
     const std::vector<double> air_c = hourly_air_c(sun, input.temp_c, input.temp_swing_k);
-    const PanelLight light = panel_light(sun, beam_through(sun, input.layers), input.layers, input.panel, 0.02);
+    const PanelLight light =
+        panel_light(sun, beam_through(sun, input.layers), input.layers, input.panel, 0.02);
     std::vector<double> yield(sky.global.size() * kLanes, 0.0);
     write_yield_wh_per_wp(sun, sky, light, air_c, input.terms, yield.data(), kLanes);
     BatteryGroup group;
-    set_lane(group, 0, sun, lamp_load_wh(sun, input.led_w, input.dimming, input.switch_deg), air_c, input.battery);
+    set_lane(group, 0, sun, lamp_load_wh(sun, input.led_w, input.dimming, input.switch_deg), air_c,
+             input.battery);
     std::vector<float> soc(static_cast<std::size_t>(input.years) * kHours * kLanes);
     const BatteryRun run = run_batteries(sun, group, yield, {input.panel_wp}, kSettlingYears, soc.data())[0];
 
@@ -84,4 +86,4 @@ NightAnswer run_night(const NightCase& input) {
     return answer;
 }
 
-}  // namespace unstring
+} // namespace unstring

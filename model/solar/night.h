@@ -18,9 +18,9 @@ enum class Weather { mean, generated };
 
 struct NightCase {
     LonLat place;
-    Monthly clearness{};       ///< of the month's mean day
+    Monthly clearness{}; ///< of the month's mean day
     Monthly temp_c{};
-    double temp_swing_k = 0;   ///< times cos 15(h - 15), h in solar time
+    double temp_swing_k = 0; ///< times cos 15(h - 15), h in solar time
     PanelPlace panel;
     double panel_wp = 0;
     PanelTerms terms;
@@ -37,11 +37,12 @@ struct NightCase {
     int sun_step_min = 5;
 };
 
-struct NightAnswer {  ///< means of a reported year
+struct NightAnswer { ///< means of a reported year
     double ghi_kwh_m2 = 0, panel_kwh = 0, demand_kwh = 0, unmet_kwh = 0;
-    double nights_dark_year = 0, lolp_energy = 0, lolp_nights = 0, cycles_year = 0, battery_years = 0, final_soc = 0;
+    double nights_dark_year = 0, lolp_energy = 0, lolp_nights = 0, cycles_year = 0, battery_years = 0,
+           final_soc = 0;
     double shade_score = 0;
-    int worst_month = 0;  ///< 1..12; 0 = the lamp is never lit
+    int worst_month = 0; ///< 1..12; 0 = the lamp is never lit
     int years_run = 0;
     double sky_view_frac = 1, lit_h_year = 0;
     MonthlyLight light;
@@ -58,4 +59,4 @@ struct NightAnswer {  ///< means of a reported year
 
 [[nodiscard]] NightAnswer run_night(const NightCase& input);
 
-}  // namespace unstring
+} // namespace unstring

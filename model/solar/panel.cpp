@@ -20,7 +20,8 @@ Normal panel_normal(const PanelPlace& place) {
 }
 
 /// Mean of what is let through over an hour's steps, weighted by the cosine on the panel.
-double through_in_hour(const SunYear& sun, std::span<const float> through, const Normal& normal, std::size_t hour) {
+double through_in_hour(const SunYear& sun, std::span<const float> through, const Normal& normal,
+                       std::size_t hour) {
     float weights = 0;
     float sum = 0;
     for (std::uint32_t i = sun.first_step[hour]; i < sun.first_step[hour + 1]; ++i) {
@@ -38,7 +39,7 @@ std::size_t month_place(const SunYear& sun, std::size_t hour) {
     return static_cast<std::size_t>(sun.month_of_hour(hour) - 1);
 }
 
-}  // namespace
+} // namespace
 
 std::vector<float> beam_through(const SunYear& sun, const SkyLayers& layers) {
     std::vector<float> through(sun.steps.size(), 1.0F);
@@ -67,7 +68,8 @@ PanelLight panel_light(const SunYear& sun, std::span<const float> through, const
     for (std::size_t hour = 0; hour < kHours; ++hour) {
         if (sun.global_share[hour] <= 0) continue;
         const double elevation_deg = sun.elevation_deg[hour];
-        const double incidence = cos_incidence(place.tilt_deg, place.bearing_deg, elevation_deg, sun.azimuth_deg[hour]);
+        const double incidence =
+            cos_incidence(place.tilt_deg, place.bearing_deg, elevation_deg, sun.azimuth_deg[hour]);
         const double ratio = beam_ratio(incidence, std::sin(elevation_deg * kRadPerDeg), place.tilt_deg);
         light.open_beam_factor[hour] = ratio;
         light.beam_factor[hour] = ratio * through_in_hour(sun, through, normal, hour);
@@ -79,7 +81,8 @@ PanelLight panel_light(const SunYear& sun, std::span<const float> through, const
     light.open_sky_frac = even_sky_frac(place.tilt_deg);
     const double solid = sees({layers.solid});
     const double hard = layers.evergreen.is_open() ? solid : sees({layers.solid, layers.evergreen});
-    const double all = layers.deciduous.is_open() ? hard : sees({layers.solid, layers.evergreen, layers.deciduous});
+    const double all =
+        layers.deciduous.is_open() ? hard : sees({layers.solid, layers.evergreen, layers.deciduous});
     light.opaque_sky_frac = all;
     for (std::size_t month = 0; month < 12; ++month) {
         light.sky_frac[month] = all + layers.deciduous_diffuse[month] * (hard - all) +
@@ -102,7 +105,8 @@ double panel_power_w(double panel_wp, double light_w_m2, double cell_c, double t
 }
 
 void write_yield_wh_per_wp(const SunYear& sun, const HourlySky& sky, const PanelLight& light,
-                           std::span<const double> air_c, const PanelTerms& terms, double* yield, std::size_t stride) {
+                           std::span<const double> air_c, const PanelTerms& terms, double* yield,
+                           std::size_t stride) {
     const double per_w_m2 = 1.0 / (kFaimanStill + kFaimanWind * terms.wind_m_s);
     for (std::size_t day = 0; day < kDays * static_cast<std::size_t>(sky.years); ++day) {
         const SunDay& today = sun.days[day % kDays];
@@ -112,8 +116,8 @@ void write_yield_wh_per_wp(const SunYear& sun, const HourlySky& sky, const Panel
         for (std::size_t h = today.first_lit; h < today.end_lit; ++h) {
             const std::size_t at = day * 24 + h;
             const std::size_t of_year = day % kDays * 24 + h;
-            const double light_w_m2 =
-                sky.beam_like[at] * light.beam_factor[of_year] + sky.even_sky[at] * sky_frac + sky.global[at] * ground;
+            const double light_w_m2 = sky.beam_like[at] * light.beam_factor[of_year] +
+                                      sky.even_sky[at] * sky_frac + sky.global[at] * ground;
             const double warmer_k = air_c[of_year] + light_w_m2 * per_w_m2 - 25.0;
             const double power = light_w_m2 * 0.001 * (1.0 + terms.temp_coeff * warmer_k) * terms.gives_frac;
             yield[at * stride] = std::max(0.0, power);
@@ -142,4 +146,4 @@ double shade_score(const MonthlyLight& light) {
     return score;
 }
 
-}  // namespace unstring
+} // namespace unstring

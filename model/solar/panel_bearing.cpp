@@ -37,13 +37,14 @@ double turned(double deg) {
     return rest < 0 ? rest + 360.0 : rest;
 }
 
-}  // namespace
+} // namespace
 
 PanelBearing panel_bearing(const City& city, const Pole& pole, double turn_deg) {
     if (pole.arm_deg) return {turned(*pole.arm_deg + turn_deg), "file"};
-    if (const auto street = street_bearing_deg(city, pole.place)) return {turned(*street + turn_deg), "street"};
+    if (const auto street = street_bearing_deg(city, pole.place))
+        return {turned(*street + turn_deg), "street"};
     const bool is_south = city.centre.lat_deg < 0;
     return {turned((is_south ? 0.0 : 180.0) - city.convergence_deg), is_south ? "north" : "south"};
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -7,15 +7,15 @@
 
 namespace unstring {
 
-inline constexpr double kStreetNear_m = 60;  ///< a street line further away says nothing about the arm
+inline constexpr double kStreetNear_m = 60; ///< a street line further away says nothing about the arm
 
 struct PanelBearing {
-    double bearing_deg = 180;  ///< of the downward tilt, clockwise from grid north
-    std::string from;          ///< "file", "street", "south" ("north" south of the equator)
+    double bearing_deg = 180; ///< of the downward tilt, clockwise from grid north
+    std::string from;         ///< "file", "street", "south" ("north" south of the equator)
 };
 
-/// The arm's bearing from the file, else square to the nearest street line and over it, else toward the equator;
-/// each turned by the head's own turn (0: the panel leans away from the pole), the last one not.
+/// The arm's bearing from the file, else square to the nearest street line and over it, else toward the
+/// equator; each turned by the head's own turn (0: the panel leans away from the pole), the last one not.
 [[nodiscard]] PanelBearing panel_bearing(const City& city, const Pole& pole, double turn_deg);
 
-}  // namespace unstring
+} // namespace unstring

@@ -51,7 +51,8 @@ std::vector<Block> blocks_of(const City& city) {
     for (const CanopyArea& crown : city.canopy)
         if (crown.ring.size() >= 3)
             blocks.push_back({crown.ring, crown.height_m,
-                              crown.leaf == Leaf::evergreen ? Kind::evergreen : Kind::deciduous, box_of(crown.ring)});
+                              crown.leaf == Leaf::evergreen ? Kind::evergreen : Kind::deciduous,
+                              box_of(crown.ring)});
     for (const Obstacle& obstacle : city.obstacles)
         if (obstacle.ring.size() >= 3)
             blocks.push_back({obstacle.ring, obstacle.height_m, Kind::solid, box_of(obstacle.ring)});
@@ -60,9 +61,12 @@ std::vector<Block> blocks_of(const City& city) {
 
 std::span<float> layer_of(PoleHorizon& horizon, Kind kind) {
     switch (kind) {
-        case Kind::deciduous: return horizon.deciduous_deg;
-        case Kind::evergreen: return horizon.evergreen_deg;
-        case Kind::solid: break;
+    case Kind::deciduous:
+        return horizon.deciduous_deg;
+    case Kind::evergreen:
+        return horizon.evergreen_deg;
+    case Kind::solid:
+        break;
     }
     return horizon.solid_deg;
 }
@@ -82,7 +86,8 @@ Tiles tiles_of(const City& city, const std::vector<PoleIx>& poles) {
     Tiles tiles;
     for (std::size_t i = 0; i < poles.size(); ++i) {
         const MapPoint place = city.poles[poles[i].place()].place;
-        tiles[{std::lround(std::floor(place.x_m / kTile_m)), std::lround(std::floor(place.y_m / kTile_m))}].push_back(i);
+        tiles[{std::lround(std::floor(place.x_m / kTile_m)), std::lround(std::floor(place.y_m / kTile_m))}]
+            .push_back(i);
     }
     return tiles;
 }
@@ -92,7 +97,8 @@ Expected<void> scan_raster(const City& city, const std::vector<PoleIx>& poles, H
     const Tiles tiles = tiles_of(city, poles);
     double done = 0;
     for (const auto& [tile, members] : tiles) {
-        if (progress.is_cancelled()) return tl::unexpected(Fault{FaultCode::cancelled, {}, 0, {}, {}, {}, {}});
+        if (progress.is_cancelled())
+            return tl::unexpected(Fault{FaultCode::cancelled, {}, 0, {}, {}, {}, {}});
         const MapPoint centre{(static_cast<double>(tile.first) + 0.5) * kTile_m,
                               (static_cast<double>(tile.second) + 0.5) * kTile_m};
         const auto window = heights.window(centre, 0.5 * kTile_m + kReach_m + 2.0 * heights.cell_m());
@@ -100,8 +106,9 @@ Expected<void> scan_raster(const City& city, const std::vector<PoleIx>& poles, H
         const WindowBounds bounds = bounds_of(*window);
         tbb::parallel_for(std::size_t{0}, members.size(), [&](std::size_t k) {
             PoleHorizon& horizon = horizons[members[k]];
-            ScannedHorizon scanned = scan_horizon(*window, bounds, city.poles[poles[members[k]].place()].place,
-                                                  horizon.panel_height_m, kReach_m, kDirections);
+            ScannedHorizon scanned =
+                scan_horizon(*window, bounds, city.poles[poles[members[k]].place()].place,
+                             horizon.panel_height_m, kReach_m, kDirections);
             horizon.deciduous_deg = std::move(scanned.height_deg);
             horizon.unknown_deg = std::move(scanned.unknown_deg);
         });
@@ -111,7 +118,7 @@ Expected<void> scan_raster(const City& city, const std::vector<PoleIx>& poles, H
     return {};
 }
 
-}  // namespace
+} // namespace
 
 Expected<std::vector<PoleHorizon>> pole_horizons(const City& city, const std::vector<PoleIx>& poles,
                                                  HeightSource* heights, const Progress& progress) {
@@ -139,4 +146,4 @@ Expected<std::vector<PoleHorizon>> pole_horizons(const City& city, const std::ve
     return horizons;
 }
 
-}  // namespace unstring
+} // namespace unstring

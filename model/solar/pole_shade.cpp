@@ -57,8 +57,9 @@ HorizonProfile true_profile(const std::vector<float>& heights_deg, double conver
     if (is_open(heights_deg)) return {};
     std::vector<HorizonPoint> points;
     for (std::size_t i = 0; i < heights_deg.size(); ++i)
-        points.push_back({360.0 * static_cast<double>(i) / static_cast<double>(heights_deg.size()) + convergence_deg,
-                          static_cast<double>(heights_deg[i])});
+        points.push_back(
+            {360.0 * static_cast<double>(i) / static_cast<double>(heights_deg.size()) + convergence_deg,
+             static_cast<double>(heights_deg[i])});
     return HorizonProfile(std::move(points));
 }
 
@@ -82,7 +83,8 @@ void run_group(const CityLight& light, const HeadGroup& group, const ShadeTerms&
     for (std::size_t lane = 0; lane < answers.size(); ++lane) {
         const std::span<const float> soc = std::span(scratch.soc).subspan(lane);
         answers[lane].nights_dark_year_new = fresh[lane].dark_a_year();
-        answers[lane].battery_years = battery_life_yr(light.sun, charge_history(light.sun, soc, kLanes), light.temp_c);
+        answers[lane].battery_years =
+            battery_life_yr(light.sun, charge_history(light.sun, soc, kLanes), light.temp_c);
         panel_wp[lane] *= std::pow(1.0 - terms.panel_ages_frac_yr, answers[lane].battery_years);
     }
     const auto worn = run_batteries(light.sun, group.worn, scratch.yield, panel_wp, kSettlingYears, nullptr);
@@ -98,7 +100,8 @@ void run_group(const CityLight& light, const HeadGroup& group, const ShadeTerms&
     }
 }
 
-void judge(const Pole& pole, const Head& head, double nights_goal, const PoleHorizon& horizon, HeadAnswer& answer) {
+void judge(const Pole& pole, const Head& head, double nights_goal, const PoleHorizon& horizon,
+           HeadAnswer& answer) {
     const double goal = goal_of(pole, nights_goal);
     answer.why = what_stops(pole, head);
     if (answer.why.empty() && answer.nights_dark_year > goal)
@@ -109,7 +112,8 @@ void judge(const Pole& pole, const Head& head, double nights_goal, const PoleHor
     const std::string note =
         horizon.unknown_deg.size() == kDirections
             ? std::string("sky unknown: no heights of trees or buildings here, reckoned as open")
-            : fmt::format("sky unknown in {} of {} directions, reckoned as open", horizon.unknown_deg.size(), kDirections);
+            : fmt::format("sky unknown in {} of {} directions, reckoned as open", horizon.unknown_deg.size(),
+                          kDirections);
     answer.why += answer.why.empty() ? note : "; " + note;
 }
 
@@ -117,19 +121,20 @@ void judge(const Pole& pole, const Head& head, double nights_goal, const PoleHor
 int best_head(const std::vector<HeadAnswer>& answers, const Catalog& catalog) {
     const auto rank = [&](const HeadAnswer& answer) {
         const Head& head = *find_head(catalog, answer.head);
-        return std::make_tuple(!answer.eligible, answer.eligible ? 0.0 : answer.nights_dark_year, head.panel_wp,
-                               head.battery_wh);
+        return std::make_tuple(!answer.eligible, answer.eligible ? 0.0 : answer.nights_dark_year,
+                               head.panel_wp, head.battery_wh);
     };
     int best = -1;
     for (std::size_t i = 0; i < answers.size(); ++i)
-        if (best < 0 || rank(answers[i]) < rank(answers[static_cast<std::size_t>(best)])) best = static_cast<int>(i);
+        if (best < 0 || rank(answers[i]) < rank(answers[static_cast<std::size_t>(best)]))
+            best = static_cast<int>(i);
     return best;
 }
 
 /// What a head's panel gets at this pole, written into its lane of the scratch room.
 HeadAnswer light_on_head(const ShadeInput& input, const CityLight& light, const ShadeTerms& terms,
-                         const SkyLayers& layers, const Head& head, const PanelBearing& bearing, std::size_t lane,
-                         ShadeScratch& scratch) {
+                         const SkyLayers& layers, const Head& head, const PanelBearing& bearing,
+                         std::size_t lane, ShadeScratch& scratch) {
     const PanelPlace place{head.tilt_deg, bearing.bearing_deg + input.city.convergence_deg, light.albedo};
     const PanelLight panel = panel_light(light.sun, scratch.through, layers, place, terms.sky_step_deg);
     write_yield_wh_per_wp(light.sun, light.sky, panel, light.air_c, {}, scratch.yield.data() + lane, kLanes);
@@ -156,10 +161,11 @@ PoleShade described(PoleIx pole, const PoleHorizon& horizon) {
 
 void make_room(const CityLight& light, ShadeScratch& scratch) {
     scratch.yield.resize(light.sky.global.size() * kLanes);
-    scratch.soc.resize(static_cast<std::size_t>(light.sky.years - light.sky.settling_years) * kHours * kLanes);
+    scratch.soc.resize(static_cast<std::size_t>(light.sky.years - light.sky.settling_years) * kHours *
+                       kLanes);
 }
 
-}  // namespace
+} // namespace
 
 PoleShade shade_pole(const ShadeInput& input, const CityLight& light, const ShadeTerms& terms, PoleIx pole_ix,
                      const PoleHorizon& horizon, ShadeScratch& scratch) {
@@ -187,4 +193,4 @@ PoleShade shade_pole(const ShadeInput& input, const CityLight& light, const Shad
     return shade;
 }
 
-}  // namespace unstring
+} // namespace unstring

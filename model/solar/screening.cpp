@@ -12,8 +12,8 @@ std::string what_stops(const Pole& pole, const Head& head) {
     if (pole.need_lm && head.lumens < *pole.need_lm)
         return fmt::format("{:.0f} lm are needed, the head gives {:.0f} lm", *pole.need_lm, head.lumens);
     if (pole.epa_allow_m2 && head.epa_m2 > *pole.epa_allow_m2)
-        return fmt::format("the pole allows {:.2f} m2 of wind area, the head has {:.2f} m2", *pole.epa_allow_m2,
-                           head.epa_m2);
+        return fmt::format("the pole allows {:.2f} m2 of wind area, the head has {:.2f} m2",
+                           *pole.epa_allow_m2, head.epa_m2);
     return {};
 }
 
@@ -21,4 +21,4 @@ double goal_of(const Pole& pole, double nights_goal) {
     return pole.critical ? std::min(nights_goal, kCriticalGoal) : nights_goal;
 }
 
-}  // namespace unstring
+} // namespace unstring

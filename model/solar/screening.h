@@ -8,13 +8,13 @@
 
 namespace unstring {
 
-inline constexpr double kCriticalGoal = 0.3;  ///< nights dark a year at a critical pole
+inline constexpr double kCriticalGoal = 0.3; ///< nights dark a year at a critical pole
 
-/// The first thing that stops it, in words and numbers; empty when nothing does. An unknown pole strength does not stop
-/// it (it is an expected cost elsewhere), nor do attachments.
+/// The first thing that stops it, in words and numbers; empty when nothing does. An unknown pole strength
+/// does not stop it (it is an expected cost elsewhere), nor do attachments.
 [[nodiscard]] std::string what_stops(const Pole& pole, const Head& head);
 
 /// Nights dark a year that this pole may have.
 [[nodiscard]] double goal_of(const Pole& pole, double nights_goal);
 
-}  // namespace unstring
+} // namespace unstring

@@ -11,4 +11,4 @@ const PoleShade* ShadeResult::find(PoleIx pole) const {
     return at != poles.end() && at->pole == pole ? &*at : nullptr;
 }
 
-}  // namespace unstring
+} // namespace unstring

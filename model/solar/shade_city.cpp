@@ -12,7 +12,7 @@
 namespace unstring {
 namespace {
 
-constexpr double kHorizonShare = 0.2;  // of the progress bar
+constexpr double kHorizonShare = 0.2; // of the progress bar
 
 std::vector<PoleIx> candidates(const City& city) {
     std::vector<PoleIx> poles;
@@ -25,23 +25,24 @@ Fault cancelled() { return {FaultCode::cancelled, {}, 0, {}, {}, {}, "nothing wa
 
 /// Progress that may be told from several threads and speaks from one at a time.
 class SharedProgress {
-  public:
+public:
     SharedProgress(const Progress& progress, std::size_t all) : progress_(progress), all_(all) {}
     void one_done() {
         const std::size_t done = ++done_;
         if (is_speaking_.test_and_set(std::memory_order_acquire)) return;
-        progress_.at(kHorizonShare + (1.0 - kHorizonShare) * static_cast<double>(done) / static_cast<double>(all_));
+        progress_.at(kHorizonShare +
+                     (1.0 - kHorizonShare) * static_cast<double>(done) / static_cast<double>(all_));
         is_speaking_.clear(std::memory_order_release);
     }
 
-  private:
+private:
     const Progress& progress_;
     std::size_t all_;
     std::atomic<std::size_t> done_{0};
     std::atomic_flag is_speaking_ = ATOMIC_FLAG_INIT;
 };
 
-}  // namespace
+} // namespace
 
 Expected<ShadeResult> shade_city(const ShadeInput& input, const Progress& progress) {
     const auto start = std::chrono::steady_clock::now();
@@ -50,7 +51,8 @@ Expected<ShadeResult> shade_city(const ShadeInput& input, const Progress& progre
     if (!light) return tl::unexpected(light.error());
     const std::vector<PoleIx> poles = candidates(input.city);
 
-    const Progress scanning{[&](double done_frac) { progress.at(done_frac * kHorizonShare); }, progress.cancel};
+    const Progress scanning{[&](double done_frac) { progress.at(done_frac * kHorizonShare); },
+                            progress.cancel};
     const auto horizons = pole_horizons(input.city, poles, input.heights, scanning);
     if (!horizons) return tl::unexpected(horizons.error());
 
@@ -68,4 +70,4 @@ Expected<ShadeResult> shade_city(const ShadeInput& input, const Progress& progre
     return result;
 }
 
-}  // namespace unstring
+} // namespace unstring

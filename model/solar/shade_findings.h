@@ -9,8 +9,9 @@
 
 namespace unstring {
 
-/// sky-unknown: poles under a sky that no file describes; one finding for all where that is every pole of the city.
-/// attachments: poles with a head that could be used and something else on the pole that takes wind too.
+/// sky-unknown: poles under a sky that no file describes; one finding for all where that is every pole of the
+/// city. attachments: poles with a head that could be used and something else on the pole that takes wind
+/// too.
 [[nodiscard]] std::vector<Finding> shade_findings(const City& city, const ShadeResult& shade);
 
-}  // namespace unstring
+} // namespace unstring

@@ -7,7 +7,7 @@
 namespace unstring {
 namespace {
 
-constexpr double kFlat = 1e-5;  // below this the distribution is uniform to the digits of a double
+constexpr double kFlat = 1e-5; // below this the distribution is uniform to the digits of a double
 
 /// Mean of a density exp(shape * u) on 0..1.
 double mean_of_shape(double shape) {
@@ -17,7 +17,7 @@ double mean_of_shape(double shape) {
 }
 
 double shape_for_mean(double mean) {
-    double low = -800, high = 800;  // means of 0.00125 and 0.99875
+    double low = -800, high = 800; // means of 0.00125 and 0.99875
     for (int i = 0; i < 80; ++i) {
         const double middle = 0.5 * (low + high);
         (mean_of_shape(middle) < mean ? low : high) = middle;
@@ -25,7 +25,7 @@ double shape_for_mean(double mean) {
     return 0.5 * (low + high);
 }
 
-}  // namespace
+} // namespace
 
 ClearnessDistribution::ClearnessDistribution(double mean) {
     if (!(mean >= kClearnessMeanMin && mean <= kClearnessMeanMax))
@@ -48,4 +48,4 @@ double ClearnessDistribution::at_share(double share) const {
     return floor_ + width_ * std::clamp(u, 0.0, 1.0);
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -26,7 +26,7 @@ double cosine_share(double hour_angle_deg, double sunset_deg) {
     return kPi / 24.0 * above / (std::sin(sunset) - sunset * std::cos(sunset));
 }
 
-}  // namespace
+} // namespace
 
 int month_of_day(int day_of_year) {
     int month = 1;
@@ -47,16 +47,20 @@ double sunset_hour_angle_deg(double lat_deg, double declination_deg) {
     return std::acos(std::clamp(cosine, -1.0, 1.0)) / kRadPerDeg;
 }
 
-double distance_factor(int day_of_year) { return 1.0 + 0.033 * std::cos(360.0 * day_of_year / 365.0 * kRadPerDeg); }
+double distance_factor(int day_of_year) {
+    return 1.0 + 0.033 * std::cos(360.0 * day_of_year / 365.0 * kRadPerDeg);
+}
 
-double day_outside_wh_m2(double lat_deg, double declination_deg, int day_of_year, double solar_constant_w_m2) {
+double day_outside_wh_m2(double lat_deg, double declination_deg, int day_of_year,
+                         double solar_constant_w_m2) {
     const double sunset_deg = sunset_hour_angle_deg(lat_deg, declination_deg);
     const double scale =
         outside_scale_wh_m2(lat_deg, declination_deg, std::sin(sunset_deg * kRadPerDeg), sunset_deg);
     return std::max(0.0, 24.0 / kPi * solar_constant_w_m2 * distance_factor(day_of_year) * scale);
 }
 
-double hours_outside_wh_m2(double lat_deg, double declination_deg, int day_of_year, double from_deg, double to_deg) {
+double hours_outside_wh_m2(double lat_deg, double declination_deg, int day_of_year, double from_deg,
+                           double to_deg) {
     const double sines = std::sin(to_deg * kRadPerDeg) - std::sin(from_deg * kRadPerDeg);
     return 12.0 / kPi * kSolarConstant_w_m2 * distance_factor(day_of_year) *
            outside_scale_wh_m2(lat_deg, declination_deg, sines, to_deg - from_deg);
@@ -69,6 +73,8 @@ double hour_share_global(double hour_angle_deg, double sunset_deg) {
     return (a + b * std::cos(hour_angle_deg * kRadPerDeg)) * cosine_share(hour_angle_deg, sunset_deg);
 }
 
-double hour_share_diffuse(double hour_angle_deg, double sunset_deg) { return cosine_share(hour_angle_deg, sunset_deg); }
+double hour_share_diffuse(double hour_angle_deg, double sunset_deg) {
+    return cosine_share(hour_angle_deg, sunset_deg);
+}
 
-}  // namespace unstring
+} // namespace unstring

@@ -1,6 +1,6 @@
 #pragma once
-// The sun of a day in closed form: declination, length of the day, irradiation outside the atmosphere, and how a day's
-// irradiation spreads over its hours. Days run 1..365. Angles in degrees.
+// The sun of a day in closed form: declination, length of the day, irradiation outside the atmosphere, and
+// how a day's irradiation spreads over its hours. Days run 1..365. Angles in degrees.
 
 namespace unstring {
 
@@ -24,8 +24,8 @@ inline constexpr double kSolarConstant_w_m2 = 1367.0;
 [[nodiscard]] double day_outside_wh_m2(double lat_deg, double declination_deg, int day_of_year,
                                        double solar_constant_w_m2 = kSolarConstant_w_m2);
 /// The same between two hour angles, both while the sun is up [Wh/m2]. Source: ibid., eq. 1.10.4.
-[[nodiscard]] double hours_outside_wh_m2(double lat_deg, double declination_deg, int day_of_year, double from_deg,
-                                         double to_deg);
+[[nodiscard]] double hours_outside_wh_m2(double lat_deg, double declination_deg, int day_of_year,
+                                         double from_deg, double to_deg);
 
 /// Share of a day's global irradiation that falls in the hour around an hour angle, 0 while the sun is down.
 /// Its sum over a day differs from 1 by up to 0.8 %: normalise it.
@@ -35,4 +35,4 @@ inline constexpr double kSolarConstant_w_m2 = 1367.0;
 /// Source: B.Y.H. Liu, R.C. Jordan, Solar Energy 4 (1960) 1-19.
 [[nodiscard]] double hour_share_diffuse(double hour_angle_deg, double sunset_deg);
 
-}  // namespace unstring
+} // namespace unstring

@@ -5,7 +5,7 @@ namespace {
 
 constexpr double kWinterSunset_deg = 81.4;
 
-}  // namespace
+} // namespace
 
 double erbs_hour_frac(double k) {
     if (k <= 0.22) return 1.0 - 0.09 * k;
@@ -24,4 +24,4 @@ double erbs_month_frac(double k, double sunset_deg) {
     return 1.311 + k * (-3.022 + k * (3.427 + k * -1.821));
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -1,6 +1,7 @@
 #pragma once
-// How much of the sun's light comes from the sky instead of straight from the sun, from the clearness index alone.
-// Source: D.G. Erbs, S.A. Klein, J.A. Duffie, Solar Energy 28 (1982) 293-302. Checked in tests/published/weather.cpp.
+// How much of the sun's light comes from the sky instead of straight from the sun, from the clearness index
+// alone. Source: D.G. Erbs, S.A. Klein, J.A. Duffie, Solar Energy 28 (1982) 293-302. Checked in
+// tests/published/weather.cpp.
 
 namespace unstring {
 
@@ -11,4 +12,4 @@ namespace unstring {
 /// Of a month's mean day; fitted for a clearness of 0.3 to 0.8.
 [[nodiscard]] double erbs_month_frac(double clearness, double sunset_deg);
 
-}  // namespace unstring
+} // namespace unstring

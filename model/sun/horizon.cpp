@@ -29,15 +29,16 @@ struct PieceEnds {
     double start_deg, end_deg;
 };
 
-}  // namespace
+} // namespace
 
 HorizonProfile::HorizonProfile(std::vector<HorizonPoint> points) : points_(std::move(points)) {
     for (HorizonPoint& point : points_) {
         point.azimuth_deg = turned(point.azimuth_deg);
         point.height_deg = std::max(0.0, point.height_deg);
     }
-    std::stable_sort(points_.begin(), points_.end(),
-                     [](const HorizonPoint& a, const HorizonPoint& b) { return a.azimuth_deg < b.azimuth_deg; });
+    std::stable_sort(points_.begin(), points_.end(), [](const HorizonPoint& a, const HorizonPoint& b) {
+        return a.azimuth_deg < b.azimuth_deg;
+    });
 }
 
 HorizonProfile HorizonProfile::from_directions(std::span<const float> heights_deg) {
@@ -65,21 +66,24 @@ double HorizonProfile::height_deg(double azimuth_deg) const {
     if (points_.empty()) return 0;
     const double azimuth = azimuth_deg == 360.0 ? 0.0 : turned(azimuth_deg);
     // A last point at 360 ends the round: what begins at 0 is the first point's piece.
-    const auto after = std::upper_bound(points_.begin(), points_.end(), azimuth,
-                                        [](double a, const HorizonPoint& point) { return a < point.azimuth_deg; });
+    const auto after =
+        std::upper_bound(points_.begin(), points_.end(), azimuth,
+                         [](double a, const HorizonPoint& point) { return a < point.azimuth_deg; });
     return between_deg(static_cast<std::size_t>(after - points_.begin()), azimuth);
 }
 
 double HorizonProfile::height_before_deg(double azimuth_deg) const {
     if (points_.empty()) return 0;
     const double azimuth = azimuth_deg == 0.0 ? 360.0 : turned(azimuth_deg);
-    const auto at = std::lower_bound(points_.begin(), points_.end(), azimuth,
-                                     [](const HorizonPoint& point, double a) { return point.azimuth_deg < a; });
+    const auto at =
+        std::lower_bound(points_.begin(), points_.end(), azimuth,
+                         [](const HorizonPoint& point, double a) { return point.azimuth_deg < a; });
     // From the last point round to 0 the piece is the one that ends in the first point.
     return between_deg(static_cast<std::size_t>(at - points_.begin()), azimuth);
 }
 
-double sky_view_frac(std::span<const HorizonProfile> profiles, double tilt_deg, double bearing_deg, double step_deg) {
+double sky_view_frac(std::span<const HorizonProfile> profiles, double tilt_deg, double bearing_deg,
+                     double step_deg) {
     const double cos_tilt = std::cos(tilt_deg * kRadPerDeg);
     const double sin_tilt = std::sin(tilt_deg * kRadPerDeg);
     const auto is_open = [](const HorizonProfile& profile) { return profile.is_open(); };
@@ -109,4 +113,4 @@ double sky_view_frac(std::span<const HorizonProfile> profiles, double tilt_deg, 
     return sum / 360.0;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -32,11 +32,12 @@ void raise_by_edge(MapPoint a, MapPoint b, double above_m, MapPoint place, std::
     const auto last = static_cast<long>(std::floor((low_deg + std::abs(turn_deg)) / step_deg));
     for (long i = first; i <= last; ++i) {
         const double reach_m = ray_to_edge_m(place, step_deg * static_cast<double>(i), a, b);
-        if (reach_m >= 0) raise(height_deg[static_cast<std::size_t>((i % size + size) % size)], above_m, reach_m);
+        if (reach_m >= 0)
+            raise(height_deg[static_cast<std::size_t>((i % size + size) % size)], above_m, reach_m);
     }
 }
 
-}  // namespace
+} // namespace
 
 bool is_inside(std::span<const MapPoint> ring, MapPoint place) {
     bool inside = false;
@@ -49,7 +50,8 @@ bool is_inside(std::span<const MapPoint> ring, MapPoint place) {
     return inside;
 }
 
-void raise_by_block(std::span<const MapPoint> ring, double above_m, MapPoint place, std::span<float> height_deg) {
+void raise_by_block(std::span<const MapPoint> ring, double above_m, MapPoint place,
+                    std::span<float> height_deg) {
     if (above_m <= 0 || ring.size() < 3) return;
     if (is_inside(ring, place))
         for (float& height : height_deg) raise(height, above_m, kNearStart_m);
@@ -57,4 +59,4 @@ void raise_by_block(std::span<const MapPoint> ring, double above_m, MapPoint pla
         raise_by_edge(ring[i], ring[(i + 1) % ring.size()], above_m, place, height_deg);
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -23,14 +23,16 @@ double bilinear_m(const HeightWindow& window, double column, double row) {
     const std::size_t south = window.rows > 1 ? window.columns : 0;
     const float* cell = window.height_m.data() + at;
     // A neighbour that has no weight must not make the place unknown.
-    const auto mix = [](double a, double b, double share) { return share == 0 ? a : share == 1 ? b : a + (b - a) * share; };
+    const auto mix = [](double a, double b, double share) {
+        return share == 0 ? a : share == 1 ? b : a + (b - a) * share;
+    };
     return mix(mix(cell[0], cell[east], right), mix(cell[south], cell[south + east], right), down);
 }
 
 /// So that a march due east along a row of cell centres stays on that row.
 double exact_at_right_angles(double value) { return std::abs(value) < 1e-12 ? 0.0 : value; }
 
-}  // namespace
+} // namespace
 
 double height_at_m(const HeightWindow& window, MapPoint place) {
     return bilinear_m(window, (place.x_m - window.west_m) / window.cell_m - 0.5,
@@ -41,25 +43,26 @@ WindowBounds bounds_of(const HeightWindow& window) {
     WindowBounds bounds{0, false};
     for (const float height_m : window.height_m) {
         bounds.has_unknown = bounds.has_unknown || std::isnan(height_m);
-        if (static_cast<double>(height_m) > bounds.highest_m) bounds.highest_m = static_cast<double>(height_m);
+        if (static_cast<double>(height_m) > bounds.highest_m)
+            bounds.highest_m = static_cast<double>(height_m);
     }
     return bounds;
 }
 
-ScannedHorizon scan_horizon(const HeightWindow& window, const WindowBounds& bounds, MapPoint place, double panel_m,
-                            double reach_m, int directions) {
+ScannedHorizon scan_horizon(const HeightWindow& window, const WindowBounds& bounds, MapPoint place,
+                            double panel_m, double reach_m, int directions) {
     ScannedHorizon found;
     found.height_deg.reserve(static_cast<std::size_t>(directions));
     const double column = (place.x_m - window.west_m) / window.cell_m - 0.5;
     const double row = (window.north_m - place.y_m) / window.cell_m - 0.5;
     constexpr int kStepsACell = 4;
     const int steps = static_cast<int>(std::floor(kStepsACell * reach_m / window.cell_m + 1e-9));
-    const double most_cells = (bounds.highest_m - panel_m) / window.cell_m;  // above the panel
+    const double most_cells = (bounds.highest_m - panel_m) / window.cell_m; // above the panel
     for (int direction = 0; direction < directions; ++direction) {
         const double azimuth_deg = 360.0 * direction / directions;
         const double east = exact_at_right_angles(std::sin(azimuth_deg * kRadPerDeg));
         const double north = exact_at_right_angles(std::cos(azimuth_deg * kRadPerDeg));
-        double steepest = 0;  // tangent
+        double steepest = 0; // tangent
         bool is_known = true;
         for (int step = kStepsACell; step <= steps; ++step) {
             const double cells = static_cast<double>(step) / kStepsACell;
@@ -77,4 +80,4 @@ ScannedHorizon scan_horizon(const HeightWindow& window, const WindowBounds& boun
     return found;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -18,10 +18,11 @@ std::vector<double> mean_year(const std::vector<double>& hours, int settling_yea
     return mean;
 }
 
-}  // namespace
+} // namespace
 
 HourlySky make_hourly_sky(const SunYear& sun, std::span<const double> day_clearness, int settling_years) {
-    if (day_clearness.size() % kDays != 0) throw std::logic_error("hourly sky: whole years of days are wanted");
+    if (day_clearness.size() % kDays != 0)
+        throw std::logic_error("hourly sky: whole years of days are wanted");
     HourlySky sky;
     sky.years = static_cast<int>(day_clearness.size() / kDays);
     sky.settling_years = settling_years;
@@ -52,4 +53,4 @@ HourlySky make_hourly_sky(const SunYear& sun, std::span<const double> day_clearn
     return sky;
 }
 
-}  // namespace unstring
+} // namespace unstring

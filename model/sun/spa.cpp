@@ -32,7 +32,9 @@ double series(std::initializer_list<std::span<const Term>> powers, double millen
     return sum / 1e8;
 }
 
-double cubic(double x, double c0, double c1, double c2, double c3) { return c0 + x * (c1 + x * (c2 + x * c3)); }
+double cubic(double x, double c0, double c1, double c2, double c3) {
+    return c0 + x * (c1 + x * (c2 + x * c3));
+}
 
 void earth(double millennia, SpaSun& sun) {
     using namespace spa_terms;
@@ -43,11 +45,11 @@ void earth(double millennia, SpaSun& sun) {
 
 void nutation(double centuries, SpaSun& sun) {
     const std::array<double, 5> arguments = {
-        cubic(centuries, 297.85036, 445267.111480, -0.0019142, 1.0 / 189474),   // moon from the sun
-        cubic(centuries, 357.52772, 35999.050340, -0.0001603, -1.0 / 300000),   // anomaly of the sun
-        cubic(centuries, 134.96298, 477198.867398, 0.0086972, 1.0 / 56250),     // anomaly of the moon
-        cubic(centuries, 93.27191, 483202.017538, -0.0036825, 1.0 / 327270),    // latitude of the moon
-        cubic(centuries, 125.04452, -1934.136261, 0.0020708, 1.0 / 450000)};    // node of the moon
+        cubic(centuries, 297.85036, 445267.111480, -0.0019142, 1.0 / 189474), // moon from the sun
+        cubic(centuries, 357.52772, 35999.050340, -0.0001603, -1.0 / 300000), // anomaly of the sun
+        cubic(centuries, 134.96298, 477198.867398, 0.0086972, 1.0 / 56250),   // anomaly of the moon
+        cubic(centuries, 93.27191, 483202.017538, -0.0036825, 1.0 / 327270),  // latitude of the moon
+        cubic(centuries, 125.04452, -1934.136261, 0.0020708, 1.0 / 450000)};  // node of the moon
     double longitude = 0;
     double obliquity = 0;
     for (const spa_terms::NutationTerm& term : spa_terms::kNutation) {
@@ -78,8 +80,8 @@ void geocentric(double earth_latitude_deg, SpaSun& sun) {
     const double latitude_deg = -earth_latitude_deg;
     const double lambda = sun.apparent_longitude_deg;
     const double epsilon = sun.obliquity_deg;
-    sun.ascension_deg =
-        in_circle(angle(sine(lambda) * cosine(epsilon) - tangent(latitude_deg) * sine(epsilon), cosine(lambda)));
+    sun.ascension_deg = in_circle(
+        angle(sine(lambda) * cosine(epsilon) - tangent(latitude_deg) * sine(epsilon), cosine(lambda)));
     sun.declination_deg = std::asin(sine(latitude_deg) * cosine(epsilon) +
                                     cosine(latitude_deg) * sine(epsilon) * sine(lambda)) /
                           kRadPerDeg;
@@ -106,10 +108,12 @@ void horizontal(const SpaInput& input, SpaSun& sun) {
     const double dec = sun.topocentric_declination_deg;
     const double hour = sun.topocentric_hour_angle_deg;
     sun.elevation_deg =
-        std::asin(std::clamp(sine(lat) * sine(dec) + cosine(lat) * cosine(dec) * cosine(hour), -1.0, 1.0)) / kRadPerDeg;
+        std::asin(std::clamp(sine(lat) * sine(dec) + cosine(lat) * cosine(dec) * cosine(hour), -1.0, 1.0)) /
+        kRadPerDeg;
     sun.refraction_deg = air_refraction_deg(input, sun.elevation_deg);
     sun.zenith_deg = 90.0 - sun.elevation_deg - sun.refraction_deg;
-    sun.azimuth_deg = in_circle(angle(sine(hour), cosine(hour) * sine(lat) - tangent(dec) * cosine(lat)) + 180.0);
+    sun.azimuth_deg =
+        in_circle(angle(sine(hour), cosine(hour) * sine(lat) - tangent(dec) * cosine(lat)) + 180.0);
 }
 
 double equation_of_time_min(double millennia, const SpaSun& sun) {
@@ -122,7 +126,7 @@ double equation_of_time_min(double millennia, const SpaSun& sun) {
     return 4.0 * std::remainder(deg, 360.0);
 }
 
-}  // namespace
+} // namespace
 
 double air_refraction_deg(const SpaInput& input, double elevation_deg) {
     constexpr double kSunRadius_deg = 0.26667;
@@ -152,4 +156,4 @@ SpaSun spa_sun(const SpaInput& input) {
     return sun;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -10,11 +10,11 @@
 namespace unstring {
 namespace {
 
-constexpr int kYear = 2025;  // of the psa model: not a leap year
+constexpr int kYear = 2025; // of the psa model: not a leap year
 
 /// Gives the sun of a day (0..364) at any hour of its clock.
 class Sky {
-  public:
+public:
     Sky(LonLat place, DayModel model, double clock_h) : place_(place), model_(model), clock_h_(clock_h) {}
 
     [[nodiscard]] SunPosition at(int day, double hour) const {
@@ -34,7 +34,7 @@ class Sky {
         return sun;
     }
 
-  private:
+private:
     LonLat place_;
     DayModel model_;
     double clock_h_;
@@ -63,7 +63,8 @@ SunStep sun_step(const SunPosition& sun) {
     const double azimuth = sun.azimuth_deg * kRadPerDeg;
     return {static_cast<float>(sun.azimuth_deg), static_cast<float>(sun.elevation_deg),
             static_cast<float>(std::cos(elevation) * std::sin(azimuth)),
-            static_cast<float>(std::cos(elevation) * std::cos(azimuth)), static_cast<float>(std::sin(elevation))};
+            static_cast<float>(std::cos(elevation) * std::cos(azimuth)),
+            static_cast<float>(std::sin(elevation))};
 }
 
 /// Where in its step the sun of a day is taken: the golden section spreads any run of days evenly.
@@ -114,7 +115,7 @@ std::uint32_t noon_hour(const SunYear& year, std::size_t day) {
     return best;
 }
 
-}  // namespace
+} // namespace
 
 SunYear make_sun_year(LonLat place, DayModel model, int step_min, double clock_h, Sampling sampling) {
     if (step_min < 1 || 60 % step_min != 0) throw std::logic_error("sun year: the step must divide an hour");
@@ -123,7 +124,8 @@ SunYear make_sun_year(LonLat place, DayModel model, int step_min, double clock_h
     year.first_step.push_back(0);
     for (int day = 0; day < kDays; ++day) {
         year.days[static_cast<std::size_t>(day)] = sun_day(sky, place.lat_deg, day);
-        for (int hour = 0; hour < 24; ++hour) add_hour(year, sky, day, hour, step_min, place_in_step(sampling, day));
+        for (int hour = 0; hour < 24; ++hour)
+            add_hour(year, sky, day, hour, step_min, place_in_step(sampling, day));
         const auto first = static_cast<std::size_t>(day) * 24;
         normalise(std::span(year.global_share).subspan(first, 24));
         normalise(std::span(year.diffuse_share).subspan(first, 24));
@@ -134,16 +136,18 @@ SunYear make_sun_year(LonLat place, DayModel model, int step_min, double clock_h
 }
 
 double hours_below(const SunYear& year, double elevation_deg) {
-    const auto dark = std::count_if(year.lamp_step_deg.begin(), year.lamp_step_deg.end(),
-                                    [&](float step_deg) { return static_cast<double>(step_deg) < elevation_deg; });
+    const auto dark =
+        std::count_if(year.lamp_step_deg.begin(), year.lamp_step_deg.end(),
+                      [&](float step_deg) { return static_cast<double>(step_deg) < elevation_deg; });
     return static_cast<double>(dark) / kLampSteps;
 }
 
 std::array<double, 12> monthly_outside_wh_m2(const SunYear& year) {
     std::array<double, 12> sums{};
     for (const SunDay& day : year.days) sums[static_cast<std::size_t>(day.month - 1)] += day.outside_wh_m2;
-    for (int month = 1; month <= 12; ++month) sums[static_cast<std::size_t>(month - 1)] /= days_in_month(month);
+    for (int month = 1; month <= 12; ++month)
+        sums[static_cast<std::size_t>(month - 1)] /= days_in_month(month);
     return sums;
 }
 
-}  // namespace unstring
+} // namespace unstring

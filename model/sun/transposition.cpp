@@ -30,4 +30,4 @@ double hay_davies_ratio(double circumsolar, double beam_ratio_, double tilt_deg)
     return circumsolar * beam_ratio_ + (1.0 - circumsolar) * even_sky_frac(tilt_deg);
 }
 
-}  // namespace unstring
+} // namespace unstring

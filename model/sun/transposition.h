@@ -1,5 +1,6 @@
 #pragma once
-// From the horizontal to a tilted panel. Bearings of the panel's downward tilt, clockwise from north like the azimuth.
+// From the horizontal to a tilted panel. Bearings of the panel's downward tilt, clockwise from north like the
+// azimuth.
 
 namespace unstring {
 
@@ -7,7 +8,8 @@ namespace unstring {
 inline constexpr double kLowestCosZenith = 0.0175;
 
 /// Cosine of the angle between the sun and the panel's normal; negative behind the panel.
-[[nodiscard]] double cos_incidence(double tilt_deg, double bearing_deg, double elevation_deg, double azimuth_deg);
+[[nodiscard]] double cos_incidence(double tilt_deg, double bearing_deg, double elevation_deg,
+                                   double azimuth_deg);
 
 /// Beam on the panel over beam on the horizontal; 1 for a panel that lies flat.
 [[nodiscard]] double beam_ratio(double cos_incidence_, double cos_zenith, double tilt_deg);
@@ -24,4 +26,4 @@ inline constexpr double kLowestCosZenith = 0.0175;
 /// Sky diffuse on a tilted panel under an open sky, over diffuse on the horizontal: Hay & Davies.
 [[nodiscard]] double hay_davies_ratio(double circumsolar, double beam_ratio_, double tilt_deg);
 
-}  // namespace unstring
+} // namespace unstring

@@ -27,7 +27,7 @@ NightCase deterministic_case() {
     return night;
 }
 
-}  // namespace
+} // namespace
 
 // Source: computed twice, by this program and by the one that made the figures; no publication claims it.
 TEST_CASE("battery: the deterministic case of one year comes out to its printed digits") {
@@ -44,7 +44,8 @@ TEST_CASE("battery: the deterministic case of one year comes out to its printed 
     CHECK(answer.shade_score == Approx(0).margin(1e-12));
 }
 
-// Source: computed twice, day 355 of the same case: irradiation outside the atmosphere, sunset, the hours' shares.
+// Source: computed twice, day 355 of the same case: irradiation outside the atmosphere, sunset, the hours'
+// shares.
 TEST_CASE("battery: the shortest day of the deterministic case, step by step") {
     const SunYear sun = make_sun_year({0, 40}, DayModel::cooper, 60);
     CHECK(sun.days[354].outside_wh_m2 == Approx(3753.036).margin(5e-4));
@@ -68,7 +69,8 @@ TEST_CASE("battery: cycles are counted as in the standard's example") {
     std::map<double, double> counts;
     for (const Cycle& cycle : cycles) counts[cycle.range] += cycle.count;
     CHECK(counts == std::map<double, double>{{3, .5}, {4, 1.5}, {6, .5}, {8, 1.0}, {9, .5}});
-    const std::vector<std::pair<double, double>> in_order = {{3, .5}, {4, .5}, {4, 1}, {8, .5}, {9, .5}, {8, .5}, {6, .5}};
+    const std::vector<std::pair<double, double>> in_order = {{3, .5}, {4, .5}, {4, 1}, {8, .5},
+                                                             {9, .5}, {8, .5}, {6, .5}};
     REQUIRE(cycles.size() == in_order.size());
     for (std::size_t i = 0; i < cycles.size(); ++i) {
         CHECK(cycles[i].range == in_order[i].first);
@@ -76,20 +78,22 @@ TEST_CASE("battery: cycles are counted as in the standard's example") {
     }
 }
 
-// Source: P. Gasper et al., J. Energy Storage (2023) 109042, the cell coded openly by NREL; figures computed twice.
+// Source: P. Gasper et al., J. Energy Storage (2023) 109042, the cell coded openly by NREL; figures computed
+// twice.
 TEST_CASE("battery: ageing of the large-format cell") {
     struct Row {
         double temp_c, soc, years, lost_percent;
     };
-    for (const Row& row : {Row{25, .5, 1, 1.10}, Row{25, .5, 5, 2.57}, Row{25, .5, 10, 3.70}, Row{25, .9, 1, 1.68},
-                           Row{25, .9, 5, 3.91}, Row{25, .9, 10, 5.63}, Row{40, .9, 10, 13.66}})
+    for (const Row& row :
+         {Row{25, .5, 1, 1.10}, Row{25, .5, 5, 2.57}, Row{25, .5, 10, 3.70}, Row{25, .9, 1, 1.68},
+          Row{25, .9, 5, 3.91}, Row{25, .9, 10, 5.63}, Row{40, .9, 10, 13.66}})
         CHECK(100 * calendar_rate(row.temp_c, row.soc) * std::pow(row.years * 365, kCalendarPower) ==
               Approx(row.lost_percent).margin(6e-3));
     struct CycleRow {
         double depth, c_rate, full_cycles, lost_percent;
     };
-    for (const CycleRow& row : {CycleRow{.3, .1, 1000, 3.08}, CycleRow{.3, .1, 3000, 7.65}, CycleRow{.8, .2, 1000, 4.24},
-                                CycleRow{.8, .2, 3000, 10.53}})
+    for (const CycleRow& row : {CycleRow{.3, .1, 1000, 3.08}, CycleRow{.3, .1, 3000, 7.65},
+                                CycleRow{.8, .2, 1000, 4.24}, CycleRow{.8, .2, 3000, 10.53}})
         CHECK(100 * cycle_rate(25, row.depth, row.c_rate) * std::pow(row.full_cycles, kCyclePower) ==
               Approx(row.lost_percent).margin(6e-3));
     const auto to_end = [](double depth, double c_rate) {

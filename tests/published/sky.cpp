@@ -18,7 +18,8 @@ double view(const HorizonProfile& profile, double tilt_deg = 0, double bearing_d
 
 HorizonProfile uniform(double height_deg) { return HorizonProfile({{0, height_deg}}); }
 
-/// Endless walls: one whose top stands theta above the horizontal, square on, in each bearing given; every half degree.
+/// Endless walls: one whose top stands theta above the horizontal, square on, in each bearing given; every
+/// half degree.
 HorizonProfile walls(std::vector<std::pair<double, double>> bearing_theta_deg) {
     std::vector<HorizonPoint> points;
     for (double azimuth = 0; azimuth < 360; azimuth += 0.125) {
@@ -32,9 +33,10 @@ HorizonProfile walls(std::vector<std::pair<double, double>> bearing_theta_deg) {
     return HorizonProfile(std::move(points));
 }
 
-}  // namespace
+} // namespace
 
-// Source: the integral of J. Dozier, J. Frew, IEEE Trans. Geosci. Remote Sens. 28 (1990) 963-969, in closed form.
+// Source: the integral of J. Dozier, J. Frew, IEEE Trans. Geosci. Remote Sens. 28 (1990) 963-969, in closed
+// form.
 TEST_CASE("sky: a uniform horizon leaves the square of its cosine") {
     struct Row {
         double height_deg, frac;
@@ -47,7 +49,8 @@ TEST_CASE("sky: a tilted panel under an open sky sees half of one plus the cosin
     struct Row {
         double tilt_deg, frac;
     };
-    for (const Row& row : {Row{5, .998097}, Row{10, .992404}, Row{15, .982963}, Row{30, .933013}, Row{90, .5}})
+    for (const Row& row :
+         {Row{5, .998097}, Row{10, .992404}, Row{15, .982963}, Row{30, .933013}, Row{90, .5}})
         for (const HorizonProfile& open : {HorizonProfile(), uniform(0)})
             CHECK(view(open, row.tilt_deg, 77) == Approx(row.frac).margin(1e-6));
 }
@@ -56,8 +59,8 @@ TEST_CASE("sky: a tilted panel in a uniform horizon as high as its tilt or highe
     struct Row {
         double tilt_deg, height_deg, frac;
     };
-    for (const Row& row : {Row{15, 15, .901221}, Row{15, 20, .852934}, Row{15, 30, .724444}, Row{10, 20, .869607},
-                           Row{15, 10, .937863}})
+    for (const Row& row : {Row{15, 15, .901221}, Row{15, 20, .852934}, Row{15, 30, .724444},
+                           Row{10, 20, .869607}, Row{15, 10, .937863}})
         CHECK(view(uniform(row.height_deg), row.tilt_deg, 200) == Approx(row.frac).margin(1.5e-6));
 }
 
@@ -65,7 +68,8 @@ TEST_CASE("sky: an endless wall leaves half of one plus its cosine") {
     struct Row {
         double theta_deg, frac;
     };
-    for (const Row& row : {Row{10, .992404}, Row{30, .933013}, Row{45, .853553}, Row{60, .75}, Row{80, .586824}})
+    for (const Row& row :
+         {Row{10, .992404}, Row{30, .933013}, Row{45, .853553}, Row{60, .75}, Row{80, .586824}})
         CHECK(view(walls({{90, row.theta_deg}})) == Approx(row.frac).margin(1e-5));
 }
 

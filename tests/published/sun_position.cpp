@@ -25,9 +25,10 @@ SpaInput spa_example() {
     return input;
 }
 
-}  // namespace
+} // namespace
 
-// Source: I. Reda, A. Andreas, NREL/TP-560-34302, worked example; figures as in pvlib-python tests/test_spa.py.
+// Source: I. Reda, A. Andreas, NREL/TP-560-34302, worked example; figures as in pvlib-python
+// tests/test_spa.py.
 TEST_CASE("sun: the worked example of the solar position algorithm comes out step by step") {
     const SpaSun sun = spa_sun(spa_example());
     CHECK(spa_example().days_since_2000 + 2451545.0 == Approx(2452930.312847).epsilon(0).margin(5e-7));
@@ -54,21 +55,25 @@ TEST_CASE("sun: the fast algorithm gives its published check values") {
     struct Row {
         double hour_utc, lat_deg, lon_deg, elevation_deg, azimuth_deg;
     };
-    for (const Row& row : {Row{12.5, 45, 10, 32.21595946, 204.9167547}, Row{12.5, 0, 10, 66.85741664, 245.08558596},
-                           Row{3.5, 45, 10, -23.41028925, 79.54884709}}) {
-        const SunPosition sun = psa_sun(days_since_2000(2020, 10, 17, row.hour_utc), {row.lon_deg, row.lat_deg});
+    for (const Row& row :
+         {Row{12.5, 45, 10, 32.21595946, 204.9167547}, Row{12.5, 0, 10, 66.85741664, 245.08558596},
+          Row{3.5, 45, 10, -23.41028925, 79.54884709}}) {
+        const SunPosition sun =
+            psa_sun(days_since_2000(2020, 10, 17, row.hour_utc), {row.lon_deg, row.lat_deg});
         CHECK(sun.elevation_deg == Approx(row.elevation_deg).margin(5e-9));
         CHECK(sun.azimuth_deg == Approx(row.azimuth_deg).margin(5e-8));
     }
 }
 
-// Source: JPL Horizons, 2020-01-01, 50 N 10 E, as in solposx tests (fixture expected_nasa). 0.001 degrees allow for the
-// difference between UTC and universal time, 0.18 s on that day, which neither algorithm is told.
+// Source: JPL Horizons, 2020-01-01, 50 N 10 E, as in solposx tests (fixture expected_nasa). 0.001 degrees
+// allow for the difference between UTC and universal time, 0.18 s on that day, which neither algorithm is
+// told.
 TEST_CASE("sun: both algorithms agree with the ephemeris of JPL") {
     struct Row {
         double hour_utc, azimuth_deg, elevation_deg;
     };
-    for (const Row& row : {Row{9, 146.804482, 10.367984}, Row{11, 174.399466, 16.791713}, Row{15, 228.325009, 2.693785}}) {
+    for (const Row& row :
+         {Row{9, 146.804482, 10.367984}, Row{11, 174.399466, 16.791713}, Row{15, 228.325009, 2.693785}}) {
         SpaInput input;
         input.days_since_2000 = days_since_2000(2020, 1, 1, row.hour_utc);
         input.place = {10, 50};
@@ -87,7 +92,8 @@ struct Horizontal {
     double elevation_deg, azimuth_deg;
 };
 
-/// The sun by ERFA: Earth's place, aberration, precession and nutation, sidereal time, parallax; on a sphere at sea level.
+/// The sun by ERFA: Earth's place, aberration, precession and nutation, sidereal time, parallax; on a sphere
+/// at sea level.
 Horizontal erfa_sun(double days, LonLat place, double delta_t_s) {
     const double tt = days + delta_t_s / 86400.0;
     double heliocentric[2][3], barycentric[2][3];
@@ -97,7 +103,7 @@ Horizontal erfa_sun(double days, LonLat place, double delta_t_s) {
     double speed2 = 0;
     for (int i = 0; i < 3; ++i) {
         to_sun[i] = -heliocentric[0][i] / distance;
-        velocity[i] = barycentric[1][i] * 0.005775518331;  // of light, from AU a day
+        velocity[i] = barycentric[1][i] * 0.005775518331; // of light, from AU a day
         speed2 += velocity[i] * velocity[i];
     }
     eraAb(to_sun, velocity, distance, std::sqrt(1 - speed2), apparent);
@@ -106,8 +112,8 @@ Horizontal erfa_sun(double days, LonLat place, double delta_t_s) {
     eraRxp(rotation, apparent, of_date);
     eraC2s(of_date, &ascension, &declination);
     const double sidereal = eraGst06a(ERFA_DJ00, days, ERFA_DJ00, tt);
-    eraHd2ae(sidereal + place.lon_deg * kRadPerDeg - ascension, declination, place.lat_deg * kRadPerDeg, &azimuth,
-             &elevation);
+    eraHd2ae(sidereal + place.lon_deg * kRadPerDeg - ascension, declination, place.lat_deg * kRadPerDeg,
+             &azimuth, &elevation);
     elevation -= 8.794 / 3600.0 * kRadPerDeg / distance * std::cos(elevation);
     return {elevation / kRadPerDeg, azimuth / kRadPerDeg};
 }
@@ -115,15 +121,18 @@ Horizontal erfa_sun(double days, LonLat place, double delta_t_s) {
 /// Angle between two directions.
 double apart_deg(double elevation_a, double azimuth_a, double elevation_b, double azimuth_b) {
     const double mean = 0.5 * (elevation_a + elevation_b) * kRadPerDeg;
-    return std::hypot(elevation_a - elevation_b, std::remainder(azimuth_a - azimuth_b, 360.0) * std::cos(mean));
+    return std::hypot(elevation_a - elevation_b,
+                      std::remainder(azimuth_a - azimuth_b, 360.0) * std::cos(mean));
 }
 
-}  // namespace
+} // namespace
 
 // Source: ERFA 2.0 (liberfa), the open form of the IAU's SOFA. Seed 20200101.
-TEST_CASE("sun: over random instants and places the exact algorithm is within 0.0003, the fast one within 0.01 degrees of ERFA") {
+TEST_CASE("sun: over random instants and places the exact algorithm is within 0.0003, the fast one within "
+          "0.01 degrees of ERFA") {
     std::mt19937_64 random(20200101);
-    std::uniform_real_distribution<double> days(days_since_2000(2020, 1, 1, 0), days_since_2000(2050, 1, 1, 0));
+    std::uniform_real_distribution<double> days(days_since_2000(2020, 1, 1, 0),
+                                                days_since_2000(2050, 1, 1, 0));
     std::uniform_real_distribution<double> latitude(-65, 65), longitude(-180, 180);
     double worst_spa = 0;
     double worst_psa = 0;

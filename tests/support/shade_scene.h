@@ -1,5 +1,6 @@
 #pragma once
-// A small invented street for the tests of sun and shade: poles in a row, two heads, a temperate climate at 40 N.
+// A small invented street for the tests of sun and shade: poles in a row, two heads, a temperate climate at
+// 40 N.
 
 #include <functional>
 #include <limits>
@@ -12,7 +13,7 @@ namespace unstring {
 
 /// Heights of the ground as a formula, cut into cells like a raster; NaN outside a square around the origin.
 class FormulaHeights : public HeightSource {
-  public:
+public:
     explicit FormulaHeights(std::function<double(MapPoint)> height, double cell_m = 0.5, double half_m = 1e9)
         : height_(std::move(height)), cell_m_(cell_m), half_m_(half_m) {}
 
@@ -38,7 +39,7 @@ class FormulaHeights : public HeightSource {
         return out;
     }
 
-  private:
+private:
     std::function<double(MapPoint)> height_;
     double cell_m_, half_m_;
 };
@@ -69,7 +70,8 @@ struct ShadeScene {
         climate.albedo.fill(0.2);
     }
 
-    [[nodiscard]] static Head head(std::string name, double panel_wp, double battery_wh, double led_w, double lumens) {
+    [[nodiscard]] static Head head(std::string name, double panel_wp, double battery_wh, double led_w,
+                                   double lumens) {
         Head head;
         head.head = std::move(name);
         head.panel_wp = panel_wp;
@@ -83,8 +85,13 @@ struct ShadeScene {
     }
 
     [[nodiscard]] ShadeInput input(HeightSource* heights = nullptr) const {
-        return {.city = city, .catalog = catalog, .climate = climate, .heights = heights, .nights_goal = 3, .heads = {}};
+        return {.city = city,
+                .catalog = catalog,
+                .climate = climate,
+                .heights = heights,
+                .nights_goal = 3,
+                .heads = {}};
     }
 };
 
-}  // namespace unstring
+} // namespace unstring

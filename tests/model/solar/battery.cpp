@@ -31,17 +31,18 @@ BatteryGroup unit_a_night(double capacity) {
     return group;
 }
 
-}  // namespace
+} // namespace
 
-// Exact: two units or none come by day, one goes at night, so that the charge after the night walks by one up or down
-// between 0 and N; at 0 a step down is a dark night. With r = p / (1 - p) the share of dark nights is
+// Exact: two units or none come by day, one goes at night, so that the charge after the night walks by one up
+// or down between 0 and N; at 0 a step down is a dark night. With r = p / (1 - p) the share of dark nights is
 // (1 - p) (1 - r) / (1 - r^(N + 1)). Seed 11; the error is that of 240 years taken one by one.
 TEST_CASE("battery: a random walk goes dark as often as its closed form says, within three standard errors") {
     struct Row {
         int n;
         double p, dark;
     };
-    for (const Row& row : {Row{5, .6, .019248}, Row{3, .6, .049231}, Row{5, .5, .083333}, Row{10, .55, .012358}}) {
+    for (const Row& row :
+         {Row{5, .6, .019248}, Row{3, .6, .049231}, Row{5, .5, .083333}, Row{10, .55, .012358}}) {
         constexpr std::size_t kYears = 60;
         std::mt19937_64 random(11);
         std::bernoulli_distribution is_sunny(row.p);
@@ -49,7 +50,8 @@ TEST_CASE("battery: a random walk goes dark as often as its closed form says, wi
         for (std::size_t day = 0; day < kYears * kDays; ++day)
             for (std::size_t lane = 0; lane < kLanes; ++lane)
                 if (is_sunny(random)) yield[(day * 24 + 13) * kLanes + lane] = 2;
-        const auto runs = run_batteries(sun_at_40(), unit_a_night(row.n + 1), yield, {1, 1, 1, 1}, 2, nullptr);
+        const auto runs =
+            run_batteries(sun_at_40(), unit_a_night(row.n + 1), yield, {1, 1, 1, 1}, 2, nullptr);
         std::vector<double> shares;
         for (const BatteryRun& run : runs)
             for (const int dark : run.dark_in_year) shares.push_back(dark / 365.0);
@@ -75,7 +77,7 @@ TEST_CASE("battery: no energy appears or is lost between panel, cells and lamp")
     for (std::size_t hour = 0; hour < kHours; ++hour)
         if (hour % 24 > 17 || hour % 24 < 6) load[hour] = 12;
     BatteryTerms battery;
-    battery.capacity_wh = 1e6;  // never full, never empty: what goes in stays in until it goes out
+    battery.capacity_wh = 1e6; // never full, never empty: what goes in stays in until it goes out
     BatteryGroup group;
     set_lane(group, 0, sun_at_40(), load, std::vector<double>(kHours, 20.0), battery);
     const auto run = run_batteries(sun_at_40(), group, yield, {100}, 0, nullptr)[0];
@@ -108,7 +110,8 @@ TEST_CASE("battery: cold stops the charge, lowers what can be used, and idle day
     BatteryGroup cold, mild;
     set_lane(cold, 0, sun_at_40(), load, std::vector<double>(kHours, -1.0), battery);
     set_lane(mild, 0, sun_at_40(), load, std::vector<double>(kHours, 1.0), battery);
-    CHECK(run_batteries(sun_at_40(), cold, yield, {100}, 0, nullptr)[0].final_soc == Approx(std::pow(.99, 365)));
+    CHECK(run_batteries(sun_at_40(), cold, yield, {100}, 0, nullptr)[0].final_soc ==
+          Approx(std::pow(.99, 365)));
     CHECK(run_batteries(sun_at_40(), mild, yield, {100}, 0, nullptr)[0].final_soc > 0.98);
     CHECK(usable_frac(25) == 1);
     CHECK(usable_frac(0) == Approx(.90));
@@ -125,7 +128,8 @@ TEST_CASE("battery: lanes do not touch each other") {
     CHECK(runs[1].dark_a_year() == runs[3].dark_a_year());
 }
 
-TEST_CASE("battery life: a year of deep daily cycles in heat ends before the cap, an idle cool battery reaches it") {
+TEST_CASE("battery life: a year of deep daily cycles in heat ends before the cap, an idle cool battery "
+          "reaches it") {
     std::vector<float> deep(kHours), idle(kHours, 0.6F);
     for (std::size_t hour = 0; hour < kHours; ++hour) deep[hour] = hour % 24 < 12 ? 0.05F : 1.0F;
     std::array<double, 12> hot{}, cool{};

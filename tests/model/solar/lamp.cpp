@@ -10,7 +10,7 @@ namespace {
 
 double sum(const std::vector<double>& values) { return std::accumulate(values.begin(), values.end(), 0.0); }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("lamp: undimmed it burns its watts for the hours of darkness") {
     const SunYear sun = make_sun_year({0, 40}, DayModel::cooper, 60);

@@ -12,7 +12,8 @@ const std::vector<double> kMeanDays(kDays, 0.55);
 
 SkyLayers crown_at(double bearing_deg) {
     SkyLayers layers;
-    layers.solid = HorizonProfile({{bearing_deg - 6, 0}, {bearing_deg - 6, 45}, {bearing_deg + 6, 45}, {bearing_deg + 6, 0}});
+    layers.solid = HorizonProfile(
+        {{bearing_deg - 6, 0}, {bearing_deg - 6, 45}, {bearing_deg + 6, 45}, {bearing_deg + 6, 0}});
     return layers;
 }
 
@@ -22,19 +23,22 @@ Monthly beam_of_months(const SunYear& sun, double crown_deg) {
     const PanelLight light = panel_light(sun, beam_through(sun, layers), layers, {15, 180, {}}, 1);
     Monthly beam{};
     for (std::size_t hour = 0; hour < kHours; ++hour)
-        beam[static_cast<std::size_t>(sun.month_of_hour(hour) - 1)] += sky.beam_like[hour] * light.beam_factor[hour];
+        beam[static_cast<std::size_t>(sun.month_of_hour(hour) - 1)] +=
+            sky.beam_like[hour] * light.beam_factor[hour];
     return beam;
 }
 
-}  // namespace
+} // namespace
 
-TEST_CASE("panel: behind a crown 12 degrees wide the month's beam is within 0.5 % of that in 1-minute steps") {
+TEST_CASE(
+    "panel: behind a crown 12 degrees wide the month's beam is within 0.5 % of that in 1-minute steps") {
     const SunYear bulk = make_sun_year({0, 40}, DayModel::cooper, 5, 0, Sampling::staggered);
     const SunYear minutes = make_sun_year({0, 40}, DayModel::cooper, 1);
     for (double bearing = 0; bearing < 360; bearing += 15) {
         const Monthly coarse = beam_of_months(bulk, bearing);
         const Monthly fine = beam_of_months(minutes, bearing);
-        for (std::size_t month = 0; month < 12; ++month) CHECK(coarse[month] == Approx(fine[month]).epsilon(0.005));
+        for (std::size_t month = 0; month < 12; ++month)
+            CHECK(coarse[month] == Approx(fine[month]).epsilon(0.005));
     }
 }
 

@@ -32,5 +32,5 @@ TEST_CASE("bearing: a street far away says nothing; south of the equator the pan
     Pole pole;
     const PanelBearing bearing = panel_bearing(city, pole, 0);
     CHECK(bearing.from == "north");
-    CHECK(bearing.bearing_deg == Approx(358));  // grid bearing of true north
+    CHECK(bearing.bearing_deg == Approx(358)); // grid bearing of true north
 }

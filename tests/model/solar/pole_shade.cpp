@@ -34,7 +34,8 @@ TEST_CASE("pole: the shared directions give the light that the exact profile giv
 
 TEST_CASE("pole: the answer does not depend on the number of threads") {
     ShadeScene scene(6);
-    FormulaHeights trees([](MapPoint p) { return p.y_m < -12 && static_cast<long>(p.x_m) % 40 < 15 ? 15.0 : 0.0; });
+    FormulaHeights trees(
+        [](MapPoint p) { return p.y_m < -12 && static_cast<long>(p.x_m) % 40 < 15 ? 15.0 : 0.0; });
     const auto run = [&](std::size_t threads) {
         const tbb::global_control limit(tbb::global_control::max_allowed_parallelism, threads);
         return *shade_city(scene.input(&trees), {});

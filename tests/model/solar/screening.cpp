@@ -7,7 +7,7 @@
 using namespace unstring;
 
 TEST_CASE("screening: what stops a head is said in words and numbers, in one order") {
-    const Head head = ShadeScene::head("h", 80, 500, 12, 1800);  // wind area 0.3 m2
+    const Head head = ShadeScene::head("h", 80, 500, 12, 1800); // wind area 0.3 m2
     Pole pole;
     CHECK(what_stops(pole, head).empty());
     pole.epa_allow_m2 = 0.29;
@@ -16,14 +16,16 @@ TEST_CASE("screening: what stops a head is said in words and numbers, in one ord
     CHECK(what_stops(pole, head) == "2500 lm are needed, the head gives 1800 lm");
     pole.owner = Owner::utility;
     pole.consent = false;
-    CHECK(what_stops(pole, head) == "2500 lm are needed, the head gives 1800 lm");  // consent holds back the hand-out only
+    CHECK(what_stops(pole, head) ==
+          "2500 lm are needed, the head gives 1800 lm"); // consent holds back the hand-out only
     pole.critical = true;
     CHECK(what_stops(pole, head) == "critical pole: solar only where solar_ok is yes");
     pole.solar_ok = false;
     CHECK(what_stops(pole, head) == "solar_ok is no at this pole");
 }
 
-TEST_CASE("screening: unknown strength, attachments, blank consent and a critical pole with solar_ok do not stop it") {
+TEST_CASE("screening: unknown strength, attachments, blank consent and a critical pole with solar_ok do not "
+          "stop it") {
     const Head head = ShadeScene::head("h", 80, 500, 12, 1800);
     Pole pole;
     pole.attachments = "camera";

@@ -50,7 +50,7 @@ const HeadAnswer& small_head(const Expected<ShadeResult>& result) {
     return result->poles[0].heads[0];
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("shade: trees to the south cost winter light, the same trees to the north cost little") {
     ShadeScene scene(1);
@@ -102,8 +102,8 @@ TEST_CASE("shade: grid north turned against true north turns the trees with it")
     ShadeScene scene(1);
     auto trees = wall(true);
     const double straight = small_head(shade_city(scene.input(&trees), {})).panel_kwh_m2[11];
-    scene.city.convergence_deg = 180;  // the grid's south is the true north
-    scene.city.poles[0].arm_deg = 0;   // so that the panel still leans to the true south
+    scene.city.convergence_deg = 180; // the grid's south is the true north
+    scene.city.poles[0].arm_deg = 0;  // so that the panel still leans to the true south
     const double turned = small_head(shade_city(scene.input(&trees), {})).panel_kwh_m2[11];
     CHECK(turned > 1.3 * straight);
 }
@@ -143,17 +143,20 @@ TEST_CASE("shade: the cheapest eligible head is the best; where none is, the one
     CHECK_FALSE(bright.heads[0].eligible);
     CHECK(bright.heads[0].why.find("9000 lm are needed, the head gives 1800 lm") == 0);
     const std::size_t other = static_cast<std::size_t>(1 - bright.best);
-    CHECK(bright.heads[static_cast<std::size_t>(bright.best)].nights_dark_year <= bright.heads[other].nights_dark_year);
+    CHECK(bright.heads[static_cast<std::size_t>(bright.best)].nights_dark_year <=
+          bright.heads[other].nights_dark_year);
 }
 
-TEST_CASE("shade: too many dark nights are a reason with both numbers; a critical pole has a goal of its own") {
+TEST_CASE(
+    "shade: too many dark nights are a reason with both numbers; a critical pole has a goal of its own") {
     ShadeScene scene(1);
     scene.city.poles[0].critical = true;
     scene.city.poles[0].solar_ok = true;
     scene.catalog.heads[0].led_w = 40;
     const HeadAnswer answer = small_head(shade_city(scene.input(), {}));
     CHECK_FALSE(answer.eligible);
-    CHECK(answer.why.find("nights dark a year at the end of battery life, 0.3 are allowed") != std::string::npos);
+    CHECK(answer.why.find("nights dark a year at the end of battery life, 0.3 are allowed") !=
+          std::string::npos);
 }
 
 TEST_CASE("shade: only the heads asked for are run; one that the catalogue has not is refused") {
@@ -170,7 +173,8 @@ TEST_CASE("shade: only the heads asked for are run; one that the catalogue has n
 
 TEST_CASE("shade: more heads than run side by side give each the answer it has alone") {
     ShadeScene scene(1);
-    for (const char* name : {"a", "b", "c", "d"}) scene.catalog.heads.push_back(ShadeScene::head(name, 60, 400, 8, 1200));
+    for (const char* name : {"a", "b", "c", "d"})
+        scene.catalog.heads.push_back(ShadeScene::head(name, 60, 400, 8, 1200));
     scene.catalog.heads[5].tilt_deg = 35;
     const auto together = shade_city(scene.input(), {});
     ShadeInput alone = scene.input();

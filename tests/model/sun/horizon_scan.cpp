@@ -18,7 +18,8 @@ namespace {
 constexpr double kPanel_m = 6;
 using Formula = std::function<double(MapPoint)>;
 
-ScannedHorizon scanned(const Formula& heights, MapPoint place, double reach_m, int directions = 72, double cell_m = 0.5) {
+ScannedHorizon scanned(const Formula& heights, MapPoint place, double reach_m, int directions = 72,
+                       double cell_m = 0.5) {
     FormulaHeights source(heights, cell_m);
     const auto window = source.window(place, reach_m + 2 * cell_m);
     return scan_horizon(*window, bounds_of(*window), place, kPanel_m, reach_m, directions);
@@ -29,17 +30,18 @@ double view_of(const ScannedHorizon& horizon) {
     return sky_view_frac({&profile, 1}, 0, 0, 0.1);
 }
 
-}  // namespace
+} // namespace
 
-// A face drawn at 20 m lies between the last empty cell centre at 19.75 m and the first full one at 20.25 m, where its
-// full height is first found, at most a quarter cell later.
-TEST_CASE("horizon scan: a single wall stands at its closed form in every direction, and so does the sky over it") {
+// A face drawn at 20 m lies between the last empty cell centre at 19.75 m and the first full one at 20.25 m,
+// where its full height is first found, at most a quarter cell later.
+TEST_CASE(
+    "horizon scan: a single wall stands at its closed form in every direction, and so does the sky over it") {
     constexpr double kFace = 20.25, kStep = 0.125;
     const auto wall = scanned([](MapPoint p) { return p.y_m >= 20 ? 18.0 : 0.0; }, {0, 0}, 400, 360);
     for (int direction = 0; direction < 360; ++direction) {
         const auto found = static_cast<double>(wall.height_deg[static_cast<std::size_t>(direction)]);
         const double cosine = std::cos(direction * kRadPerDeg);
-        if (std::abs(cosine) < 0.1) continue;  // the wall ends at the reach there
+        if (std::abs(cosine) < 0.1) continue; // the wall ends at the reach there
         if (cosine < 0) CHECK(found == 0);
         if (cosine < 0) continue;
         CHECK(found <= std::atan(12 / (kFace / cosine)) / kRadPerDeg + 1e-3);
@@ -48,26 +50,35 @@ TEST_CASE("horizon scan: a single wall stands at its closed form in every direct
     CHECK(view_of(wall) == Approx((1 + std::cos(std::atan(12 / kFace))) / 2).margin(0.005));
 }
 
-TEST_CASE("horizon scan: in a round basin the horizon is the same all round, and the sky the square of its cosine") {
+TEST_CASE("horizon scan: in a round basin the horizon is the same all round, and the sky the square of its "
+          "cosine") {
     constexpr double kRadius = 30;
-    const auto basin = scanned([](MapPoint p) { return std::hypot(p.x_m, p.y_m) >= kRadius ? 20.0 : 0.0; }, {0, 0}, 60);
+    const auto basin =
+        scanned([](MapPoint p) { return std::hypot(p.x_m, p.y_m) >= kRadius ? 20.0 : 0.0; }, {0, 0}, 60);
     const double height = std::atan(14 / kRadius);
-    for (const float each : basin.height_deg) CHECK(static_cast<double>(each) == Approx(height / kRadPerDeg).margin(0.5));
+    for (const float each : basin.height_deg)
+        CHECK(static_cast<double>(each) == Approx(height / kRadPerDeg).margin(0.5));
     CHECK(view_of(basin) == Approx(std::pow(std::cos(height), 2)).margin(0.005));
 }
 
-TEST_CASE("horizon scan: a cone with its tip cut off is seen at the near edge of the cut, a canyon from its middle") {
-    // 24 m high and 10 m in radius, cut at 20 m: the cut begins 5/3 m before the axis, which stands 25 m east.
+TEST_CASE("horizon scan: a cone with its tip cut off is seen at the near edge of the cut, a canyon from its "
+          "middle") {
+    // 24 m high and 10 m in radius, cut at 20 m: the cut begins 5/3 m before the axis, which stands 25 m
+    // east.
     const auto cone = scanned(
-        [](MapPoint p) { return std::clamp(24 * (1 - std::hypot(p.x_m - 25, p.y_m) / 10), 0.0, 20.0); }, {0, 0}, 60);
-    CHECK(static_cast<double>(cone.height_deg[18]) == Approx(std::atan(14 / (25 - 5 / 3.0)) / kRadPerDeg).margin(0.5));
+        [](MapPoint p) { return std::clamp(24 * (1 - std::hypot(p.x_m - 25, p.y_m) / 10), 0.0, 20.0); },
+        {0, 0}, 60);
+    CHECK(static_cast<double>(cone.height_deg[18]) ==
+          Approx(std::atan(14 / (25 - 5 / 3.0)) / kRadPerDeg).margin(0.5));
     CHECK(cone.height_deg[54] == 0);
     constexpr double kFace = 10.25;
-    const auto canyon = scanned([](MapPoint p) { return std::abs(p.x_m) >= 10 ? 16.0 : 0.0; }, {0, 0}, 600, 360);
+    const auto canyon =
+        scanned([](MapPoint p) { return std::abs(p.x_m) >= 10 ? 16.0 : 0.0; }, {0, 0}, 600, 360);
     CHECK(view_of(canyon) == Approx(std::cos(std::atan(10 / kFace))).margin(0.005));
 }
 
-TEST_CASE("horizon scan: within half a degree of a march in 5 cm steps at 95 of 100 directions, without bias") {
+TEST_CASE(
+    "horizon scan: within half a degree of a march in 5 cm steps at 95 of 100 directions, without bias") {
     // Seed 42: 60 crowns strewn about; poles with nothing above the panel within 3 m.
     std::mt19937_64 random(42);
     std::uniform_real_distribution<double> place(-60, 60), height(7, 20), radius(2, 6);
@@ -75,7 +86,8 @@ TEST_CASE("horizon scan: within half a degree of a march in 5 cm steps at 95 of 
         double x, y, top, r;
     };
     std::vector<Crown> crowns;
-    for (int i = 0; i < 60; ++i) crowns.push_back({place(random), place(random), height(random), radius(random)});
+    for (int i = 0; i < 60; ++i)
+        crowns.push_back({place(random), place(random), height(random), radius(random)});
     const Formula heights = [&](MapPoint p) {
         double top = 0;
         for (const Crown& crown : crowns) {
@@ -94,15 +106,20 @@ TEST_CASE("horizon scan: within half a degree of a march in 5 cm steps at 95 of 
         bool is_open = true;
         for (double a = 0; a < 360; a += 5)
             for (double d = 0; d <= 3; d += 0.25)
-                is_open = is_open && height_at_m(window, {at.x_m + d * std::sin(a * kRadPerDeg), at.y_m + d * std::cos(a * kRadPerDeg)}) <= kPanel_m;
+                is_open = is_open && height_at_m(window, {at.x_m + d * std::sin(a * kRadPerDeg),
+                                                          at.y_m + d * std::cos(a * kRadPerDeg)}) <= kPanel_m;
         if (!is_open) continue;
         const ScannedHorizon found = scan_horizon(window, bounds_of(window), at, kPanel_m, 60, 72);
         for (int direction = 0; direction < 72; ++direction) {
             const double azimuth = direction * 5 * kRadPerDeg;
             double steepest = 0;
             for (double d = 0.05; d <= 60; d += 0.05)
-                steepest = std::max(steepest, (height_at_m(window, {at.x_m + d * std::sin(azimuth), at.y_m + d * std::cos(azimuth)}) - kPanel_m) / d);
-            errors.push_back(static_cast<double>(found.height_deg[static_cast<std::size_t>(direction)]) - std::atan(steepest) / kRadPerDeg);
+                steepest = std::max(steepest, (height_at_m(window, {at.x_m + d * std::sin(azimuth),
+                                                                    at.y_m + d * std::cos(azimuth)}) -
+                                               kPanel_m) /
+                                                  d);
+            errors.push_back(static_cast<double>(found.height_deg[static_cast<std::size_t>(direction)]) -
+                             std::atan(steepest) / kRadPerDeg);
             bias += errors.back();
         }
     }

@@ -33,7 +33,7 @@ TEST_CASE("sun year: a night ends in the first hour after solar noon") {
     CHECK(cooper.noon[0] == 12);
     CHECK(cooper.noon[364] == 364 * 24 + 12);
     const SunYear utc = make_sun_year({-130, 34}, DayModel::psa, 60);
-    CHECK(utc.noon[100] % 24 == 21);  // 130 degrees west: 8 h 40 min behind
+    CHECK(utc.noon[100] % 24 == 21); // 130 degrees west: 8 h 40 min behind
     const SunYear local = make_sun_year({-130, 34}, DayModel::psa, 60, -9);
     CHECK(local.noon[100] % 24 == 12);
 }

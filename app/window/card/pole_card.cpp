@@ -95,10 +95,16 @@ void PoleCard::build_keys(QWidget* parent) {
     year_ = new QSpinBox(parent);
     year_->setObjectName("work_year");
     year_->setKeyboardTracking(false);
+    year_->setButtonSymbols(QAbstractSpinBox::NoButtons);
+    year_->setAlignment(Qt::AlignCenter);
+    earlier_ = key(tr("earlier"), "year_earlier", tr("A year earlier"), false);
+    later_ = key(tr("later"), "year_later", tr("A year later"), false);
     year_->setToolTip(tr("The year of this pole's work. A change by hand is kept by phase."));
     year_lock_ = key(tr("lock year"), "lock_year", tr("A locked year stays where it is, in drags and in phase"), true);
     years->addWidget(word);
+    years->addWidget(earlier_);
     years->addWidget(year_);
+    years->addWidget(later_);
     years->addWidget(year_lock_);
     years->addStretch(1);
     rows->addLayout(years);
@@ -107,6 +113,8 @@ void PoleCard::build_keys(QWidget* parent) {
     connect(solar_, &QPushButton::clicked, this, [this] { desk_.mark(Choice::solar); });
     connect(lock_, &QPushButton::clicked, this, [this] { desk_.lock(); });
     connect(clear_, &QPushButton::clicked, this, [this] { desk_.clear_marks(); });
+    connect(earlier_, &QPushButton::clicked, this, [this] { year_->setValue(year_->value() - 1); });
+    connect(later_, &QPushButton::clicked, this, [this] { year_->setValue(year_->value() + 1); });
     connect(year_lock_, &QPushButton::clicked, this, [this] { desk_.toggle_year_lock(); });
     connect(year_, &QSpinBox::valueChanged, this, [this](int year) {
         if (year >= desk_.plan().settings.first_year) desk_.set_work_year(year);
@@ -146,6 +154,7 @@ void PoleCard::show_several() {
     what_->setText(words.join(", "));
     keys_->setVisible(lamps > 0);
     for (QPushButton* button : {keep_, rewire_, solar_, lock_, year_lock_}) button->setChecked(false);
+    for (QWidget* part : std::initializer_list<QWidget*>{year_, earlier_, later_}) part->setEnabled(true);
     const QSignalBlocker quiet(year_);
     year_->setRange(desk_.plan().settings.first_year - 1, desk_.plan().last_year());
     year_->setSpecialValueText(tr("as it is"));
@@ -222,7 +231,8 @@ void PoleCard::show_keys(const PolePlan& row) {
     year_->setRange(desk_.plan().settings.first_year - 1, desk_.plan().last_year());
     year_->setSpecialValueText(tr("none"));
     year_->setValue(row.year == 0 ? year_->minimum() : row.year);
-    year_->setEnabled((row.choice == Choice::rewire || row.choice == Choice::solar) && !row.year_locked);
+    for (QWidget* part : std::initializer_list<QWidget*>{year_, earlier_, later_})
+        part->setEnabled((row.choice == Choice::rewire || row.choice == Choice::solar) && !row.year_locked);
     keys_->setVisible(true);
     orders_->setText(orders_text(row));
     orders_->setVisible(!orders_->text().isEmpty());

@@ -46,7 +46,7 @@ class PoleCard : public QScrollArea {
     MonthChart* months_;
     SkyPlot* sky_;
     QWidget* keys_;
-    QPushButton *keep_, *rewire_, *solar_, *lock_, *clear_, *year_lock_, *every_number_, *all_history_;
+    QPushButton *keep_, *rewire_, *solar_, *lock_, *clear_, *year_lock_, *every_number_, *all_history_, *earlier_, *later_;
     QSpinBox* year_;
 };
 

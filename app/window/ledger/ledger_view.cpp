@@ -105,12 +105,12 @@ void LedgerView::paint_cell(QPainter& painter, const LedgerCell& cell, double x,
     painter.setPen(look.ink2);
     painter.drawText(QPointF(x + metrics.horizontalAdvance(number), y + 11), of);
     if (cell.used_frac < 0) return;
-    const double limit_x = x + std::min(62.0, room - 6);
+    const double limit_x = x + room - 8;
     const double full = limit_x - x;
     painter.fillRect(QRectF(x, y + 13.2, full, 2.4), look.hair2);
     painter.fillRect(QRectF(x, y + 13.2, full * std::clamp(cell.used_frac, 0.0, 1.0), 2.4), look.ink3);
     if (cell.is_over) painter.fillRect(QRectF(limit_x, y + 11.8, std::min(8.0, full * (cell.used_frac - 1)) + 2, 5), look.trouble);
-    painter.fillRect(QRectF(limit_x, y + 1, 1, kRow_px - 1), look.ink2);
+    painter.fillRect(QRectF(limit_x, y + 11.5, 1.2, 5.5), look.ink2);
 }
 
 void LedgerView::paint_reading(QPainter& painter, const QRectF& box) {

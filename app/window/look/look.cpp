@@ -121,7 +121,7 @@ QString style_sheet(const Look& look) {
                "QPushButton[key=\"true\"]{border-radius:3px;padding:3px 8px;font-weight:bold;}"
                "QPushButton[key=\"true\"]:checked{background:%2;color:%1;border-color:%2;}"
                "QLineEdit,QComboBox,QSpinBox{border:1px solid %5;border-radius:3px;padding:4px;background:%3;}"
-               "QComboBox QAbstractItemView{background:%3;color:%2;selection-background-color:%8;selection-color:%2;}"
+               "QComboBox::drop-down{border:none;width:18px;}QComboBox QAbstractItemView{background:%3;color:%2;selection-background-color:%8;selection-color:%2;}"
                "QListWidget,QTreeWidget,QTableWidget{border:none;background:%1;outline:0;gridline-color:%9;}"
                "QTreeWidget::item,QListWidget::item{padding:3px 2px;}"
                "QTreeWidget::item:selected,QListWidget::item:selected,QTableWidget::item:selected{background:%8;color:%2;}"

@@ -124,19 +124,24 @@ void draw_service(QPainter& painter, const Look& look, ServiceKind kind, QPointF
     painter.drawPath(path);
 }
 
-void draw_tag(QPainter& painter, const Look& look, QPointF at, const QString& text, const QColor& border, const QRectF& inside) {
+void draw_tag(QPainter& painter, const Look& look, QPointF at, const QString& text, const QColor& border, const QRectF& inside,
+              TagSide side) {
     const QFont font = text_font(12.5, Weight::strong);
     const QFontMetricsF metrics(font);
     const QStringList lines = text.split('\n');
     double width = 0;
     for (const QString& line : lines) width = std::max(width, metrics.horizontalAdvance(line));
     QRectF box(at.x() + 14, at.y() - 14 - 16.0 * double(lines.size()) - 10, width + 24, 16.0 * double(lines.size()) + 12);
+    if (side == TagSide::left) box.moveTo(at.x() - box.width() - 12, at.y() - box.height() / 2);
+    const bool has_leader = side == TagSide::left && box.left() >= inside.left() + 4;
+    if (side == TagSide::left && !has_leader) box.moveTop(at.y() + 24);
     if (box.right() > inside.right() - 4) box.moveRight(std::min(at.x() - 14, inside.right() - 4));
     if (box.left() < inside.left() + 4) box.moveLeft(inside.left() + 4);
     if (box.top() < inside.top() + 4) box.moveTop(at.y() + 20);
     if (box.bottom() > inside.bottom() - 4) box.moveBottom(inside.bottom() - 4);
     painter.save();
     painter.setRenderHint(QPainter::Antialiasing);
+    if (has_leader) painter.setPen(QPen(border, 1.4)), painter.drawLine(QPointF(box.right(), at.y()), at);
     painter.setPen(Qt::NoPen);
     painter.setBrush(look.shadow);
     painter.drawRoundedRect(box.translated(0, 3), 4, 4);

@@ -29,7 +29,9 @@ void draw_cutback(QPainter& painter, const QColor& ink, const QColor& ground, QP
 /// A small square with a lead: a service point, an end of a circuit, or a candidate (dotted).
 void draw_service(QPainter& painter, const Look& look, ServiceKind kind, QPointF at, double r);
 
-/// A word in a small raised tag with a border, kept inside `inside`; used under the pointer and at the hand.
-void draw_tag(QPainter& painter, const Look& look, QPointF at, const QString& text, const QColor& border, const QRectF& inside);
+enum class TagSide { right_above, left };
+/// A word in a small raised tag with a border, kept inside `inside`: beside the pointer, or ending left of `at` with a leader.
+void draw_tag(QPainter& painter, const Look& look, QPointF at, const QString& text, const QColor& border, const QRectF& inside,
+              TagSide side = TagSide::right_above);
 
 }  // namespace unstring

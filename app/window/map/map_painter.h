@@ -26,6 +26,8 @@ void paint_ground(QPainter& painter, const Desk& desk, const Camera& camera, con
 
 /// Loops at the year looked at: what is energised solid, what is dead broken; stations, cut-backs, names.
 void paint_strings(QPainter& painter, const Desk& desk, const Camera& camera);
+/// Stations and the strings' names, over the poles.
+void paint_stations(QPainter& painter, const Desk& desk, const Camera& camera);
 /// The trench tree with its wire sizes, and the service points.
 void paint_circuits(QPainter& painter, const Desk& desk, const Camera& camera);
 

@@ -125,6 +125,7 @@ void MapView::paintEvent(QPaintEvent*) {
     paint_circuits(painter, desk_, camera_);
     paint_strings(painter, desk_, camera_);
     poles_.paint(painter, desk_, camera_, style_);
+    paint_stations(painter, desk_, camera_);
     paint_scale(painter, desk_.look(), camera_);
     paint_overlay(painter);
 }

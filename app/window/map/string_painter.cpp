@@ -1,5 +1,7 @@
 #include <QPainterPath>
 
+#include <algorithm>
+#include <array>
 #include <cmath>
 
 #include "app/window/look/words.h"
@@ -80,11 +82,13 @@ void paint_station(QPainter& painter, const Desk& desk, const Camera& camera, St
     const QFontMetricsF metrics(font);
     const QString name = to_q(city.strings[string.place()].id);
     // Beside the station where there is room; else a little lower or higher, else not at all.
-    for (const QPointF shift : {QPointF(12, -6), QPointF(12, 16), QPointF(-12 - metrics.horizontalAdvance(name), -6), QPointF(-12 - metrics.horizontalAdvance(name), 16)}) {
+    const double wide = metrics.horizontalAdvance(name);
+    const std::array<QPointF, 6> shifts{QPointF(12, -6), QPointF(12, 16), QPointF(-wide / 2, -24), QPointF(-wide / 2, 34), QPointF(-12 - wide, -28), QPointF(-12 - wide, 40)};
+    for (const QPointF shift : shifts) {
         const QRectF box = metrics.tightBoundingRect(name).translated(at + shift).adjusted(-4, -3, 4, 3);
         const bool is_free = std::none_of(taken.begin(), taken.end(), [&box](const QRectF& other) { return other.intersects(box); });
         const bool is_inside = QRectF(QPointF(), camera.size).contains(box);
-        if ((!is_free || !is_inside) && !(is_chosen && shift.y() > 0 && shift.x() < 0)) continue;
+        if ((!is_free || !is_inside) && !(is_chosen && shift == shifts.back())) continue;
         QPainterPath text;
         text.addText(at + shift, font, name);
         painter.strokePath(text, QPen(look.block, 4, Qt::SolidLine, Qt::RoundCap, Qt::RoundJoin));
@@ -127,6 +131,12 @@ void paint_strings(QPainter& painter, const Desk& desk, const Camera& camera) {
         if (string != chosen) paint_loop(painter, desk, camera, desk.scene().loops[string.place()], false);
     const bool has_chosen = chosen.is_valid() && !desk.scene().loops[chosen.place()].lamps.empty();
     if (has_chosen) paint_loop(painter, desk, camera, desk.scene().loops[chosen.place()], true);
+}
+
+void paint_stations(QPainter& painter, const Desk& desk, const Camera& camera) {
+    painter.setRenderHint(QPainter::Antialiasing);
+    const StringIx chosen = desk.chosen_string();
+    const bool has_chosen = chosen.is_valid() && !desk.scene().loops[chosen.place()].lamps.empty();
     std::vector<QRectF> taken;
     if (has_chosen) paint_station(painter, desk, camera, chosen, taken);
     for (const StringIx string : desk.scene().series)

@@ -104,16 +104,28 @@ BoundaryMove move_boundary(const StringLoop& loop, const Plan& plan, const Bound
     return move;
 }
 
-bool fold_boundary(const StringLoop& loop, const Plan& plan, Boundary& boundary) {
+std::vector<Boundary> end_boundaries(const StringLoop& loop, const Plan& plan, int idle_year) {
     const Fold fold = fold_of(loop);
-    const int earliest = year_inside(loop, plan, fold, fold.out, fold.ret());
-    if (earliest <= plan.settings.first_year) return false;
-    boundary = {};
-    boundary.year = earliest - 1;
-    boundary.next_year = earliest;
-    boundary.out_on = fold.out;
-    boundary.ret_on = fold.ret();
-    return true;
+    int earliest = 0, latest = 0, movable = 0, without_year = 0;
+    for (int position = 1; position <= fold.lamps; ++position) {
+        const PolePlan& row = row_at(loop, plan, position);
+        if (!may_move(row)) continue;
+        ++movable;
+        if (row.year == 0) ++without_year;
+        else earliest = earliest == 0 ? row.year : std::min(earliest, row.year), latest = std::max(latest, row.year);
+    }
+    std::vector<Boundary> ends;
+    if (movable == 0) return ends;
+    Boundary at_fold;
+    at_fold.year = earliest != 0 ? earliest - 1 : std::clamp(idle_year, plan.settings.first_year, plan.last_year());
+    at_fold.next_year = earliest;
+    at_fold.out_on = fold.out, at_fold.ret_on = fold.ret();
+    if (at_fold.year >= plan.settings.first_year) ends.push_back(at_fold);
+    Boundary at_station;
+    at_station.year = latest;
+    at_station.next_year = latest < plan.last_year() ? latest + 1 : 0;
+    if (latest != 0 && without_year == 0) ends.push_back(at_station);
+    return ends;
 }
 
 Depths snap_depths(const StringLoop& loop, int out_on, int ret_on, int reach) {

@@ -56,9 +56,10 @@ struct BoundaryMove {
 /// and kept lamps stay.
 [[nodiscard]] BoundaryMove move_boundary(const StringLoop& loop, const Plan& plan, const Boundary& boundary, int out_on, int ret_on);
 
-/// A new boundary at the fold: the lamps beyond it come one year before the earliest work of the string.
-/// False when there is no earlier year left, or no work.
-[[nodiscard]] bool fold_boundary(const StringLoop& loop, const Plan& plan, Boundary& boundary);
+/// The boundaries that stand at the two ends of a string and can be drawn in from there:
+/// at the fold, for work one year before its earliest (`idle_year` where it has no work yet); at the station, for lamps
+/// that stay on one year after its last work (0 = no year, when that was the plan's last). Only those that can be.
+[[nodiscard]] std::vector<Boundary> end_boundaries(const StringLoop& loop, const Plan& plan, int idle_year);
 
 /// Depths that a boundary snaps to near the wanted ones: a cut-back within `reach` lamps on both legs, else the wanted.
 struct Depths {

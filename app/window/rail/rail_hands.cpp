@@ -32,6 +32,7 @@ void RailView::mousePressEvent(QMouseEvent* event) {
         drag_->grab_x = at.x();
         drag_->move.out_on = grab->boundary.out_on;
         drag_->move.ret_on = grab->boundary.ret_on;
+        desk_.set_year(grab->boundary.year);
         if (desk_.chosen_string() != grab->string) desk_.choose_string(grab->string);
         viewport()->update();
         return;

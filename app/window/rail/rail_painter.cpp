@@ -49,8 +49,8 @@ void RailView::paintEvent(QPaintEvent*) {
     }
     if (drag_ && drag_->is_started) {
         const RailRow row = row_of(drag_->string);
-        const double x = row.edge(std::max(row.fold.out, row.fold.ret())) - 30;
-        draw_tag(painter, look, QPointF(x, row.box.center().y() + 38), drag_text(), look.hand, viewport()->rect());
+        const double fold_x = row.edge(std::max(row.fold.out, row.fold.ret())) - 18;
+        draw_tag(painter, look, QPointF(fold_x, row.box.center().y()), drag_text(), look.hand, viewport()->rect(), TagSide::left);
     }
     if (shows_focus_) {
         painter.setPen(QPen(look.ink, 2)), painter.setBrush(Qt::NoBrush);
@@ -109,7 +109,7 @@ void RailView::paint_thread(QPainter& painter, const RailRow& row, const StringL
         for (std::size_t t = 0; t < desk_.view().city.transformers.size(); ++t)
             if (std::count(desk_.view().city.transformers[t].strings.begin(), desk_.view().city.transformers[t].strings.end(), row.string) > 0) unit = TransformerIx{t};
     painter.setFont(text_font(11.5)), painter.setPen(look.ink2);
-    const QString rating = unit.is_valid() ? tr("%1 kW").arg(number_text(desk_.view().city.transformers[unit.place()].rated_kw, desk_.view().city.transformers[unit.place()].rated_kw < 10 ? 1 : 0)) : tr("no unit");
+    const QString rating = state != nullptr && state->lamps == 0 ? tr("ended") : unit.is_valid() ? tr("%1 kW").arg(number_text(desk_.view().city.transformers[unit.place()].rated_kw, desk_.view().city.transformers[unit.place()].rated_kw < 10 ? 1 : 0)) : tr("no unit");
     painter.drawText(QPointF(station_x + 18, row.box.center().y() + 4), rating);
 }
 
@@ -176,8 +176,9 @@ void RailView::paint_boundaries(QPainter& painter, const RailRow& row, const Str
         const bool is_hot = hot_ && hot_->string == row.string && hot_->boundary.year == boundaries[i].year;
         paint_bar(painter, row, boundaries[i], is_hot || is_keyed, false);
     }
-    const bool is_fold_hot = hot_ && hot_->string == row.string && hot_->boundary.out_on == row.fold.out && hot_->boundary.ret_on == row.fold.ret();
-    if (is_fold_hot && !is_dragged) paint_bar(painter, row, hot_->boundary, true, false);
+    const auto ends = end_boundaries(loop, desk_.plan(), desk_.year());
+    const bool is_end_hot = hot_ && hot_->string == row.string && std::any_of(ends.begin(), ends.end(), [this](const Boundary& end) { return end.out_on == hot_->boundary.out_on && end.ret_on == hot_->boundary.ret_on; });
+    if (is_end_hot && !is_dragged) paint_bar(painter, row, hot_->boundary, true, false);
     if (!is_dragged) return;
     QPen ghost(desk_.look().ink3, 1.4);
     ghost.setDashPattern({2, 2});

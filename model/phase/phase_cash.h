@@ -36,12 +36,13 @@ class CashBook {
     void use(const PlanSettings& settings);
     /// Works out what is asked and not yet known, in parallel.
     void warm(const std::vector<PoleAsk>& asks);
+    /// The lines of every ask, one a pole, in parallel; what is worked out is known from then on.
+    [[nodiscard]] std::vector<std::vector<CashLine>> lines_of(const std::vector<PoleAsk>& asks);
     [[nodiscard]] const YearCash& pole(const PoleAsk& ask);
     /// @param dug  as trench beside its old duct
     [[nodiscard]] const YearCash& span(std::size_t place, int year, bool dug);
     [[nodiscard]] const YearCash& connection(ServiceIx service, int year);
 
-    [[nodiscard]] std::vector<CashLine> pole_lines(const PoleAsk& ask) const;
     /// Input with the settings in use: for the cash functions of other subjects.
     [[nodiscard]] MoneyInput input() const { return {input_.city, input_.catalog, input_.prices, plan_, input_.shade}; }
 
@@ -53,7 +54,7 @@ class CashBook {
         YearCash cash;
     };
     [[nodiscard]] const YearCash* find(const PoleAsk& ask) const;
-    void work_out(const PoleAsk& ask);
+    std::vector<CashLine> work_out(const PoleAsk& ask);
 
     const MoneyInput input_;
     const DecideResult& decide_;

@@ -5,6 +5,7 @@
 
 #include <fmt/format.h>
 
+#include "model/money/hours.h"
 #include "model/phase/duct_live.h"
 #include "model/phase/failure_drill.h"
 #include "model/phase/fund_check.h"
@@ -220,6 +221,7 @@ class Checks {
         }
         for (std::size_t s = 0; s < unreached.size(); ++s) check_unreached(s, unreached[s]);
         check_money_for_rest(unreached);
+        check_hours_for_rest(unreached);
     }
 
     /// What the poles without a year would take of the last year's money, beside what is left of it.
@@ -240,6 +242,25 @@ class Checks {
         say("money-short", fmt::format("year {}", year.year),
             fmt::format("{} poles not reached want {:.0f} more, trench and transformers apart; {:.0f} is left, short by {:.0f}", poles, needed, left, needed - left),
             fmt::format("at least {:.0f} in that year, or years after it", to_dollars(year.money) + needed), "raise money, or add years", "budget");
+    }
+
+    /// Likewise of each crew's hours.
+    void check_hours_for_rest(const std::vector<std::vector<std::size_t>>& unreached) {
+        if (result_.not_reached == 0 || result_.years.empty()) return;
+        const PhaseYear& year = result_.years.back();
+        TaskHours needed;
+        for (const auto& of_string : unreached)
+            for (const std::size_t i : of_string) needed += pole_hours(facts_.prices, facts_.city.poles[i], facts_.plan.poles[i].choice, year.year);
+        const auto check = [&](const char* crew, double wanted, double used, const std::optional<double>& limit) {
+            if (!limit || wanted <= std::max(0.0, *limit - used)) return;
+            const double left = std::max(0.0, *limit - used);
+            say("hours-short", fmt::format("year {}", year.year),
+                fmt::format("the poles not reached want {:.0f} {} more, trench and wire apart; {:.0f} are left, short by {:.0f}", wanted, crew, left, wanted - left),
+                fmt::format("at least {:.0f} in that year, or years after it", used + wanted), "raise the crew's hours, or add years", "budget");
+        };
+        check("civil crew hours", needed.civil, year.hours.civil, year.civil_limit_h);
+        check("lighting crew hours", needed.lighting, year.hours.lighting, year.lighting_limit_h);
+        check("electricians' hours", needed.electric, year.hours.electric, year.electric_limit_h);
     }
 
     void check_unreached(std::size_t s, const std::vector<std::size_t>& poles) {

@@ -116,11 +116,11 @@ void fill_ledger(const PhaseFacts& facts, CashBook& book, bool with_lines, Phase
     std::vector<PoleAsk> asks;
     for (std::size_t i = 0; i < facts.city.poles.size(); ++i)
         if (is_candidate(facts.city, facts.city.poles[i])) asks.push_back(ask_of(facts, i));
-    book.warm(asks);
-    for (const PoleAsk& ask : asks) {
-        sum.add(book.pole(ask));
-        if (with_lines) sum.add_lines(book.pole_lines(ask));
-    }
+    if (with_lines)
+        for (std::vector<CashLine>& lines : book.lines_of(asks)) sum.add_lines(std::move(lines));
+    else
+        book.warm(asks);
+    for (const PoleAsk& ask : asks) sum.add(book.pole(ask));
     for (std::size_t i = 0; i < facts.decide.spans.size(); ++i) {
         if (facts.span_year[i] == 0) continue;
         const bool dug = facts.duct[i] == DuctState::dug;

@@ -12,8 +12,8 @@
 namespace unstring {
 namespace {
 
-constexpr int kStarts = 3;         ///< searches from scratch, each with its own seed
-constexpr int kSearchRounds = 1200;
+constexpr int kStarts = 4;         ///< searches from scratch, each with its own seed
+constexpr int kSearchRounds = 2000;
 
 Fault stopped() { return {FaultCode::cancelled, {}, 0, {}, "stopped by the user", {}, "run phase again"}; }
 

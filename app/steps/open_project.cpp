@@ -67,7 +67,12 @@ PhaseResult OpenProject::preview(const Plan& next) const {
     const auto now = view();
     if (!now->decide) return {};
     static const ShadeResult none;
-    PhaseResult result = evaluate_phase({now->city, now->catalog, now->prices, next, now->shade ? *now->shade : none}, *now->decide);
+    const std::lock_guard held(inside_->desk_mutex);
+    if (inside_->desk_view != now) {
+        inside_->desk = std::make_unique<PhaseDesk>(MoneyInput{now->city, now->catalog, now->prices, next, now->shade ? *now->shade : none}, *now->decide);
+        inside_->desk_view = now;
+    }
+    PhaseResult result = inside_->desk->evaluate(next, false);
     result.bound = now->phase ? now->phase->bound : 0;
     return result;
 }

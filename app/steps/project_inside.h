@@ -14,6 +14,7 @@
 #include "geo/project/plan_tables.h"
 #include "geo/project/result_tables.h"
 #include "model/money/pole_option.h"
+#include "model/phase/phase_desk.h"
 
 namespace unstring {
 
@@ -35,6 +36,10 @@ struct OpenProject::Inside {
 
     mutable std::mutex view_mutex;
     std::shared_ptr<const ProjectView> view;
+
+    mutable std::mutex desk_mutex;  ///< of what preview keeps from one plan to the next
+    mutable std::shared_ptr<const ProjectView> desk_view;
+    mutable std::unique_ptr<PhaseDesk> desk;
 
     /// Reads everything from the file.
     Expected<void> load(const std::string& plan_name);

@@ -39,12 +39,16 @@ double turned(double deg) {
 
 } // namespace
 
-PanelBearing panel_bearing(const City& city, const Pole& pole, double turn_deg) {
-    if (pole.arm_deg) return {turned(*pole.arm_deg + turn_deg), "file"};
-    if (const auto street = street_bearing_deg(city, pole.place))
-        return {turned(*street + turn_deg), "street"};
+PanelBearing arm_bearing(const City& city, const Pole& pole) {
+    if (pole.arm_deg) return {turned(*pole.arm_deg), "file"};
+    if (const auto street = street_bearing_deg(city, pole.place)) return {turned(*street), "street"};
     const bool is_south = city.centre.lat_deg < 0;
     return {turned((is_south ? 0.0 : 180.0) - city.convergence_deg), is_south ? "north" : "south"};
+}
+
+PanelBearing panel_bearing(const PanelBearing& arm, double turn_deg) {
+    const bool has_arm = arm.from == "file" || arm.from == "street";
+    return {has_arm ? turned(arm.bearing_deg + turn_deg) : arm.bearing_deg, arm.from};
 }
 
 } // namespace unstring

@@ -15,7 +15,11 @@ struct PanelBearing {
 };
 
 /// The arm's bearing from the file, else square to the nearest street line and over it, else toward the
-/// equator; each turned by the head's own turn (0: the panel leans away from the pole), the last one not.
-[[nodiscard]] PanelBearing panel_bearing(const City& city, const Pole& pole, double turn_deg);
+/// equator.
+[[nodiscard]] PanelBearing arm_bearing(const City& city, const Pole& pole);
+
+/// The arm's bearing turned by the head's own turn (0: the panel leans away from the pole); toward the
+/// equator it is not turned.
+[[nodiscard]] PanelBearing panel_bearing(const PanelBearing& arm, double turn_deg);
 
 } // namespace unstring

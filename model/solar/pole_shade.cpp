@@ -174,10 +174,11 @@ PoleShade shade_pole(const ShadeInput& input, const CityLight& light, const Shad
     const SkyLayers layers = sky_layers(light, horizon, input.city.convergence_deg);
     write_beam_through(light, horizon, scratch.through);
     make_room(light, scratch);
+    const PanelBearing arm = arm_bearing(input.city, pole);
     for (const HeadGroup& group : light.groups) {
         const std::size_t first = shade.heads.size();
         for (std::size_t lane = 0; lane < group.heads.size(); ++lane) {
-            const PanelBearing bearing = panel_bearing(input.city, pole, group.heads[lane]->turn_deg);
+            const PanelBearing bearing = panel_bearing(arm, group.heads[lane]->turn_deg);
             if (shade.heads.empty()) {
                 shade.bearing_deg = bearing.bearing_deg;
                 shade.bearing_from = bearing.from;

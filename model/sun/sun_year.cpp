@@ -102,17 +102,13 @@ void bound_light(SunYear& year, std::size_t day) {
     }
 }
 
-/// The hour of a day whose centre is the first at or after solar noon.
-std::uint32_t noon_hour(const SunYear& year, std::size_t day) {
-    std::uint32_t best = static_cast<std::uint32_t>(day * 24 + 12);
-    double least = 24;
-    for (std::size_t hour = day * 24; hour < day * 24 + 24; ++hour) {
-        const double past_h = year.solar_hour[hour] - 12.0;
-        if (past_h < -1e-9 || past_h >= least) continue;
-        least = past_h;
-        best = static_cast<std::uint32_t>(hour);
-    }
-    return best;
+/// The hour of the day (0..23) whose centre is the first at or after mean solar noon. The equation of time is
+/// left out: no lamp burns within a quarter of an hour of noon, and a boundary that stays put never meets a
+/// day's end twice.
+std::uint32_t noon_hour(LonLat place, DayModel model, double clock_h) {
+    const double noon_h = model == DayModel::psa ? 12.0 - place.lon_deg / 15.0 + clock_h : 12.0;
+    const double hour = std::ceil(noon_h - 0.5 - 1e-9);
+    return static_cast<std::uint32_t>(hour - 24.0 * std::floor(hour / 24.0));
 }
 
 } // namespace
@@ -122,6 +118,7 @@ SunYear make_sun_year(LonLat place, DayModel model, int step_min, double clock_h
     const Sky sky(place, model, clock_h);
     SunYear year;
     year.first_step.push_back(0);
+    const std::uint32_t noon = noon_hour(place, model, clock_h);
     for (int day = 0; day < kDays; ++day) {
         year.days[static_cast<std::size_t>(day)] = sun_day(sky, place.lat_deg, day);
         for (int hour = 0; hour < 24; ++hour)
@@ -130,7 +127,7 @@ SunYear make_sun_year(LonLat place, DayModel model, int step_min, double clock_h
         normalise(std::span(year.global_share).subspan(first, 24));
         normalise(std::span(year.diffuse_share).subspan(first, 24));
         bound_light(year, static_cast<std::size_t>(day));
-        year.noon[static_cast<std::size_t>(day)] = noon_hour(year, static_cast<std::size_t>(day));
+        year.noon[static_cast<std::size_t>(day)] = static_cast<std::uint32_t>(first) + noon;
     }
     return year;
 }

@@ -40,8 +40,9 @@ struct SunYear {
     std::vector<double> solar_hour;                 ///< 0..24, of the hour's centre, solar time
     std::vector<std::uint32_t> first_step; ///< kHours + 1: the steps of hour h are first_step[h] .. [h + 1]
     std::vector<SunStep> steps;
-    std::vector<float> lamp_step_deg;      ///< elevation at the middle of each 5 minutes, kHours * kLampSteps
-    std::array<std::uint32_t, kDays> noon; ///< first hour after solar noon, one per day: there a night ends
+    std::vector<float> lamp_step_deg; ///< elevation at the middle of each 5 minutes, kHours * kLampSteps
+    std::array<std::uint32_t, kDays>
+        noon; ///< first hour after mean solar noon, one per day: there a night ends
 
     [[nodiscard]] int month_of_hour(std::size_t hour) const { return days[hour / 24].month; }
 };

@@ -28,7 +28,8 @@ TEST_CASE("sun year: the hours of a day share out its light, or there is none") 
         }
 }
 
-TEST_CASE("sun year: a night ends in the first hour after solar noon") {
+TEST_CASE("sun year: a night ends in the first hour after mean solar noon, also where that is near the "
+          "clock's midnight") {
     const SunYear cooper = make_sun_year({0, 40}, DayModel::cooper, 60);
     CHECK(cooper.noon[0] == 12);
     CHECK(cooper.noon[364] == 364 * 24 + 12);
@@ -36,6 +37,8 @@ TEST_CASE("sun year: a night ends in the first hour after solar noon") {
     CHECK(utc.noon[100] % 24 == 21); // 130 degrees west: 8 h 40 min behind
     const SunYear local = make_sun_year({-130, 34}, DayModel::psa, 60, -9);
     CHECK(local.noon[100] % 24 == 12);
+    const SunYear date_line = make_sun_year({179, -17}, DayModel::psa, 60);
+    for (std::size_t day = 1; day < kDays; ++day) CHECK(date_line.noon[day] - date_line.noon[day - 1] == 24);
 }
 
 TEST_CASE("sun year: the clock only moves the hours, not the light of a year") {

@@ -4,6 +4,7 @@
 #include <tuple>
 
 #include "model/orders/crew_orders.h"
+#include "model/phase/duct_live.h"
 
 namespace unstring {
 namespace {
@@ -83,7 +84,8 @@ const char* text_of(Crew crew) {
 }
 
 std::vector<WorkOrder> work_orders(const MoneyInput& input, const DecideResult& decide, const PhaseResult& phase, int year, const Crew* crew) {
-    const OrderFacts facts = order_facts(input, decide, phase);
+    const DecideResult built = as_built(decide, phase);  // spans that phase digs are trench here
+    const OrderFacts facts = order_facts(input, built, phase);
     std::vector<std::pair<const YearJob*, WorkOrder>> all;
     std::set<std::string> ids;
     for (const YearJob& job : facts.jobs)

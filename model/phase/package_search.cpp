@@ -232,7 +232,7 @@ PackagePlan search_packages(const PackageCase& packages, const SearchChoices& ch
                 hand.put(taken[i], before[i]);
             }
         }
-        if (idle > 60 * static_cast<int>(strings)) break;  // nothing has helped for long
+        if (idle > 150 * static_cast<int>(strings)) break;  // nothing has helped for long
         progress.at(static_cast<double>(round + 1) / choices.rounds);
     }
     return hand.sum();

@@ -13,7 +13,7 @@ namespace unstring {
 namespace {
 
 constexpr int kStarts = 4;         ///< searches from scratch, each with its own seed
-constexpr int kSearchRounds = 2000;
+constexpr int kSearchRounds = 6000;
 
 Fault stopped() { return {FaultCode::cancelled, {}, 0, {}, "stopped by the user", {}, "run phase again"}; }
 

@@ -16,7 +16,13 @@ struct WorthOptions {
 
 std::optional<Fault> refuse(const char* option, double value, double low, double high, const char* remedy) {
     if (std::isfinite(value) && value >= low && value <= high) return std::nullopt;
-    return Fault{FaultCode::bad_usage, {}, 0, option, fmt::format("{}", value), fmt::format("{} to {}", low, high), remedy};
+    return Fault{FaultCode::bad_usage,
+                 {},
+                 0,
+                 option,
+                 fmt::format("{}", value),
+                 fmt::format("{} to {}", low, high),
+                 remedy};
 }
 
 void work_out(const WorthOptions& given, WorkOutAnswer& answer) {
@@ -25,13 +31,15 @@ void work_out(const WorthOptions& given, WorkOutAnswer& answer) {
     if (!answer.fault) answer.fault = refuse("--rise", given.rise, -0.5, 1, "give a share: 1 % is 0.01");
     if (answer.fault) return;
     const double single = spv(given.rate, given.years), uniform = upv(given.rate, given.years);
-    const double rising = upv_rising(given.rate, given.rise, given.years), recovery = crf(given.rate, given.years);
+    const double rising = upv_rising(given.rate, given.rise, given.years),
+                 recovery = crf(given.rate, given.years);
     answer.json["spv"] = single;
     answer.json["upv"] = uniform;
     answer.json["upv_rising"] = rising;
     answer.json["crf"] = recovery;
     answer.steps_text = fmt::format(
-        "Inputs: real discount rate d = {}, n = {} years, real rise e = {}; flows at year ends, constant money.\n"
+        "Inputs: real discount rate d = {}, n = {} years, real rise e = {}; flows at year ends, constant "
+        "money.\n"
         "single present value    (1 + d)^-n = {:.6f}\n"
         "uniform present value   (1 - (1 + d)^-n) / d = {:.6f} (n where d = 0)\n"
         "rising flows            (1 + e) / (d - e) (1 - ((1 + e) / (1 + d))^n) = {:.6f} (n where d = e)\n"
@@ -40,10 +48,11 @@ void work_out(const WorthOptions& given, WorkOutAnswer& answer) {
         given.rate, given.years, given.rise, single, uniform, rising, recovery);
 }
 
-}  // namespace
+} // namespace
 
 void add_work_out_worth(CLI::App& work_out_app, WorkOutAnswer& answer) {
-    CLI::App* topic = work_out_app.add_subcommand("worth", "present-worth factors of a rate and a number of years");
+    CLI::App* topic =
+        work_out_app.add_subcommand("worth", "present-worth factors of a rate and a number of years");
     const auto given = std::make_shared<WorthOptions>();
     topic->add_option("--rate", given->rate, "real discount rate, 0.03 = 3 %")->required();
     topic->add_option("--years", given->years, "years")->required();
@@ -52,4 +61,4 @@ void add_work_out_worth(CLI::App& work_out_app, WorkOutAnswer& answer) {
     topic->callback([given, &answer] { work_out(*given, answer); });
 }
 
-}  // namespace unstring
+} // namespace unstring

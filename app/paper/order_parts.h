@@ -17,4 +17,4 @@ void paint_cautions(Sheet& sheet, const WorkOrder& order);
 void paint_stores(Sheet& sheet, const WorkOrder& order);
 void paint_return(Sheet& sheet, const WorkOrder& order);
 
-}  // namespace unstring
+} // namespace unstring

@@ -1,5 +1,6 @@
 #pragma once
-// One work order on its pages: head, sketch, poles, steps with hold points, readings, cautions, stores, signatures.
+// One work order on its pages: head, sketch, poles, steps with hold points, readings, cautions, stores,
+// signatures.
 
 #include "app/paper/sheet.h"
 #include "model/orders/work_order.h"
@@ -12,4 +13,4 @@ void paint_order(Sheet& sheet, const WorkOrder& order);
 /// Head and foot of each page.
 void paint_furniture(Sheet& sheet, const WorkOrder& order, int pages);
 
-}  // namespace unstring
+} // namespace unstring

@@ -11,7 +11,13 @@ namespace unstring {
 namespace {
 
 Fault write_fault(const std::string& path, const QString& found) {
-    return {FaultCode::write_failed, path, 0, {}, found.toStdString(), "a file that can be written", "check the folder and the space left"};
+    return {FaultCode::write_failed,
+            path,
+            0,
+            {},
+            found.toStdString(),
+            "a file that can be written",
+            "check the folder and the space left"};
 }
 
 void prepare(QPdfWriter& writer, const std::string& paper) {
@@ -23,19 +29,24 @@ void prepare(QPdfWriter& writer, const std::string& paper) {
 }
 
 class PdfPrinter : public Printer {
-  public:
-    explicit PdfPrinter(std::unique_ptr<QGuiApplication> application) : application_(std::move(application)) {}
+public:
+    explicit PdfPrinter(std::unique_ptr<QGuiApplication> application)
+        : application_(std::move(application)) {}
 
-    Expected<void> print_orders(const std::vector<WorkOrder>& orders, const std::string& path, const std::string& paper) override {
+    Expected<void> print_orders(const std::vector<WorkOrder>& orders, const std::string& path,
+                                const std::string& paper) override {
         if (paper != "a4" && paper != "letter")
-            return tl::make_unexpected(Fault{FaultCode::bad_usage, {}, 0, "--paper", paper, "a4 or letter", "name one of the two"});
+            return tl::make_unexpected(
+                Fault{FaultCode::bad_usage, {}, 0, "--paper", paper, "a4 or letter", "name one of the two"});
         QSaveFile file(QString::fromStdString(path));
-        if (!file.open(QIODevice::WriteOnly)) return tl::make_unexpected(write_fault(path, file.errorString()));
+        if (!file.open(QIODevice::WriteOnly))
+            return tl::make_unexpected(write_fault(path, file.errorString()));
         {
             QPdfWriter writer(&file);
             prepare(writer, paper);
             QPainter painter;
-            if (!painter.begin(&writer)) return tl::make_unexpected(write_fault(path, QStringLiteral("a page that cannot be begun")));
+            if (!painter.begin(&writer))
+                return tl::make_unexpected(write_fault(path, QStringLiteral("a page that cannot be begun")));
             bool is_first = true;
             for (const WorkOrder& order : orders) {
                 Sheet dry(writer, nullptr, [&](Sheet& sheet) { paint_furniture(sheet, order, 99); });
@@ -45,17 +56,18 @@ class PdfPrinter : public Printer {
                 Sheet sheet(writer, &painter, [&](Sheet& each) { paint_furniture(each, order, dry.page()); });
                 paint_order(sheet, order);
             }
-            if (!painter.end()) return tl::make_unexpected(write_fault(path, QStringLiteral("a write that stopped")));
+            if (!painter.end())
+                return tl::make_unexpected(write_fault(path, QStringLiteral("a write that stopped")));
         }
         if (!file.commit()) return tl::make_unexpected(write_fault(path, file.errorString()));
         return {};
     }
 
-  private:
+private:
     std::unique_ptr<QGuiApplication> application_;
 };
 
-}  // namespace
+} // namespace
 
 std::unique_ptr<Printer> make_pdf_printer(int& argc, char** argv) {
     std::unique_ptr<QGuiApplication> application;
@@ -66,4 +78,4 @@ std::unique_ptr<Printer> make_pdf_printer(int& argc, char** argv) {
     return std::make_unique<PdfPrinter>(std::move(application));
 }
 
-}  // namespace unstring
+} // namespace unstring

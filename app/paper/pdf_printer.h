@@ -7,8 +7,8 @@
 
 namespace unstring {
 
-/// Fonts need Qt's application object: where there is none yet, one is made here on the offscreen platform and lives as
-/// long as the printer.
+/// Fonts need Qt's application object: where there is none yet, one is made here on the offscreen platform
+/// and lives as long as the printer.
 [[nodiscard]] std::unique_ptr<Printer> make_pdf_printer(int& argc, char** argv);
 
-}  // namespace unstring
+} // namespace unstring

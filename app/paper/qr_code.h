@@ -6,7 +6,8 @@
 
 namespace unstring {
 
-/// Draws the code into a square of that side; text too long for a code draws nothing. UTF-8, error correction M.
+/// Draws the code into a square of that side; text too long for a code draws nothing. UTF-8, error correction
+/// M.
 void draw_qr(QPainter& painter, double x, double y, double side, const QString& text);
 
-}  // namespace unstring
+} // namespace unstring

@@ -25,28 +25,35 @@ const Family& family() {
 
 double points_of(Type type) {
     switch (type) {
-        case Type::title: return 17;
-        case Type::heading: return 10;
-        case Type::tag: return 12;
-        case Type::body:
-        case Type::strong: return 8.5;
-        case Type::small: return 7.5;
+    case Type::title:
+        return 17;
+    case Type::heading:
+        return 10;
+    case Type::tag:
+        return 12;
+    case Type::body:
+    case Type::strong:
+        return 8.5;
+    case Type::small:
+        return 7.5;
     }
     return 8.5;
 }
 
-}  // namespace
+} // namespace
 
 QFont paper_font(Type type) {
     QFont font(family().name);
     font.setPixelSize(static_cast<int>(std::lround(points_of(type) * family().scale * kPoint)));
     font.setBold(type == Type::title || type == Type::heading || type == Type::tag || type == Type::strong);
-    font.setLetterSpacing(QFont::AbsoluteSpacing, 0.01 * kPoint);  // unseen, but no ligatures: Lato's cannot be searched or copied
+    font.setLetterSpacing(QFont::AbsoluteSpacing,
+                          0.01 * kPoint); // unseen, but no ligatures: Lato's cannot be searched or copied
     return font;
 }
 
 Sheet::Sheet(QPdfWriter& writer, QPainter* painter, std::function<void(Sheet&)> furniture)
-    : writer_(writer), painter_(painter), furniture_(std::move(furniture)), width_(writer.width()), height_(writer.height()) {}
+    : writer_(writer), painter_(painter), furniture_(std::move(furniture)), width_(writer.width()),
+      height_(writer.height()) {}
 
 void Sheet::start_page() {
     if (painter_ != nullptr && page_ > 0) writer_.newPage();
@@ -61,7 +68,8 @@ bool Sheet::need(double height) {
     return true;
 }
 
-double Sheet::text(double x, double at_y, double column, const QString& words, Type type, Qt::Alignment align, bool draw) const {
+double Sheet::text(double x, double at_y, double column, const QString& words, Type type, Qt::Alignment align,
+                   bool draw) const {
     QTextLayout layout(words, paper_font(type), &writer_);
     QTextOption option(align);
     option.setWrapMode(QTextOption::WrapAtWordBoundaryOrAnywhere);
@@ -98,4 +106,4 @@ void Sheet::fill(double x, double at_y, double w, double h, int grey) const {
     if (painter_ != nullptr) painter_->fillRect(QRectF(x, at_y, w, h), QColor(grey, grey, grey));
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -1,6 +1,6 @@
 #pragma once
-// Paper to paint on, page after page. Lengths are tenths of a point (QPdfWriter at 720 dots an inch), so that fonts can
-// be sized by whole pixels. A dry sheet only counts its pages.
+// Paper to paint on, page after page. Lengths are tenths of a point (QPdfWriter at 720 dots an inch), so that
+// fonts can be sized by whole pixels. A dry sheet only counts its pages.
 
 #include <functional>
 
@@ -19,8 +19,9 @@ enum class Type { title, heading, tag, body, strong, small };
 [[nodiscard]] QFont paper_font(Type type);
 
 class Sheet {
-  public:
-    /// @param painter  null = dry  @param furniture  called after each page begins (head, foot); may read page()
+public:
+    /// @param painter  null = dry  @param furniture  called after each page begins (head, foot); may read
+    /// page()
     Sheet(QPdfWriter& writer, QPainter* painter, std::function<void(Sheet&)> furniture);
 
     [[nodiscard]] double left() const { return margin_; }
@@ -36,16 +37,20 @@ class Sheet {
     /// A new page unless so much room is left; true where one was begun.
     bool need(double height);
 
-    /// Text laid in a column, words broken only where one is wider than it: its height, drawn unless dry or `draw` is false.
-    double text(double x, double at_y, double column, const QString& words, Type type, Qt::Alignment align = Qt::AlignLeft, bool draw = true) const;
-    [[nodiscard]] double text_height(double column, const QString& words, Type type) const { return text(0, 0, column, words, type, Qt::AlignLeft, false); }
+    /// Text laid in a column, words broken only where one is wider than it: its height, drawn unless dry or
+    /// `draw` is false.
+    double text(double x, double at_y, double column, const QString& words, Type type,
+                Qt::Alignment align = Qt::AlignLeft, bool draw = true) const;
+    [[nodiscard]] double text_height(double column, const QString& words, Type type) const {
+        return text(0, 0, column, words, type, Qt::AlignLeft, false);
+    }
     void rule(double x1, double x2, double at_y, double weight, int grey = 0) const;
     void box(double x, double at_y, double w, double h, double weight) const;
     void fill(double x, double at_y, double w, double h, int grey) const;
 
-    double y = 0;  ///< where the next block begins
+    double y = 0; ///< where the next block begins
 
-  private:
+private:
     static constexpr double kFoot = 18 * kPoint;
     QPdfWriter& writer_;
     QPainter* painter_;
@@ -54,4 +59,4 @@ class Sheet {
     int page_ = 0;
 };
 
-}  // namespace unstring
+} // namespace unstring

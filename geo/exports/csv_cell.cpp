@@ -17,7 +17,7 @@ bool is_dropped(char c) {
     return (code < 0x20 && c != '\t' && c != '\n') || code == 0x7f;
 }
 
-}  // namespace
+} // namespace
 
 std::string safe_text(std::string_view text) {
     std::string out;
@@ -51,4 +51,4 @@ std::string csv_row(std::initializer_list<std::string_view> cells) {
     return row + "\r\n";
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -7,11 +7,12 @@
 
 namespace unstring {
 
-/// Text that a spreadsheet takes as text: control characters other than tab and line feed dropped, and an apostrophe put
-/// before a cell that begins (blanks aside) with = + - @ tab or line feed and is no plain number. Not yet quoted.
+/// Text that a spreadsheet takes as text: control characters other than tab and line feed dropped, and an
+/// apostrophe put before a cell that begins (blanks aside) with = + - @ tab or line feed and is no plain
+/// number. Not yet quoted.
 [[nodiscard]] std::string safe_text(std::string_view text);
 
 /// One row by RFC 4180, each cell made safe, quoted where it must be; ends with CR LF.
 [[nodiscard]] std::string csv_row(std::initializer_list<std::string_view> cells);
 
-}  // namespace unstring
+} // namespace unstring

@@ -4,7 +4,8 @@
 
 namespace unstring {
 
-LayerWriter::LayerWriter(GDALDataset& file, const char* name, OGRwkbGeometryType kind, OGRSpatialReference* crs,
+LayerWriter::LayerWriter(GDALDataset& file, const char* name, OGRwkbGeometryType kind,
+                         OGRSpatialReference* crs,
                          std::initializer_list<std::pair<const char*, OGRFieldType>> fields)
     : layer_(file.CreateLayer(name, crs, kind, nullptr)) {
     for (const auto& [field, type] : fields) {
@@ -43,6 +44,8 @@ void LayerWriter::line(const std::vector<MapPoint>& places) {
     feature_->SetGeometry(&along);
 }
 
-bool LayerWriter::end() { return feature_ != nullptr && layer_->CreateFeature(feature_.get()) == OGRERR_NONE; }
+bool LayerWriter::end() {
+    return feature_ != nullptr && layer_->CreateFeature(feature_.get()) == OGRERR_NONE;
+}
 
-}  // namespace unstring
+} // namespace unstring

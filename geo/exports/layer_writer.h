@@ -13,22 +13,23 @@
 namespace unstring {
 
 class LayerWriter {
-  public:
+public:
     /// wkbNone makes a table without geometry. A layer that cannot be made shows in is_good().
-    LayerWriter(GDALDataset& file, const char* name, OGRwkbGeometryType kind, OGRSpatialReference* crs, std::initializer_list<std::pair<const char*, OGRFieldType>> fields);
+    LayerWriter(GDALDataset& file, const char* name, OGRwkbGeometryType kind, OGRSpatialReference* crs,
+                std::initializer_list<std::pair<const char*, OGRFieldType>> fields);
 
     [[nodiscard]] bool is_good() const { return layer_ != nullptr; }
     void begin();
     void set(const char* field, const std::string& value);
     void set(const char* field, int value);
-    void set(const char* field, double value);  ///< no number is left blank
+    void set(const char* field, double value); ///< no number is left blank
     void point(MapPoint place);
-    void line(const std::vector<MapPoint>& places);  ///< fewer than two places: no geometry
+    void line(const std::vector<MapPoint>& places); ///< fewer than two places: no geometry
     [[nodiscard]] bool end();
 
-  private:
+private:
     OGRLayer* layer_ = nullptr;
     OGRFeatureUniquePtr feature_;
 };
 
-}  // namespace unstring
+} // namespace unstring

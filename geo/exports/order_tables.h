@@ -9,8 +9,9 @@
 
 namespace unstring {
 
-/// folder/orders.csv (one row a pole and order, with tasks and planned values), folder/order-steps.csv, folder/materials.csv.
-/// UTF-8, RFC 4180. @return the files written
-[[nodiscard]] Expected<std::vector<std::string>> write_order_tables(const std::string& folder, const City& city, const std::vector<WorkOrder>& orders);
+/// folder/orders.csv (one row a pole and order, with tasks and planned values), folder/order-steps.csv,
+/// folder/materials.csv. UTF-8, RFC 4180. @return the files written
+[[nodiscard]] Expected<std::vector<std::string>>
+write_order_tables(const std::string& folder, const City& city, const std::vector<WorkOrder>& orders);
 
-}  // namespace unstring
+} // namespace unstring

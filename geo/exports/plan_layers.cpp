@@ -24,14 +24,28 @@ struct Source {
     const Plan& plan;
     const DecideResult& decide;
     const PhaseResult& phase;
-    int year_of(PoleIx pole) const { return pole.place() < phase.pole_year.size() ? phase.pole_year[pole.place()] : 0; }
+    int year_of(PoleIx pole) const {
+        return pole.place() < phase.pole_year.size() ? phase.pole_year[pole.place()] : 0;
+    }
 };
 
 bool write_poles(const Source& source, GDALDataset& file, OGRSpatialReference& crs) {
     LayerWriter layer(file, "poles", wkbPoint, &crs,
-                      {{"pole_id", OFTString}, {"string_id", OFTString}, {"wiring_order", OFTInteger}, {"choice", OFTString}, {"head", OFTString}, {"year", OFTInteger},
-                       {"year_by", OFTString}, {"lock", OFTString}, {"street", OFTString}, {"ward", OFTString}, {"planned_v", OFTReal}, {"cost_keep", OFTReal},
-                       {"cost_rewire", OFTReal}, {"cost_solar", OFTReal}, {"reason", OFTString}});
+                      {{"pole_id", OFTString},
+                       {"string_id", OFTString},
+                       {"wiring_order", OFTInteger},
+                       {"choice", OFTString},
+                       {"head", OFTString},
+                       {"year", OFTInteger},
+                       {"year_by", OFTString},
+                       {"lock", OFTString},
+                       {"street", OFTString},
+                       {"ward", OFTString},
+                       {"planned_v", OFTReal},
+                       {"cost_keep", OFTReal},
+                       {"cost_rewire", OFTReal},
+                       {"cost_solar", OFTReal},
+                       {"reason", OFTString}});
     for (std::size_t i = 0; i < source.city.poles.size(); ++i) {
         const Pole& pole = source.city.poles[i];
         if (!is_candidate(source.city, pole)) continue;
@@ -62,9 +76,18 @@ bool write_poles(const Source& source, GDALDataset& file, OGRSpatialReference& c
 
 bool write_spans(const Source& source, GDALDataset& file, OGRSpatialReference& crs) {
     LayerWriter layer(file, "spans", wkbLineString, &crs,
-                      {{"span_id", OFTInteger}, {"kind", OFTString}, {"length_m", OFTReal}, {"awg", OFTInteger}, {"boxes", OFTInteger}, {"year", OFTInteger},
-                       {"service_id", OFTString}, {"pole_id", OFTString}, {"cost", OFTReal}, {"duct_string_id", OFTString}});
-    constexpr std::array<const char*, 7> kKinds = {"trench-verge", "trench-paved", "bore", "conduit", "aerial", "tap", "service"};
+                      {{"span_id", OFTInteger},
+                       {"kind", OFTString},
+                       {"length_m", OFTReal},
+                       {"awg", OFTInteger},
+                       {"boxes", OFTInteger},
+                       {"year", OFTInteger},
+                       {"service_id", OFTString},
+                       {"pole_id", OFTString},
+                       {"cost", OFTReal},
+                       {"duct_string_id", OFTString}});
+    constexpr std::array<const char*, 7> kKinds = {"trench-verge", "trench-paved", "bore",   "conduit",
+                                                   "aerial",       "tap",          "service"};
     const std::vector<int> years = span_years(source.decide, source.plan, source.phase.pole_year);
     for (std::size_t i = 0; i < source.decide.spans.size(); ++i) {
         const CircuitSpan& span = source.decide.spans[i];
@@ -78,7 +101,8 @@ bool write_spans(const Source& source, GDALDataset& file, OGRSpatialReference& c
         if (span.service.is_valid()) layer.set("service_id", source.city.services[span.service.place()].id);
         if (span.pole.is_valid()) layer.set("pole_id", source.city.poles[span.pole.place()].id);
         layer.set("cost", to_dollars(span.cost));
-        if (span.duct_string.is_valid()) layer.set("duct_string_id", source.city.strings[span.duct_string.place()].id);
+        if (span.duct_string.is_valid())
+            layer.set("duct_string_id", source.city.strings[span.duct_string.place()].id);
         layer.line(span.line);
         if (!layer.end()) return false;
     }
@@ -97,7 +121,8 @@ int last_year_of(const Source& source, const std::vector<PoleIx>& lamps) {
 }
 
 bool write_strings(const Source& source, GDALDataset& file, OGRSpatialReference& crs) {
-    LayerWriter layer(file, "strings", wkbLineString, &crs, {{"string_id", OFTString}, {"lamps", OFTInteger}, {"last_year", OFTInteger}});
+    LayerWriter layer(file, "strings", wkbLineString, &crs,
+                      {{"string_id", OFTString}, {"lamps", OFTInteger}, {"last_year", OFTInteger}});
     const auto lamps = lamps_by_string(source.city);
     for (std::size_t s = 0; s < lamps.size(); ++s) {
         const SeriesString& string = source.city.strings[s];
@@ -105,7 +130,8 @@ bool write_strings(const Source& source, GDALDataset& file, OGRSpatialReference&
         std::vector<MapPoint> loop;
         if (string.station) loop.push_back(*string.station);
         for (const PoleIx lamp : lamps[s])
-            if (source.city.poles[lamp.place()].has_place) loop.push_back(source.city.poles[lamp.place()].place);
+            if (source.city.poles[lamp.place()].has_place)
+                loop.push_back(source.city.poles[lamp.place()].place);
         if (string.station) loop.push_back(*string.station);
         layer.begin();
         layer.set("string_id", string.id);
@@ -119,8 +145,16 @@ bool write_strings(const Source& source, GDALDataset& file, OGRSpatialReference&
 
 bool write_string_years(const Source& source, GDALDataset& file) {
     LayerWriter layer(file, "string_years", wkbNone, nullptr,
-                      {{"string_id", OFTString}, {"year", OFTInteger}, {"lamps", OFTInteger}, {"load_kva", OFTReal}, {"volts", OFTReal}, {"cable_m", OFTReal},
-                       {"transformer_id", OFTString}, {"tap", OFTReal}, {"loading_frac", OFTReal}, {"verdict", OFTString}});
+                      {{"string_id", OFTString},
+                       {"year", OFTInteger},
+                       {"lamps", OFTInteger},
+                       {"load_kva", OFTReal},
+                       {"volts", OFTReal},
+                       {"cable_m", OFTReal},
+                       {"transformer_id", OFTString},
+                       {"tap", OFTReal},
+                       {"loading_frac", OFTReal},
+                       {"verdict", OFTString}});
     for (const StringYear& each : source.phase.string_years) {
         layer.begin();
         layer.set("string_id", source.city.strings[each.string.place()].id);
@@ -129,7 +163,8 @@ bool write_string_years(const Source& source, GDALDataset& file) {
         layer.set("load_kva", each.load_kva);
         layer.set("volts", each.volts);
         layer.set("cable_m", each.cable_m);
-        if (each.transformer.is_valid()) layer.set("transformer_id", source.city.transformers[each.transformer.place()].id);
+        if (each.transformer.is_valid())
+            layer.set("transformer_id", source.city.transformers[each.transformer.place()].id);
         layer.set("tap", each.tap);
         layer.set("loading_frac", each.loading_frac);
         layer.set("verdict", std::string(text_of(each.verdict)));
@@ -138,13 +173,16 @@ bool write_string_years(const Source& source, GDALDataset& file) {
     return layer.is_good();
 }
 
-/// The date that GDAL writes into the file: SOURCE_DATE_EPOCH where it is set, so that the same plan gives the same bytes.
+/// The date that GDAL writes into the file: SOURCE_DATE_EPOCH where it is set, so that the same plan gives
+/// the same bytes.
 class WrittenDate {
-  public:
+public:
     WrittenDate() {
         const char* epoch = std::getenv("SOURCE_DATE_EPOCH");
         if (epoch == nullptr) return;
-        const std::string date = fmt::format("{:%Y-%m-%dT%H:%M:%S.000Z}", fmt::gmtime(static_cast<std::time_t>(std::strtoll(epoch, nullptr, 10))));
+        const std::string date =
+            fmt::format("{:%Y-%m-%dT%H:%M:%S.000Z}",
+                        fmt::gmtime(static_cast<std::time_t>(std::strtoll(epoch, nullptr, 10))));
         CPLSetThreadLocalConfigOption("OGR_CURRENT_DATE", date.c_str());
     }
     ~WrittenDate() { CPLSetThreadLocalConfigOption("OGR_CURRENT_DATE", nullptr); }
@@ -156,20 +194,24 @@ bool write_all(const Source& source, const std::string& path) {
     GDALDriver* driver = GetGDALDriverManager()->GetDriverByName("GPKG");
     if (driver == nullptr) return false;
     OGRSpatialReference crs;
-    if (!source.city.crs.empty() && crs.SetFromUserInput(source.city.crs.c_str()) != OGRERR_NONE) return false;
+    if (!source.city.crs.empty() && crs.SetFromUserInput(source.city.crs.c_str()) != OGRERR_NONE)
+        return false;
     crs.SetAxisMappingStrategy(OAMS_TRADITIONAL_GIS_ORDER);
     const WrittenDate date;
     GDALDatasetUniquePtr file(driver->Create(path.c_str(), 0, 0, 0, GDT_Unknown, nullptr));
     if (file == nullptr || file->StartTransaction() != OGRERR_NONE) return false;
-    const bool is_written = write_poles(source, *file, crs) && write_spans(source, *file, crs) && write_strings(source, *file, crs) && write_string_years(source, *file);
+    const bool is_written = write_poles(source, *file, crs) && write_spans(source, *file, crs) &&
+                            write_strings(source, *file, crs) && write_string_years(source, *file);
     const bool is_committed = is_written && file->CommitTransaction() == OGRERR_NONE;
-    file.reset();  // what fails while closing shows only in the last error
+    file.reset(); // what fails while closing shows only in the last error
     return is_committed && CPLGetLastErrorType() < CE_Failure;
 }
 
-}  // namespace
+} // namespace
 
-Expected<std::vector<std::string>> export_layers(const std::string& folder, const City& city, const Plan& plan, const DecideResult& decide, const PhaseResult& phase) {
+Expected<std::vector<std::string>> export_layers(const std::string& folder, const City& city,
+                                                 const Plan& plan, const DecideResult& decide,
+                                                 const PhaseResult& phase) {
     start_gdal();
     const std::string path = (std::filesystem::path(folder) / "plan.gpkg").string();
     const std::string part = (std::filesystem::path(folder) / "plan.part.gpkg").string();
@@ -184,8 +226,15 @@ Expected<std::vector<std::string>> export_layers(const std::string& folder, cons
     }
     if (is_whole) return std::vector<std::string>{path};
     std::filesystem::remove(part, ignored);
-    return tl::make_unexpected(Fault{FaultCode::write_failed, path, 0, {}, moved ? moved.message() : said.empty() ? "a write that stopped" : said, "a file that can be written",
+    return tl::make_unexpected(Fault{FaultCode::write_failed,
+                                     path,
+                                     0,
+                                     {},
+                                     moved          ? moved.message()
+                                     : said.empty() ? "a write that stopped"
+                                                    : said,
+                                     "a file that can be written",
                                      "check the folder and the space left"});
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -12,9 +12,10 @@
 
 namespace unstring {
 
-/// Writes folder/plan.gpkg (poles with choice, head and year; circuit spans with year; strings with last year), whole or
-/// not at all. @return the files written
-[[nodiscard]] Expected<std::vector<std::string>> export_layers(const std::string& folder, const City& city, const Plan& plan,
-                                                               const DecideResult& decide, const PhaseResult& phase);
+/// Writes folder/plan.gpkg (poles with choice, head and year; circuit spans with year; strings with last
+/// year), whole or not at all. @return the files written
+[[nodiscard]] Expected<std::vector<std::string>> export_layers(const std::string& folder, const City& city,
+                                                               const Plan& plan, const DecideResult& decide,
+                                                               const PhaseResult& phase);
 
-}  // namespace unstring
+} // namespace unstring

@@ -14,14 +14,15 @@ bool is_digit(char c) { return std::isdigit(static_cast<unsigned char>(c)) != 0;
 std::string squeezed(std::string_view text) {
     std::string out;
     for (const char c : text)
-        if (is_letter(c) || is_digit(c)) out += static_cast<char>(std::toupper(static_cast<unsigned char>(c)));
+        if (is_letter(c) || is_digit(c))
+            out += static_cast<char>(std::toupper(static_cast<unsigned char>(c)));
     return out;
 }
 
 struct LettersAndWatts {
-    std::string letters;  ///< without the W that only says watts
+    std::string letters; ///< without the W that only says watts
     std::string watts;
-    bool is_plain = false;  ///< one run of letters and one number
+    bool is_plain = false; ///< one run of letters and one number
 };
 
 /// "150W S" -> S, 150.   "hps 150 w" -> HPS, 150.
@@ -41,7 +42,7 @@ LettersAndWatts letters_and_watts(std::string_view text) {
         }
     }
     if (out.letters.size() > 1 && out.letters.ends_with("W") && text.find_last_of("wW") + 1 == text.size())
-        out.letters.pop_back();  // "150 HPS W", "HPS 150 W"
+        out.letters.pop_back(); // "150 HPS W", "HPS 150 W"
     const std::size_t first = out.watts.find_first_not_of('0');
     out.watts = first == std::string::npos ? std::string() : out.watts.substr(first);
     out.is_plain = numbers == 1 && !out.letters.empty() && !out.watts.empty();
@@ -50,11 +51,22 @@ LettersAndWatts letters_and_watts(std::string_view text) {
 
 std::optional<LampKind> kind_of(std::string_view letters) {
     constexpr std::array<std::pair<std::string_view, LampKind>, 16> kWords = {{
-        {"HPS", LampKind::hps}, {"S", LampKind::hps}, {"HPSV", LampKind::hps}, {"SODIUM", LampKind::hps},
-        {"HIGHPRESSURESODIUM", LampKind::hps}, {"FIL", LampKind::filament}, {"FILAMENT", LampKind::filament},
-        {"INC", LampKind::filament}, {"INCANDESCENT", LampKind::filament}, {"LPS", LampKind::lps},
-        {"LOWPRESSURESODIUM", LampKind::lps}, {"MV", LampKind::mv}, {"MERCURY", LampKind::mv},
-        {"MERC", LampKind::mv}, {"MERCURYVAPOR", LampKind::mv}, {"LED", LampKind::led},
+        {"HPS", LampKind::hps},
+        {"S", LampKind::hps},
+        {"HPSV", LampKind::hps},
+        {"SODIUM", LampKind::hps},
+        {"HIGHPRESSURESODIUM", LampKind::hps},
+        {"FIL", LampKind::filament},
+        {"FILAMENT", LampKind::filament},
+        {"INC", LampKind::filament},
+        {"INCANDESCENT", LampKind::filament},
+        {"LPS", LampKind::lps},
+        {"LOWPRESSURESODIUM", LampKind::lps},
+        {"MV", LampKind::mv},
+        {"MERCURY", LampKind::mv},
+        {"MERC", LampKind::mv},
+        {"MERCURYVAPOR", LampKind::mv},
+        {"LED", LampKind::led},
     }};
     for (const auto& [word, kind] : kWords)
         if (word == letters) return kind;
@@ -67,7 +79,7 @@ bool bears_name(const Lamp& lamp, const std::string& name) {
                        [&](const std::string& alias) { return squeezed(alias) == name; });
 }
 
-}  // namespace
+} // namespace
 
 const Lamp* find_lamp(const Catalog& catalog, std::string_view fixture) {
     const std::string name = squeezed(fixture);
@@ -86,7 +98,8 @@ const Lamp* find_lamp(const Catalog& catalog, std::string_view fixture) {
 }
 
 const Head* find_head(const Catalog& catalog, std::string_view head) {
-    const auto at = std::find_if(catalog.heads.begin(), catalog.heads.end(), [&](const Head& each) { return each.head == head; });
+    const auto at = std::find_if(catalog.heads.begin(), catalog.heads.end(),
+                                 [&](const Head& each) { return each.head == head; });
     return at == catalog.heads.end() ? nullptr : &*at;
 }
 
@@ -96,4 +109,4 @@ const Cable* find_cable(const Catalog& catalog, int awg, Metal metal) {
     return at == catalog.cables.end() ? nullptr : &*at;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -123,13 +123,14 @@ constexpr auto kItems = std::to_array<PriceItem>({
     {"clearance_hours", "h", "wait for the switching clearance, whole crew, per string and day"},
 });
 
-}  // namespace
+} // namespace
 
 std::span<const PriceItem> price_items() { return kItems; }
 
 const PriceItem* find_price_item(std::string_view item) {
-    const auto at = std::find_if(kItems.begin(), kItems.end(), [&](const PriceItem& each) { return each.item == item; });
+    const auto at =
+        std::find_if(kItems.begin(), kItems.end(), [&](const PriceItem& each) { return each.item == item; });
     return at == kItems.end() ? nullptr : &*at;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -27,7 +27,7 @@ double value_in(const PriceRow& row, int year) {
     return in_metres(row, row.base) * std::pow(1 + row.change_frac_year, year - *row.from_year);
 }
 
-}  // namespace
+} // namespace
 
 bool price_unit_fits(const PriceItem& item, std::string_view unit) {
     if (unit == item.unit) return true;
@@ -70,4 +70,4 @@ PriceBook PriceBook::with_defaults(const PriceBook& defaults) const {
     return PriceBook(std::move(rows));
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -4,8 +4,10 @@
 
 namespace unstring {
 
-CashLine cash_line(const Plan& plan, std::string what, int year, double quantity, double unit_price, Purse purse) {
-    return {std::move(what), year, quantity, unit_price, to_cents(quantity * unit_price), plan.factor(year), purse};
+CashLine cash_line(const Plan& plan, std::string what, int year, double quantity, double unit_price,
+                   Purse purse) {
+    return {std::move(what),   year, quantity, unit_price, to_cents(quantity * unit_price),
+            plan.factor(year), purse};
 }
 
 double present_value(const std::vector<CashLine>& lines) {
@@ -14,4 +16,4 @@ double present_value(const std::vector<CashLine>& lines) {
     return sum;
 }
 
-}  // namespace unstring
+} // namespace unstring

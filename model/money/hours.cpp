@@ -14,7 +14,7 @@ double hours_of(const PriceBook& prices, double crew_days, std::string_view crew
     return crew_days * prices.at(crew, year) * prices.at("day_hours", year);
 }
 
-}  // namespace
+} // namespace
 
 TaskHours& TaskHours::operator+=(const TaskHours& other) {
     line += other.line;
@@ -41,7 +41,8 @@ TaskHours pole_hours(const PriceBook& prices, const Pole& pole, Choice choice, i
     return hours;
 }
 
-TaskHours span_hours(const PriceBook& prices, SpanWork work, double length_m, int year, double sound_frac, Surface surface) {
+TaskHours span_hours(const PriceBook& prices, SpanWork work, double length_m, int year, double sound_frac,
+                     Surface surface) {
     TaskHours hours;
     const auto civil = [&](double quantity, std::string_view pace) {
         hours.civil += hours_of(prices, days(prices, quantity, pace, year), "crew_civil", year);
@@ -50,25 +51,41 @@ TaskHours span_hours(const PriceBook& prices, SpanWork work, double length_m, in
         hours.electric += hours_of(prices, days(prices, quantity, pace, year), "crew_electric", year);
     };
     switch (work) {
-        case SpanWork::trench_verge: civil(length_m, "pace_trench_soft"); break;
-        case SpanWork::trench_paved: civil(length_m, "pace_trench_paved"); break;
-        case SpanWork::bore: civil(length_m, "pace_bore"); break;
-        case SpanWork::conduit:
-            civil(length_m, "pace_duct_prove");
-            civil((1 - sound_frac) * length_m, surface == Surface::paved ? "pace_trench_paved" : "pace_trench_soft");
-            break;
-        case SpanWork::aerial: electric(length_m, "pace_aerial"); return hours;
-        case SpanWork::tap: electric(1, "pace_tap"); return hours;
-        case SpanWork::service: electric(1, "pace_service"); return hours;
-        case SpanWork::circuit_end: electric(1, "pace_circuit_end"); return hours;
+    case SpanWork::trench_verge:
+        civil(length_m, "pace_trench_soft");
+        break;
+    case SpanWork::trench_paved:
+        civil(length_m, "pace_trench_paved");
+        break;
+    case SpanWork::bore:
+        civil(length_m, "pace_bore");
+        break;
+    case SpanWork::conduit:
+        civil(length_m, "pace_duct_prove");
+        civil((1 - sound_frac) * length_m,
+              surface == Surface::paved ? "pace_trench_paved" : "pace_trench_soft");
+        break;
+    case SpanWork::aerial:
+        electric(length_m, "pace_aerial");
+        return hours;
+    case SpanWork::tap:
+        electric(1, "pace_tap");
+        return hours;
+    case SpanWork::service:
+        electric(1, "pace_service");
+        return hours;
+    case SpanWork::circuit_end:
+        electric(1, "pace_circuit_end");
+        return hours;
     }
     electric(length_m, "pace_pull");
     return hours;
 }
 
 TaskHours string_hours(const PriceBook& prices, int jumpers, int splices, int swaps, int year) {
-    const double work_days =
-        days(prices, jumpers, "pace_jumper", year) + days(prices, splices, "pace_splice", year) + days(prices, swaps, "pace_swap", year);
+    const double work_days = days(prices, jumpers, "pace_jumper", year) +
+                             days(prices, splices, "pace_splice", year) +
+                             days(prices, swaps, "pace_swap", year);
     TaskHours hours;
     hours.line = hours_of(prices, work_days, "crew_line", year);
     // A hair off, so that 8 jumpers at 8 a day and 4 splices at 4 stay two days.
@@ -77,4 +94,4 @@ TaskHours string_hours(const PriceBook& prices, int jumpers, int splices, int sw
     return hours;
 }
 
-}  // namespace unstring
+} // namespace unstring

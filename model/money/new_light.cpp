@@ -13,11 +13,12 @@ constexpr double kLedShareFrac = 60.0 / 188.0;
 
 std::string lower(std::string_view text) {
     std::string out(text);
-    std::transform(out.begin(), out.end(), out.begin(), [](unsigned char c) { return static_cast<char>(std::tolower(c)); });
+    std::transform(out.begin(), out.end(), out.begin(),
+                   [](unsigned char c) { return static_cast<char>(std::tolower(c)); });
     return out;
 }
 
-}  // namespace
+} // namespace
 
 double lamp_watts(const Catalog& catalog, const Pole& pole) {
     if (pole.lamp_w) return *pole.lamp_w;
@@ -55,4 +56,4 @@ Surface surface_at(const City& city, const Pole& pole) {
     return Surface::verge;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -9,7 +9,7 @@ namespace unstring {
 namespace {
 
 class Works {
-  public:
+public:
     Works(const MoneyInput& input, int year) : input_(input), year_(year) {}
 
     void add(const char* what, double quantity, std::string_view item) {
@@ -18,18 +18,20 @@ class Works {
     double at(std::string_view item) const { return input_.prices.at(item, year_); }
 
     void add_traffic(const Pole& pole, double days) {
-        constexpr std::array<const char*, 3> kItems = {"traffic_local", "traffic_collector", "traffic_arterial"};
+        constexpr std::array<const char*, 3> kItems = {"traffic_local", "traffic_collector",
+                                                       "traffic_arterial"};
         add("traffic control, share of a day", days, kItems[static_cast<std::size_t>(road_class_of(pole))]);
     }
 
     std::vector<CashLine> with_design() {
         Cents sum = 0;
         for (const CashLine& line : lines_) sum += line.amount;
-        lines_.push_back(cash_line(input_.plan, "design and supervision", year_, at("design_frac"), to_dollars(sum), Purse::capital));
+        lines_.push_back(cash_line(input_.plan, "design and supervision", year_, at("design_frac"),
+                                   to_dollars(sum), Purse::capital));
         return std::move(lines_);
     }
 
-  private:
+private:
     const MoneyInput& input_;
     int year_;
     std::vector<CashLine> lines_;
@@ -45,13 +47,14 @@ double sum_dollars(const std::vector<CashLine>& lines) {
 double own_span_price(const MoneyInput& input, const Pole& pole, int year) {
     const PriceBook& prices = input.prices;
     const bool is_paved = surface_at(input.city, pole) == Surface::paved;
-    const double dig = prices.at(is_paved ? "trench_paved" : "trench_soft", year) + prices.at(wire_item(8), year);
+    const double dig =
+        prices.at(is_paved ? "trench_paved" : "trench_soft", year) + prices.at(wire_item(8), year);
     const double sound = duct_sound_frac(prices, pole.duct, year);
     const double per_m = sound * prices.at("pull", year) + (1 - sound) * dig;
     return prices.at("span_typical", year) * per_m * (1 + prices.at("design_frac", year));
 }
 
-}  // namespace
+} // namespace
 
 std::vector<CashLine> rewire_works(const MoneyInput& input, const Pole& pole, int year) {
     Works works(input, year);
@@ -78,12 +81,18 @@ std::vector<CashLine> solar_works(const MoneyInput& input, const Pole& pole, con
 
 double duct_sound_frac(const PriceBook& prices, Duct duct, int year) {
     switch (duct) {
-        case Duct::proven: return prices.at("duct_sound_proven", year);
-        case Duct::inspected: return prices.at("duct_sound_inspected", year);
-        case Duct::assumed: return prices.at("duct_sound_assumed", year);
-        case Duct::unknown: return prices.at("duct_sound_unknown", year);
-        case Duct::bad: return prices.at("duct_sound_bad", year);
-        case Duct::direct_buried: return prices.at("duct_sound_direct_buried", year);
+    case Duct::proven:
+        return prices.at("duct_sound_proven", year);
+    case Duct::inspected:
+        return prices.at("duct_sound_inspected", year);
+    case Duct::assumed:
+        return prices.at("duct_sound_assumed", year);
+    case Duct::unknown:
+        return prices.at("duct_sound_unknown", year);
+    case Duct::bad:
+        return prices.at("duct_sound_bad", year);
+    case Duct::direct_buried:
+        return prices.at("duct_sound_direct_buried", year);
     }
     return 0;
 }
@@ -94,4 +103,4 @@ double conversion_price(const MoneyInput& input, const Pole& pole, const Head* h
     return std::min(rewire, sum_dollars(solar_works(input, pole, *head, year)));
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -8,8 +8,8 @@ double spv(double rate, double years) { return std::exp(-years * std::log1p(rate
 
 double upv(double rate, double years) { return upv_rising(rate, 0, years); }
 
-// With g = ln((1 + d) / (1 + e)) the closed form is (1 + e) (1 - exp(-n g)) / (d - e); expm1 keeps its digits as d nears e,
-// where d - e = (1 + e) (exp(g) - 1).
+// With g = ln((1 + d) / (1 + e)) the closed form is (1 + e) (1 - exp(-n g)) / (d - e); expm1 keeps its digits
+// as d nears e, where d - e = (1 + e) (exp(g) - 1).
 double upv_rising(double rate, double rise, double years) {
     const double gap = std::log1p((rate - rise) / (1 + rise));
     if (gap == 0) return years;
@@ -18,4 +18,4 @@ double upv_rising(double rate, double rise, double years) {
 
 double crf(double rate, double years) { return 1 / upv(rate, years); }
 
-}  // namespace unstring
+} // namespace unstring

@@ -8,7 +8,8 @@
 namespace unstring {
 
 double approach_distance_m(double volts) {
-    constexpr std::array<std::pair<double, double>, 5> kRows = {{{300, 0}, {750, 0.33}, {5000, 0.63}, {15000, 0.68}, {36000, 0.89}}};
+    constexpr std::array<std::pair<double, double>, 5> kRows = {
+        {{300, 0}, {750, 0.33}, {5000, 0.63}, {15000, 0.68}, {36000, 0.89}}};
     for (const auto& [up_to_v, distance_m] : kRows)
         if (volts <= up_to_v) return distance_m;
     return -1;
@@ -24,8 +25,10 @@ std::string glove_class(double volts) {
 
 std::string approach_text(double volts) {
     const double distance_m = approach_distance_m(volts);
-    const std::string distance = distance_m < 0 ? "ask the owner" : distance_m == 0 ? "no contact" : fmt::format("{:.2f} m", distance_m);
+    const std::string distance = distance_m < 0    ? "ask the owner"
+                                 : distance_m == 0 ? "no contact"
+                                                   : fmt::format("{:.2f} m", distance_m);
     return fmt::format("{}, glove class {}", distance, glove_class(volts));
 }
 
-}  // namespace unstring
+} // namespace unstring

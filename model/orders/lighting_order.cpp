@@ -19,7 +19,8 @@ std::string solar_task(const OrderFacts& facts, PoleIx pole, const std::string& 
         const double bearing = std::fmod(shade->bearing_deg + facts.input.city.convergence_deg + 720, 360);
         text += fmt::format(", panel facing {:.0f} deg true", bearing);
     }
-    if (const Head* head = find_head(facts.input.catalog, head_name)) text += fmt::format(", tilt {:.0f} deg", head->tilt_deg);
+    if (const Head* head = find_head(facts.input.catalog, head_name))
+        text += fmt::format(", tilt {:.0f} deg", head->tilt_deg);
     return text;
 }
 
@@ -27,10 +28,11 @@ std::string solar_task(const OrderFacts& facts, PoleIx pole, const std::string& 
 std::string head_of(const OrderFacts& facts, PoleIx pole) {
     if (!facts.plan(pole).head.empty()) return facts.plan(pole).head;
     const PoleShade* shade = facts.input.shade.find(pole);
-    return shade == nullptr || shade->best < 0 ? std::string("not chosen") : shade->heads[static_cast<std::size_t>(shade->best)].head;
+    return shade == nullptr || shade->best < 0 ? std::string("not chosen")
+                                               : shade->heads[static_cast<std::size_t>(shade->best)].head;
 }
 
-}  // namespace
+} // namespace
 
 std::optional<WorkOrder> lighting_order(const OrderFacts& facts, const YearJob& job) {
     if (job.poles.empty()) return std::nullopt;
@@ -47,17 +49,20 @@ std::optional<WorkOrder> lighting_order(const OrderFacts& facts, const YearJob& 
             ++solar;
         } else {
             const NewLight light = new_light(facts.input.catalog, facts.pole(pole));
-            order.poles.push_back(order_pole(facts, job, pole, fmt::format("LED luminaire {}, {:.0f} W", light.name, light.led_w)));
+            order.poles.push_back(order_pole(
+                facts, job, pole, fmt::format("LED luminaire {}, {:.0f} W", light.name, light.led_w)));
             add_material(order, "LED luminaire " + light.name, "each", 1);
             ++led;
         }
     }
     order.title = fmt::format("New lights on string {}: {} solar, {} LED", order.string_id, solar, led);
     order.steps = lighting_steps(solar > 0, led > 0);
-    const bool live = std::any_of(order.poles.begin(), order.poles.end(), [](const OrderPole& row) { return row.warning.find(kLiveBase) != std::string::npos; });
+    const bool live = std::any_of(order.poles.begin(), order.poles.end(), [](const OrderPole& row) {
+        return row.warning.find(kLiveBase) != std::string::npos;
+    });
     order.cautions = cautions_for(Crew::lighting, false, live);
     order.as_found = {{"poles that failed the look-over", ""}, {"torque", "Nm"}};
     return order;
 }
 
-}  // namespace unstring
+} // namespace unstring

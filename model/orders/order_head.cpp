@@ -14,7 +14,7 @@ namespace unstring {
 namespace {
 
 constexpr double kVoltsPerKilovolt = 1000;
-constexpr double kRestoreBefore_h = 1.5;  // start restoring so long before the lights are due on (assumption)
+constexpr double kRestoreBefore_h = 1.5; // start restoring so long before the lights are due on (assumption)
 
 std::vector<LoopBead> beads(const OrderFacts& facts, const YearJob& job) {
     const StringLoop& loop = facts.loops[job.string.place()];
@@ -28,7 +28,8 @@ std::vector<LoopBead> beads(const OrderFacts& facts, const YearJob& job) {
         bead.place = facts.pole(lamp).place;
         bead.leaves_now = year == job.year;
         bead.burns_after = loop.burns[i] != 0 && (year == 0 || year > job.year);
-        bead.cable_live_after = !job.at.leg_is_live.empty() && is_base_live(loop, job.at, static_cast<int>(i) + 1);
+        bead.cable_live_after =
+            !job.at.leg_is_live.empty() && is_base_live(loop, job.at, static_cast<int>(i) + 1);
         all.push_back(std::move(bead));
     }
     return all;
@@ -51,21 +52,25 @@ void add_open_circuit(const OrderFacts& facts, const YearJob& job, WorkOrder& or
     const OpenVolts open = open_circuit(facts.input.city, facts.loops[job.string.place()], job);
     order.open_circuit_v = open.volts;
     order.open_circuit_is_estimate = open.is_estimate;
-    order.facts.emplace_back("open-circuit kV", open_kv_text(order) + (open.is_estimate ? "" : " (nameplate)"));
+    order.facts.emplace_back("open-circuit kV",
+                             open_kv_text(order) + (open.is_estimate ? "" : " (nameplate)"));
     order.facts.emplace_back("approach distance, gloves", approach_text(open.volts));
 }
 
 /// Lights due on, each month, and the hour at which restoring must begin.
 void add_switch_on(const OrderFacts& facts, WorkOrder& order) {
     const auto hours = switch_on_year_h(facts.input.city.centre.lat_deg);
-    constexpr std::array<const char*, 12> kMonths = {"Jan", "Feb", "Mar", "Apr", "May", "Jun", "Jul", "Aug", "Sep", "Oct", "Nov", "Dec"};
+    constexpr std::array<const char*, 12> kMonths = {"Jan", "Feb", "Mar", "Apr", "May", "Jun",
+                                                     "Jul", "Aug", "Sep", "Oct", "Nov", "Dec"};
     std::string months;
-    for (std::size_t i = 0; i < hours.size(); ++i) months += fmt::format("{}{} {}", i == 0 ? "" : ", ", kMonths[i], clock_text(hours[i]));
+    for (std::size_t i = 0; i < hours.size(); ++i)
+        months += fmt::format("{}{} {}", i == 0 ? "" : ", ", kMonths[i], clock_text(hours[i]));
     const double earliest = *std::min_element(hours.begin(), hours.end());
     order.switch_on_time = clock_text(earliest);
     order.facts.emplace_back("lights due on, solar time", months);
-    order.facts.emplace_back("not restorable in time", fmt::format("start restoring {:.0f} minutes before; {} in the shortest days",
-                                                                   60 * kRestoreBefore_h, clock_text(earliest - kRestoreBefore_h)));
+    order.facts.emplace_back("not restorable in time",
+                             fmt::format("start restoring {:.0f} minutes before; {} in the shortest days",
+                                         60 * kRestoreBefore_h, clock_text(earliest - kRestoreBefore_h)));
 }
 
 void add_findings(const OrderFacts& facts, const YearJob& job, WorkOrder& order) {
@@ -74,7 +79,9 @@ void add_findings(const OrderFacts& facts, const YearJob& job, WorkOrder& order)
     const auto add = [&](const std::vector<Finding>& findings) {
         for (const Finding& finding : findings)
             if (records.count(finding.record) != 0)
-                order.findings.push_back(fmt::format("{}: {} {}{}{}", finding.code, finding.record, finding.found, finding.remedy.empty() ? "" : ". ", finding.remedy));
+                order.findings.push_back(fmt::format("{}: {} {}{}{}", finding.code, finding.record,
+                                                     finding.found, finding.remedy.empty() ? "" : ". ",
+                                                     finding.remedy));
     };
     add(facts.decide.findings);
     add(facts.phase.failures);
@@ -90,32 +97,41 @@ std::string traffic_note(const OrderFacts& facts, const YearJob& job) {
     return text.empty() ? "none" : text + " (poles by road)";
 }
 
-}  // namespace
+} // namespace
 
 std::string open_kv_text(const WorkOrder& order) {
-    return fmt::format("{:.1f}{}", order.open_circuit_v / kVoltsPerKilovolt, order.open_circuit_is_estimate ? " (estimate)" : "");
+    return fmt::format("{:.1f}{}", order.open_circuit_v / kVoltsPerKilovolt,
+                       order.open_circuit_is_estimate ? " (estimate)" : "");
 }
 
 void add_material(WorkOrder& order, const std::string& what, const std::string& unit, double quantity) {
     if (quantity <= 0) return;
     const auto same = [&](const Material& each) { return each.what == what && each.unit == unit; };
     const auto at = std::find_if(order.materials.begin(), order.materials.end(), same);
-    if (at == order.materials.end()) order.materials.push_back({what, unit, quantity});
-    else at->quantity += quantity;
+    if (at == order.materials.end())
+        order.materials.push_back({what, unit, quantity});
+    else
+        at->quantity += quantity;
 }
 
 OrderPole order_pole(const OrderFacts& facts, const YearJob& job, PoleIx ix, std::string task) {
     const Pole& pole = facts.pole(ix);
     OrderPole row{ix, pole.id, pole.street, std::move(task), {}, {}, 0, pole.place};
-    const auto warn = [&](const std::string& text) { row.warning += (row.warning.empty() ? "" : "; ") + text; };
+    const auto warn = [&](const std::string& text) {
+        row.warning += (row.warning.empty() ? "" : "; ") + text;
+    };
     const StringLoop& loop = facts.loops[pole.string.place()];
     const bool is_own = pole.string == job.string && !job.at.leg_is_live.empty();
     if (is_own && is_base_live(loop, job.at, position_of(loop, ix))) warn(kLiveBase);
-    if (facts.plan(ix).choice == Choice::solar && !pole.epa_allow_m2) warn("pole to be checked: strength not known");
+    if (facts.plan(ix).choice == Choice::solar && !pole.epa_allow_m2)
+        warn("pole to be checked: strength not known");
     if (!pole.attachments.empty()) warn("attachments: " + pole.attachments);
     if (pole.critical) warn("critical pole: not dark for one night");
-    if (pole.owner != Owner::city) warn(fmt::format("owner {}: {}", text_of(pole.owner), pole.consent == true ? "consent given" : "consent to be had first"));
-    if (facts.loops[pole.string.place()].order_from != OrderFrom::given) warn("wiring order inferred: confirm before the work");
+    if (pole.owner != Owner::city)
+        warn(fmt::format("owner {}: {}", text_of(pole.owner),
+                         pole.consent == true ? "consent given" : "consent to be had first"));
+    if (facts.loops[pole.string.place()].order_from != OrderFrom::given)
+        warn("wiring order inferred: confirm before the work");
     return row;
 }
 
@@ -133,9 +149,11 @@ WorkOrder order_head(const OrderFacts& facts, const YearJob& job, Crew crew) {
     add_open_circuit(facts, job, order);
     order.facts.emplace_back("traffic", traffic_note(facts, job));
     add_switch_on(facts, order);
-    for (const char* blank : {"locate ticket, valid to", "permit, valid to", "emergency number", "nearest hospital"}) order.facts.emplace_back(blank, "");
+    for (const char* blank :
+         {"locate ticket, valid to", "permit, valid to", "emergency number", "nearest hospital"})
+        order.facts.emplace_back(blank, "");
     add_findings(facts, job, order);
     return order;
 }
 
-}  // namespace unstring
+} // namespace unstring

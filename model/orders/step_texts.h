@@ -1,6 +1,6 @@
 #pragma once
-// The words of steps and cautions. Each list keeps its order; {..} stands for what the order fills in. The owner's own
-// switching procedure goes before them.
+// The words of steps and cautions. Each list keeps its order; {..} stands for what the order fills in. The
+// owner's own switching procedure goes before them.
 
 #include <string>
 #include <vector>
@@ -9,14 +9,14 @@
 
 namespace unstring {
 
-struct SeriesWords {  ///< what the line order's steps name
+struct SeriesWords { ///< what the line order's steps name
     std::string string_id, unit_id, cutbacks, swap, open_kv, approach;
     std::string band = "6.40-6.70 A";
     double change_v = 0, lamp_v = 0;
-    bool retires = false;          ///< the last lamp leaves: nothing is re-energised
+    bool retires = false; ///< the last lamp leaves: nothing is re-energised
     bool is_two_loop = false;
     bool is_oil_suspect = false;
-    std::string controls;          ///< strings that this one switches, empty = none
+    std::string controls; ///< strings that this one switches, empty = none
 };
 
 /// Work on a series string, in the order that keeps people alive.
@@ -31,4 +31,4 @@ struct SeriesWords {  ///< what the line order's steps name
 
 inline constexpr const char* kLiveBase = "live series cable in base: line crew opens";
 
-}  // namespace unstring
+} // namespace unstring

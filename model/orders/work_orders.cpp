@@ -10,7 +10,8 @@ namespace unstring {
 namespace {
 
 /// The last line order of a string in or before a year: the one that left its old duct dead.
-void add_duct_order(const OrderFacts& facts, const std::set<std::string>& ids, StringIx string, int year, std::set<std::string>& after) {
+void add_duct_order(const OrderFacts& facts, const std::set<std::string>& ids, StringIx string, int year,
+                    std::set<std::string>& after) {
     for (int at = year; at >= facts.input.plan.settings.first_year; --at) {
         const std::string id = order_id(facts.input.city, at, string, Crew::line);
         if (ids.count(id) == 0) continue;
@@ -28,18 +29,23 @@ std::map<int, const YearJob*> builders(const OrderFacts& facts) {
 }
 
 /// Ground work of every span between the job's own spans and their source.
-void add_upstream(const OrderFacts& facts, const std::map<int, const YearJob*>& by_span, const YearJob& job, std::set<std::string>& after) {
+void add_upstream(const OrderFacts& facts, const std::map<int, const YearJob*>& by_span, const YearJob& job,
+                  std::set<std::string>& after) {
     for (const int own : job.spans)
-        for (int span = facts.decide.spans[static_cast<std::size_t>(own)].parent; span >= 0; span = facts.decide.spans[static_cast<std::size_t>(span)].parent) {
+        for (int span = facts.decide.spans[static_cast<std::size_t>(own)].parent; span >= 0;
+             span = facts.decide.spans[static_cast<std::size_t>(span)].parent) {
             const auto at = by_span.find(span);
-            if (at != by_span.end()) after.insert(order_id(facts.input.city, at->second->year, at->second->string, Crew::civil));
+            if (at != by_span.end())
+                after.insert(order_id(facts.input.city, at->second->year, at->second->string, Crew::civil));
         }
 }
 
-std::vector<std::string> predecessors(const OrderFacts& facts, const std::map<int, const YearJob*>& by_span, const std::set<std::string>& ids,
-                                      const YearJob& job, Crew crew) {
+std::vector<std::string> predecessors(const OrderFacts& facts, const std::map<int, const YearJob*>& by_span,
+                                      const std::set<std::string>& ids, const YearJob& job, Crew crew) {
     std::set<std::string> after;
-    const auto own = [&](Crew other) { after.insert(order_id(facts.input.city, job.year, job.string, other)); };
+    const auto own = [&](Crew other) {
+        after.insert(order_id(facts.input.city, job.year, job.string, other));
+    };
     if (crew == Crew::civil)
         for (const int span : job.spans) {
             const CircuitSpan& each = facts.decide.spans[static_cast<std::size_t>(span)];
@@ -61,30 +67,38 @@ std::vector<std::string> predecessors(const OrderFacts& facts, const std::map<in
     return list;
 }
 
-/// Another owner's consent, where it is not in hand, is the first hold point of every order that touches the pole.
+/// Another owner's consent, where it is not in hand, is the first hold point of every order that touches the
+/// pole.
 void add_consent(const OrderFacts& facts, WorkOrder& order) {
     std::string poles;
     for (const OrderPole& row : order.poles) {
         const Pole& pole = facts.pole(row.pole);
         if (pole.owner != Owner::city && pole.consent != true) poles += (poles.empty() ? "" : ", ") + pole.id;
     }
-    if (!poles.empty()) order.steps.insert(order.steps.begin(), {"Owner's consent in writing; without it no work at " + poles, true, false});
+    if (!poles.empty())
+        order.steps.insert(order.steps.begin(),
+                           {"Owner's consent in writing; without it no work at " + poles, true, false});
 }
 
-}  // namespace
+} // namespace
 
 const char* text_of(Crew crew) {
     switch (crew) {
-        case Crew::line: return "line";
-        case Crew::civil: return "civil";
-        case Crew::lighting: return "lighting";
-        case Crew::electric: return "electric";
+    case Crew::line:
+        return "line";
+    case Crew::civil:
+        return "civil";
+    case Crew::lighting:
+        return "lighting";
+    case Crew::electric:
+        return "electric";
     }
     return "";
 }
 
-std::vector<WorkOrder> work_orders(const MoneyInput& input, const DecideResult& decide, const PhaseResult& phase, int year, const Crew* crew) {
-    const DecideResult built = as_built(decide, phase);  // spans that phase digs are trench here
+std::vector<WorkOrder> work_orders(const MoneyInput& input, const DecideResult& decide,
+                                   const PhaseResult& phase, int year, const Crew* crew) {
+    const DecideResult built = as_built(decide, phase); // spans that phase digs are trench here
     const OrderFacts facts = order_facts(input, built, phase);
     std::vector<std::pair<const YearJob*, WorkOrder>> all;
     std::set<std::string> ids;
@@ -108,4 +122,4 @@ std::vector<WorkOrder> work_orders(const MoneyInput& input, const DecideResult& 
     return orders;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -28,10 +28,12 @@ std::vector<int> rings_of(const City& city, const PhaseResult& phase) {
     return rings;
 }
 
-/// The pole for which something shared is built in `year`: the first of those beyond it whose rewire falls then.
+/// The pole for which something shared is built in `year`: the first of those beyond it whose rewire falls
+/// then.
 PoleIx built_for(const OrderFacts& facts, const std::vector<PoleIx>& poles_beyond, int year) {
     for (const PoleIx pole : poles_beyond)
-        if (facts.plan(pole).choice == Choice::rewire && facts.phase.pole_year[pole.place()] == year) return pole;
+        if (facts.plan(pole).choice == Choice::rewire && facts.phase.pole_year[pole.place()] == year)
+            return pole;
     return {};
 }
 
@@ -51,8 +53,9 @@ void add_shared(const OrderFacts& facts, Jobs& jobs) {
 }
 
 const StringYear* state_of(const PhaseResult& phase, StringIx string, int year) {
-    const auto at = std::find_if(phase.string_years.begin(), phase.string_years.end(),
-                                 [&](const StringYear& each) { return each.string == string && each.year == year; });
+    const auto at =
+        std::find_if(phase.string_years.begin(), phase.string_years.end(),
+                     [&](const StringYear& each) { return each.string == string && each.year == year; });
     return at == phase.string_years.end() ? nullptr : &*at;
 }
 
@@ -75,7 +78,8 @@ void add_strings(const OrderFacts& facts, Jobs& jobs) {
             const StringYear* before = state_of(facts.phase, StringIx(s), year - 1);
             const StringYear* after = state_of(facts.phase, StringIx(s), year);
             if (before == nullptr || after == nullptr) continue;
-            const bool swaps = after->lamps > 0 && after->transformer.is_valid() && after->transformer != before->transformer;
+            const bool swaps = after->lamps > 0 && after->transformer.is_valid() &&
+                               after->transformer != before->transformer;
             const bool ends = after->lamps == 0 && before->lamps > 0;
             if (!swaps && !ends && jobs.find({year, StringIx(s)}) == jobs.end()) continue;
             YearJob& job = job_at(jobs, year, StringIx(s));
@@ -86,18 +90,25 @@ void add_strings(const OrderFacts& facts, Jobs& jobs) {
             job.tap_after = after->tap;
             job.at = states[static_cast<std::size_t>(year - settings.first_year + 1)];
             job.swaps = swaps;
-            job.retires = ends && before->transformer.is_valid() && !feeds_another(facts.phase, StringIx(s), year, before->transformer);
+            job.retires = ends && before->transformer.is_valid() &&
+                          !feeds_another(facts.phase, StringIx(s), year, before->transformer);
         }
     }
 }
 
-}  // namespace
+} // namespace
 
 OrderFacts order_facts(const MoneyInput& input, const DecideResult& decide, const PhaseResult& phase) {
-    OrderFacts facts{input, decide, phase, string_loops(input.city, input.catalog), span_years(decide, input.plan, phase.pole_year), {}};
+    OrderFacts facts{input,
+                     decide,
+                     phase,
+                     string_loops(input.city, input.catalog),
+                     span_years(decide, input.plan, phase.pole_year),
+                     {}};
     Jobs jobs;
     for (std::size_t i = 0; i < phase.pole_year.size(); ++i)
-        if (phase.pole_year[i] != 0) job_at(jobs, phase.pole_year[i], input.city.poles[i].string).poles.push_back(PoleIx(i));
+        if (phase.pole_year[i] != 0)
+            job_at(jobs, phase.pole_year[i], input.city.poles[i].string).poles.push_back(PoleIx(i));
     add_shared(facts, jobs);
     add_strings(facts, jobs);
     const std::vector<int> rings = rings_of(input.city, phase);
@@ -126,10 +137,11 @@ bool is_base_live(const StringLoop& loop, const StringAtYear& at, int position) 
     if (at.state.lamps == 0 || position < 1) return false;
     const auto leg = static_cast<std::size_t>(position);
     if (at.leg_is_live[leg - 1] != 0 || at.leg_is_live[leg] != 0) return true;
-    return std::any_of(at.state.used.begin(), at.state.used.end(), [&](int place) {  // between two cut-backs: their own cable ends here
-        const LoopCutBack& cutback = loop.cutbacks[static_cast<std::size_t>(place)];
-        return cutback.a == position || cutback.b == position;
-    });
+    return std::any_of(at.state.used.begin(), at.state.used.end(),
+                       [&](int place) { // between two cut-backs: their own cable ends here
+                           const LoopCutBack& cutback = loop.cutbacks[static_cast<std::size_t>(place)];
+                           return cutback.a == position || cutback.b == position;
+                       });
 }
 
-}  // namespace unstring
+} // namespace unstring

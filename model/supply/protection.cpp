@@ -7,7 +7,8 @@
 namespace unstring {
 namespace {
 
-constexpr std::array<int, 21> kSteps = {15, 20, 25, 30, 35, 40, 45, 50, 60, 70, 80, 90, 100, 110, 125, 150, 175, 200, 225, 250, 300};
+constexpr std::array<int, 21> kSteps = {15, 20,  25,  30,  35,  40,  45,  50,  60,  70, 80,
+                                        90, 100, 110, 125, 150, 175, 200, 225, 250, 300};
 
 /// Bare area of a conductor in circular mils: ASTM B258.
 double circular_mils(int awg) {
@@ -16,11 +17,12 @@ double circular_mils(int awg) {
 }
 
 int small_conductor_cap(const Cable& cable) {
-    if (cable.metal == Metal::copper) return cable.awg == 14 ? 15 : cable.awg == 12 ? 20 : cable.awg == 10 ? 30 : 0;
+    if (cable.metal == Metal::copper)
+        return cable.awg == 14 ? 15 : cable.awg == 12 ? 20 : cable.awg == 10 ? 30 : 0;
     return cable.awg == 12 ? 15 : cable.awg == 10 ? 25 : 0;
 }
 
-}  // namespace
+} // namespace
 
 std::span<const int> device_steps() { return kSteps; }
 
@@ -59,4 +61,4 @@ int grounding_awg_upsized(int device_a, const Cable& needed, const Cable& chosen
     return kSizes.back();
 }
 
-}  // namespace unstring
+} // namespace unstring

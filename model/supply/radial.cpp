@@ -12,15 +12,15 @@ using Phasor = std::complex<double>;
 constexpr double kRestV = 1e-10;
 constexpr int kMostSweeps = 20000;
 
-struct Legs {  // two wires: only `a` is used
+struct Legs { // two wires: only `a` is used
     Phasor a, b;
 };
 
 struct Sweep {
     const RadialCase& radial;
     std::vector<int> order;
-    std::vector<Legs> volts;    // leg to neutral, both counted positive; two wires: wire to wire
-    std::vector<Legs> current;  // in the span that leads to the node
+    std::vector<Legs> volts;   // leg to neutral, both counted positive; two wires: wire to wire
+    std::vector<Legs> current; // in the span that leads to the node
     double leg_v = 0;
 
     bool has_neutral() const { return radial.wires == 3; }
@@ -28,9 +28,12 @@ struct Sweep {
     Phasor load_volts(std::size_t i) const {
         if (!has_neutral()) return volts[i].a;
         switch (radial.nodes[i].leg) {
-            case Leg::a: return volts[i].a;
-            case Leg::b: return volts[i].b;
-            case Leg::ab: return volts[i].a + volts[i].b;
+        case Leg::a:
+            return volts[i].a;
+        case Leg::b:
+            return volts[i].b;
+        case Leg::ab:
+            return volts[i].a + volts[i].b;
         }
         return {};
     }
@@ -66,7 +69,8 @@ struct Sweep {
         for (const int place : order) {
             const auto i = static_cast<std::size_t>(place);
             const RadialNode& node = radial.nodes[i];
-            const Legs from = node.parent < 0 ? Legs{leg_v, leg_v} : volts[static_cast<std::size_t>(node.parent)];
+            const Legs from =
+                node.parent < 0 ? Legs{leg_v, leg_v} : volts[static_cast<std::size_t>(node.parent)];
             const Phasor z(node.r_ohm, node.x_ohm);
             Legs next;
             if (has_neutral()) {
@@ -112,7 +116,9 @@ void read_out(const Sweep& sweep, RadialResult& result) {
         result.worst_drop_frac = std::max(result.worst_drop_frac, result.drop_frac.back());
         const Legs& amps = sweep.current[i];
         result.span_a.push_back(std::max(std::abs(amps.a), std::abs(amps.b)));
-        const double squares = has_neutral ? std::norm(amps.a) + std::norm(amps.b) + std::norm(amps.a - amps.b) : 2 * std::norm(amps.a);
+        const double squares = has_neutral
+                                   ? std::norm(amps.a) + std::norm(amps.b) + std::norm(amps.a - amps.b)
+                                   : 2 * std::norm(amps.a);
         result.loss_w += node.r_ohm * squares;
         if (node.parent < 0) {
             source.a += amps.a;
@@ -126,7 +132,7 @@ void read_out(const Sweep& sweep, RadialResult& result) {
     result.source_w = sweep.leg_v * (source.a + source.b).real();
 }
 
-}  // namespace
+} // namespace
 
 std::optional<std::vector<int>> radial_order(const std::vector<RadialNode>& nodes) {
     std::vector<std::vector<int>> children(nodes.size() + 1);
@@ -164,4 +170,4 @@ RadialResult solve_radial(const RadialCase& radial) {
     return result;
 }
 
-}  // namespace unstring
+} // namespace unstring

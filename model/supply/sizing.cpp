@@ -14,24 +14,25 @@
 namespace unstring {
 namespace {
 
-constexpr int kSteps = 2000;  // of the drop limit
+constexpr int kSteps = 2000; // of the drop limit
 constexpr int kRounds = 8;
 constexpr double kNever = std::numeric_limits<double>::infinity();
 
 struct Problem {
     const std::vector<SizingSpan>& spans;
     const SizingLimits& limits;
-    std::vector<int> order;       // parents first
-    std::vector<Cable> cables;    // those that the device may protect, cheapest first
-    std::vector<double> price_m;  // of each
-    double drop_v = 0;            // allowed
+    std::vector<int> order;      // parents first
+    std::vector<Cable> cables;   // those that the device may protect, cheapest first
+    std::vector<double> price_m; // of each
+    double drop_v = 0;           // allowed
 
     RadialCase radial(const std::vector<std::size_t>& chosen) const {
         RadialCase out{limits.source_v, limits.wires, {}};
         for (std::size_t i = 0; i < spans.size(); ++i) {
             const Cable& cable = cables[chosen[i]];
             const double km = spans[i].length_m / 1000;
-            out.nodes.push_back({spans[i].parent, cable.ohm_per_km * km, cable.x_ohm_per_km * km, spans[i].watts, spans[i].pf, 0, Leg::ab});
+            out.nodes.push_back({spans[i].parent, cable.ohm_per_km * km, cable.x_ohm_per_km * km,
+                                 spans[i].watts, spans[i].pf, 0, Leg::ab});
         }
         return out;
     }
@@ -47,7 +48,7 @@ struct Problem {
     }
 };
 
-struct Amps {  ///< in one span, part in step with the volts and part behind them
+struct Amps { ///< in one span, part in step with the volts and part behind them
     double active = 0, reactive = 0;
 };
 
@@ -73,9 +74,10 @@ double span_drop_v(const Cable& cable, double length_m, const Amps& amps) {
     return 2 * length_m / 1000 * (cable.ohm_per_km * amps.active + cable.x_ohm_per_km * amps.reactive);
 }
 
-/// The cheapest sizes by drops counted in whole steps: below[node][budget] is the wire beyond the node when `budget` steps
-/// are left there. Empty where nothing fits.
-std::vector<std::size_t> cheapest_sizes(const Problem& problem, const std::vector<Amps>& amps, double budget_v) {
+/// The cheapest sizes by drops counted in whole steps: below[node][budget] is the wire beyond the node when
+/// `budget` steps are left there. Empty where nothing fits.
+std::vector<std::size_t> cheapest_sizes(const Problem& problem, const std::vector<Amps>& amps,
+                                        double budget_v) {
     const std::size_t n = problem.spans.size();
     std::vector<std::vector<double>> below(n, std::vector<double>(kSteps + 1, 0.0));
     std::vector<std::vector<int>> pick(n, std::vector<int>(kSteps + 1, -1));
@@ -91,14 +93,16 @@ std::vector<std::size_t> cheapest_sizes(const Problem& problem, const std::vecto
             double best = kNever;
             for (std::size_t c = 0; c < problem.cables.size(); ++c) {
                 if (used[i][c] > budget) continue;
-                const double cost = problem.price_m[c] * length_m + below[i][static_cast<std::size_t>(budget - used[i][c])];
+                const double cost =
+                    problem.price_m[c] * length_m + below[i][static_cast<std::size_t>(budget - used[i][c])];
                 if (cost < best) {
                     best = cost;
                     pick[i][static_cast<std::size_t>(budget)] = static_cast<int>(c);
                 }
             }
             const int parent = problem.spans[i].parent;
-            if (parent >= 0) below[static_cast<std::size_t>(parent)][static_cast<std::size_t>(budget)] += best;
+            if (parent >= 0)
+                below[static_cast<std::size_t>(parent)][static_cast<std::size_t>(budget)] += best;
         }
     }
     std::vector<std::size_t> chosen(n);
@@ -129,8 +133,8 @@ struct Sized {
     double cost = kNever;
 };
 
-/// Sizes for currents at the source's volts first, then at the volts that those sizes give; each answer is judged by the
-/// exact sweep, and where it drops too much the next round has that much less to spend.
+/// Sizes for currents at the source's volts first, then at the volts that those sizes give; each answer is
+/// judged by the exact sweep, and where it drops too much the next round has that much less to spend.
 Sized sized_by_rounds(const Problem& problem) {
     Sized best;
     std::vector<double> volts(problem.spans.size(), problem.limits.source_v);
@@ -162,7 +166,8 @@ void make_thinner(const Problem& problem, std::vector<std::size_t>& chosen, Radi
         RadialResult best_volts;
         for (std::size_t i = 0; i < chosen.size(); ++i) {
             for (std::size_t c = 0; c < problem.cables.size(); ++c) {
-                const double saving = (problem.price_m[chosen[i]] - problem.price_m[c]) * problem.spans[i].length_m;
+                const double saving =
+                    (problem.price_m[chosen[i]] - problem.price_m[c]) * problem.spans[i].length_m;
                 if (saving <= best_saving) continue;
                 std::vector<std::size_t> next = chosen;
                 next[i] = c;
@@ -180,13 +185,16 @@ void make_thinner(const Problem& problem, std::vector<std::size_t>& chosen, Radi
     }
 }
 
-/// The same in one pass, for circuits of many spans: each span in turn takes the cheapest size that the exact sweep allows,
-/// the span with most to save first.
+/// The same in one pass, for circuits of many spans: each span in turn takes the cheapest size that the exact
+/// sweep allows, the span with most to save first.
 void make_thinner_once(const Problem& problem, std::vector<std::size_t>& chosen, RadialResult& volts) {
     std::vector<std::size_t> order(chosen.size());
     std::iota(order.begin(), order.end(), std::size_t{0});
-    const auto most = [&](std::size_t i) { return (problem.price_m[chosen[i]] - problem.price_m.front()) * problem.spans[i].length_m; };
-    std::stable_sort(order.begin(), order.end(), [&](std::size_t a, std::size_t b) { return most(a) > most(b); });
+    const auto most = [&](std::size_t i) {
+        return (problem.price_m[chosen[i]] - problem.price_m.front()) * problem.spans[i].length_m;
+    };
+    std::stable_sort(order.begin(), order.end(),
+                     [&](std::size_t a, std::size_t b) { return most(a) > most(b); });
     for (const std::size_t i : order) {
         for (std::size_t c = 0; problem.price_m[c] < problem.price_m[chosen[i]]; ++c) {
             std::vector<std::size_t> next = chosen;
@@ -235,7 +243,7 @@ SizingResult refused(std::string why) {
     return result;
 }
 
-}  // namespace
+} // namespace
 
 SizingResult size_wires(const std::vector<SizingSpan>& spans, const SizingLimits& limits) {
     if (limits.cables.empty() || !limits.price_m) throw std::logic_error("sizing: no cables or no price");
@@ -245,15 +253,20 @@ SizingResult size_wires(const std::vector<SizingSpan>& spans, const SizingLimits
     if (!order) throw std::logic_error("sizing: parents in a circle or out of range");
     Problem problem{spans, limits, std::move(*order), {}, {}, 0};
     problem.drop_v = std::min(limits.drop_frac * limits.source_v, limits.source_v - limits.least_v);
-    if (!(problem.drop_v > 0)) return refused(fmt::format("the driver needs {:.0f} V, the source gives {:.0f} V", limits.least_v, limits.source_v));
+    if (!(problem.drop_v > 0))
+        return refused(fmt::format("the driver needs {:.0f} V, the source gives {:.0f} V", limits.least_v,
+                                   limits.source_v));
 
     double source_va = 0;
     for (const SizingSpan& span : spans) source_va += span.watts / span.pf;
-    const double source_a = source_va / (limits.source_v - problem.drop_v);  // each lamp at the lowest volts allowed
+    const double source_a =
+        source_va / (limits.source_v - problem.drop_v); // each lamp at the lowest volts allowed
     const int device_a = device_for(source_a);
-    if (device_a == 0) return refused(fmt::format("{:.0f} A is more than any device of the list carries", source_a));
+    if (device_a == 0)
+        return refused(fmt::format("{:.0f} A is more than any device of the list carries", source_a));
     fill_cables(problem, device_a);
-    if (problem.cables.empty()) return refused(fmt::format("no wire of the list may be protected by a {} A device", device_a));
+    if (problem.cables.empty())
+        return refused(fmt::format("no wire of the list may be protected by a {} A device", device_a));
 
     Sized sized = sized_by_rounds(problem);
     if (sized.chosen.size() != spans.size()) {
@@ -262,12 +275,15 @@ SizingResult size_wires(const std::vector<SizingSpan>& spans, const SizingLimits
     }
     if (!sized.volts.converged) return refused("the load is more than the circuit can carry at any size");
     if (!problem.keeps_limits(sized.volts))
-        return refused(fmt::format("drop {:.1f} % with AWG {}, {:.1f} % allowed", 100 * sized.volts.worst_drop_frac,
-                                   awg_text(problem.cables[sized.chosen.front()].awg), 100 * problem.drop_v / limits.source_v));
+        return refused(fmt::format(
+            "drop {:.1f} % with AWG {}, {:.1f} % allowed", 100 * sized.volts.worst_drop_frac,
+            awg_text(problem.cables[sized.chosen.front()].awg), 100 * problem.drop_v / limits.source_v));
     constexpr std::size_t kFewSpans = 16;
-    if (spans.size() <= kFewSpans) make_thinner(problem, sized.chosen, sized.volts);
-    else make_thinner_once(problem, sized.chosen, sized.volts);
+    if (spans.size() <= kFewSpans)
+        make_thinner(problem, sized.chosen, sized.volts);
+    else
+        make_thinner_once(problem, sized.chosen, sized.volts);
     return finished(problem, sized, device_a);
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -1,5 +1,6 @@
-// Present-worth factors against printed tables: NIST Handbook 135 supplement (3 %), a published 7 % annuity table, and a
-// published engineering-economy page (0.25 %). UPV* also against the plain sum of its terms, the second way.
+// Present-worth factors against printed tables: NIST Handbook 135 supplement (3 %), a published 7 % annuity
+// table, and a published engineering-economy page (0.25 %). UPV* also against the plain sum of its terms, the
+// second way.
 
 #include "model/money/worth.h"
 
@@ -10,12 +11,18 @@
 using namespace unstring;
 
 TEST_CASE("money: single and uniform present values are those of the NIST Handbook 135 supplement") {
-    struct Row { double rate; int years; double spv, upv, crf; };
-    // SPV and UPV of 3 % at 10, 20, 25 and 30 years are printed (0.744/8.53 ..); the others follow the same formula.
-    const Row rows[] = {{.03, 10, .7441, 8.5302, .117231},  {.03, 15, .6419, 11.9379, .083767}, {.03, 20, .5537, 14.8775, .067216},
-                        {.03, 25, .4776, 17.4131, .057428}, {.03, 30, .4120, 19.6004, .051019}, {.02, 25, .6095, 19.5235, .051220},
-                        {.02, 30, .5521, 22.3965, .044650}, {.07, 20, .2584, 10.5940, .094393}, {.07, 25, .1842, 11.6536, .085811},
-                        {.07, 30, .1314, 12.4090, .080586}};
+    struct Row {
+        double rate;
+        int years;
+        double spv, upv, crf;
+    };
+    // SPV and UPV of 3 % at 10, 20, 25 and 30 years are printed (0.744/8.53 ..); the others follow the same
+    // formula.
+    const Row rows[] = {{.03, 10, .7441, 8.5302, .117231},  {.03, 15, .6419, 11.9379, .083767},
+                        {.03, 20, .5537, 14.8775, .067216}, {.03, 25, .4776, 17.4131, .057428},
+                        {.03, 30, .4120, 19.6004, .051019}, {.02, 25, .6095, 19.5235, .051220},
+                        {.02, 30, .5521, 22.3965, .044650}, {.07, 20, .2584, 10.5940, .094393},
+                        {.07, 25, .1842, 11.6536, .085811}, {.07, 30, .1314, 12.4090, .080586}};
     for (const Row& row : rows) {
         INFO(row.rate << " over " << row.years);
         CHECK(spv(row.rate, row.years) == Approx(row.spv).margin(0.00005));
@@ -39,7 +46,11 @@ TEST_CASE("money: a published engineering-economy page at 0.25 % over 25 periods
 }
 
 TEST_CASE("money: rising flows by the closed form, by the sum of their terms, and at the limit") {
-    struct Row { double rate, rise; int years; double upv_rising; };
+    struct Row {
+        double rate, rise;
+        int years;
+        double upv_rising;
+    };
     const Row rows[] = {{.03, .01, 25, 19.5689}, {.03, .02, 25, 22.0766},   {.03, .02, 30, 25.8818},
                         {.03, .03, 25, 25.0},    {.03, -.005, 25, 16.4501}, {.03, .04, 25, 28.4147}};
     for (const Row& row : rows) {

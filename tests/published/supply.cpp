@@ -6,15 +6,15 @@
 
 #include <catch2/catch.hpp>
 
+#include "model/catalog/cables.h"
 #include "model/supply/conduit.h"
 #include "model/supply/protection.h"
-#include "model/catalog/cables.h"
 
 using namespace unstring;
 
 namespace {
 
-constexpr double kAwg8OhmPerFt = 0.778 / 1000;  // NFPA 70 ch. 9 table 8
+constexpr double kAwg8OhmPerFt = 0.778 / 1000; // NFPA 70 ch. 9 table 8
 
 RadialNode lamp_of(int parent, double feet, double watts, double amps, double ohm_per_ft = kAwg8OhmPerFt) {
     RadialNode node;
@@ -27,11 +27,12 @@ RadialNode lamp_of(int parent, double feet, double watts, double amps, double oh
 
 RadialCase row_of(int lamps, double first_ft, double feet, double watts, double amps) {
     RadialCase radial;
-    for (int i = 0; i < lamps; ++i) radial.nodes.push_back(lamp_of(i - 1, i == 0 ? first_ft : feet, watts, amps));
+    for (int i = 0; i < lamps; ++i)
+        radial.nodes.push_back(lamp_of(i - 1, i == 0 ? first_ft : feet, watts, amps));
     return radial;
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("supply V1: the highway manual's twin lamp, 480 V, 2 x 0.52 A, 200 ft of #8, drops 0.2721 V") {
     // TxDOT Highway Illumination Manual, example's inputs: loop 0.001308 ohm/ft at 25 C.
@@ -39,14 +40,17 @@ TEST_CASE("supply V1: the highway manual's twin lamp, 480 V, 2 x 0.52 A, 200 ft 
     CHECK(480 - solve_radial(radial).volts[0] == Approx(0.2721).margin(0.00005));
 }
 
-TEST_CASE("supply V3: ten lamps of 0.5 A at 150 ft on #8 drop 6.4185 V, with a first run of 400 ft 8.3635 V") {
+TEST_CASE(
+    "supply V3: ten lamps of 0.5 A at 150 ft on #8 drop 6.4185 V, with a first run of 400 ft 8.3635 V") {
     // Moment method in closed form: 2 r I s n (n + 1) / 2, and 2 r I (n L0 + s n (n - 1) / 2).
     CHECK(240 - solve_radial(row_of(10, 150, 150, 0, .5)).volts.back() == Approx(6.4185).margin(1e-8));
     CHECK(240 - solve_radial(row_of(10, 400, 150, 0, .5)).volts.back() == Approx(8.3635).margin(1e-8));
 }
 
-TEST_CASE("supply V4: ten drivers of 120 W end at 233.431015 V; 5.097865 A and 23.48769 W lost at the source") {
-    // Second way: shooting. Guess the end volts, walk to the source adding lamp currents, bisect until the source is 240 V.
+TEST_CASE(
+    "supply V4: ten drivers of 120 W end at 233.431015 V; 5.097865 A and 23.48769 W lost at the source") {
+    // Second way: shooting. Guess the end volts, walk to the source adding lamp currents, bisect until the
+    // source is 240 V.
     const auto walk = [](double end_v, double& source_a, double& loss_w) {
         const double loop = 2 * kAwg8OhmPerFt * 150;
         double v = end_v, amps = 0;
@@ -60,7 +64,8 @@ TEST_CASE("supply V4: ten drivers of 120 W end at 233.431015 V; 5.097865 A and 2
         return v;
     };
     double low = 200, high = 240, source_a = 0, loss_w = 0;
-    for (int round = 0; round < 200; ++round) (walk((low + high) / 2, source_a, loss_w) < 240 ? low : high) = (low + high) / 2;
+    for (int round = 0; round < 200; ++round)
+        (walk((low + high) / 2, source_a, loss_w) < 240 ? low : high) = (low + high) / 2;
     walk(low, source_a, loss_w);
     const RadialResult result = solve_radial(row_of(10, 150, 150, 120, 0));
     REQUIRE(result.converged);
@@ -89,7 +94,7 @@ TEST_CASE("supply V6: one load of 1200 W at 1000 ft, against the closed root; mo
 
 TEST_CASE("supply V7: a branched circuit by the moment method") {
     RadialCase radial;
-    radial.nodes.push_back(lamp_of(-1, 200, 0, 0, .491 / 1000));  // the junction
+    radial.nodes.push_back(lamp_of(-1, 200, 0, 0, .491 / 1000)); // the junction
     for (int i = 0; i < 3; ++i) radial.nodes.push_back(lamp_of(i == 0 ? 0 : i, 100, 0, .6));
     for (int i = 0; i < 2; ++i) radial.nodes.push_back(lamp_of(i == 0 ? 0 : 4, 150, 0, .6));
     const RadialResult result = solve_radial(radial);
@@ -118,7 +123,8 @@ TEST_CASE("supply V8: a balanced 120/240 V circuit drops a quarter of the same l
 }
 
 TEST_CASE("supply V11: the exact drop with reactance, 240 V received, 10 A at pf 0.9, is 7.2459 V") {
-    const double sent = std::sqrt(std::pow(240 * .9 + 10 * .778, 2) + std::pow(240 * std::sqrt(1 - .81) + 10 * .052, 2));
+    const double sent =
+        std::sqrt(std::pow(240 * .9 + 10 * .778, 2) + std::pow(240 * std::sqrt(1 - .81) + 10 * .052, 2));
     RadialNode node;
     node.r_ohm = .778 / 2;
     node.x_ohm = .052 / 2;
@@ -159,6 +165,7 @@ TEST_CASE("supply: conduit fill answers a worked example of an electrical code f
     CHECK(conduit_for(Schedule::pvc_40, std::vector<double>{area(8), area(8), area(8), area(10)}) == 0.75);
     CHECK(conduit_for(Schedule::pvc_40, std::vector<double>(9, area(8))) == 1.0);
     CHECK(conduit_for(Schedule::pvc_40, std::vector<double>(10, area(8))) == 1.25);
-    CHECK(conduit_for(Schedule::pvc_80, std::vector<double>{area(6), area(6), area(8), area(8), area(10)}) == 1.0);
+    CHECK(conduit_for(Schedule::pvc_80, std::vector<double>{area(6), area(6), area(8), area(8), area(10)}) ==
+          1.0);
     CHECK_FALSE(conduit_for(Schedule::pvc_40, std::vector<double>(80, area(8))).has_value());
 }

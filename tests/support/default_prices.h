@@ -15,9 +15,12 @@ inline std::vector<std::string> csv_cells(const std::string& line) {
     std::vector<std::string> cells(1);
     bool quoted = false;
     for (const char c : line) {
-        if (c == '"') quoted = !quoted;
-        else if (c == ',' && !quoted) cells.emplace_back();
-        else cells.back() += c;
+        if (c == '"')
+            quoted = !quoted;
+        else if (c == ',' && !quoted)
+            cells.emplace_back();
+        else
+            cells.back() += c;
     }
     return cells;
 }
@@ -45,4 +48,4 @@ inline std::vector<PriceRow> default_price_rows() {
 
 inline PriceBook default_prices() { return PriceBook(default_price_rows()); }
 
-}  // namespace unstring
+} // namespace unstring

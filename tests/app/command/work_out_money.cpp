@@ -25,19 +25,21 @@ WorkOutAnswer asked(void (*add)(CLI::App&, WorkOutAnswer&), const std::string& w
 }
 
 WorkOutAnswer drop_of(const std::string& text) {
-    const std::string path = std::filesystem::temp_directory_path() / ("unstring-drop-" + std::to_string(getpid()) + ".json");
+    const std::string path =
+        std::filesystem::temp_directory_path() / ("unstring-drop-" + std::to_string(getpid()) + ".json");
     std::ofstream(path) << text;
     WorkOutAnswer answer = asked(add_work_out_drop, "drop " + path);
     std::filesystem::remove(path);
     return answer;
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("work-out drop: case V4, ten drivers of 120 W on resistance alone") {
     std::string nodes;
     for (int i = 0; i < 10; ++i)
-        nodes += (i == 0 ? "" : ",") + ("{\"id\": \"P" + std::to_string(i) + "\", \"parent\": \"" + (i == 0 ? "" : "P" + std::to_string(i - 1)) +
+        nodes += (i == 0 ? "" : ",") + ("{\"id\": \"P" + std::to_string(i) + "\", \"parent\": \"" +
+                                        (i == 0 ? "" : "P" + std::to_string(i - 1)) +
                                         "\", \"r_ohm\": 0.1167, \"w\": 120, \"pf\": 1}");
     const WorkOutAnswer answer = drop_of("{\"source_v\": 240, \"wires\": 2, \"nodes\": [" + nodes + "]}");
     REQUIRE_FALSE(answer.fault.has_value());
@@ -52,8 +54,9 @@ TEST_CASE("work-out drop: case V4, ten drivers of 120 W on resistance alone") {
 
 TEST_CASE("work-out drop: sizes are read from the table, thick ones as text") {
     const auto volts = [](const std::string& size) {
-        const WorkOutAnswer answer =
-            drop_of("{\"source_v\": 240, \"wires\": 2, \"nodes\": [{\"id\": \"P\", \"parent\": \"\", \"length_m\": 304.8, \"a\": 10, " + size + "}]}");
+        const WorkOutAnswer answer = drop_of("{\"source_v\": 240, \"wires\": 2, \"nodes\": [{\"id\": \"P\", "
+                                             "\"parent\": \"\", \"length_m\": 304.8, \"a\": 10, " +
+                                             size + "}]}");
         REQUIRE_FALSE(answer.fault.has_value());
         return answer.json["nodes"][0]["volts"].get<double>();
     };
@@ -63,7 +66,8 @@ TEST_CASE("work-out drop: sizes are read from the table, thick ones as text") {
 }
 
 TEST_CASE("work-out drop: a load beyond the circuit is told as not converged, its numbers as null") {
-    const WorkOutAnswer answer = drop_of("{\"source_v\": 240, \"nodes\": [{\"id\": \"P\", \"parent\": \"\", \"r_ohm\": 0.778, \"w\": 9300}]}");
+    const WorkOutAnswer answer = drop_of(
+        "{\"source_v\": 240, \"nodes\": [{\"id\": \"P\", \"parent\": \"\", \"r_ohm\": 0.778, \"w\": 9300}]}");
     REQUIRE_FALSE(answer.fault.has_value());
     CHECK(answer.json["converged"] == false);
     CHECK(answer.json["worst_drop_frac"].is_null());
@@ -71,10 +75,13 @@ TEST_CASE("work-out drop: a load beyond the circuit is told as not converged, it
 }
 
 TEST_CASE("work-out drop: bad input is a fault that names the field") {
-    const auto field = [](const std::string& nodes) { return drop_of("{\"source_v\": 240, \"wires\": 2, \"nodes\": " + nodes + "}").fault.value().field; };
+    const auto field = [](const std::string& nodes) {
+        return drop_of("{\"source_v\": 240, \"wires\": 2, \"nodes\": " + nodes + "}").fault.value().field;
+    };
     CHECK(field("[]") == "nodes");
     CHECK(field("[{\"id\": \"A\", \"parent\": \"B\", \"r_ohm\": 1}]") == "nodes[0].parent");
-    CHECK(field("[{\"id\": \"A\", \"parent\": \"B\", \"r_ohm\": 1}, {\"id\": \"B\", \"parent\": \"A\", \"r_ohm\": 1}]") == "nodes[0].parent");
+    CHECK(field("[{\"id\": \"A\", \"parent\": \"B\", \"r_ohm\": 1}, {\"id\": \"B\", \"parent\": \"A\", "
+                "\"r_ohm\": 1}]") == "nodes[0].parent");
     CHECK(field("[{\"id\": \"A\", \"r_ohm\": 1}, {\"id\": \"A\", \"r_ohm\": 1}]") == "nodes[1].id");
     CHECK(field("[{\"id\": \"A\", \"length_m\": 10, \"awg\": 7}]") == "nodes[0].awg");
     CHECK(field("[{\"id\": \"A\", \"length_m\": -10, \"awg\": 8}]") == "nodes[0].length_m");
@@ -91,12 +98,15 @@ TEST_CASE("work-out worth: 3 % over 20 years, a rise of nothing being the unifor
     CHECK(answer.json["upv"].get<double>() == Approx(14.8775).margin(5e-5));
     CHECK(answer.json["upv_rising"].get<double>() == answer.json["upv"].get<double>());
     CHECK(answer.json["crf"].get<double>() == Approx(.067216).margin(5e-7));
-    CHECK(asked(add_work_out_worth, "worth --rate 0.03 --years 25 --rise 0.03").json["upv_rising"].get<double>() == 25);
+    CHECK(asked(add_work_out_worth, "worth --rate 0.03 --years 25 --rise 0.03")
+              .json["upv_rising"]
+              .get<double>() == 25);
 }
 
 TEST_CASE("work-out worth: a rate in per cent, or no number, is refused with the remedy") {
     CHECK(asked(add_work_out_worth, "worth --rate 3 --years 20").fault.value().field == "--rate");
-    CHECK(asked(add_work_out_worth, "worth --rate nan --years 20").fault.value().code == FaultCode::bad_usage);
+    CHECK(asked(add_work_out_worth, "worth --rate nan --years 20").fault.value().code ==
+          FaultCode::bad_usage);
     CHECK(asked(add_work_out_worth, "worth --rate 0.03 --years 0").fault.value().field == "--years");
 }
 

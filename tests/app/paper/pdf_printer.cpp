@@ -59,7 +59,9 @@ WorkOrder long_order(int poles) {
         order.steps.push_back(step);
     }
     order.cautions = {"Never open a live string.", "A dark lamp is not a dead pole."};
-    order.facts = {{"open-circuit kV", "6.3 (estimate)"}, {"approach distance, gloves", "0.68 m, glove class 1"}, {"traffic", "12 at local street (poles by road)"},
+    order.facts = {{"open-circuit kV", "6.3 (estimate)"},
+                   {"approach distance, gloves", "0.68 m, glove class 1"},
+                   {"traffic", "12 at local street (poles by road)"},
                    {"permit, valid to", ""}};
     order.as_found = {{"current before", "A"}, {"volts before", "V"}, {"insulation", "Mohm"}};
     order.materials = {{"splice kit, 5 kV", "each", 4}, {"series cable, AWG 8, 5 kV", "m", 62}};
@@ -82,9 +84,10 @@ std::size_t count(const std::string& text, const std::string& words) {
     return found;
 }
 
-}  // namespace
+} // namespace
 
-TEST_CASE("paper: every pole, every step and every page number of an order is in the PDF, once where it should be") {
+TEST_CASE("paper: every pole, every step and every page number of an order is in the PDF, once where it "
+          "should be") {
     const std::string path = folder() + "/orders.pdf";
     REQUIRE(printer().print_orders({long_order(60)}, path, "a4").has_value());
     const std::string text = text_in(path);
@@ -96,7 +99,8 @@ TEST_CASE("paper: every pole, every step and every page number of an order is in
     REQUIRE(pages >= 3);
     for (std::size_t page = 1; page <= pages; ++page) {
         INFO(page);
-        CHECK(text.find("page " + std::to_string(page) + " of " + std::to_string(pages)) != std::string::npos);
+        CHECK(text.find("page " + std::to_string(page) + " of " + std::to_string(pages)) !=
+              std::string::npos);
     }
     CHECK(text.find("page " + std::to_string(pages + 1) + " of") == std::string::npos);
     CHECK(text.find("splice kit, 5 kV") != std::string::npos);
@@ -135,7 +139,9 @@ TEST_CASE("paper: names of 200 characters, other scripts and control characters 
 }
 
 TEST_CASE("paper: an unknown sheet or a folder that is not there is a fault, and no file is left") {
-    CHECK(printer().print_orders({long_order(1)}, folder() + "/x.pdf", "a5").error().code == FaultCode::bad_usage);
-    CHECK(printer().print_orders({long_order(1)}, "/no/such/folder/x.pdf", "a4").error().code == FaultCode::write_failed);
+    CHECK(printer().print_orders({long_order(1)}, folder() + "/x.pdf", "a5").error().code ==
+          FaultCode::bad_usage);
+    CHECK(printer().print_orders({long_order(1)}, "/no/such/folder/x.pdf", "a4").error().code ==
+          FaultCode::write_failed);
     CHECK_FALSE(std::filesystem::exists(folder() + "/x.pdf"));
 }

@@ -22,6 +22,10 @@ TEST_CASE("csv cell: what a spreadsheet would run stays text, numbers stay numbe
 }
 
 TEST_CASE("csv cell: commas, quotes and line feeds are quoted by RFC 4180") {
-    CHECK(csv_row({"a", "b,c", "say \"x\"", "two\nlines", ""}) == "a,\"b,c\",\"say \"\"x\"\"\",\"two\nlines\",\r\n");
-    CHECK(csv_row({"\xC3\x9C" "ber", "\xD7\xA8\xD7\x97"}) == "\xC3\x9C" "ber,\xD7\xA8\xD7\x97\r\n");
+    CHECK(csv_row({"a", "b,c", "say \"x\"", "two\nlines", ""}) ==
+          "a,\"b,c\",\"say \"\"x\"\"\",\"two\nlines\",\r\n");
+    CHECK(csv_row({"\xC3\x9C"
+                   "ber",
+                   "\xD7\xA8\xD7\x97"}) == "\xC3\x9C"
+                                           "ber,\xD7\xA8\xD7\x97\r\n");
 }

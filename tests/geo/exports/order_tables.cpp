@@ -13,7 +13,8 @@ using namespace unstring;
 namespace {
 
 std::string folder() {
-    const auto path = std::filesystem::temp_directory_path() / ("unstring-tables-" + std::to_string(getpid()));
+    const auto path =
+        std::filesystem::temp_directory_path() / ("unstring-tables-" + std::to_string(getpid()));
     std::filesystem::create_directories(path);
     return path;
 }
@@ -74,9 +75,10 @@ std::vector<WorkOrder> two_orders() {
     return {line, swap};
 }
 
-}  // namespace
+} // namespace
 
-TEST_CASE("order tables: one row a pole, an order without poles has a row too, cells read back as they were") {
+TEST_CASE(
+    "order tables: one row a pole, an order without poles has a row too, cells read back as they were") {
     const auto files = write_order_tables(folder(), City(), two_orders());
     REQUIRE(files.has_value());
     REQUIRE(files->size() == 3);
@@ -97,7 +99,9 @@ TEST_CASE("order tables: one row a pole, an order without poles has a row too, c
     CHECK(cell(3, "order_id") == "2029-S-05-line");
     CHECK(cell(3, "pole_id").empty());
     CHECK(cell(3, "after_orders") == "2028-S-05-line 2029-S-04-line");
-    for (const char* returned : {"done", "date", "order", "amps", "volts", "insulation_mohm", "duct_found", "serial", "battery_date", "note"}) CHECK(cell(1, returned).empty());
+    for (const char* returned : {"done", "date", "order", "amps", "volts", "insulation_mohm", "duct_found",
+                                 "serial", "battery_date", "note"})
+        CHECK(cell(1, returned).empty());
 }
 
 TEST_CASE("order tables: steps keep their order and their hold points, materials their quantities") {
@@ -109,13 +113,16 @@ TEST_CASE("order tables: steps keep their order and their hold points, materials
     CHECK(steps[2] == std::vector<std::string>{"2029-S-04-line", "2", "Release", "no", "no"});
     const auto materials = rows_of(content_of((*files)[2]));
     REQUIRE(materials.size() == 3);
-    CHECK(materials[2] == std::vector<std::string>{"2029-S-04-line", "2029", "line", "series cable", "m", "62.5"});
+    CHECK(materials[2] ==
+          std::vector<std::string>{"2029-S-04-line", "2029", "line", "series cable", "m", "62.5"});
 }
 
-TEST_CASE("order tables: a folder that is not there is a fault that names the file, and nothing is left half written") {
+TEST_CASE("order tables: a folder that is not there is a fault that names the file, and nothing is left half "
+          "written") {
     const auto files = write_order_tables("/no/such/folder", City(), two_orders());
     REQUIRE_FALSE(files.has_value());
     CHECK(files.error().code == FaultCode::write_failed);
     CHECK(files.error().file == "/no/such/folder/orders.csv");
-    for (const auto& entry : std::filesystem::directory_iterator(folder())) CHECK(entry.path().extension() != ".part");
+    for (const auto& entry : std::filesystem::directory_iterator(folder()))
+        CHECK(entry.path().extension() != ".part");
 }

@@ -63,29 +63,38 @@ struct LayersCase {
         year.lamps = 2;
         phase.string_years.push_back(year);
     }
-    [[nodiscard]] Expected<std::vector<std::string>> write(const std::string& folder) const { return export_layers(folder, city, plan, decide, phase); }
+    [[nodiscard]] Expected<std::vector<std::string>> write(const std::string& folder) const {
+        return export_layers(folder, city, plan, decide, phase);
+    }
 };
 
 std::string folder(const char* name) {
-    const auto path = std::filesystem::temp_directory_path() / ("unstring-layers-" + std::to_string(getpid())) / name;
+    const auto path =
+        std::filesystem::temp_directory_path() / ("unstring-layers-" + std::to_string(getpid())) / name;
     std::filesystem::create_directories(path);
     return path;
 }
 
-GDALDatasetUniquePtr opened(const std::string& path) { return GDALDatasetUniquePtr(GDALDataset::Open(path.c_str(), GDAL_OF_VECTOR)); }
+GDALDatasetUniquePtr opened(const std::string& path) {
+    return GDALDatasetUniquePtr(GDALDataset::Open(path.c_str(), GDAL_OF_VECTOR));
+}
 
 OGRFeatureUniquePtr feature_with(OGRLayer& layer, const char* field, const std::string& value) {
     layer.ResetReading();
-    for (OGRFeatureUniquePtr feature(layer.GetNextFeature()); feature != nullptr; feature.reset(layer.GetNextFeature()))
+    for (OGRFeatureUniquePtr feature(layer.GetNextFeature()); feature != nullptr;
+         feature.reset(layer.GetNextFeature()))
         if (value == feature->GetFieldAsString(field)) return feature;
     return nullptr;
 }
 
-bool is_blank(const OGRFeature& feature, const char* field) { return feature.IsFieldSetAndNotNull(feature.GetFieldIndex(field)) == 0; }
+bool is_blank(const OGRFeature& feature, const char* field) {
+    return feature.IsFieldSetAndNotNull(feature.GetFieldIndex(field)) == 0;
+}
 
-}  // namespace
+} // namespace
 
-TEST_CASE("plan layers: what is written is read back by GDAL: choice, year, place, costs, blanks where nothing is known") {
+TEST_CASE("plan layers: what is written is read back by GDAL: choice, year, place, costs, blanks where "
+          "nothing is known") {
     const auto files = LayersCase().write(folder("read"));
     REQUIRE(files.has_value());
     REQUIRE(files->size() == 1);
@@ -109,7 +118,8 @@ TEST_CASE("plan layers: what is written is read back by GDAL: choice, year, plac
     CHECK(std::string(poles->GetSpatialRef()->GetAuthorityCode(nullptr)) == "32609");
 }
 
-TEST_CASE("plan layers: spans carry the year of the first pole beyond, strings end only when every lamp has left") {
+TEST_CASE(
+    "plan layers: spans carry the year of the first pole beyond, strings end only when every lamp has left") {
     LayersCase test;
     const auto files = test.write(folder("spans"));
     REQUIRE(files.has_value());
@@ -128,7 +138,9 @@ TEST_CASE("plan layers: spans carry the year of the first pole beyond, strings e
     test.phase.pole_year[2] = 2031;
     REQUIRE(test.write(folder("spans")).has_value());
     const auto file = opened(files->front());
-    CHECK(feature_with(*file->GetLayerByName("strings"), "string_id", "S-01")->GetFieldAsInteger("last_year") == 2031);
+    CHECK(
+        feature_with(*file->GetLayerByName("strings"), "string_id", "S-01")->GetFieldAsInteger("last_year") ==
+        2031);
 }
 
 TEST_CASE("plan layers: with SOURCE_DATE_EPOCH set the same plan gives the same bytes") {

@@ -20,11 +20,12 @@ const char* found(const Catalog& catalog, const char* text) {
     return lamp == nullptr ? "" : lamp->fixture.c_str();
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("catalog: a fixture is told from free text, letters and watts in any order") {
     const Catalog catalog = small_catalog();
-    for (const char* text : {"HPS150", "hps 150 w", "150W S", "150WS", "150-HPS", "HPS-150W", "150 Watt Sodium", "sodium 150"}) {
+    for (const char* text :
+         {"HPS150", "hps 150 w", "150W S", "150WS", "150-HPS", "HPS-150W", "150 Watt Sodium", "sodium 150"}) {
         INFO(text);
         CHECK(std::string(found(catalog, text)) == "HPS150");
     }
@@ -35,7 +36,8 @@ TEST_CASE("catalog: a fixture is told from free text, letters and watts in any o
 
 TEST_CASE("catalog: a fixture that cannot be told is not guessed") {
     const Catalog catalog = small_catalog();
-    for (const char* text : {"", "  ", "150", "HPS", "HPS151", "LED150", "150W X", "HPS 100/150", "1500 HPS"}) {
+    for (const char* text :
+         {"", "  ", "150", "HPS", "HPS151", "LED150", "150W X", "HPS 100/150", "1500 HPS"}) {
         INFO(text);
         CHECK(find_lamp(catalog, text) == nullptr);
     }

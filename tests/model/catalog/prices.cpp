@@ -11,8 +11,8 @@ using namespace unstring;
 
 namespace {
 
-PriceRow row_of(const char* item, const char* unit, double base, std::optional<int> from = {}, std::optional<int> to = {},
-                double change = 0) {
+PriceRow row_of(const char* item, const char* unit, double base, std::optional<int> from = {},
+                std::optional<int> to = {}, double change = 0) {
     PriceRow row;
     row.item = item;
     row.unit = unit;
@@ -23,7 +23,7 @@ PriceRow row_of(const char* item, const char* unit, double base, std::optional<i
     return row;
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("prices: the default book holds exactly the closed list, in its order, with its units") {
     const auto rows = default_price_rows();
@@ -41,7 +41,8 @@ TEST_CASE("prices: every row of the default book has low <= base <= high and say
         CHECK(row.low >= 0);
         CHECK(row.low <= row.base);
         CHECK(row.base <= row.high);
-        const bool marked = row.note.find("assumption") != std::string::npos || row.note.find("invented") != std::string::npos ||
+        const bool marked = row.note.find("assumption") != std::string::npos ||
+                            row.note.find("invented") != std::string::npos ||
                             row.note.find("from memory") != std::string::npos;
         CHECK(marked);
     }
@@ -61,11 +62,12 @@ TEST_CASE("prices: a price per foot comes back per metre, a pace in feet in metr
 }
 
 TEST_CASE("prices: the last row that has begun holds, and grows from its own year") {
-    const PriceBook book({row_of("led_head", "each", 500, 2030, {}, 0.02), row_of("led_head", "each", 400, 2027)});
+    const PriceBook book(
+        {row_of("led_head", "each", 500, 2030, {}, 0.02), row_of("led_head", "each", 400, 2027)});
     CHECK(book.at("led_head", 2029) == 400);
     CHECK(book.at("led_head", 2030) == 500);
     CHECK(book.at("led_head", 2032) == Approx(500 * 1.02 * 1.02));
-    CHECK(book.at("led_head", 2020) == 400);  // before the first row: the first to come
+    CHECK(book.at("led_head", 2020) == 400); // before the first row: the first to come
 }
 
 TEST_CASE("prices: after its to_year a row stands still until the next begins") {
@@ -94,6 +96,7 @@ TEST_CASE("prices: metres may stand for feet, nothing else for the list's unit")
 }
 
 TEST_CASE("prices: each conductor size has its wire item in the list") {
-    for (const int awg : {14, 12, 10, 8, 6, 4, 3, 2, 1, 0, -1, -2, -3}) CHECK(find_price_item(wire_item(awg)) != nullptr);
+    for (const int awg : {14, 12, 10, 8, 6, 4, 3, 2, 1, 0, -1, -2, -3})
+        CHECK(find_price_item(wire_item(awg)) != nullptr);
     CHECK(wire_item(-3) == "wire_awg4_0");
 }

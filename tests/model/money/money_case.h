@@ -26,7 +26,9 @@ struct MoneyCase {
         pole.duct = Duct::proven;
         city.poles.push_back(pole);
         catalog.lamps = {{"HPS150", {}, 188, 0.9, LampKind::hps}};
-        catalog.luminaires = {{"L40", 40, .95, 5600, "led_head", ""}, {"L60", 60, .95, 8400, "led_head", ""}, {"L90", 90, .95, 12600, "led_head", ""}};
+        catalog.luminaires = {{"L40", 40, .95, 5600, "led_head", ""},
+                              {"L60", 60, .95, 8400, "led_head", ""},
+                              {"L90", 90, .95, 12600, "led_head", ""}};
         Head head;
         head.head = "M";
         head.lumens = 6000;
@@ -68,4 +70,4 @@ inline double sum_of(const std::vector<CashLine>& lines, std::string_view what) 
     return to_dollars(sum);
 }
 
-}  // namespace unstring
+} // namespace unstring

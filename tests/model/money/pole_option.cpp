@@ -10,13 +10,16 @@
 
 using namespace unstring;
 
-TEST_CASE("pole option: keep without rise, failures and the conversion owed is the 3 505 dollars worked out by hand") {
-    // 188 W x 4100 h x 0.15 and 120 a year, 20 years at 3 %: methods note, check of sense. By hand: (115.62 + 120) x 14.8775.
+TEST_CASE("pole option: keep without rise, failures and the conversion owed is the 3 505 dollars worked out "
+          "by hand") {
+    // 188 W x 4100 h x 0.15 and 120 a year, 20 years at 3 %: methods note, check of sense. By hand: (115.62 +
+    // 120) x 14.8775.
     MoneyCase test;
     test.set_price("upkeep_series_rise_frac", 0);
     double sum = 0;
     for (const CashLine& line : test.option(Choice::keep).lines)
-        if (line.what == "energy, kWh" || line.what == "series upkeep") sum += to_dollars(line.amount) * line.factor;
+        if (line.what == "energy, kWh" || line.what == "series upkeep")
+            sum += to_dollars(line.amount) * line.factor;
     CHECK(sum == Approx(3505).margin(1));
     CHECK(sum == Approx((0.188 * 4100 * 0.15 + 120) * upv(.03, 20)).margin(0.05));
 }
@@ -24,7 +27,9 @@ TEST_CASE("pole option: keep without rise, failures and the conversion owed is t
 TEST_CASE("pole option: series upkeep rises 3 % a year from the first year's price") {
     const auto lines = MoneyCase().option(Choice::keep).lines;
     const auto upkeep = [&](int year) {
-        return *std::find_if(lines.begin(), lines.end(), [&](const CashLine& line) { return line.what == "series upkeep" && line.year == year; });
+        return *std::find_if(lines.begin(), lines.end(), [&](const CashLine& line) {
+            return line.what == "series upkeep" && line.year == year;
+        });
     };
     CHECK(upkeep(2027).amount == 12000);
     CHECK(upkeep(2028).amount == 12360);
@@ -37,13 +42,15 @@ TEST_CASE("pole option: keep owes the conversion at the horizon, discounted from
     CHECK(owed.what == "conversion still owed");
     CHECK(owed.year == 2046);
     CHECK(owed.factor == Approx(spv(.03, 20)));
-    // Proven duct, luminaire, base, removal, local traffic, span of 35 m, design: cheaper than the 4 500 dollar head here.
+    // Proven duct, luminaire, base, removal, local traffic, span of 35 m, design: cheaper than the 4 500
+    // dollar head here.
     const double works = 450 + 350 + 100 + 300 * (1.0 / 14 + 1.0 / 8);
     const double span = 35 / 0.3048 * (.95 * 8 + .05 * (45 + 2.2));
     CHECK(to_dollars(owed.amount) == Approx((works + span) * 1.18).margin(0.02));
 }
 
-TEST_CASE("pole option: the works of a rewire fall in their year, the old light before it, the new one from it on") {
+TEST_CASE("pole option: the works of a rewire fall in their year, the old light before it, the new one from "
+          "it on") {
     const auto option = MoneyCase().option(Choice::rewire, 2030);
     REQUIRE(option.possible);
     for (const CashLine& line : option.lines) {
@@ -54,7 +61,8 @@ TEST_CASE("pole option: the works of a rewire fall in their year, the old light 
     CHECK(sum_of(option.lines, "series upkeep") == Approx(120 * (1 + 1.03 + 1.03 * 1.03)).margin(0.01));
     CHECK(sum_of(option.lines, "LED upkeep") == 17 * 30);
     CHECK(sum_of(option.lines, "LED luminaire") == 450);
-    CHECK(sum_of(option.lines, "design and supervision") == Approx(.18 * (900 + 300 * (1.0 / 14 + 1.0 / 8))).margin(0.01));
+    CHECK(sum_of(option.lines, "design and supervision") ==
+          Approx(.18 * (900 + 300 * (1.0 / 14 + 1.0 / 8))).margin(0.01));
 }
 
 TEST_CASE("pole option: the new luminaire follows the need, else the old lamp's watts") {
@@ -67,7 +75,7 @@ TEST_CASE("pole option: the new luminaire follows the need, else the old lamp's 
     CHECK(yearly_kwh() == Approx(.060 * 4100));
     test.city.poles[0].need_lm = 5000;
     CHECK(yearly_kwh() == Approx(.040 * 4100));
-    test.city.poles[0].need_lm = 50000;  // nothing is enough: the largest
+    test.city.poles[0].need_lm = 50000; // nothing is enough: the largest
     CHECK(yearly_kwh() == Approx(.090 * 4100));
 }
 
@@ -79,14 +87,15 @@ TEST_CASE("pole option: batteries and heads are renewed where the simulation and
         if (line.what == "battery renewed, old one disposed of") batteries.push_back(line.year);
         if (line.what == "solar head renewed") heads.push_back(line.year);
     }
-    CHECK(batteries == std::vector<int>{2035});  // 8 years; the next would fall after the head's renewal and its horizon
+    CHECK(batteries ==
+          std::vector<int>{2035}); // 8 years; the next would fall after the head's renewal and its horizon
     CHECK(heads == std::vector<int>{2042});
     CHECK(sum_of(option.lines, "battery renewed, old one disposed of") == 640);
     // Renewed at the end of 2042, 4 of 15 years old at the horizon.
     CHECK(sum_of(option.lines, "solar head, value left") == Approx(-4500 * 11.0 / 15).margin(0.01));
 }
 
-TEST_CASE("pole option: work after the horizon leaves no value at it, and no year without a light's cost")  {
+TEST_CASE("pole option: work after the horizon leaves no value at it, and no year without a light's cost") {
     MoneyCase test;
     test.plan.settings.horizon_years = 5;
     for (const CashLine& line : test.option(Choice::rewire, 2034).lines) {
@@ -130,7 +139,7 @@ TEST_CASE("pole option: what stops an option is said with its number") {
     test.city.poles[0].earliest_year = 2031;
     test.city.poles[0].owner = Owner::utility;
     test.city.poles[0].consent = false;
-    CHECK(test.option(Choice::rewire, 2030).possible);  // its owner holds back the hand-out, not the plan
+    CHECK(test.option(Choice::rewire, 2030).possible); // its owner holds back the hand-out, not the plan
     CHECK(test.option(Choice::keep).possible);
 }
 
@@ -155,7 +164,8 @@ TEST_CASE("pole option: a flat charge replaces the meter for every light that bu
     CHECK(sum_of(option.lines, "energy, kWh") == 0);
 }
 
-TEST_CASE("pole option: cost is the sum of amount times factor over its lines, to the cent; amounts are quantity times price") {
+TEST_CASE("pole option: cost is the sum of amount times factor over its lines, to the cent; amounts are "
+          "quantity times price") {
     const unsigned seed = 20270101;
     INFO("seed " << seed);
     std::mt19937 random(seed);
@@ -163,7 +173,8 @@ TEST_CASE("pole option: cost is the sum of amount times factor over its lines, t
     std::uniform_int_distribution<int> years(2025, 2050);
     for (int round = 0; round < 50; ++round) {
         MoneyCase test;
-        for (const char* item : {"led_head", "solar_head_m", "energy_kwh", "upkeep_led", "pole_base", "battery"})
+        for (const char* item :
+             {"led_head", "solar_head_m", "energy_kwh", "upkeep_led", "pole_base", "battery"})
             test.set_price(item, test.prices.at(item, 2027) * factor(random));
         test.plan.settings.rate = 0.02 * factor(random);
         for (const Choice choice : {Choice::keep, Choice::rewire, Choice::solar}) {
@@ -202,5 +213,6 @@ TEST_CASE("pole option: the work year is met with that year's price") {
             row.change_frac_year = -0.05;
         }
     test.prices = PriceBook(rows);
-    CHECK(sum_of(test.option(Choice::rewire, 2032).lines, "LED luminaire") == Approx(450 * std::pow(.95, 5)).margin(0.005));
+    CHECK(sum_of(test.option(Choice::rewire, 2032).lines, "LED luminaire") ==
+          Approx(450 * std::pow(.95, 5)).margin(0.005));
 }

@@ -14,7 +14,7 @@ StringYearCash running(int year) {
     return each;
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("string lines: losses and upkeep run until the year before the last lamp leaves") {
     const MoneyCase test;
@@ -30,7 +30,8 @@ TEST_CASE("string lines: losses and upkeep run until the year before the last la
     CHECK(sum_of(lines, "design and supervision") == Approx(.18 * 3500));
 }
 
-TEST_CASE("string lines: works of a year stand in that year as capital, a suspect unit at the dearer removal") {
+TEST_CASE(
+    "string lines: works of a year stand in that year as capital, a suspect unit at the dearer removal") {
     const MoneyCase test;
     StringYearCash year = running(2028);
     year.has_work = year.swaps_unit = true;

@@ -18,7 +18,9 @@ TEST_CASE("orders: pieces of one span on the way to a pole are one line of its w
     for (const WorkOrder& order : test.orders(2028))
         for (const OrderPole& pole : order.poles) {
             if (pole.id != "04-001") continue;
-            if (order.crew == Crew::civil) CHECK(pole.task == "trench in verge 40 m from service SVC-1, 1 pull box");
-            if (order.crew == Crew::electric) CHECK(pole.task == "base: splice, fuse, bond; wire AWG 8, 40 m from service SVC-1");
+            if (order.crew == Crew::civil)
+                CHECK(pole.task == "trench in verge 40 m from service SVC-1, 1 pull box");
+            if (order.crew == Crew::electric)
+                CHECK(pole.task == "base: splice, fuse, bond; wire AWG 8, 40 m from service SVC-1");
         }
 }

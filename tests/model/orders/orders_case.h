@@ -1,6 +1,6 @@
 #pragma once
-// A string of eight lamps, out and back along one street, its far half made solar in the first year and the rest rewired
-// in the second from one service; phase evaluates it.
+// A string of eight lamps, out and back along one street, its far half made solar in the first year and the
+// rest rewired in the second from one service; phase evaluates it.
 
 #include "model/catalog/cables.h"
 #include "model/orders/work_order.h"
@@ -53,9 +53,11 @@ struct OrdersCase {
 
     [[nodiscard]] MoneyInput input() const { return {city, catalog, prices, plan, shade}; }
     [[nodiscard]] PhaseResult phase() const { return evaluate_phase(input(), decide); }
-    [[nodiscard]] std::vector<WorkOrder> orders(int year = 0, const Crew* crew = nullptr) const { return work_orders(input(), decide, phase(), year, crew); }
+    [[nodiscard]] std::vector<WorkOrder> orders(int year = 0, const Crew* crew = nullptr) const {
+        return work_orders(input(), decide, phase(), year, crew);
+    }
 
-  private:
+private:
     void add_string() {
         SeriesString string;
         string.id = "S-04";
@@ -114,7 +116,8 @@ struct OrdersCase {
         city.cutbacks.push_back(cutback);
     }
     void add_spans() {
-        const std::size_t order[] = {0, 1, 7, 6};  // 1 from the service, 2 from 1, 8 from the service, 7 from 8
+        const std::size_t order[] = {0, 1, 7,
+                                     6}; // 1 from the service, 2 from 1, 8 from the service, 7 from 8
         for (int i = 0; i < 4; ++i) {
             CircuitSpan span;
             span.id = i;
@@ -129,7 +132,8 @@ struct OrdersCase {
                 span.duct_from = PoleIx(0);
                 span.duct_to = PoleIx(1);
             }
-            span.poles_beyond = i % 2 == 0 ? std::vector<PoleIx>{PoleIx(order[i]), PoleIx(order[i + 1])} : std::vector<PoleIx>{PoleIx(order[i])};
+            span.poles_beyond = i % 2 == 0 ? std::vector<PoleIx>{PoleIx(order[i]), PoleIx(order[i + 1])}
+                                           : std::vector<PoleIx>{PoleIx(order[i])};
             decide.spans.push_back(span);
         }
         Circuit circuit;
@@ -147,4 +151,4 @@ struct OrdersCase {
     }
 };
 
-}  // namespace unstring
+} // namespace unstring

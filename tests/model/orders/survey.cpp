@@ -18,7 +18,8 @@ TEST_CASE("survey: what knowing is worth, worked by hand") {
     CHECK(what_knowing_is_worth(.5, 120, 80, std::numeric_limits<double>::infinity()) == 0);
 }
 
-TEST_CASE("survey: unknown poles, ducts that are reused and questions of the string, in the year before the first") {
+TEST_CASE("survey: unknown poles, ducts that are reused and questions of the string, in the year before the "
+          "first") {
     OrdersCase test;
     for (PoleDecision& decision : test.decide.poles) {
         decision.options[1].cost = 9000;

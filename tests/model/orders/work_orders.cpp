@@ -13,7 +13,8 @@ using namespace unstring;
 namespace {
 
 const WorkOrder& find(const std::vector<WorkOrder>& orders, const std::string& id) {
-    const auto at = std::find_if(orders.begin(), orders.end(), [&](const WorkOrder& order) { return order.id == id; });
+    const auto at =
+        std::find_if(orders.begin(), orders.end(), [&](const WorkOrder& order) { return order.id == id; });
     if (at == orders.end()) throw std::runtime_error("no order " + id);
     return *at;
 }
@@ -36,9 +37,10 @@ double quantity(const WorkOrder& order, const std::string& what) {
     return 0;
 }
 
-}  // namespace
+} // namespace
 
-TEST_CASE("orders: every pole is in exactly one line order and one lighting order of its year, rewired ones in one electric order") {
+TEST_CASE("orders: every pole is in exactly one line order and one lighting order of its year, rewired ones "
+          "in one electric order") {
     const OrdersCase test;
     std::map<std::pair<Crew, std::string>, int> seen;
     for (const WorkOrder& order : test.orders())
@@ -52,7 +54,7 @@ TEST_CASE("orders: every pole is in exactly one line order and one lighting orde
         CHECK(seen[{Crew::line, id}] == 1);
         CHECK(seen[{Crew::lighting, id}] == 1);
         CHECK(seen[{Crew::electric, id}] == (is_rewire ? 1 : 0));
-        CHECK(seen[{Crew::civil, id}] == (is_rewire || i == 2 ? 1 : 0));  // 04-003: its strength is unknown
+        CHECK(seen[{Crew::civil, id}] == (is_rewire || i == 2 ? 1 : 0)); // 04-003: its strength is unknown
     }
 }
 
@@ -73,12 +75,28 @@ TEST_CASE("orders: the hours of all orders are the hours of the ledger, year by 
     CHECK(phase.years[1].hours.civil > 0);
 }
 
-TEST_CASE("orders: the line order goes through its steps in the order that keeps people alive, hold points marked") {
+TEST_CASE("orders: the line order goes through its steps in the order that keeps people alive, hold points "
+          "marked") {
     const auto orders = OrdersCase().orders();
     const WorkOrder& line = find(orders, "2027-S-04-line");
-    const char* words[] = {"Identify string S-04", "Job briefing", "Traffic control set", "before the work", "Switching clearance received", "Control off; primary open, locked, tagged",
-                           "Test dead", "Ground both conductors", "Identify the cable electrically", "Jumper before cutting, never the reverse", "Cut, cap and tag", "Take off the jumpers",
-                           "All clear of the cable", "Transformer leads off the loop", "Release the clearance", "Amperes within 6.40-6.70 A or stop", "Contact voltage", "as built"};
+    const char* words[] = {"Identify string S-04",
+                           "Job briefing",
+                           "Traffic control set",
+                           "before the work",
+                           "Switching clearance received",
+                           "Control off; primary open, locked, tagged",
+                           "Test dead",
+                           "Ground both conductors",
+                           "Identify the cable electrically",
+                           "Jumper before cutting, never the reverse",
+                           "Cut, cap and tag",
+                           "Take off the jumpers",
+                           "All clear of the cable",
+                           "Transformer leads off the loop",
+                           "Release the clearance",
+                           "Amperes within 6.40-6.70 A or stop",
+                           "Contact voltage",
+                           "as built"};
     std::size_t before = 0;
     for (const char* each : words) {
         INFO(each);
@@ -86,17 +104,20 @@ TEST_CASE("orders: the line order goes through its steps in the order that keeps
         CHECK(at >= before);
         before = at;
     }
-    for (const char* each : {"Switching clearance received", "Control off", "Test dead", "Ground both", "Identify the cable electrically", "Transformer leads off", "Amperes within"})
+    for (const char* each : {"Switching clearance received", "Control off", "Test dead", "Ground both",
+                             "Identify the cable electrically", "Transformer leads off", "Amperes within"})
         CHECK(line.steps[step_with(line, each)].hold_point);
 }
 
-TEST_CASE("orders: the line order carries the planned change, one lamp's volts, the band and the open-circuit estimate") {
+TEST_CASE("orders: the line order carries the planned change, one lamp's volts, the band and the "
+          "open-circuit estimate") {
     const OrdersCase test;
     const PhaseResult phase = test.phase();
     const auto orders = test.orders();
     const WorkOrder& line = find(orders, "2027-S-04-line");
     const auto state = [&](int year) {
-        return *std::find_if(phase.string_years.begin(), phase.string_years.end(), [&](const StringYear& each) { return each.year == year; });
+        return *std::find_if(phase.string_years.begin(), phase.string_years.end(),
+                             [&](const StringYear& each) { return each.year == year; });
     };
     CHECK(line.planned_volts_before == state(2026).volts);
     CHECK(line.planned_volts_after == state(2027).volts);
@@ -111,15 +132,19 @@ TEST_CASE("orders: the line order carries the planned change, one lamp's volts, 
     CHECK(line.unit_id == "T-01");
 }
 
-TEST_CASE("orders: behind a cut-back the cable is dead, without one it stays live in the bases and every order says so") {
+TEST_CASE("orders: behind a cut-back the cable is dead, without one it stays live in the bases and every "
+          "order says so") {
     OrdersCase test;
     for (const WorkOrder& order : test.orders(2027))
-        for (const OrderPole& pole : order.poles) CHECK(pole.warning.find("live series cable") == std::string::npos);
+        for (const OrderPole& pole : order.poles)
+            CHECK(pole.warning.find("live series cable") == std::string::npos);
     test.city.cutbacks.clear();
-    for (std::size_t i = 0; i < 8; ++i) test.city.poles[i].place.y_m *= 10;  // legs too far apart for a cut-back found by nearness
+    for (std::size_t i = 0; i < 8; ++i)
+        test.city.poles[i].place.y_m *= 10; // legs too far apart for a cut-back found by nearness
     const auto orders = test.orders(2027);
     for (const char* id : {"2027-S-04-line", "2027-S-04-lighting"})
-        for (const OrderPole& pole : find(orders, id).poles) CHECK(pole.warning.find("live series cable in base: line crew opens") != std::string::npos);
+        for (const OrderPole& pole : find(orders, id).poles)
+            CHECK(pole.warning.find("live series cable in base: line crew opens") != std::string::npos);
     CHECK(quantity(find(orders, "2027-S-04-line"), "jumper for a pole base") == 4);
 }
 
@@ -132,12 +157,15 @@ TEST_CASE("orders: the last lamps end the string: terminals shorted, the unit ou
     CHECK_THROWS(step_with(line, "re-energise"));
 }
 
-TEST_CASE("orders: crews wait for each other: duct for the dead cable, wire for duct and line, lights for all of them") {
+TEST_CASE("orders: crews wait for each other: duct for the dead cable, wire for duct and line, lights for "
+          "all of them") {
     const auto orders = OrdersCase().orders(2028);
     CHECK(find(orders, "2028-S-04-line").after.empty());
     CHECK(find(orders, "2028-S-04-civil").after == std::vector<std::string>{"2028-S-04-line"});
-    CHECK(find(orders, "2028-S-04-electric").after == std::vector<std::string>{"2028-S-04-civil", "2028-S-04-line"});
-    CHECK(find(orders, "2028-S-04-lighting").after == std::vector<std::string>{"2028-S-04-civil", "2028-S-04-electric", "2028-S-04-line"});
+    CHECK(find(orders, "2028-S-04-electric").after ==
+          std::vector<std::string>{"2028-S-04-civil", "2028-S-04-line"});
+    CHECK(find(orders, "2028-S-04-lighting").after ==
+          std::vector<std::string>{"2028-S-04-civil", "2028-S-04-electric", "2028-S-04-line"});
 }
 
 TEST_CASE("orders: no order waits for itself, for one that does not exist, or in a circle") {
@@ -145,7 +173,9 @@ TEST_CASE("orders: no order waits for itself, for one that does not exist, or in
     std::set<std::string> done;
     for (std::size_t round = 0; round < orders.size(); ++round)
         for (const WorkOrder& order : orders)
-            if (std::all_of(order.after.begin(), order.after.end(), [&](const std::string& id) { return done.count(id) != 0; })) done.insert(order.id);
+            if (std::all_of(order.after.begin(), order.after.end(),
+                            [&](const std::string& id) { return done.count(id) != 0; }))
+                done.insert(order.id);
     CHECK(done.size() == orders.size());
 }
 
@@ -162,7 +192,8 @@ TEST_CASE("orders: materials are what the work takes") {
 TEST_CASE("orders: lighting-circuit orders carry planned volts and name the pole with the fewest") {
     const auto orders = OrdersCase().orders();
     const WorkOrder& electric = find(orders, "2028-S-04-electric");
-    for (const OrderPole& pole : electric.poles) CHECK(pole.volts == Approx(240 - .1 * (static_cast<double>(pole.pole.place()) + 1)));
+    for (const OrderPole& pole : electric.poles)
+        CHECK(pole.volts == Approx(240 - .1 * (static_cast<double>(pole.pole.place()) + 1)));
     CHECK(electric.steps[step_with(electric, "last pole (04-008): 239.2 V planned")].hold_point);
 }
 
@@ -186,7 +217,8 @@ TEST_CASE("orders: another owner's pole opens each order with the consent as a h
         CHECK(order.steps.front().text == "Owner's consent in writing; without it no work at 04-004");
     }
     test.city.poles[3].consent = true;
-    for (const WorkOrder& order : test.orders(2027)) CHECK(order.steps.front().text.find("consent") == std::string::npos);
+    for (const WorkOrder& order : test.orders(2027))
+        CHECK(order.steps.front().text.find("consent") == std::string::npos);
 }
 
 TEST_CASE("orders: the sketch's beads are the whole loop in wiring order") {

@@ -34,7 +34,7 @@ double load_sum(const RadialCase& radial) {
     return sum;
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("radial: what the source gives is what the lamps take and the wires lose, in every random tree") {
     const unsigned seed = 411;
@@ -55,7 +55,8 @@ TEST_CASE("radial: three wires with loads from leg to leg are two wires of the s
         const RadialResult two = solve_radial(radial);
         radial.wires = 3;
         const RadialResult three = solve_radial(radial);
-        for (std::size_t i = 0; i < two.volts.size(); ++i) REQUIRE(three.volts[i] == Approx(two.volts[i]).margin(1e-8));
+        for (std::size_t i = 0; i < two.volts.size(); ++i)
+            REQUIRE(three.volts[i] == Approx(two.volts[i]).margin(1e-8));
         REQUIRE(three.source_neutral_a == Approx(0).margin(1e-8));
     }
 }

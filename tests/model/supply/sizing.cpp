@@ -32,11 +32,13 @@ double brute_force(const std::vector<SizingSpan>& spans, const SizingLimits& lim
             const Cable& cable = limits.cables[sizes[i]];
             is_protected = is_protected && largest_device(cable) >= device_a;
             const double km = spans[i].length_m / 1000;
-            radial.nodes.push_back({spans[i].parent, cable.ohm_per_km * km, cable.x_ohm_per_km * km, spans[i].watts, spans[i].pf, 0, Leg::ab});
+            radial.nodes.push_back({spans[i].parent, cable.ohm_per_km * km, cable.x_ohm_per_km * km,
+                                    spans[i].watts, spans[i].pf, 0, Leg::ab});
             cost += limits.price_m(cable) * spans[i].length_m;
         }
         const RadialResult volts = solve_radial(radial);
-        if (is_protected && volts.converged && volts.worst_drop_frac <= limits.drop_frac + 1e-12) best = std::min(best, cost);
+        if (is_protected && volts.converged && volts.worst_drop_frac <= limits.drop_frac + 1e-12)
+            best = std::min(best, cost);
         std::size_t i = 0;
         while (i < sizes.size() && ++sizes[i] == limits.cables.size()) sizes[i++] = 0;
         if (i == sizes.size()) return best;
@@ -49,7 +51,7 @@ std::vector<SizingSpan> row_of(int lamps, double spacing_m, double watts) {
     return spans;
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("sizing: a short circuit takes the thinnest wire, a long one thicker wire near the source") {
     const SizingLimits limits = copper_limits({10, 8, 6, 4});
@@ -61,7 +63,7 @@ TEST_CASE("sizing: a short circuit takes the thinnest wire, a long one thicker w
     REQUIRE(far.possible);
     CHECK(far.awg.front() < far.awg.back());
     CHECK(far.volts.worst_drop_frac <= .03);
-    CHECK(far.grounding_awg < grounding_awg(far.device_a));  // grows with the phase wire
+    CHECK(far.grounding_awg < grounding_awg(far.device_a)); // grows with the phase wire
 }
 
 TEST_CASE("sizing: random trees of up to seven spans cost what trying every set of sizes finds") {
@@ -74,7 +76,8 @@ TEST_CASE("sizing: random trees of up to seven spans cost what trying every set 
         std::vector<SizingSpan> spans;
         const int n = std::uniform_int_distribution<int>(2, 7)(random);
         for (int i = 0; i < n; ++i)
-            spans.push_back({std::uniform_int_distribution<int>(-1, i - 1)(random), 40 + 160 * unit(random), 100 + 250 * unit(random), .95});
+            spans.push_back({std::uniform_int_distribution<int>(-1, i - 1)(random), 40 + 160 * unit(random),
+                             100 + 250 * unit(random), .95});
         const SizingLimits limits = copper_limits({10, 8, 6, 4});
         const SizingResult result = size_wires(spans, limits);
         const double best = brute_force(spans, limits, result.possible ? result.device_a : 15);
@@ -108,7 +111,8 @@ TEST_CASE("sizing: the driver's least volts tighten the drop") {
     for (const double v : tight.volts.volts) CHECK(v >= 235 - 1e-9);
 }
 
-TEST_CASE("sizing: wire that the circuit's device may not protect is not chosen even where its drop would do") {
+TEST_CASE(
+    "sizing: wire that the circuit's device may not protect is not chosen even where its drop would do") {
     const SizingResult result = size_wires(row_of(3, 5, 2000), copper_limits({12, 10, 8}));
     REQUIRE(result.possible);
     CHECK(result.device_a == 35);

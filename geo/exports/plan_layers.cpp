@@ -14,6 +14,7 @@
 
 #include "geo/exports/layer_writer.h"
 #include "geo/ground/gdal_start.h"
+#include "model/phase/duct_live.h"
 #include "model/phase/phase_facts.h"
 
 namespace unstring {
@@ -218,7 +219,8 @@ Expected<std::vector<std::string>> export_layers(const std::string& folder, cons
     std::error_code ignored, moved;
     std::filesystem::remove(part, ignored);
     CPLErrorReset();
-    bool is_whole = write_all({city, plan, decide, phase}, part);
+    const DecideResult built = as_built(decide, phase);
+    bool is_whole = write_all({city, plan, built, phase}, part);
     const std::string said = CPLGetLastErrorMsg();
     if (is_whole) {
         std::filesystem::rename(part, path, moved);

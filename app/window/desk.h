@@ -67,6 +67,8 @@ class Desk : public QObject {
     [[nodiscard]] double running_frac() const { return running_frac_; }
     [[nodiscard]] double running_seconds() const;
     void run(Step step);
+    /// vet again, with the records of its errors set aside: they are in no plan until they are mended.
+    void set_errors_aside();
     void hand_out(const HandOutOptions& options);
     void cancel();
 

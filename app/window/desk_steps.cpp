@@ -58,6 +58,15 @@ void Desk::run(Step step) {
     });
 }
 
+void Desk::set_errors_aside() {
+    if (!may_edit()) return;
+    start(Step::vet, [set_aside = link_.set_aside](const Progress& progress) -> StepEnd {
+        const auto done = set_aside(progress);
+        if (done) return {};
+        return {done.error(), {}};
+    });
+}
+
 void Desk::hand_out(const HandOutOptions& options) {
     if (is_running() || !is_open()) return;
     start(Step::hand_out, [write = link_.hand_out, options](const Progress& progress) -> StepEnd {

@@ -96,6 +96,8 @@ void MainWindow::build() {
         ledger_->set_heading(tr("%1, the boundary %2 | %3: %4").arg(id).arg(drag->boundary.year).arg(next, rail_->drag_text().section('\n', 0, 0)));
     });
     connect(line_, &StepLine::step_clicked, this, &MainWindow::step_clicked);
+    connect(line_, &StepLine::run_wanted, this, &MainWindow::run_step);
+    connect(line_, &StepLine::findings_wanted, this, [this] { show_side(Side::findings); });
     connect(start_, &StartPage::open_wanted, this, &MainWindow::ask_open);
     connect(start_, &StartPage::gather_wanted, this, &MainWindow::ask_gather);
 }

@@ -55,6 +55,7 @@ class MainWindow : public QWidget {
     void take_look();
     void take_view();
     void step_clicked(Step step);
+    void run_step(Step step);
     void ask_open();
     void ask_gather();
     void ask_hand_out();

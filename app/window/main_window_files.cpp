@@ -74,12 +74,18 @@ void MainWindow::finish_gather() {
 
 void MainWindow::step_clicked(Step step) {
     if (desk_.is_running() || gathering_.isRunning()) return;
-    if (step == Step::gather || !desk_.is_open()) return ask_gather();
+    if (step == Step::gather || step == Step::hand_out || !desk_.is_open()) return run_step(step);
     const StepState& state = desk_.view().steps[std::size_t(step)];
-    if (step == Step::hand_out) return ask_hand_out();
     const bool is_fresh = state.standing == StepStanding::up_to_date || state.standing == StepStanding::by_hand || state.standing == StepStanding::stopped;
     if (is_fresh && state.errors + state.warnings > 0) return show_side(Side::findings);
     desk_.run(step);
+}
+
+void MainWindow::run_step(Step step) {
+    if (desk_.is_running() || gathering_.isRunning()) return;
+    if (step == Step::gather || !desk_.is_open()) ask_gather();
+    else if (step == Step::hand_out) ask_hand_out();
+    else desk_.run(step);
 }
 
 void MainWindow::ask_hand_out() {

@@ -21,19 +21,25 @@ Notice::Notice(Desk& desk, QWidget* over) : QLabel(over), desk_(desk) {
     timer_.setSingleShot(true);
     connect(&timer_, &QTimer::timeout, this, &QLabel::hide);
     connect(&desk_, &Desk::said, this, &Notice::show_words);
+    connect(&desk_, &Desk::look_changed, this, &Notice::take_look);
 }
 
 void Notice::show_words(const QString& words, bool is_trouble) {
-    const Look& look = desk_.look();
+    is_trouble_ = is_trouble;
     setText(words);
     setAccessibleName(words);
-    setStyleSheet(QStringLiteral("background:%1;color:%2;border:1px solid %3;border-radius:4px;padding:7px 12px;").arg(look.raise.name(), is_trouble ? look.trouble.name() : look.ink.name(), is_trouble ? look.trouble.name() : look.hair.name()));
+    take_look();
     setToolTip(is_trouble ? tr("Click to put it away") : QString());
     place();
     show();
     raise();
     if (is_trouble) timer_.stop();
     else timer_.start(kStays_ms);
+}
+
+void Notice::take_look() {
+    const Look& look = desk_.look();
+    setStyleSheet(QStringLiteral("background:%1;color:%2;border:1px solid %3;border-radius:4px;padding:7px 12px;").arg(look.raise.name(), is_trouble_ ? look.trouble.name() : look.ink.name(), is_trouble_ ? look.trouble.name() : look.hair.name()));
 }
 
 void Notice::place() {

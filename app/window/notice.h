@@ -20,8 +20,10 @@ class Notice : public QLabel {
 
   private:
     void place();
+    void take_look();
     Desk& desk_;
     QTimer timer_;
+    bool is_trouble_ = false;
 };
 
 }  // namespace unstring

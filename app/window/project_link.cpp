@@ -30,6 +30,7 @@ ProjectLink link_to(std::shared_ptr<OpenProject> project, std::shared_ptr<Printe
     link.history = [project](const std::string& pole_id, int at_most) { return project->history(pole_id, at_most); };
     link.preview = [project](const Plan& next) { return project->preview(next); };
     link.run_step = [project](Step step, const Progress& progress) { return run_step(*project, step, progress); };
+    link.set_aside = [project](const Progress& progress) { return project->run_vet(true, progress); };
     link.hand_out = [project, printer](const HandOutOptions& options, const Progress& progress) -> Expected<std::vector<std::string>> {
         auto report = project->run_hand_out(options, printer.get(), progress);
         if (!report) return tl::make_unexpected(report.error());

@@ -18,6 +18,8 @@ struct ProjectLink {
     std::function<PhaseResult(const Plan& next)> preview;
     /// Called from a working thread.
     std::function<Expected<void>(Step step, const Progress& progress)> run_step;
+    /// vet, with the records of its errors set aside. Called from a working thread.
+    std::function<Expected<void>(const Progress& progress)> set_aside;
     std::function<Expected<std::vector<std::string>>(const HandOutOptions& options, const Progress& progress)> hand_out;
 };
 

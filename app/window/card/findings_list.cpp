@@ -40,15 +40,22 @@ FindingsList::FindingsList(Desk& desk, QWidget* parent) : QWidget(parent), desk_
     detail_->setWordWrap(true);
     detail_->setFont(text_font(12.5));
     detail_->setTextInteractionFlags(Qt::TextSelectableByMouse);
+    set_aside_ = new QPushButton(tr("Set the records with errors aside"), this);
+    set_aside_->setObjectName("set_aside");
+    set_aside_->setToolTip(tr("They are in no plan until they are mended; they stay on the map, are counted, and stand on every report."));
+    connect(set_aside_, &QPushButton::clicked, this, [this] { desk_.set_errors_aside(); });
     column->addWidget(count_);
     column->addWidget(filter_);
     column->addWidget(list_, 1);
     column->addWidget(detail_);
+    column->addWidget(set_aside_, 0, Qt::AlignLeft);
     connect(filter_, &QComboBox::currentIndexChanged, this, [this] { refresh(); });
     connect(list_, &QTreeWidget::currentItemChanged, this, [this](QTreeWidgetItem* item) { show_finding(item); });
     connect(list_, &QTreeWidget::itemActivated, this, [this](QTreeWidgetItem* item) { show_finding(item); });
     connect(&desk_, &Desk::view_changed, this, &FindingsList::refresh);
     connect(&desk_, &Desk::look_changed, this, &FindingsList::refresh);
+    connect(&desk_, &Desk::closed, this, &FindingsList::refresh);
+    connect(&desk_, &Desk::step_changed, this, [this] { set_aside_->setEnabled(!desk_.is_running()); });
     refresh();
 }
 
@@ -56,6 +63,7 @@ void FindingsList::refresh() {
     const QSignalBlocker quiet(list_);
     list_->clear();
     detail_->clear();
+    set_aside_->setVisible(desk_.is_open() && !desk_.view().is_read_only && desk_.view().steps[std::size_t(Step::vet)].standing == StepStanding::stopped);
     if (!desk_.is_open()) return;
     findings_ = all_findings(desk_.view(), desk_.view().phase ? &*desk_.view().phase : nullptr);
     std::map<std::pair<Severity, std::string>, std::vector<std::size_t>> groups;

@@ -3,6 +3,7 @@
 
 #include <QComboBox>
 #include <QLabel>
+#include <QPushButton>
 #include <QTreeWidget>
 #include <QWidget>
 
@@ -23,6 +24,7 @@ class FindingsList : public QWidget {
     QLabel *count_, *detail_;
     QComboBox* filter_;
     QTreeWidget* list_;
+    QPushButton* set_aside_;
     std::vector<Finding> findings_;
 };
 

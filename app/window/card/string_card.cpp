@@ -10,11 +10,10 @@
 namespace unstring {
 namespace {
 
-QString unit_text(const City& city, TransformerIx unit, double tap) {
+QString unit_text(const City& city, TransformerIx unit) {
     if (!unit.is_valid()) return QObject::tr("none");
     const Transformer& record = city.transformers[unit.place()];
-    const QString text = QObject::tr("%1, %2 kW").arg(to_q(record.id), number_text(record.rated_kw, record.rated_kw < 10 ? 1 : 0));
-    return tap < 0.999 ? QObject::tr("%1, tap %2").arg(text, number_text(tap, 2)) : text;
+    return QObject::tr("%1, %2 kW").arg(to_q(record.id), number_text(record.rated_kw, record.rated_kw < 10 ? 1 : 0));
 }
 
 }  // namespace
@@ -102,7 +101,7 @@ void StringCard::fill_states(StringIx string) {
         const bool is_bad = state.lamps > 0 && is_trouble(state.verdict);
         const bool is_today = state.year < desk_.plan().settings.first_year;
         const QStringList cells{is_today ? tr("today") : QString::number(state.year), QString::number(state.lamps), number_text(state.volts / 1000, 2), number_text(state.load_kva, 1), number_text(state.cable_m),
-                                state.lamps == 0 ? QStringLiteral("\u2013") : unit_text(desk_.view().city, state.transformer, state.tap),
+                                state.lamps == 0 ? QStringLiteral("\u2013") : unit_text(desk_.view().city, state.transformer),
                                 state.lamps == 0 ? verdict_word(Verdict::none) : tr("%1, %2").arg(percent_text(state.loading_frac), verdict_word(state.verdict))};
         for (int column = 0; column < cells.size(); ++column) {
             auto* item = new QTableWidgetItem(cells[column]);

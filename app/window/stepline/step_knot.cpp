@@ -58,7 +58,7 @@ QSize StepKnot::sizeHint() const {
 
 void StepKnot::refresh() {
     setAccessibleName(tr("Step %1: %2").arg(text(), state_text()));
-    setToolTip(tr("%1 %2. State: %3. Click: run it, or open what it found.").arg(text(), remedy_of(step_), state_text()));
+    setToolTip(tr("%1 %2. State: %3. Click: run it, or open what it found; right click: choose.").arg(text(), remedy_of(step_), state_text()));
     updateGeometry();
     update();
 }

@@ -1,6 +1,7 @@
 #include "app/window/stepline/step_line.h"
 
 #include <QHBoxLayout>
+#include <QMenu>
 #include <QPainter>
 
 #include "app/window/look/words.h"
@@ -29,6 +30,8 @@ StepLine::StepLine(Desk& desk, QWidget* parent) : QWidget(parent), desk_(desk) {
         knots_[std::size_t(step)] = knot;
         row->addWidget(knot);
         connect(knot, &QAbstractButton::clicked, this, [this, step] { Q_EMIT step_clicked(step); });
+        knot->setContextMenuPolicy(Qt::CustomContextMenu);
+        connect(knot, &QWidget::customContextMenuRequested, this, [this, knot, step](QPoint at) { show_menu(step, knot->mapToGlobal(at)); });
     }
     row->addSpacing(10);
     run_ = new QPushButton(this);
@@ -65,6 +68,16 @@ Step StepLine::next_step() const {
         if (standing != StepStanding::up_to_date && standing != StepStanding::by_hand) return step;
     }
     return Step::hand_out;
+}
+
+void StepLine::show_menu(Step step, QPoint at) {
+    if (!desk_.is_open() || desk_.is_running()) return;
+    auto* menu = new QMenu(this);
+    menu->setAttribute(Qt::WA_DeleteOnClose);
+    menu->setObjectName("step_menu");
+    connect(menu->addAction(tr("Run %1").arg(step_word(step))), &QAction::triggered, this, [this, step] { Q_EMIT run_wanted(step); });
+    connect(menu->addAction(tr("Show the findings")), &QAction::triggered, this, [this] { Q_EMIT findings_wanted(); });
+    menu->popup(at);
 }
 
 void StepLine::refresh() {

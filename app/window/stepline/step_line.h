@@ -20,10 +20,13 @@ class StepLine : public QWidget {
 
   Q_SIGNALS:
     void step_clicked(unstring::Step step);
+    void run_wanted(unstring::Step step);
+    void findings_wanted();
     void night_wanted();
 
   private:
     void refresh();
+    void show_menu(Step step, QPoint at);
 
     Desk& desk_;
     std::array<StepKnot*, 6> knots_{};

@@ -276,6 +276,13 @@ ProjectLink link_to(const std::shared_ptr<SmallCity>& city) {
         ++city->steps_ended;
         return {};
     };
+    link.set_aside = [city](const Progress&) -> Expected<void> {
+        auto made = std::make_shared<ProjectView>(*city->view);
+        made->steps[1].standing = StepStanding::up_to_date;
+        made->steps[1].errors = 0;
+        city->view = made;
+        return {};
+    };
     link.hand_out = [city](const HandOutOptions& options, const Progress&) -> Expected<std::vector<std::string>> {
         city->handed_out.push_back(options);
         return std::vector<std::string>{options.to + "/orders.csv"};

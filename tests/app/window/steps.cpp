@@ -1,8 +1,11 @@
 #include <catch2/catch.hpp>
 
+#include <QApplication>
 #include <QComboBox>
+#include <QContextMenuEvent>
 #include <QLabel>
 #include <QLineEdit>
+#include <QMenu>
 #include <QPushButton>
 #include <QTest>
 #include <QTreeWidget>
@@ -67,6 +70,42 @@ TEST_CASE("step line: a step with findings opens them, and one click leads to th
     REQUIRE(window.desk().selection().size() == 1);
     CHECK(window.findChild<QLabel*>("finding_detail")->text().contains("row"));
     CHECK(list->isVisible());
+}
+
+TEST_CASE("step line: a vet stopped by errors offers to set their records aside, and only then") {
+    auto view = small_view();
+    view->findings.push_back(make_finding("pole-id-twice", "poles.csv", 30, "02-111", "the id of row 29", "an id of its own", "Give one of them another id", "poles"));
+    view->steps[1] = {StepStanding::stopped, 1, 2, "2026-11-30T10:41:00"};
+    const auto city = small_city(view);
+    MainWindow window(closed_doors());
+    window.show();
+    window.show_project(link_to(city));
+    settle();
+    QTest::mouseClick(window.findChild<StepKnot*>("step_vet"), Qt::LeftButton, Qt::NoModifier, QPoint(40, 18));
+    auto* aside = window.findChild<QPushButton*>("set_aside");
+    REQUIRE(aside->isVisible());
+    save_picture(window, "vet_stopped");
+    QTest::mouseClick(aside, Qt::LeftButton);
+    REQUIRE(QTest::qWaitFor([&] { return !window.desk().is_running(); }, 5000));
+    CHECK_FALSE(aside->isVisible());
+}
+
+TEST_CASE("step line: the menu of a step that is up to date runs it again") {
+    const auto city = small_city();
+    MainWindow window(closed_doors());
+    window.show();
+    window.show_project(link_to(city));
+    settle();
+    auto* knot = window.findChild<StepKnot*>("step_vet");
+    QContextMenuEvent ask(QContextMenuEvent::Keyboard, QPoint(20, 20), knot->mapToGlobal(QPoint(20, 20)));
+    QApplication::sendEvent(knot, &ask);
+    auto* menu = window.findChild<QMenu*>("step_menu");
+    REQUIRE(menu != nullptr);
+    menu->actions().front()->trigger();
+    CHECK(window.desk().running_step() == Step::vet);
+    menu->close();
+    window.desk().cancel();
+    REQUIRE(QTest::qWaitFor([&] { return !window.desk().is_running(); }, 5000));
 }
 
 TEST_CASE("hand out: the dialogue shows the cautions, and hands folder, year, crew and paper to the step") {

@@ -29,6 +29,7 @@ NLOHMANN_JSON_SERIALIZE_ENUM(Verdict, {{Verdict::open, "open"},
                                        {Verdict::light, "light"},
                                        {Verdict::low, "low"},
                                        {Verdict::none, "none"}})
+NLOHMANN_JSON_SERIALIZE_ENUM(Surface, {{Surface::verge, "verge"}, {Surface::paved, "paved"}})
 NLOHMANN_JSON_SERIALIZE_ENUM(SpanKind, {{SpanKind::trench_verge, "trench-verge"},
                                         {SpanKind::trench_paved, "trench-paved"},
                                         {SpanKind::bore, "bore"},
@@ -41,8 +42,8 @@ NLOHMANN_DEFINE_TYPE_NON_INTRUSIVE(CashLine, what, year, quantity, unit_price, a
 NLOHMANN_DEFINE_TYPE_NON_INTRUSIVE(OptionCost, possible, stopped_by, cost, lines)
 NLOHMANN_DEFINE_TYPE_NON_INTRUSIVE(PoleDecision, pole, choice, head, options, trench_share, trench_m, breakeven_trench_m, volts, drop_frac,
                                    reason, numbers, sources)
-NLOHMANN_DEFINE_TYPE_NON_INTRUSIVE(CircuitSpan, id, parent, pole, service, kind, line, length_m, cost, awg, duct_string, duct_from, duct_to,
-                                   poles_beyond)
+NLOHMANN_DEFINE_TYPE_NON_INTRUSIVE(CircuitSpan, id, parent, pole, service, kind, line, length_m, cost, awg, boxes, surface, duct_string, duct_from,
+                                   duct_to, poles_beyond)
 NLOHMANN_DEFINE_TYPE_NON_INTRUSIVE(Circuit, service, poles, load_kva, worst_drop_frac, source_a, device_a, connection_cost)
 NLOHMANN_DEFINE_TYPE_NON_INTRUSIVE(DecideResult::Refused, pole, reason)
 NLOHMANN_DEFINE_TYPE_NON_INTRUSIVE(HeadAnswer, head, sky_view_frac, shade_score, worst_month, panel_kwh_m2, supply_kwh, demand_kwh,

@@ -84,6 +84,10 @@ TEST_CASE("window: the whole job on the sample city, from its files to the work 
         settle();
     }
     REQUIRE(desk.phase() != nullptr);
+    const auto beside = OpenProject::open(path, "first", true);  // a second reader of the file sees the same plan
+    REQUIRE(beside.has_value());
+    REQUIRE((*beside)->view()->phase.has_value());
+    CHECK((*beside)->view()->phase->cost == Approx(desk.phase()->cost).epsilon(1e-12));
     auto* map = window.findChild<MapView*>("map");
     CHECK(QTest::qWaitFor([&] { return map->is_canopy_read(); }, kStepWait_ms));
     desk.set_year(2029);

@@ -112,7 +112,11 @@ std::string orders_table(const std::vector<WorkOrder>& orders) {
                              "",
                              ""});
         };
-        if (order.poles.empty()) row(0, OrderPole());
+        if (order.poles.empty()) {
+            OrderPole none;
+            none.task = order.title;
+            row(0, none);
+        }
         for (std::size_t i = 0; i < order.poles.size(); ++i) row(i + 1, order.poles[i]);
     }
     return text;

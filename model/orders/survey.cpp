@@ -181,14 +181,14 @@ void add_string_order(const Survey& survey, const StringLoop& loop,
     const std::vector<std::string> questions = string_questions(survey, loop);
     if (questions.empty()) return;
     WorkOrder order = head_of(survey, loop.string, Crew::line);
-    for (std::size_t i = 0; i < questions.size(); ++i)
-        order.facts.emplace_back(fmt::format("to find out {}", i + 1), questions[i]);
     order.as_found = {{"current", "A"},
                       {"volts", "V"},
                       {"lamps lit", ""},
                       {"open-circuit volts, nameplate", "V"},
                       {"oil, ppm PCB", ""}};
     order.steps = survey_steps(Crew::line);
+    for (const std::string& question : questions)
+        order.steps.push_back({"Find out: " + question, false, false});
     if (loop.order_from != OrderFrom::given)
         for (const PoleIx lamp : loop.lamps)
             order.poles.push_back({lamp,

@@ -30,7 +30,7 @@ TEST_CASE("survey: unknown poles, ducts that are reused and questions of the str
     for (const WorkOrder& order : orders) CHECK(order.year == 2026);
     CHECK(orders[0].id == "2026-S-04-line");
     std::string questions;
-    for (const auto& [label, text] : orders[0].facts) questions += text + "\n";
+    for (const OrderStep& step : orders[0].steps) questions += step.text + "\n";
     CHECK(questions.find("oil sample of T-01") != std::string::npos);
     CHECK(questions.find("nameplate of T-01: open-circuit volts") != std::string::npos);
     CHECK(questions.find("read amperes and volts") != std::string::npos);

@@ -29,6 +29,7 @@ MainWindow::MainWindow(Doors doors, QWidget* parent) : QWidget(parent), doors_(s
     connect(&desk_, &Desk::closed, this, [this] { pages_->setCurrentWidget(start_); });
     connect(&gathering_, &QFutureWatcherBase::finished, this, &MainWindow::finish_gather);
     take_look();
+    start_->setFocus();
 }
 
 MainWindow::~MainWindow() {

@@ -35,7 +35,7 @@ StartPage::StartPage(QWidget* parent) : QWidget(parent), look_(&day_look()) {
     column->addWidget(text_label(tr("Files that the six steps ask for"), 16, Weight::bold, this));
     auto* grid = new QGridLayout;
     grid->setHorizontalSpacing(24);
-    grid->setVerticalSpacing(4);
+    grid->setVerticalSpacing(9);
     const std::array<std::array<const char*, 3>, 8> rows{{{"poles", "place, string, lamp, height of each pole", "needed"},
                                                           {"circuits", "current, station, cable of each string", "needed"},
                                                           {"transformers", "rating and state, in service or spare", "needed"},

@@ -91,7 +91,7 @@ void OptionColumns::paintEvent(QPaintEvent*) {
         const QRect name = columns_[i].name->geometry();
         const bool is_chosen = kChoices[i] == chosen_;
         painter.fillRect(QRectF(name.left(), 1, name.width(), is_chosen ? 3 : 1), is_chosen ? sign_color(look, sign_of(chosen_)) : look.hair);
-        draw_pole_sign(painter, look, sign_of(kChoices[i]), true, QPointF(name.left() + 7, name.center().y() + 1), 6, false);
+        draw_pole_sign(painter, look, sign_of(kChoices[i]), true, QPointF(name.left() + 7, std::min(name.center().y() + 1, name.top() + 11)), 6, false);
     }
 }
 

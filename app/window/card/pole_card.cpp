@@ -85,7 +85,8 @@ void PoleCard::build_keys(QWidget* parent) {
     rows->addLayout(marks);
     auto* orders = new QHBoxLayout;
     orders->setSpacing(6);
-    for (QPushButton* button : {lock_, clear_}) orders->addWidget(button);
+    year_lock_ = key(tr("lock year"), "lock_year", tr("A locked year stays where it is, in drags and in phase"), true);
+    for (QPushButton* button : {lock_, clear_, year_lock_}) orders->addWidget(button);
     orders->addStretch(1);
     rows->addLayout(orders);
     auto* years = new QHBoxLayout;
@@ -100,12 +101,10 @@ void PoleCard::build_keys(QWidget* parent) {
     earlier_ = key(tr("earlier"), "year_earlier", tr("A year earlier"), false);
     later_ = key(tr("later"), "year_later", tr("A year later"), false);
     year_->setToolTip(tr("The year of this pole's work. A change by hand is kept by phase."));
-    year_lock_ = key(tr("lock year"), "lock_year", tr("A locked year stays where it is, in drags and in phase"), true);
     years->addWidget(word);
     years->addWidget(earlier_);
     years->addWidget(year_);
     years->addWidget(later_);
-    years->addWidget(year_lock_);
     years->addStretch(1);
     rows->addLayout(years);
     connect(keep_, &QPushButton::clicked, this, [this] { desk_.mark(Choice::keep); });

@@ -117,7 +117,7 @@ QString style_sheet(const Look& look) {
                "QPushButton:focus{border:2px solid %2;padding:4px 11px;}"
                "QPushButton:disabled{color:%7;border-color:%4;}"
                "QPushButton[flat=\"true\"]{border:1px solid transparent;padding:2px 4px;color:%6;text-decoration:underline;}"
-               "QPushButton[flat=\"true\"]:focus{border:1px solid %2;}"
+               "QPushButton[flat=\"true\"]:disabled{color:%7;text-decoration:none;}QPushButton[flat=\"true\"]:focus{border:1px solid %2;}"
                "QPushButton[key=\"true\"]{border-radius:3px;padding:3px 8px;font-weight:bold;}"
                "QPushButton[key=\"true\"]:checked{background:%2;color:%1;border-color:%2;}"
                "QLineEdit,QComboBox,QSpinBox{border:1px solid %5;border-radius:3px;padding:4px;background:%3;}"

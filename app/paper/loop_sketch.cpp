@@ -79,6 +79,7 @@ void draw_names(QPainter& painter, const std::vector<LoopBead>& loop, const View
                 const QRectF place(at + corner, QSizeF(w, h));
                 const auto hides = [&](const QRectF& other) { return other.intersects(place); };
                 if (!frame.contains(place) || std::any_of(taken.begin(), taken.end(), hides)) continue;
+                painter.fillRect(place, Qt::white);
                 painter.setPen(Qt::black);
                 painter.drawText(place, Qt::AlignCenter, name);
                 taken.push_back(place);

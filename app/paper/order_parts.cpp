@@ -77,7 +77,10 @@ void paint_poles(Sheet& sheet, const WorkOrder& order) {
     constexpr std::array<Column, 5> kColumns = {
         {{"pole", .16}, {"place", .17}, {"work", .30}, {"mind", .22}, {"done        serial, date", .15}}};
     const auto column = [&](std::size_t i) { return kColumns[i].share * sheet.width() - kGap; };
-    paint_heading(sheet, QStringLiteral("Poles in working order, far end first"), 40 * kPoint);
+    paint_heading(sheet,
+                  order.loop.empty() ? QStringLiteral("Poles, the most worth knowing first")
+                                     : QStringLiteral("Poles in working order, far end first"),
+                  40 * kPoint);
     table_head(sheet, kColumns);
     for (const OrderPole& pole : order.poles) {
         QString work = q(pole.task);

@@ -58,7 +58,9 @@ void Desk::set_night(bool is_night) {
     Q_EMIT look_changed();
 }
 
-bool Desk::is_selected(PoleIx pole) const { return pole.place() < selected_.size() && selected_[pole.place()] != 0; }
+bool Desk::is_selected(PoleIx pole) const {
+    return pole.place() < selected_.size() && selected_[pole.place()] != 0;
+}
 
 void Desk::select(std::vector<PoleIx> poles) {
     selection_ = std::move(poles);
@@ -74,8 +76,10 @@ void Desk::select(std::vector<PoleIx> poles) {
 void Desk::walk(int by) {
     if (!is_open()) return;
     if (selection_.empty()) {
-        if (string_.is_valid() && !scene().loops[string_.place()].lamps.empty()) select({scene().loops[string_.place()].lamps.front()});
-        else if (!scene().series.empty()) select({scene().loops[scene().series.front().place()].lamps.front()});
+        if (string_.is_valid() && !scene().loops[string_.place()].lamps.empty())
+            select({scene().loops[string_.place()].lamps.front()});
+        else if (!scene().series.empty())
+            select({scene().loops[scene().series.front().place()].lamps.front()});
     } else {
         const PoleIx from = selection_.back();
         const int position = scene().position[from.place()];
@@ -103,7 +107,7 @@ void Desk::set_year(int year) {
 }
 
 std::vector<EditLine> Desk::history(const std::string& pole_id, int at_most) const {
-    if (is_running()) return {};  // the file belongs to the step until it ends
+    if (is_running()) return {}; // the file belongs to the step until it ends
     const auto lines = link_.history(pole_id, at_most);
     return lines ? *lines : std::vector<EditLine>{};
 }
@@ -135,4 +139,4 @@ bool Desk::jump_to(const std::string& record) {
     return false;
 }
 
-}  // namespace unstring
+} // namespace unstring

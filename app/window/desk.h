@@ -1,6 +1,7 @@
 #pragma once
-// The planner's desk: what is open, looked at, chosen and under the hand, and the one place from which edits and steps
-// start. Comes in: a ProjectLink. Goes out: signals; widgets read the desk and never write the plan themselves.
+// The planner's desk: what is open, looked at, chosen and under the hand, and the one place from which edits
+// and steps start. Comes in: a ProjectLink. Goes out: signals; widgets read the desk and never write the plan
+// themselves.
 
 #include <QFutureWatcher>
 #include <QObject>
@@ -17,7 +18,7 @@ namespace unstring {
 
 class Desk : public QObject {
     Q_OBJECT
-  public:
+public:
     explicit Desk(QObject* parent = nullptr);
     ~Desk() override;
 
@@ -38,7 +39,8 @@ class Desk : public QObject {
     [[nodiscard]] const std::vector<PoleIx>& selection() const { return selection_; }
     [[nodiscard]] bool is_selected(PoleIx pole) const;
     void select(std::vector<PoleIx> poles);
-    /// The next lamp along the string of the pole chosen last. @param by  +1 towards the return terminal, -1 back
+    /// The next lamp along the string of the pole chosen last. @param by  +1 towards the return terminal, -1
+    /// back
     void walk(int by);
     [[nodiscard]] StringIx chosen_string() const { return string_; }
     void choose_string(StringIx string);
@@ -77,7 +79,7 @@ class Desk : public QObject {
     bool jump_to(const std::string& record);
     void say(const QString& words, bool is_trouble = false) { Q_EMIT said(words, is_trouble); }
 
-  Q_SIGNALS:
+Q_SIGNALS:
     void view_changed();
     void closed();
     void selection_changed();
@@ -89,7 +91,7 @@ class Desk : public QObject {
     void show_place(MapPoint place);
     void handed_out(const QStringList& files);
 
-  private:
+private:
     struct Preview {
         Plan plan;
         PhaseResult phase;
@@ -124,4 +126,4 @@ class Desk : public QObject {
     QFutureWatcher<StepEnd> watcher_;
 };
 
-}  // namespace unstring
+} // namespace unstring

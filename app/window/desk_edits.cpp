@@ -13,7 +13,7 @@ std::string user_name() {
     return name.isEmpty() ? std::string("planner") : name.toStdString();
 }
 
-}  // namespace
+} // namespace
 
 bool Desk::may_edit() {
     if (!is_open()) return false;
@@ -35,8 +35,10 @@ bool Desk::write(const Plan& next, const QString& label) {
         return false;
     }
     take_view();
-    if (change->is_empty()) say(tr("Nothing to change: it is so already."));
-    else say(tr("%1. On disk at %2.").arg(label, QDateTime::currentDateTime().toString("HH:mm:ss")));
+    if (change->is_empty())
+        say(tr("Nothing to change: it is so already."));
+    else
+        say(tr("%1. On disk at %2.").arg(label, QDateTime::currentDateTime().toString("HH:mm:ss")));
     return true;
 }
 
@@ -44,8 +46,10 @@ std::vector<PoleIx> Desk::selected_candidates() {
     std::vector<PoleIx> candidates;
     for (const PoleIx pole : selection_)
         if (is_candidate(view().city, view().city.poles[pole.place()])) candidates.push_back(pole);
-    if (selection_.empty()) say(tr("No pole is chosen: click one on the map or on the rail."), true);
-    else if (candidates.empty()) say(tr("Not a lamp on a series string in the plan: there is nothing to decide here."), true);
+    if (selection_.empty())
+        say(tr("No pole is chosen: click one on the map or on the rail."), true);
+    else if (candidates.empty())
+        say(tr("Not a lamp on a series string in the plan: there is nothing to decide here."), true);
     return candidates;
 }
 
@@ -75,8 +79,10 @@ void Desk::lock() {
     for (const PoleIx pole : poles) {
         PolePlan& row = next.poles[pole.place()];
         const Choice order = row.mark != Choice::undecided ? row.mark : row.choice;
-        if (order == Choice::undecided) ++without;
-        else row.lock = order;
+        if (order == Choice::undecided)
+            ++without;
+        else
+            row.lock = order;
     }
     if (without == poles.size()) {
         say(tr("Nothing to lock yet: run decide, or mark the pole first (K, R or S)."), true);
@@ -135,8 +141,10 @@ void Desk::toggle_year_lock() {
 void Desk::undo() {
     if (!may_edit()) return;
     const auto change = link_.undo();
-    if (!change) say(to_q(fault_text(change.error())), true);
-    else if (!*change) say(tr("Nothing to undo."));
+    if (!change)
+        say(to_q(fault_text(change.error())), true);
+    else if (!*change)
+        say(tr("Nothing to undo."));
     else {
         take_view();
         say(tr("Undone: %1").arg(to_q((*change)->label)));
@@ -146,8 +154,10 @@ void Desk::undo() {
 void Desk::redo() {
     if (!may_edit()) return;
     const auto change = link_.redo();
-    if (!change) say(to_q(fault_text(change.error())), true);
-    else if (!*change) say(tr("Nothing to redo."));
+    if (!change)
+        say(to_q(fault_text(change.error())), true);
+    else if (!*change)
+        say(tr("Nothing to redo."));
     else {
         take_view();
         say(tr("Done again: %1").arg(to_q((*change)->label)));
@@ -174,4 +184,4 @@ void Desk::write_preview(const QString& label) {
     Q_EMIT preview_changed();
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -19,7 +19,7 @@ Fault bug_fault(const std::exception& bug) {
     return fault;
 }
 
-}  // namespace
+} // namespace
 
 double Desk::running_seconds() const {
     return running_ ? double(QDateTime::currentMSecsSinceEpoch() - started_ms_) / 1000.0 : 0.0;
@@ -33,11 +33,14 @@ void Desk::start(Step step, std::function<StepEnd(const Progress&)> work) {
     Progress progress;
     progress.cancel = &cancel_;
     progress.on_progress = [this](double done_frac) {
-        QMetaObject::invokeMethod(this, [this, done_frac] {
-            if (!running_ || done_frac < running_frac_) return;
-            running_frac_ = std::min(done_frac, 1.0);
-            Q_EMIT step_changed();
-        }, Qt::QueuedConnection);
+        QMetaObject::invokeMethod(
+            this,
+            [this, done_frac] {
+                if (!running_ || done_frac < running_frac_) return;
+                running_frac_ = std::min(done_frac, 1.0);
+                Q_EMIT step_changed();
+            },
+            Qt::QueuedConnection);
     };
     Q_EMIT step_changed();
     watcher_.setFuture(QtConcurrent::run([work = std::move(work), progress]() -> StepEnd {
@@ -93,7 +96,9 @@ void Desk::finish_step() {
     Q_EMIT step_changed();
     if (end.fault) {
         const bool by_user = end.fault->code == FaultCode::cancelled;
-        say(by_user ? tr("%1 stopped. The file is as it was before.").arg(step_word(step)) : to_q(fault_text(*end.fault)), !by_user);
+        say(by_user ? tr("%1 stopped. The file is as it was before.").arg(step_word(step))
+                    : to_q(fault_text(*end.fault)),
+            !by_user);
         return;
     }
     if (step == Step::hand_out) {
@@ -120,4 +125,4 @@ QString Desk::what_changed(const Plan& before) const {
     return parts.isEmpty() ? tr("The plan is as it was.") : parts.join(", ") + '.';
 }
 
-}  // namespace unstring
+} // namespace unstring

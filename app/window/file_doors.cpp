@@ -11,7 +11,8 @@ Doors file_doors(std::shared_ptr<Printer> printer) {
         if (!project) return tl::make_unexpected(project.error());
         return link_to(std::shared_ptr<OpenProject>(std::move(*project)), printer);
     };
-    doors.gather = [](const GatherWish& wish, const Progress& progress) -> Expected<std::vector<std::string>> {
+    doors.gather = [](const GatherWish& wish,
+                      const Progress& progress) -> Expected<std::vector<std::string>> {
         auto report = gather_project(wish.project_path, wish.files, progress);
         if (!report) return tl::make_unexpected(report.error());
         return std::move(report->notes);
@@ -19,4 +20,4 @@ Doors file_doors(std::shared_ptr<Printer> printer) {
     return doors;
 }
 
-}  // namespace unstring
+} // namespace unstring

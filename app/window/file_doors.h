@@ -10,4 +10,4 @@ namespace unstring {
 
 [[nodiscard]] Doors file_doors(std::shared_ptr<Printer> printer);
 
-}  // namespace unstring
+} // namespace unstring

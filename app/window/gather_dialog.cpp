@@ -35,14 +35,16 @@ constexpr std::array<Table, 14> kTables{{
     {"asbuilt", "what crews have done", "when there is any", &GatherFiles::asbuilt},
 }};
 
-}  // namespace
+} // namespace
 
 GatherDialog::GatherDialog(const QString& project_path, QWidget* parent) : QDialog(parent) {
     setObjectName("gather_dialog");
     setWindowTitle(tr("Gather a city's files"));
     setMinimumWidth(820);
     auto* column = new QVBoxLayout(this);
-    auto* head = new QLabel(tr("One file a table; leave a line empty where there is no file. Tables that are in the project already stay as they are."), this);
+    auto* head = new QLabel(tr("One file a table; leave a line empty where there is no file. Tables that are "
+                               "in the project already stay as they are."),
+                            this);
     head->setWordWrap(true);
     head->setFont(text_font(12.5));
     column->addWidget(head);
@@ -56,7 +58,9 @@ GatherDialog::GatherDialog(const QString& project_path, QWidget* parent) : QDial
     auto* pick = new QPushButton(tr("choose"), this);
     pick->setEnabled(project_path.isEmpty());
     connect(pick, &QPushButton::clicked, this, [this] {
-        const QString chosen = QFileDialog::getSaveFileName(this, tr("New project file"), QStringLiteral("city.unstring"), tr("Unstring projects (*.unstring *.gpkg)"));
+        const QString chosen =
+            QFileDialog::getSaveFileName(this, tr("New project file"), QStringLiteral("city.unstring"),
+                                         tr("Unstring projects (*.unstring *.gpkg)"));
         if (!chosen.isEmpty()) project_->setText(chosen);
     });
     auto* project_word = new QLabel(tr("project file"), this);
@@ -65,7 +69,9 @@ GatherDialog::GatherDialog(const QString& project_path, QWidget* parent) : QDial
     grid->addWidget(new QLabel(tr("one file that holds everything"), this), row, 1);
     grid->addWidget(project_, row, 3);
     grid->addWidget(pick, row++, 4);
-    for (const Table& table : kTables) lines_[table.key] = add_line(grid, row++, QLatin1String(table.key), tr(table.what), tr(table.needed), table.key);
+    for (const Table& table : kTables)
+        lines_[table.key] =
+            add_line(grid, row++, QLatin1String(table.key), tr(table.what), tr(table.needed), table.key);
     grid->setColumnStretch(3, 1);
     column->addLayout(grid);
     auto* crs_row = new QGridLayout;
@@ -96,7 +102,8 @@ GatherDialog::GatherDialog(const QString& project_path, QWidget* parent) : QDial
     check();
 }
 
-QLineEdit* GatherDialog::add_line(QGridLayout* grid, int row, const QString& name, const QString& what, const QString& needed, const char* object) {
+QLineEdit* GatherDialog::add_line(QGridLayout* grid, int row, const QString& name, const QString& what,
+                                  const QString& needed, const char* object) {
     auto* word = new QLabel(name, this);
     word->setFont(text_font(12.5, Weight::bold));
     auto* hint = new QLabel(what, this);
@@ -112,7 +119,8 @@ QLineEdit* GatherDialog::add_line(QGridLayout* grid, int row, const QString& nam
         if (!chosen.isEmpty()) edit->setText(chosen);
     });
     connect(edit, &QLineEdit::textChanged, this, [this] { check(); });
-    grid->addWidget(word, row, 0), grid->addWidget(hint, row, 1), grid->addWidget(need, row, 2), grid->addWidget(edit, row, 3), grid->addWidget(pick, row, 4);
+    grid->addWidget(word, row, 0), grid->addWidget(hint, row, 1), grid->addWidget(need, row, 2),
+        grid->addWidget(edit, row, 3), grid->addWidget(pick, row, 4);
     return edit;
 }
 
@@ -128,8 +136,9 @@ GatherWish GatherDialog::wish() const {
     GatherWish wish;
     wish.project_path = project_->text().trimmed().toStdString();
     for (const Table& table : kTables) wish.files.*table.file = text(table.key);
-    wish.files.crs = text("crs"), wish.files.encoding = text("encoding"), wish.files.columns = text("columns");
+    wish.files.crs = text("crs"), wish.files.encoding = text("encoding"),
+    wish.files.columns = text("columns");
     return wish;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -20,13 +20,14 @@ struct GatherWish {
 
 class GatherDialog : public QDialog {
     Q_OBJECT
-  public:
+public:
     /// @param project_path  given: the files go into this project; empty: it is asked for
     explicit GatherDialog(const QString& project_path, QWidget* parent = nullptr);
     [[nodiscard]] GatherWish wish() const;
 
-  private:
-    QLineEdit* add_line(QGridLayout* grid, int row, const QString& name, const QString& what, const QString& needed, const char* object);
+private:
+    QLineEdit* add_line(QGridLayout* grid, int row, const QString& name, const QString& what,
+                        const QString& needed, const char* object);
     void check();
 
     QLineEdit* project_;
@@ -34,4 +35,4 @@ class GatherDialog : public QDialog {
     QPushButton* read_ = nullptr;
 };
 
-}  // namespace unstring
+} // namespace unstring

@@ -24,7 +24,8 @@ HandOutDialog::HandOutDialog(const ProjectView& view, QWidget* parent) : QDialog
     folder_->setText(project.absolutePath() + QStringLiteral("/orders of ") + project.completeBaseName());
     auto* pick = new QPushButton(tr("Choose a folder"), this);
     connect(pick, &QPushButton::clicked, this, [this] {
-        const QString chosen = QFileDialog::getExistingDirectory(this, tr("Folder for the work orders"), folder_->text());
+        const QString chosen =
+            QFileDialog::getExistingDirectory(this, tr("Folder for the work orders"), folder_->text());
         if (!chosen.isEmpty()) folder_->setText(chosen);
     });
     auto* where = new QHBoxLayout;
@@ -33,11 +34,13 @@ HandOutDialog::HandOutDialog(const ProjectView& view, QWidget* parent) : QDialog
     year_ = new QComboBox(this);
     year_->setObjectName("hand_out_year");
     year_->addItem(tr("every year"), 0);
-    for (int year = view.plan.settings.first_year; year <= view.plan.last_year(); ++year) year_->addItem(QString::number(year), year);
+    for (int year = view.plan.settings.first_year; year <= view.plan.last_year(); ++year)
+        year_->addItem(QString::number(year), year);
     crew_ = new QComboBox(this);
     crew_->setObjectName("hand_out_crew");
     crew_->addItem(tr("every crew"), QString());
-    for (const char* crew : {"line", "civil", "lighting", "electric"}) crew_->addItem(QLatin1String(crew), QLatin1String(crew));
+    for (const char* crew : {"line", "civil", "lighting", "electric"})
+        crew_->addItem(QLatin1String(crew), QLatin1String(crew));
     paper_ = new QComboBox(this);
     paper_->setObjectName("hand_out_paper");
     paper_->addItem(tr("A4"), QStringLiteral("a4"));
@@ -63,7 +66,8 @@ HandOutDialog::HandOutDialog(const ProjectView& view, QWidget* parent) : QDialog
     column->addLayout(buttons);
     connect(write, &QPushButton::clicked, this, &QDialog::accept);
     connect(leave, &QPushButton::clicked, this, &QDialog::reject);
-    connect(folder_, &QLineEdit::textChanged, write, [write](const QString& text) { write->setEnabled(!text.trimmed().isEmpty()); });
+    connect(folder_, &QLineEdit::textChanged, write,
+            [write](const QString& text) { write->setEnabled(!text.trimmed().isEmpty()); });
 }
 
 HandOutOptions HandOutDialog::options() const {
@@ -75,4 +79,4 @@ HandOutOptions HandOutDialog::options() const {
     return options;
 }
 
-}  // namespace unstring
+} // namespace unstring

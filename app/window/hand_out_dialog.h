@@ -11,13 +11,13 @@ namespace unstring {
 
 class HandOutDialog : public QDialog {
     Q_OBJECT
-  public:
+public:
     HandOutDialog(const ProjectView& view, QWidget* parent = nullptr);
     [[nodiscard]] HandOutOptions options() const;
 
-  private:
+private:
     QLineEdit* folder_;
     QComboBox *year_, *crew_, *paper_;
 };
 
-}  // namespace unstring
+} // namespace unstring

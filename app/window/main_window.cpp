@@ -93,8 +93,12 @@ void MainWindow::build() {
         const auto& drag = rail_->drag();
         if (!drag) return;
         const QString id = to_q(desk_.view().city.strings[drag->string.place()].id);
-        const QString next = drag->boundary.next_year == 0 ? tr("no year") : QString::number(drag->boundary.next_year);
-        ledger_->set_heading(tr("%1, the boundary %2 | %3: %4").arg(id).arg(drag->boundary.year).arg(next, rail_->drag_text().section('\n', 0, 0)));
+        const QString next =
+            drag->boundary.next_year == 0 ? tr("no year") : QString::number(drag->boundary.next_year);
+        ledger_->set_heading(tr("%1, the boundary %2 | %3: %4")
+                                 .arg(id)
+                                 .arg(drag->boundary.year)
+                                 .arg(next, rail_->drag_text().section('\n', 0, 0)));
     });
     connect(line_, &StepLine::step_clicked, this, &MainWindow::step_clicked);
     connect(line_, &StepLine::run_wanted, this, &MainWindow::run_step);
@@ -131,8 +135,10 @@ QWidget* MainWindow::build_side() {
     connect(&desk_, &Desk::selection_changed, this, [this] {
         const auto shown = Side(tabs_->currentIndex());
         if (shown != Side::pole && shown != Side::string) return;
-        if (!desk_.selection().empty()) show_side(Side::pole);
-        else if (desk_.chosen_string().is_valid()) show_side(Side::string);
+        if (!desk_.selection().empty())
+            show_side(Side::pole);
+        else if (desk_.chosen_string().is_valid())
+            show_side(Side::string);
     });
     return panel;
 }
@@ -164,10 +170,14 @@ void MainWindow::show_side(Side side) { tabs_->setCurrentIndex(int(side)); }
 
 void MainWindow::take_look() {
     const Look& look = desk_.look();
-    setStyleSheet(style_sheet(look) + QStringLiteral("QTabBar::tab{padding:7px 12px;color:%1;background:%2;border:none;border-bottom:2px solid %2;}"
-                                                     "QTabBar::tab:selected{color:%3;border-bottom:2px solid %3;}"
-                                                     "#read_only_banner{background:%4;color:%5;}")
-                                          .arg(look.ink2.name(), look.sheet.name(), look.ink.name(), look.band.name(), look.band_ink.name()));
+    setStyleSheet(
+        style_sheet(look) +
+        QStringLiteral(
+            "QTabBar::tab{padding:7px 12px;color:%1;background:%2;border:none;border-bottom:2px solid %2;}"
+            "QTabBar::tab:selected{color:%3;border-bottom:2px solid %3;}"
+            "#read_only_banner{background:%4;color:%5;}")
+            .arg(look.ink2.name(), look.sheet.name(), look.ink.name(), look.band.name(),
+                 look.band_ink.name()));
     start_->set_look(look);
 }
 
@@ -176,7 +186,9 @@ void MainWindow::take_view() {
     const ProjectView& view = desk_.view();
     setWindowTitle(tr("%1 - Unstring").arg(to_q(view.path).section('/', -1)));
     read_only_->setVisible(view.is_read_only);
-    if (view.is_read_only) read_only_->setText(tr("Open to read only: %1. Everything can be looked at, nothing is written.").arg(to_q(view.read_only_reason)));
+    if (view.is_read_only)
+        read_only_->setText(tr("Open to read only: %1. Everything can be looked at, nothing is written.")
+                                .arg(to_q(view.read_only_reason)));
 }
 
 void MainWindow::show_project(ProjectLink link) {
@@ -196,4 +208,4 @@ void MainWindow::resizeEvent(QResizeEvent* event) {
     down_->setSizes({height() - 52 - foot, foot});
 }
 
-}  // namespace unstring
+} // namespace unstring

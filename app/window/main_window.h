@@ -24,12 +24,13 @@ class StartPage;
 struct Doors {
     std::function<Expected<ProjectLink>(const std::string& path)> open;
     /// Reads files into a project; called from a working thread.
-    std::function<Expected<std::vector<std::string>>(const GatherWish& wish, const Progress& progress)> gather;
+    std::function<Expected<std::vector<std::string>>(const GatherWish& wish, const Progress& progress)>
+        gather;
 };
 
 class MainWindow : public QWidget {
     Q_OBJECT
-  public:
+public:
     explicit MainWindow(Doors doors, QWidget* parent = nullptr);
     ~MainWindow() override;
 
@@ -42,13 +43,13 @@ class MainWindow : public QWidget {
     enum class Side { pole, string, findings, history };
     void show_side(Side side);
 
-  protected:
+protected:
     void dragEnterEvent(QDragEnterEvent* event) override;
     void dropEvent(QDropEvent* event) override;
     void closeEvent(QCloseEvent* event) override;
     void resizeEvent(QResizeEvent* event) override;
 
-  private:
+private:
     void build();
     QWidget* build_side();
     void build_keys();
@@ -84,4 +85,4 @@ class MainWindow : public QWidget {
     std::atomic<bool> stop_gathering_ = false;
 };
 
-}  // namespace unstring
+} // namespace unstring

@@ -29,7 +29,8 @@ bool MainWindow::open_path(const std::string& path) {
 }
 
 void MainWindow::ask_open() {
-    const QString path = QFileDialog::getOpenFileName(this, tr("Open a project"), QString(), tr("Unstring projects (*.unstring *.gpkg);;All files (*)"));
+    const QString path = QFileDialog::getOpenFileName(
+        this, tr("Open a project"), QString(), tr("Unstring projects (*.unstring *.gpkg);;All files (*)"));
     if (!path.isEmpty()) open_path(path.toStdString());
 }
 
@@ -40,7 +41,7 @@ void MainWindow::ask_gather() {
 
 void MainWindow::gather(const GatherWish& wish) {
     if (desk_.is_running() || gathering_.isRunning()) return;
-    if (desk_.is_open()) desk_.close();  // the file must be free for gather to write it
+    if (desk_.is_open()) desk_.close(); // the file must be free for gather to write it
     stop_gathering_ = false;
     Progress progress;
     progress.cancel = &stop_gathering_;
@@ -76,16 +77,20 @@ void MainWindow::step_clicked(Step step) {
     if (desk_.is_running() || gathering_.isRunning()) return;
     if (step == Step::gather || step == Step::hand_out || !desk_.is_open()) return run_step(step);
     const StepState& state = desk_.view().steps[std::size_t(step)];
-    const bool is_fresh = state.standing == StepStanding::up_to_date || state.standing == StepStanding::by_hand || state.standing == StepStanding::stopped;
+    const bool is_fresh = state.standing == StepStanding::up_to_date ||
+                          state.standing == StepStanding::by_hand || state.standing == StepStanding::stopped;
     if (is_fresh && state.errors + state.warnings > 0) return show_side(Side::findings);
     desk_.run(step);
 }
 
 void MainWindow::run_step(Step step) {
     if (desk_.is_running() || gathering_.isRunning()) return;
-    if (step == Step::gather || !desk_.is_open()) ask_gather();
-    else if (step == Step::hand_out) ask_hand_out();
-    else desk_.run(step);
+    if (step == Step::gather || !desk_.is_open())
+        ask_gather();
+    else if (step == Step::hand_out)
+        ask_hand_out();
+    else
+        desk_.run(step);
 }
 
 void MainWindow::ask_hand_out() {
@@ -105,8 +110,9 @@ void MainWindow::dropEvent(QDropEvent* event) {
 }
 
 void MainWindow::closeEvent(QCloseEvent* event) {
-    if (desk_.is_running()) desk_.cancel();  // every edit is on disk already; a step that is cut leaves the file as it was
+    if (desk_.is_running())
+        desk_.cancel(); // every edit is on disk already; a step that is cut leaves the file as it was
     event->accept();
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -9,7 +9,7 @@ namespace {
 
 constexpr int kStays_ms = 7000;
 
-}  // namespace
+} // namespace
 
 Notice::Notice(Desk& desk, QWidget* over) : QLabel(over), desk_(desk) {
     setObjectName("notice");
@@ -33,13 +33,18 @@ void Notice::show_words(const QString& words, bool is_trouble) {
     place();
     show();
     raise();
-    if (is_trouble) timer_.stop();
-    else timer_.start(kStays_ms);
+    if (is_trouble)
+        timer_.stop();
+    else
+        timer_.start(kStays_ms);
 }
 
 void Notice::take_look() {
     const Look& look = desk_.look();
-    setStyleSheet(QStringLiteral("background:%1;color:%2;border:1px solid %3;border-radius:4px;padding:7px 12px;").arg(look.raise.name(), is_trouble_ ? look.trouble.name() : look.ink.name(), is_trouble_ ? look.trouble.name() : look.hair.name()));
+    setStyleSheet(
+        QStringLiteral("background:%1;color:%2;border:1px solid %3;border-radius:4px;padding:7px 12px;")
+            .arg(look.raise.name(), is_trouble_ ? look.trouble.name() : look.ink.name(),
+                 is_trouble_ ? look.trouble.name() : look.hair.name()));
 }
 
 void Notice::place() {
@@ -55,4 +60,4 @@ bool Notice::eventFilter(QObject* watched, QEvent* event) {
     return QLabel::eventFilter(watched, event);
 }
 
-}  // namespace unstring
+} // namespace unstring

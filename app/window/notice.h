@@ -1,5 +1,6 @@
 #pragma once
-// The last word of the program: what was done, or what could not be and why. Trouble stays until it is dismissed.
+// The last word of the program: what was done, or what could not be and why. Trouble stays until it is
+// dismissed.
 
 #include <QLabel>
 #include <QTimer>
@@ -10,15 +11,15 @@ namespace unstring {
 
 class Notice : public QLabel {
     Q_OBJECT
-  public:
+public:
     Notice(Desk& desk, QWidget* over);
     void show_words(const QString& words, bool is_trouble);
 
-  protected:
+protected:
     void mousePressEvent(QMouseEvent* event) override;
     bool eventFilter(QObject* watched, QEvent* event) override;
 
-  private:
+private:
     void place();
     void take_look();
     Desk& desk_;
@@ -26,4 +27,4 @@ class Notice : public QLabel {
     bool is_trouble_ = false;
 };
 
-}  // namespace unstring
+} // namespace unstring

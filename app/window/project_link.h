@@ -20,11 +20,12 @@ struct ProjectLink {
     std::function<Expected<void>(Step step, const Progress& progress)> run_step;
     /// vet, with the records of its errors set aside. Called from a working thread.
     std::function<Expected<void>(const Progress& progress)> set_aside;
-    std::function<Expected<std::vector<std::string>>(const HandOutOptions& options, const Progress& progress)> hand_out;
+    std::function<Expected<std::vector<std::string>>(const HandOutOptions& options, const Progress& progress)>
+        hand_out;
 };
 
 /// The callbacks of a real project, which they keep open as long as one of them is alive.
 /// @param printer  puts the orders on paper; null = tables and layers only
 [[nodiscard]] ProjectLink link_to(std::shared_ptr<OpenProject> project, std::shared_ptr<Printer> printer);
 
-}  // namespace unstring
+} // namespace unstring

@@ -20,4 +20,4 @@ int run_window(int argc, char** argv, const std::string& project_path) {
     return QApplication::exec();
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -9,4 +9,4 @@ namespace unstring {
 /// @return the exit status
 int run_window(int argc, char** argv, const std::string& project_path);
 
-}  // namespace unstring
+} // namespace unstring

@@ -23,7 +23,8 @@ std::shared_ptr<const Scene> make_scene(std::shared_ptr<const ProjectView> view)
     scene->position.assign(project.city.poles.size(), 0);
     for (std::size_t s = 0; s < scene->loops.size(); ++s) {
         const StringLoop& loop = scene->loops[s];
-        for (std::size_t i = 0; i < loop.lamps.size(); ++i) scene->position[loop.lamps[i].place()] = int(i) + 1;
+        for (std::size_t i = 0; i < loop.lamps.size(); ++i)
+            scene->position[loop.lamps[i].place()] = int(i) + 1;
         if (!loop.lamps.empty()) scene->series.emplace_back(s);
     }
     std::sort(scene->series.begin(), scene->series.end(), [&project](StringIx a, StringIx b) {
@@ -47,4 +48,4 @@ const StringYear* string_year(const PhaseResult* phase, StringIx string, int yea
     return nullptr;
 }
 
-}  // namespace unstring
+} // namespace unstring

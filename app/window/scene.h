@@ -1,5 +1,6 @@
 #pragma once
-// What the window works out once for each view: loops, bounds, a grid to find poles by place, summaries by string.
+// What the window works out once for each view: loops, bounds, a grid to find poles by place, summaries by
+// string.
 
 #include <QString>
 
@@ -19,11 +20,11 @@ struct MapBounds {
 };
 
 struct Scene {
-    std::shared_ptr<const ProjectView> view;  ///< keeps the catalogue that the loops point into
-    City wired;                               ///< the city with the wiring order that vet settled
-    std::vector<StringLoop> loops;            ///< one per string; empty for parallel circuits
-    std::vector<int> position;                ///< per pole: place in its loop, 1..n; 0 = none
-    std::vector<StringIx> series;             ///< the series strings with lamps, by id
+    std::shared_ptr<const ProjectView> view; ///< keeps the catalogue that the loops point into
+    City wired;                              ///< the city with the wiring order that vet settled
+    std::vector<StringLoop> loops;           ///< one per string; empty for parallel circuits
+    std::vector<int> position;               ///< per pole: place in its loop, 1..n; 0 = none
+    std::vector<StringIx> series;            ///< the series strings with lamps, by id
     PickGrid grid;
     MapBounds bounds;
 };
@@ -33,4 +34,4 @@ struct Scene {
 /// State of a string at a year's end; null where phase has none.
 [[nodiscard]] const StringYear* string_year(const PhaseResult* phase, StringIx string, int year);
 
-}  // namespace unstring
+} // namespace unstring

@@ -10,19 +10,19 @@ namespace unstring {
 
 class StartPage : public QWidget {
     Q_OBJECT
-  public:
+public:
     explicit StartPage(QWidget* parent = nullptr);
     void set_look(const Look& look);
 
-  Q_SIGNALS:
+Q_SIGNALS:
     void open_wanted();
     void gather_wanted();
 
-  protected:
+protected:
     void paintEvent(QPaintEvent* event) override;
 
-  private:
+private:
     const Look* look_;
 };
 
-}  // namespace unstring
+} // namespace unstring

@@ -1,5 +1,6 @@
 #pragma once
-// Every number behind one pole's decision: the cash lines of each option, from which its cost can be rebuilt by hand.
+// Every number behind one pole's decision: the cash lines of each option, from which its cost can be rebuilt
+// by hand.
 
 #include <QDialog>
 
@@ -9,8 +10,8 @@ namespace unstring {
 
 class EveryNumber : public QDialog {
     Q_OBJECT
-  public:
+public:
     EveryNumber(const Desk& desk, PoleIx pole, QWidget* parent = nullptr);
 };
 
-}  // namespace unstring
+} // namespace unstring

@@ -42,7 +42,8 @@ FindingsList::FindingsList(Desk& desk, QWidget* parent) : QWidget(parent), desk_
     detail_->setTextInteractionFlags(Qt::TextSelectableByMouse);
     set_aside_ = new QPushButton(tr("Set the records with errors aside"), this);
     set_aside_->setObjectName("set_aside");
-    set_aside_->setToolTip(tr("They are in no plan until they are mended; they stay on the map, are counted, and stand on every report."));
+    set_aside_->setToolTip(tr("They are in no plan until they are mended; they stay on the map, are counted, "
+                              "and stand on every report."));
     connect(set_aside_, &QPushButton::clicked, this, [this] { desk_.set_errors_aside(); });
     column->addWidget(count_);
     column->addWidget(filter_);
@@ -50,7 +51,8 @@ FindingsList::FindingsList(Desk& desk, QWidget* parent) : QWidget(parent), desk_
     column->addWidget(detail_);
     column->addWidget(set_aside_, 0, Qt::AlignLeft);
     connect(filter_, &QComboBox::currentIndexChanged, this, [this] { refresh(); });
-    connect(list_, &QTreeWidget::currentItemChanged, this, [this](QTreeWidgetItem* item) { show_finding(item); });
+    connect(list_, &QTreeWidget::currentItemChanged, this,
+            [this](QTreeWidgetItem* item) { show_finding(item); });
     connect(list_, &QTreeWidget::itemActivated, this, [this](QTreeWidgetItem* item) { show_finding(item); });
     connect(&desk_, &Desk::view_changed, this, &FindingsList::refresh);
     connect(&desk_, &Desk::look_changed, this, &FindingsList::refresh);
@@ -63,7 +65,8 @@ void FindingsList::refresh() {
     const QSignalBlocker quiet(list_);
     list_->clear();
     detail_->clear();
-    set_aside_->setVisible(desk_.is_open() && !desk_.view().is_read_only && desk_.view().steps[std::size_t(Step::vet)].standing == StepStanding::stopped);
+    set_aside_->setVisible(desk_.is_open() && !desk_.view().is_read_only &&
+                           desk_.view().steps[std::size_t(Step::vet)].standing == StepStanding::stopped);
     if (!desk_.is_open()) return;
     findings_ = all_findings(desk_.view(), desk_.view().phase ? &*desk_.view().phase : nullptr);
     std::map<std::pair<Severity, std::string>, std::vector<std::size_t>> groups;
@@ -71,17 +74,25 @@ void FindingsList::refresh() {
     for (std::size_t i = 0; i < findings_.size(); ++i) {
         const Severity severity = findings_[i].severity;
         errors += severity == Severity::error ? 1 : 0, warnings += severity == Severity::warning ? 1 : 0;
-        if (filter_->currentIndex() == 0 || int(severity) == filter_->currentIndex() - 1) groups[{severity, findings_[i].code}].push_back(i);
+        if (filter_->currentIndex() == 0 || int(severity) == filter_->currentIndex() - 1)
+            groups[{severity, findings_[i].code}].push_back(i);
     }
-    count_->setText(tr("%1, %2, %3").arg(count_text(errors, tr("error"), tr("errors")), count_text(warnings, tr("warning"), tr("warnings")), count_text(long(findings_.size()) - errors - warnings, tr("notice"), tr("notices"))));
+    count_->setText(
+        tr("%1, %2, %3")
+            .arg(count_text(errors, tr("error"), tr("errors")),
+                 count_text(warnings, tr("warning"), tr("warnings")),
+                 count_text(long(findings_.size()) - errors - warnings, tr("notice"), tr("notices"))));
     for (const auto& [key, places] : groups) {
-        auto* head = new QTreeWidgetItem(list_, {tr("%1 (%2): %3").arg(to_q(key.second), severity_word(key.first)).arg(places.size())});
+        auto* head = new QTreeWidgetItem(
+            list_, {tr("%1 (%2): %3").arg(to_q(key.second), severity_word(key.first)).arg(places.size())});
         head->setData(0, Qt::UserRole, -1);
         head->setFont(0, text_font(12.5, Weight::bold));
         if (key.first == Severity::error) head->setForeground(0, desk_.look().trouble);
         for (const std::size_t place : places) {
             const Finding& finding = findings_[place];
-            auto* item = new QTreeWidgetItem(head, {finding.record.empty() ? to_q(finding.found) : tr("%1: %2").arg(to_q(finding.record), to_q(finding.found))});
+            auto* item = new QTreeWidgetItem(
+                head, {finding.record.empty() ? to_q(finding.found)
+                                              : tr("%1: %2").arg(to_q(finding.record), to_q(finding.found))});
             item->setData(0, Qt::UserRole, int(place));
             item->setToolTip(0, finding_text(finding));
         }
@@ -95,9 +106,11 @@ void FindingsList::show_finding(QTreeWidgetItem* item) {
     if (place < 0 || place >= int(findings_.size())) return;
     const Finding& finding = findings_[std::size_t(place)];
     QString text = finding_text(finding);
-    if (!finding.file.empty()) text += finding.row > 0 ? tr("\n%1, row %2").arg(to_q(finding.file)).arg(finding.row) : QStringLiteral("\n") + to_q(finding.file);
+    if (!finding.file.empty())
+        text += finding.row > 0 ? tr("\n%1, row %2").arg(to_q(finding.file)).arg(finding.row)
+                                : QStringLiteral("\n") + to_q(finding.file);
     detail_->setText(text);
     if (!finding.record.empty()) desk_.jump_to(finding.record);
 }
 
-}  // namespace unstring
+} // namespace unstring

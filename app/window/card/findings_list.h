@@ -13,10 +13,10 @@ namespace unstring {
 
 class FindingsList : public QWidget {
     Q_OBJECT
-  public:
+public:
     explicit FindingsList(Desk& desk, QWidget* parent = nullptr);
 
-  private:
+private:
     void refresh();
     void show_finding(QTreeWidgetItem* item);
 
@@ -31,4 +31,4 @@ class FindingsList : public QWidget {
 /// The findings of the steps as each last ran, and those of phase as the plan stands.
 [[nodiscard]] std::vector<Finding> all_findings(const ProjectView& view, const PhaseResult* phase);
 
-}  // namespace unstring
+} // namespace unstring

@@ -9,7 +9,7 @@ namespace {
 
 constexpr int kMostLines = 500;
 
-}  // namespace
+} // namespace
 
 HistoryList::HistoryList(Desk& desk, QWidget* parent) : QWidget(parent), desk_(desk) {
     setObjectName("history");
@@ -37,12 +37,16 @@ void HistoryList::refresh() {
     list_->clear();
     if (!desk_.is_open() || desk_.is_running()) return;
     std::string pole;
-    if (of_pole_->isChecked() && !desk_.selection().empty()) pole = desk_.view().city.poles[desk_.selection().back().place()].id;
+    if (of_pole_->isChecked() && !desk_.selection().empty())
+        pole = desk_.view().city.poles[desk_.selection().back().place()].id;
     for (const EditLine& line : desk_.history(pole, kMostLines)) {
-        const QString what = line.undoes != 0 ? tr("undo or redo: %1").arg(to_q(line.label)) : to_q(line.label);
-        list_->addItem(QStringLiteral("%1  %2%3").arg(to_q(line.at).left(19).replace('T', ' '), what, line.who.empty() ? QString() : tr(" (%1)").arg(to_q(line.who))));
+        const QString what =
+            line.undoes != 0 ? tr("undo or redo: %1").arg(to_q(line.label)) : to_q(line.label);
+        list_->addItem(QStringLiteral("%1  %2%3")
+                           .arg(to_q(line.at).left(19).replace('T', ' '), what,
+                                line.who.empty() ? QString() : tr(" (%1)").arg(to_q(line.who))));
     }
     if (list_->count() == 0) list_->addItem(tr("No edit yet."));
 }
 
-}  // namespace unstring
+} // namespace unstring

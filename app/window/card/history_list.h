@@ -11,13 +11,13 @@ namespace unstring {
 
 class HistoryList : public QWidget {
     Q_OBJECT
-  public:
+public:
     explicit HistoryList(Desk& desk, QWidget* parent = nullptr);
 
-  protected:
+protected:
     void showEvent(QShowEvent* event) override;
 
-  private:
+private:
     void refresh();
 
     Desk& desk_;
@@ -25,4 +25,4 @@ class HistoryList : public QWidget {
     QListWidget* list_;
 };
 
-}  // namespace unstring
+} // namespace unstring

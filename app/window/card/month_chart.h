@@ -11,19 +11,19 @@ namespace unstring {
 
 class MonthChart : public QWidget {
     Q_OBJECT
-  public:
+public:
     explicit MonthChart(Desk& desk, QWidget* parent = nullptr);
     void set_answer(const HeadAnswer* answer);
     [[nodiscard]] QSize sizeHint() const override { return {340, 164}; }
 
-  protected:
+protected:
     void paintEvent(QPaintEvent* event) override;
 
-  private:
+private:
     Desk& desk_;
     bool has_answer_ = false;
     QString head_;
     std::array<double, 12> supply_{}, demand_{};
 };
 
-}  // namespace unstring
+} // namespace unstring

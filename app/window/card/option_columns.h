@@ -22,15 +22,15 @@ struct CostPart {
 
 class OptionColumns : public QWidget {
     Q_OBJECT
-  public:
+public:
     explicit OptionColumns(Desk& desk, QWidget* parent = nullptr);
     /// null = decide has not run for this pole
     void set_decision(const PoleDecision* decision, Choice chosen);
 
-  protected:
+protected:
     void paintEvent(QPaintEvent* event) override;
 
-  private:
+private:
     struct Column {
         QLabel *name, *cost, *parts, *stopped;
     };
@@ -39,4 +39,4 @@ class OptionColumns : public QWidget {
     Choice chosen_ = Choice::undecided;
 };
 
-}  // namespace unstring
+} // namespace unstring

@@ -42,13 +42,18 @@ PoleCard::PoleCard(Desk& desk, QWidget* parent) : QScrollArea(parent), desk_(des
     all_history_ = new QPushButton(tr("the whole history"), inside);
     all_history_->setObjectName("all_history");
     all_history_->setFlat(true);
-    for (QWidget* part : std::initializer_list<QWidget*>{name_, place_, what_, findings_, options_, value_note_, refused_, why_head_, why_, every_number_, keys_, orders_, months_, sky_, numbers_, history_, all_history_})
-        column->addWidget(part, 0, part == every_number_ || part == all_history_ ? Qt::AlignLeft : Qt::Alignment());
+    for (QWidget* part : std::initializer_list<QWidget*>{
+             name_, place_, what_, findings_, options_, value_note_, refused_, why_head_, why_, every_number_,
+             keys_, orders_, months_, sky_, numbers_, history_, all_history_})
+        column->addWidget(part, 0,
+                          part == every_number_ || part == all_history_ ? Qt::AlignLeft : Qt::Alignment());
     column->addStretch(1);
     setWidget(inside);
     connect(every_number_, &QPushButton::clicked, this, [this] { Q_EMIT every_number_wanted(pole_); });
     connect(all_history_, &QPushButton::clicked, this, [this] { Q_EMIT all_history_wanted(); });
-    for (const auto signal : {&Desk::view_changed, &Desk::selection_changed, &Desk::look_changed, &Desk::step_changed}) connect(&desk_, signal, this, &PoleCard::refresh);
+    for (const auto signal :
+         {&Desk::view_changed, &Desk::selection_changed, &Desk::look_changed, &Desk::step_changed})
+        connect(&desk_, signal, this, &PoleCard::refresh);
     refresh();
 }
 
@@ -78,14 +83,16 @@ void PoleCard::build_keys(QWidget* parent) {
     keep_ = key(tr("K keep"), "mark_keep", tr("Mark as a wish of the staff: keep (key K)"), true);
     rewire_ = key(tr("R rewire"), "mark_rewire", tr("Mark as a wish of the staff: rewire (key R)"), true);
     solar_ = key(tr("S solar"), "mark_solar", tr("Mark as a wish of the staff: solar (key S)"), true);
-    lock_ = key(tr("L lock"), "lock_choice", tr("Lock the mark, or else the choice of the plan (key L): decide follows it"), true);
+    lock_ = key(tr("L lock"), "lock_choice",
+                tr("Lock the mark, or else the choice of the plan (key L): decide follows it"), true);
     clear_ = key(tr("U clear"), "clear_marks", tr("Clear mark and lock (key U)"), false);
     for (QPushButton* button : {keep_, rewire_, solar_}) marks->addWidget(button);
     marks->addStretch(1);
     rows->addLayout(marks);
     auto* orders = new QHBoxLayout;
     orders->setSpacing(6);
-    year_lock_ = key(tr("lock year"), "lock_year", tr("A locked year stays where it is, in drags and in phase"), true);
+    year_lock_ =
+        key(tr("lock year"), "lock_year", tr("A locked year stays where it is, in drags and in phase"), true);
     for (QPushButton* button : {lock_, clear_, year_lock_}) orders->addWidget(button);
     orders->addStretch(1);
     rows->addLayout(orders);
@@ -123,18 +130,23 @@ void PoleCard::build_keys(QWidget* parent) {
 void PoleCard::refresh() {
     const std::size_t chosen = desk_.is_open() ? desk_.selection().size() : 0;
     pole_ = chosen == 1 ? desk_.selection().front() : PoleIx{};
-    for (QWidget* part : std::initializer_list<QWidget*>{options_, value_note_, refused_, why_head_, why_, every_number_, keys_, orders_, months_, sky_, numbers_, history_, all_history_, findings_})
+    for (QWidget* part : std::initializer_list<QWidget*>{options_, value_note_, refused_, why_head_, why_,
+                                                         every_number_, keys_, orders_, months_, sky_,
+                                                         numbers_, history_, all_history_, findings_})
         part->setVisible(false);
     if (chosen == 0) return show_none();
     const bool may_edit = !desk_.view().is_read_only && !desk_.is_running();
     keys_->setEnabled(may_edit);
-    if (chosen == 1) show_pole();
-    else show_several();
+    if (chosen == 1)
+        show_pole();
+    else
+        show_several();
 }
 
 void PoleCard::show_none() {
     name_->setText(tr("No pole chosen"));
-    place_->setText(tr("Click a pole on the map or a bead on the rail. Shift and drag draws an outline round several. The arrow keys walk along a string."));
+    place_->setText(tr("Click a pole on the map or a bead on the rail. Shift and drag draws an outline round "
+                       "several. The arrow keys walk along a string."));
     what_->setText({});
 }
 
@@ -147,7 +159,9 @@ void PoleCard::show_several() {
         ++kinds[choice_word(desk_.plan().poles[pole.place()].choice)];
     }
     name_->setText(count_text(long(desk_.selection().size()), tr("pole"), tr("poles")));
-    place_->setText(tr("%1 on series strings in the plan. K, R, S, L, U and the work year act on all of them, as one edit.").arg(count_text(lamps, tr("lamp"), tr("lamps"))));
+    place_->setText(tr("%1 on series strings in the plan. K, R, S, L, U and the work year act on all of "
+                       "them, as one edit.")
+                        .arg(count_text(lamps, tr("lamp"), tr("lamps"))));
     QStringList words;
     for (const auto& [kind, count] : kinds) words << QStringLiteral("%1 %2").arg(count).arg(kind);
     what_->setText(words.join(", "));
@@ -162,14 +176,19 @@ void PoleCard::show_several() {
 
 QString PoleCard::what_it_is(const Pole& pole) const {
     QStringList parts;
-    if (!pole.street.empty()) parts << to_q(pole.street) + (pole.side.empty() ? QString() : tr(", %1 side").arg(to_q(pole.side)));
+    if (!pole.street.empty())
+        parts << to_q(pole.street) + (pole.side.empty() ? QString() : tr(", %1 side").arg(to_q(pole.side)));
     if (!pole.ward.empty()) parts << tr("ward %1").arg(to_q(pole.ward));
     QString body = pole.pole_kind.empty() ? tr("pole kind not known") : to_q(pole.pole_kind);
     if (pole.mount_m) body += tr(" %1 m").arg(number_text(*pole.mount_m, 1));
     if (pole.arm_m) body += tr(", arm %1 m").arg(number_text(*pole.arm_m, 1));
     parts << body;
-    parts << (pole.fixture.empty() ? tr("lamp not known") : to_q(pole.fixture)) + (pole.lamp_w ? tr(" (%1 W)").arg(number_text(*pole.lamp_w)) : QString());
-    if (pole.feed != Feed::unknown) parts << to_q(text_of(pole.feed)) + (pole.feed == Feed::underground ? tr(", duct %1").arg(to_q(text_of(pole.duct))) : QString());
+    parts << (pole.fixture.empty() ? tr("lamp not known") : to_q(pole.fixture)) +
+                 (pole.lamp_w ? tr(" (%1 W)").arg(number_text(*pole.lamp_w)) : QString());
+    if (pole.feed != Feed::unknown)
+        parts << to_q(text_of(pole.feed)) + (pole.feed == Feed::underground
+                                                 ? tr(", duct %1").arg(to_q(text_of(pole.duct)))
+                                                 : QString());
     if (pole.need_lm) parts << tr("needs %1 lm").arg(number_text(*pole.need_lm));
     if (pole.critical) parts << tr("critical");
     if (!pole.attachments.empty()) parts << tr("carries %1").arg(to_q(pole.attachments));
@@ -193,9 +212,12 @@ void PoleCard::show_pole() {
     findings_->setVisible(!own.isEmpty());
     show_history();
     if (!is_candidate(view.city, pole)) {
-        why_->setText(pole.status != PoleStatus::standing ? tr("Status %1: it is shown and counted, and nothing is decided for it.").arg(to_q(text_of(pole.status)))
-                      : pole.set_aside                    ? tr("Set aside because of its findings: it is in no plan until they are mended.")
-                                                          : tr("Not on a series string: there is nothing to decide."));
+        why_->setText(pole.status != PoleStatus::standing
+                          ? tr("Status %1: it is shown and counted, and nothing is decided for it.")
+                                .arg(to_q(text_of(pole.status)))
+                      : pole.set_aside
+                          ? tr("Set aside because of its findings: it is in no plan until they are mended.")
+                          : tr("Not on a series string: there is nothing to decide."));
         why_->setVisible(true);
         return;
     }
@@ -203,13 +225,22 @@ void PoleCard::show_pole() {
     const PoleShade* shade = view.shade ? view.shade->find(pole_) : nullptr;
     options_->set_decision(decision, row.choice);
     options_->setVisible(true);
-    value_note_->setText(decision == nullptr ? tr("No costs yet: run decide.") : tr("Present value over %1 years at %2 %, work in %3, before phasing.").arg(view.plan.settings.horizon_years).arg(number_text(100 * view.plan.settings.rate, 1)).arg(view.plan.decide_year()));
+    value_note_->setText(decision == nullptr
+                             ? tr("No costs yet: run decide.")
+                             : tr("Present value over %1 years at %2 %, work in %3, before phasing.")
+                                   .arg(view.plan.settings.horizon_years)
+                                   .arg(number_text(100 * view.plan.settings.rate, 1))
+                                   .arg(view.plan.decide_year()));
     value_note_->setVisible(true);
-    why_head_->setText(row.choice == Choice::undecided ? tr("Not decided") : tr("Why %1").arg(choice_word(row.choice)));
+    why_head_->setText(row.choice == Choice::undecided ? tr("Not decided")
+                                                       : tr("Why %1").arg(choice_word(row.choice)));
     why_->setText(decision != nullptr ? to_q(decision->reason) : tr("Nothing is decided for this pole yet."));
     why_head_->setVisible(true), why_->setVisible(true);
     every_number_->setVisible(decision != nullptr);
-    const auto refused = view.decide ? std::find_if(view.decide->marks_refused.begin(), view.decide->marks_refused.end(), [this](const auto& r) { return r.pole == pole_; }) : std::vector<DecideResult::Refused>::const_iterator{};
+    const auto refused =
+        view.decide ? std::find_if(view.decide->marks_refused.begin(), view.decide->marks_refused.end(),
+                                   [this](const auto& r) { return r.pole == pole_; })
+                    : std::vector<DecideResult::Refused>::const_iterator{};
     const bool is_refused = view.decide && refused != view.decide->marks_refused.end();
     if (is_refused) refused_->setText(tr("Mark not followed: %1").arg(to_q(refused->reason)));
     refused_->setStyleSheet(QStringLiteral("color:%1").arg(desk_.look().trouble.name()));
@@ -239,7 +270,10 @@ void PoleCard::show_keys(const PolePlan& row) {
 
 QString PoleCard::orders_text(const PolePlan& row) const {
     QStringList words;
-    if (row.mark != Choice::undecided) words << tr("marked %1%2").arg(choice_word(row.mark), row.who.empty() ? QString() : tr(" by %1").arg(to_q(row.who)));
+    if (row.mark != Choice::undecided)
+        words << tr("marked %1%2")
+                     .arg(choice_word(row.mark),
+                          row.who.empty() ? QString() : tr(" by %1").arg(to_q(row.who)));
     if (row.lock != Choice::undecided) words << tr("locked to %1").arg(choice_word(row.lock));
     if (row.year_by == YearBy::hand) words << tr("year set by hand");
     if (row.year_locked) words << tr("year locked");
@@ -249,11 +283,13 @@ QString PoleCard::orders_text(const PolePlan& row) const {
 
 void PoleCard::show_solar(const PoleShade* shade) {
     if (shade == nullptr) return;
-    const HeadAnswer* best = shade->best >= 0 && std::size_t(shade->best) < shade->heads.size() ? &shade->heads[std::size_t(shade->best)] : nullptr;
+    const HeadAnswer* best = shade->best >= 0 && std::size_t(shade->best) < shade->heads.size()
+                                 ? &shade->heads[std::size_t(shade->best)]
+                                 : nullptr;
     months_->set_answer(best);
     months_->setVisible(best != nullptr);
     sky_->set_pole(pole_);
     sky_->setVisible(!shade->canopy_deg.empty() || !shade->solid_deg.empty());
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -1,6 +1,6 @@
 #pragma once
-// The card of a pole: what it is, the three options with cost and what stops each, a year of energy, the sky, the reason,
-// marks and locks, and its history.
+// The card of a pole: what it is, the three options with cost and what stops each, a year of energy, the sky,
+// the reason, marks and locks, and its history.
 
 #include <QLabel>
 #include <QPushButton>
@@ -17,15 +17,15 @@ namespace unstring {
 
 class PoleCard : public QScrollArea {
     Q_OBJECT
-  public:
+public:
     explicit PoleCard(Desk& desk, QWidget* parent = nullptr);
     [[nodiscard]] PoleIx pole() const { return pole_; }
 
-  Q_SIGNALS:
+Q_SIGNALS:
     void every_number_wanted(unstring::PoleIx pole);
     void all_history_wanted();
 
-  private:
+private:
     QLabel* label(double size, Weight weight, const char* name);
     void build_keys(QWidget* parent);
     void refresh();
@@ -41,13 +41,15 @@ class PoleCard : public QScrollArea {
 
     Desk& desk_;
     PoleIx pole_;
-    QLabel *name_, *place_, *what_, *value_note_, *why_, *why_head_, *refused_, *numbers_, *orders_, *history_, *findings_;
+    QLabel *name_, *place_, *what_, *value_note_, *why_, *why_head_, *refused_, *numbers_, *orders_,
+        *history_, *findings_;
     OptionColumns* options_;
     MonthChart* months_;
     SkyPlot* sky_;
     QWidget* keys_;
-    QPushButton *keep_, *rewire_, *solar_, *lock_, *clear_, *year_lock_, *every_number_, *all_history_, *earlier_, *later_;
+    QPushButton *keep_, *rewire_, *solar_, *lock_, *clear_, *year_lock_, *every_number_, *all_history_,
+        *earlier_, *later_;
     QSpinBox* year_;
 };
 
-}  // namespace unstring
+} // namespace unstring

@@ -1,5 +1,6 @@
 #pragma once
-// The sky above a pole as a round plot: what stands up as height round the compass, and the sun's way on three dates.
+// The sky above a pole as a round plot: what stands up as height round the compass, and the sun's way on
+// three dates.
 
 #include <QWidget>
 
@@ -10,7 +11,7 @@
 namespace unstring {
 
 struct SkyPoint {
-    double bearing_deg = 0;    ///< clockwise from true north
+    double bearing_deg = 0; ///< clockwise from true north
     double elevation_deg = 0;
 };
 /// The sun's way over a day, a point every 10 minutes while it is up; no refraction.
@@ -22,19 +23,20 @@ struct SkyPoint {
 
 class SkyPlot : public QWidget {
     Q_OBJECT
-  public:
+public:
     explicit SkyPlot(Desk& desk, QWidget* parent = nullptr);
     void set_pole(PoleIx pole);
     [[nodiscard]] bool hasHeightForWidth() const override { return true; }
     [[nodiscard]] int heightForWidth(int) const override { return 236; }
     [[nodiscard]] QSize sizeHint() const override { return {340, 236}; }
 
-  protected:
+protected:
     void paintEvent(QPaintEvent* event) override;
 
-  private:
+private:
     [[nodiscard]] QPointF on_plot(double grid_bearing_deg, double elevation_deg) const;
-    void paint_skyline(QPainter& painter, const std::vector<float>& heights_deg, const QBrush& brush, const QColor& edge);
+    void paint_skyline(QPainter& painter, const std::vector<float>& heights_deg, const QBrush& brush,
+                       const QColor& edge);
     void paint_sun(QPainter& painter, const PoleShade& shade);
     void paint_key(QPainter& painter, const PoleShade& shade);
 
@@ -44,4 +46,4 @@ class SkyPlot : public QWidget {
     double radius_ = 92;
 };
 
-}  // namespace unstring
+} // namespace unstring

@@ -13,10 +13,11 @@ namespace {
 QString unit_text(const City& city, TransformerIx unit) {
     if (!unit.is_valid()) return QObject::tr("none");
     const Transformer& record = city.transformers[unit.place()];
-    return QObject::tr("%1, %2 kW").arg(to_q(record.id), number_text(record.rated_kw, record.rated_kw < 10 ? 1 : 0));
+    return QObject::tr("%1, %2 kW")
+        .arg(to_q(record.id), number_text(record.rated_kw, record.rated_kw < 10 ? 1 : 0));
 }
 
-}  // namespace
+} // namespace
 
 StringCard::StringCard(Desk& desk, QWidget* parent) : QWidget(parent), desk_(desk) {
     setObjectName("string_card");
@@ -38,7 +39,8 @@ StringCard::StringCard(Desk& desk, QWidget* parent) : QWidget(parent), desk_(des
     states_ = new QTableWidget(0, 7, this);
     states_->setObjectName("string_states");
     states_->setAccessibleName(tr("State of the string at the end of each year"));
-    states_->setHorizontalHeaderLabels({tr("year"), tr("lamps"), tr("kV"), tr("kVA"), tr("cable m"), tr("transformer"), tr("load")});
+    states_->setHorizontalHeaderLabels(
+        {tr("year"), tr("lamps"), tr("kV"), tr("kVA"), tr("cable m"), tr("transformer"), tr("load")});
     states_->verticalHeader()->hide();
     states_->setShowGrid(false);
     states_->setEditTriggers(QAbstractItemView::NoEditTriggers);
@@ -52,8 +54,11 @@ StringCard::StringCard(Desk& desk, QWidget* parent) : QWidget(parent), desk_(des
     states_->horizontalHeader()->setFont(text_font(11));
     column->addWidget(states_, 1);
     moves_ = label(12, Weight::normal, "string_moves");
-    connect(states_, &QTableWidget::cellClicked, this, [this](int row, int) { desk_.set_year(states_->item(row, 0)->data(Qt::UserRole).toInt()); });
-    for (const auto signal : {&Desk::view_changed, &Desk::selection_changed, &Desk::look_changed, &Desk::preview_changed, &Desk::year_changed}) connect(&desk_, signal, this, &StringCard::refresh);
+    connect(states_, &QTableWidget::cellClicked, this,
+            [this](int row, int) { desk_.set_year(states_->item(row, 0)->data(Qt::UserRole).toInt()); });
+    for (const auto signal : {&Desk::view_changed, &Desk::selection_changed, &Desk::look_changed,
+                              &Desk::preview_changed, &Desk::year_changed})
+        connect(&desk_, signal, this, &StringCard::refresh);
     refresh();
 }
 
@@ -69,7 +74,8 @@ void StringCard::refresh() {
     name_->setText(tr("String %1").arg(to_q(desk_.view().city.strings[string.place()].id)));
     record_->setText(record_text(string));
     const StringYear* state = string_year(desk_.phase(), string, desk_.year());
-    sentence_->setText(state != nullptr ? string_sentence(desk_.view(), *state) : tr("No state yet: run vet, then phase."));
+    sentence_->setText(state != nullptr ? string_sentence(desk_.view(), *state)
+                                        : tr("No state yet: run vet, then phase."));
     fill_states(string);
     moves_->setText(unit_moves(string));
 }
@@ -79,14 +85,23 @@ QString StringCard::record_text(StringIx string) const {
     const StringLoop& loop = desk_.scene().loops[string.place()];
     QStringList parts;
     parts << count_text(long(loop.lamps.size()), tr("lamp"), tr("lamps"));
-    parts << (record.current_a ? tr("%1 A").arg(number_text(*record.current_a, 1)) : tr("current not known, 6.6 A taken"));
+    parts << (record.current_a ? tr("%1 A").arg(number_text(*record.current_a, 1))
+                               : tr("current not known, 6.6 A taken"));
     if (record.cable_awg) parts << tr("cable %1 AWG").arg(*record.cable_awg);
     if (record.cable_kv) parts << tr("%1 kV class").arg(number_text(*record.cable_kv, 1));
-    parts << (loop.order_from == OrderFrom::given ? tr("wiring order given") : tr("wiring order %1, %2 sure").arg(to_q(text_of(loop.order_from)), percent_text(loop.order_confidence_frac)));
-    const long confirmed = std::count_if(loop.cutbacks.begin(), loop.cutbacks.end(), [](const LoopCutBack& cut) { return cut.confirmed; });
-    parts << tr("%1, %2 confirmed").arg(count_text(long(loop.cutbacks.size()), tr("cut-back"), tr("cut-backs"))).arg(confirmed);
+    parts << (loop.order_from == OrderFrom::given
+                  ? tr("wiring order given")
+                  : tr("wiring order %1, %2 sure")
+                        .arg(to_q(text_of(loop.order_from)), percent_text(loop.order_confidence_frac)));
+    const long confirmed = std::count_if(loop.cutbacks.begin(), loop.cutbacks.end(),
+                                         [](const LoopCutBack& cut) { return cut.confirmed; });
+    parts << tr("%1, %2 confirmed")
+                 .arg(count_text(long(loop.cutbacks.size()), tr("cut-back"), tr("cut-backs")))
+                 .arg(confirmed);
     if (!record.control_from.empty()) parts << tr("switched by %1").arg(to_q(record.control_from));
-    if (record.asfound_v) parts << tr("measured %1 kV %2").arg(number_text(*record.asfound_v / 1000, 2), to_q(record.asfound_date));
+    if (record.asfound_v)
+        parts << tr("measured %1 kV %2")
+                     .arg(number_text(*record.asfound_v / 1000, 2), to_q(record.asfound_date));
     return parts.join(QStringLiteral(" \u00b7 "));
 }
 
@@ -100,12 +115,20 @@ void StringCard::fill_states(StringIx string) {
         states_->insertRow(row);
         const bool is_bad = state.lamps > 0 && is_trouble(state.verdict);
         const bool is_today = state.year < desk_.plan().settings.first_year;
-        const QStringList cells{is_today ? tr("today") : QString::number(state.year), QString::number(state.lamps), number_text(state.volts / 1000, 2), number_text(state.load_kva, 1), number_text(state.cable_m),
-                                state.lamps == 0 ? QStringLiteral("\u2013") : unit_text(desk_.view().city, state.transformer),
-                                state.lamps == 0 ? verdict_word(Verdict::none) : tr("%1, %2").arg(percent_text(state.loading_frac), verdict_word(state.verdict))};
+        const QStringList cells{
+            is_today ? tr("today") : QString::number(state.year),
+            QString::number(state.lamps),
+            number_text(state.volts / 1000, 2),
+            number_text(state.load_kva, 1),
+            number_text(state.cable_m),
+            state.lamps == 0 ? QStringLiteral("\u2013") : unit_text(desk_.view().city, state.transformer),
+            state.lamps == 0
+                ? verdict_word(Verdict::none)
+                : tr("%1, %2").arg(percent_text(state.loading_frac), verdict_word(state.verdict))};
         for (int column = 0; column < cells.size(); ++column) {
             auto* item = new QTableWidgetItem(cells[column]);
-            item->setTextAlignment((column >= 1 && column <= 4 ? Qt::AlignRight : Qt::AlignLeft) | Qt::AlignVCenter);
+            item->setTextAlignment((column >= 1 && column <= 4 ? Qt::AlignRight : Qt::AlignLeft) |
+                                   Qt::AlignVCenter);
             item->setData(Qt::UserRole, state.year);
             item->setToolTip(string_sentence(desk_.view(), state));
             if (is_bad) item->setForeground(look.trouble), item->setFont(text_font(12, Weight::bold));
@@ -121,8 +144,14 @@ QString StringCard::unit_moves(StringIx string) const {
     const std::string& id = desk_.view().city.strings[string.place()].id;
     QStringList lines;
     for (const UnitMove& move : desk_.phase()->moves)
-        if (move.from == id || move.to == id) lines << tr("%1: transformer %2 from %3 to %4").arg(move.year).arg(move.transformer.is_valid() ? to_q(desk_.view().city.transformers[move.transformer.place()].id) : tr("new"), to_q(move.from), to_q(move.to));
+        if (move.from == id || move.to == id)
+            lines << tr("%1: transformer %2 from %3 to %4")
+                         .arg(move.year)
+                         .arg(move.transformer.is_valid()
+                                  ? to_q(desk_.view().city.transformers[move.transformer.place()].id)
+                                  : tr("new"),
+                              to_q(move.from), to_q(move.to));
     return lines.join('\n');
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -11,10 +11,10 @@ namespace unstring {
 
 class StringCard : public QWidget {
     Q_OBJECT
-  public:
+public:
     explicit StringCard(Desk& desk, QWidget* parent = nullptr);
 
-  private:
+private:
     void refresh();
     void fill_states(StringIx string);
     [[nodiscard]] QString record_text(StringIx string) const;
@@ -25,4 +25,4 @@ class StringCard : public QWidget {
     QTableWidget* states_;
 };
 
-}  // namespace unstring
+} // namespace unstring

@@ -26,4 +26,4 @@ struct YearColumns {
     return {widget_width - 12 - width * count, width, settings.first_year, count};
 }
 
-}  // namespace unstring
+} // namespace unstring

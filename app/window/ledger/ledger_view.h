@@ -1,6 +1,6 @@
 #pragma once
-// The ledger of years, on the columns of the rail, and at its left the reading: what the chosen string is doing, or what
-// the boundary under the hand changes.
+// The ledger of years, on the columns of the rail, and at its left the reading: what the chosen string is
+// doing, or what the boundary under the hand changes.
 
 #include <QWidget>
 
@@ -13,17 +13,18 @@ namespace unstring {
 
 /// One cell: what it says, how far its bar goes, whether it is over its limit.
 struct LedgerCell {
-    QString number, of;       ///< "241", " of 265"
-    double used_frac = -1;    ///< of the limit; < 0 = no limit, no bar
-    bool is_over = false;     ///< then `number` is in words: "12 h over"
+    QString number, of;    ///< "241", " of 265"
+    double used_frac = -1; ///< of the limit; < 0 = no limit, no bar
+    bool is_over = false;  ///< then `number` is in words: "12 h over"
     QString tip;
 };
 struct LedgerRow {
     QString label;
-    std::vector<LedgerCell> cells;  ///< one per year
+    std::vector<LedgerCell> cells; ///< one per year
 };
 /// The rows of the ledger for phase's answer; empty cells where it has no such year.
-[[nodiscard]] std::vector<LedgerRow> ledger_rows(const ProjectView& view, const PhaseResult* phase, const YearColumns& columns);
+[[nodiscard]] std::vector<LedgerRow> ledger_rows(const ProjectView& view, const PhaseResult* phase,
+                                                 const YearColumns& columns);
 
 /// One line of the reading while a boundary is held.
 struct ReadingRow {
@@ -31,21 +32,22 @@ struct ReadingRow {
     bool is_trouble = false;
 };
 /// What differs between two answers of phase: money and hours by year, the string's state; trouble first.
-[[nodiscard]] std::vector<ReadingRow> reading_rows(const ProjectView& view, const PhaseResult& was, const PhaseResult& now, StringIx string);
+[[nodiscard]] std::vector<ReadingRow> reading_rows(const ProjectView& view, const PhaseResult& was,
+                                                   const PhaseResult& now, StringIx string);
 
 class LedgerView : public QWidget {
     Q_OBJECT
-  public:
+public:
     explicit LedgerView(Desk& desk, QWidget* parent = nullptr);
     void set_heading(const QString& heading);
     [[nodiscard]] QSize sizeHint() const override { return {900, 182}; }
 
-  protected:
+protected:
     void paintEvent(QPaintEvent* event) override;
     void mousePressEvent(QMouseEvent* event) override;
     bool event(QEvent* event) override;
 
-  private:
+private:
     void paint_columns(QPainter& painter);
     void paint_cell(QPainter& painter, const LedgerCell& cell, double x, double y);
     void paint_reading(QPainter& painter, const QRectF& box);
@@ -55,7 +57,7 @@ class LedgerView : public QWidget {
 
     Desk& desk_;
     YearColumns columns_;
-    QString heading_;  ///< of the drag
+    QString heading_; ///< of the drag
 };
 
-}  // namespace unstring
+} // namespace unstring

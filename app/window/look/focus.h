@@ -6,7 +6,8 @@
 namespace unstring {
 
 [[nodiscard]] inline bool is_by_keys(const QFocusEvent& event) {
-    return event.reason() == Qt::TabFocusReason || event.reason() == Qt::BacktabFocusReason || event.reason() == Qt::ShortcutFocusReason;
+    return event.reason() == Qt::TabFocusReason || event.reason() == Qt::BacktabFocusReason ||
+           event.reason() == Qt::ShortcutFocusReason;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -14,7 +14,7 @@ struct Look {
     QColor sheet, raise, ink, ink2, ink3, hair, hair2;
     QColor rewire, solar, hand, trouble, dead, other, band, band_ink, short_bar, sun_path, shadow, year_edge;
     QColor street, block, block_edge, building, park, canopy;
-    std::array<QColor, 8> year_tones;  ///< first year strongest against the sheet
+    std::array<QColor, 8> year_tones; ///< first year strongest against the sheet
 };
 
 [[nodiscard]] const Look& day_look();
@@ -37,4 +37,4 @@ enum class Weight { normal, strong, bold };
 /// The style sheet of the standard widgets (buttons, lists, fields) on this look.
 [[nodiscard]] QString style_sheet(const Look& look);
 
-}  // namespace unstring
+} // namespace unstring

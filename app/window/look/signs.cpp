@@ -24,26 +24,35 @@ QPainterPath cross(double r) {
     return path;
 }
 
-}  // namespace
+} // namespace
 
 PoleSign sign_of(Choice choice) {
     switch (choice) {
-    case Choice::keep: return PoleSign::keep;
-    case Choice::rewire: return PoleSign::rewire;
-    case Choice::solar: return PoleSign::solar;
-    case Choice::undecided: break;
+    case Choice::keep:
+        return PoleSign::keep;
+    case Choice::rewire:
+        return PoleSign::rewire;
+    case Choice::solar:
+        return PoleSign::solar;
+    case Choice::undecided:
+        break;
     }
     return PoleSign::undecided;
 }
 
 QColor sign_color(const Look& look, PoleSign sign) {
     switch (sign) {
-    case PoleSign::rewire: return look.rewire;
-    case PoleSign::solar: return look.solar;
+    case PoleSign::rewire:
+        return look.rewire;
+    case PoleSign::solar:
+        return look.solar;
     case PoleSign::parallel:
-    case PoleSign::out_of_plan: return look.other;
-    case PoleSign::undecided: return look.ink3;
-    case PoleSign::keep: break;
+    case PoleSign::out_of_plan:
+        return look.other;
+    case PoleSign::undecided:
+        return look.ink3;
+    case PoleSign::keep:
+        break;
     }
     return look.ink;
 }
@@ -51,18 +60,26 @@ QColor sign_color(const Look& look, PoleSign sign) {
 QPainterPath sign_path(PoleSign sign, double r, bool on_bead) {
     QPainterPath path;
     switch (sign) {
-    case PoleSign::rewire: path.addRect(QRectF(-0.86 * r, -0.86 * r, 1.72 * r, 1.72 * r)); return path;
-    case PoleSign::solar: return on_bead ? notched_disc(r, 27, 0.34 * r) : notched_disc(r, 32, 0.95 * r);
-    case PoleSign::out_of_plan: return cross(r * 0.6);
-    case PoleSign::parallel: path.addEllipse(QPointF(), 1.7, 1.7); return path;
+    case PoleSign::rewire:
+        path.addRect(QRectF(-0.86 * r, -0.86 * r, 1.72 * r, 1.72 * r));
+        return path;
+    case PoleSign::solar:
+        return on_bead ? notched_disc(r, 27, 0.34 * r) : notched_disc(r, 32, 0.95 * r);
+    case PoleSign::out_of_plan:
+        return cross(r * 0.6);
+    case PoleSign::parallel:
+        path.addEllipse(QPointF(), 1.7, 1.7);
+        return path;
     case PoleSign::keep:
-    case PoleSign::undecided: break;
+    case PoleSign::undecided:
+        break;
     }
     path.addEllipse(QPointF(), r - 1, r - 1);
     return path;
 }
 
-void draw_pole_sign(QPainter& painter, const Look& look, PoleSign sign, bool is_done, QPointF at, double r, bool with_halo) {
+void draw_pole_sign(QPainter& painter, const Look& look, PoleSign sign, bool is_done, QPointF at, double r,
+                    bool with_halo) {
     const QPainterPath path = sign_path(sign, r);
     const QColor color = sign_color(look, sign);
     painter.save();
@@ -96,7 +113,8 @@ void draw_transformer(QPainter& painter, const QColor& ink, const QColor& ground
     painter.drawEllipse(at + QPointF(offset, 0), r, r);
 }
 
-void draw_cutback(QPainter& painter, const QColor& ink, const QColor& ground, QPointF at, double half, bool confirmed) {
+void draw_cutback(QPainter& painter, const QColor& ink, const QColor& ground, QPointF at, double half,
+                  bool confirmed) {
     QPainterPath path;
     path.moveTo(at + QPointF(0, -half)), path.lineTo(at + QPointF(half, 0));
     path.lineTo(at + QPointF(0, half)), path.lineTo(at + QPointF(-half, 0));
@@ -118,20 +136,21 @@ void draw_service(QPainter& painter, const Look& look, ServiceKind kind, QPointF
         painter.drawLine(at + QPointF(-r, 0), at + QPointF(r, 0));
         return;
     }
-    QPainterPath path;  // a triangle standing on its base: a lead that comes down
+    QPainterPath path; // a triangle standing on its base: a lead that comes down
     path.moveTo(at + QPointF(0, -r)), path.lineTo(at + QPointF(r, r)), path.lineTo(at + QPointF(-r, r));
     path.closeSubpath();
     painter.drawPath(path);
 }
 
-void draw_tag(QPainter& painter, const Look& look, QPointF at, const QString& text, const QColor& border, const QRectF& inside,
-              TagSide side) {
+void draw_tag(QPainter& painter, const Look& look, QPointF at, const QString& text, const QColor& border,
+              const QRectF& inside, TagSide side) {
     const QFont font = text_font(12.5, Weight::strong);
     const QFontMetricsF metrics(font);
     const QStringList lines = text.split('\n');
     double width = 0;
     for (const QString& line : lines) width = std::max(width, metrics.horizontalAdvance(line));
-    QRectF box(at.x() + 14, at.y() - 14 - 16.0 * double(lines.size()) - 10, width + 24, 16.0 * double(lines.size()) + 12);
+    QRectF box(at.x() + 14, at.y() - 14 - 16.0 * double(lines.size()) - 10, width + 24,
+               16.0 * double(lines.size()) + 12);
     if (side == TagSide::left) box.moveTo(at.x() - box.width() - 12, at.y() - box.height() / 2);
     const bool has_leader = side == TagSide::left && box.left() >= inside.left() + 4;
     if (side == TagSide::left && !has_leader) box.moveTop(at.y() + 24);
@@ -158,4 +177,4 @@ void draw_tag(QPainter& painter, const Look& look, QPointF at, const QString& te
     painter.restore();
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -20,9 +20,11 @@ void Camera::zoom(double factor, QPointF at) {
 void Camera::fit(const MapBounds& bounds, double margin_px) {
     if (bounds.is_empty) return;
     centre = {(bounds.west_m + bounds.east_m) / 2, (bounds.south_m + bounds.north_m) / 2};
-    const double wide = std::max(1.0, size.width() - 2 * margin_px), high = std::max(1.0, size.height() - 2 * margin_px);
-    m_per_px = std::clamp(std::max((bounds.east_m - bounds.west_m) / wide, (bounds.north_m - bounds.south_m) / high), 0.15,
-                          kFarthest_m_per_px);
+    const double wide = std::max(1.0, size.width() - 2 * margin_px),
+                 high = std::max(1.0, size.height() - 2 * margin_px);
+    m_per_px =
+        std::clamp(std::max((bounds.east_m - bounds.west_m) / wide, (bounds.north_m - bounds.south_m) / high),
+                   0.15, kFarthest_m_per_px);
 }
 
-}  // namespace unstring
+} // namespace unstring

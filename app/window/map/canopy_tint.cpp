@@ -8,8 +8,8 @@
 namespace unstring {
 namespace {
 
-constexpr double kCrown_m = 2.0;      // lower growth shades no panel
-constexpr double kMargin_m = 60.0;    // the reach of a pole's horizon
+constexpr double kCrown_m = 2.0;   // lower growth shades no panel
+constexpr double kMargin_m = 60.0; // the reach of a pole's horizon
 constexpr int kMostCells = 3000;
 constexpr double kTileReach_m = 128.0;
 
@@ -22,27 +22,32 @@ void paint_window(const HeightWindow& window, CanopyTint& tint) {
         uchar* bytes = tint.cover.scanLine(line);
         for (std::size_t c = 0; c < window.columns; ++c) {
             if (!(window.height_m[r * window.columns + c] > float(kCrown_m))) continue;
-            const int column = int(std::floor((window.west_m + (double(c) + 0.5) * window.cell_m - tint.west_m) / tint.cell_m));
+            const int column = int(
+                std::floor((window.west_m + (double(c) + 0.5) * window.cell_m - tint.west_m) / tint.cell_m));
             if (column >= 0 && column < tint.cover.width()) bytes[column] = 255;
         }
     }
 }
 
-}  // namespace
+} // namespace
 
-CanopyTint read_canopy_tint(const std::string& raster, const MapBounds& bounds, const std::atomic<bool>& cancel) {
+CanopyTint read_canopy_tint(const std::string& raster, const MapBounds& bounds,
+                            const std::atomic<bool>& cancel) {
     if (raster.empty() || bounds.is_empty) return {};
     auto source = open_height_raster(raster);
     if (!source) return {};
-    const double wide_m = bounds.east_m - bounds.west_m + 2 * kMargin_m, high_m = bounds.north_m - bounds.south_m + 2 * kMargin_m;
+    const double wide_m = bounds.east_m - bounds.west_m + 2 * kMargin_m,
+                 high_m = bounds.north_m - bounds.south_m + 2 * kMargin_m;
     CanopyTint tint;
     tint.west_m = bounds.west_m - kMargin_m;
     tint.north_m = bounds.north_m + kMargin_m;
     tint.cell_m = std::max({(*source)->cell_m(), 0.5, std::max(wide_m, high_m) / kMostCells});
     tint.cover = QImage(int(wide_m / tint.cell_m) + 1, int(high_m / tint.cell_m) + 1, QImage::Format_Alpha8);
     tint.cover.fill(0);
-    for (double y_m = tint.north_m - kTileReach_m; y_m > tint.north_m - high_m - kTileReach_m; y_m -= 2 * kTileReach_m) {
-        for (double x_m = tint.west_m + kTileReach_m; x_m < tint.west_m + wide_m + kTileReach_m; x_m += 2 * kTileReach_m) {
+    for (double y_m = tint.north_m - kTileReach_m; y_m > tint.north_m - high_m - kTileReach_m;
+         y_m -= 2 * kTileReach_m) {
+        for (double x_m = tint.west_m + kTileReach_m; x_m < tint.west_m + wide_m + kTileReach_m;
+             x_m += 2 * kTileReach_m) {
             if (cancel.load(std::memory_order_relaxed)) return {};
             const auto window = (*source)->window({x_m, y_m}, kTileReach_m);
             if (!window) return {};
@@ -52,4 +57,4 @@ CanopyTint read_canopy_tint(const std::string& raster, const MapBounds& bounds, 
     return tint;
 }
 
-}  // namespace unstring
+} // namespace unstring

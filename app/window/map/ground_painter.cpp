@@ -24,19 +24,22 @@ bool is_in_view(const QPolygonF& points, const QRectF& view) {
     return view.intersects(points.boundingRect().adjusted(-0.5, -0.5, 0.5, 0.5));
 }
 
-void paint_streets(QPainter& painter, const Look& look, const Camera& camera, const City& city, const QRectF& view) {
+void paint_streets(QPainter& painter, const Look& look, const Camera& camera, const City& city,
+                   const QRectF& view) {
     for (const Street& street : city.streets) {
         const bool is_main = street.road_class == "arterial" || street.road_class == "collector";
         if (camera.m_per_px > 8 && !is_main) continue;
         const QPolygonF points = on_screen(street.line, camera);
         if (!is_in_view(points, view)) continue;
-        const double width = std::max(street.width_m.value_or(is_main ? 14.0 : 10.0) / camera.m_per_px, camera.m_per_px > 4 ? 1.2 : 2.0);
+        const double width = std::max(street.width_m.value_or(is_main ? 14.0 : 10.0) / camera.m_per_px,
+                                      camera.m_per_px > 4 ? 1.2 : 2.0);
         painter.setPen(QPen(look.street, width, Qt::SolidLine, Qt::RoundCap, Qt::RoundJoin));
         painter.drawPolyline(points);
     }
 }
 
-void paint_areas(QPainter& painter, const Look& look, const Camera& camera, const City& city, const QRectF& view) {
+void paint_areas(QPainter& painter, const Look& look, const Camera& camera, const City& city,
+                 const QRectF& view) {
     if (camera.m_per_px <= 3) {
         painter.setPen(QPen(look.block_edge, 0.8));
         painter.setBrush(look.building);
@@ -46,7 +49,7 @@ void paint_areas(QPainter& painter, const Look& look, const Camera& camera, cons
         }
     }
     if (camera.m_per_px > 8) return;
-    QPainterPath crowns;  // one path, so that crowns that overlap are no darker
+    QPainterPath crowns; // one path, so that crowns that overlap are no darker
     crowns.setFillRule(Qt::WindingFill);
     for (const CanopyArea& crown : city.canopy) {
         const QPolygonF points = on_screen(crown.ring, camera);
@@ -71,14 +74,16 @@ void paint_tint(QPainter& painter, const Look& look, const Camera& camera, const
     mask.setCompositionMode(QPainter::CompositionMode_DestinationIn);
     mask.drawImage(0, 0, part);
     mask.end();
-    const QPointF corner = camera.to_screen({tint.west_m + left * tint.cell_m, tint.north_m - top * tint.cell_m});
+    const QPointF corner =
+        camera.to_screen({tint.west_m + left * tint.cell_m, tint.north_m - top * tint.cell_m});
     const double scale = tint.cell_m / camera.m_per_px;
     painter.setRenderHint(QPainter::SmoothPixmapTransform);
     painter.drawImage(QRectF(corner, QSizeF(coloured.width() * scale, coloured.height() * scale)), coloured);
 }
 
 // A name stands once, on the longest straight piece in view that can hold it.
-void paint_street_names(QPainter& painter, const Look& look, const Camera& camera, const City& city, const QRectF& view) {
+void paint_street_names(QPainter& painter, const Look& look, const Camera& camera, const City& city,
+                        const QRectF& view) {
     if (camera.m_per_px > 2) return;
     const QFont font = text_font(10.5);
     const QFontMetricsF metrics(font);
@@ -93,8 +98,10 @@ void paint_street_names(QPainter& painter, const Look& look, const Camera& camer
             const QPointF a = camera.to_screen(street.line[i - 1]), b = camera.to_screen(street.line[i]);
             const QPointF middle = (a + b) / 2;
             const QRectF box(middle - QPointF(width / 2, width / 2), QSizeF(width, width));
-            const bool is_free = std::none_of(taken.begin(), taken.end(), [&box](const QRectF& other) { return other.intersects(box); });
-            if (std::hypot(b.x() - a.x(), b.y() - a.y()) < width + 30 || !view.contains(box) || !is_free) continue;
+            const bool is_free = std::none_of(taken.begin(), taken.end(),
+                                              [&box](const QRectF& other) { return other.intersects(box); });
+            if (std::hypot(b.x() - a.x(), b.y() - a.y()) < width + 30 || !view.contains(box) || !is_free)
+                continue;
             double angle = std::atan2(b.y() - a.y(), b.x() - a.x()) / kRadPerDeg;
             if (angle > 90) angle -= 180;
             if (angle <= -90) angle += 180;
@@ -113,7 +120,7 @@ void paint_street_names(QPainter& painter, const Look& look, const Camera& camer
     }
 }
 
-}  // namespace
+} // namespace
 
 void paint_ground(QPainter& painter, const Desk& desk, const Camera& camera, const CanopyTint& tint) {
     const Look& look = desk.look();
@@ -135,14 +142,16 @@ void paint_scale(QPainter& painter, const Look& look, const Camera& camera) {
     const QPointF from(18, camera.size.height() - 14);
     const QFont font = text_font(11);
     const QFontMetricsF metrics(font);
-    const QString end = step_m < 1000 ? QObject::tr("%1 m").arg(step_m) : QObject::tr("%1 km").arg(step_m / 1000);
+    const QString end =
+        step_m < 1000 ? QObject::tr("%1 m").arg(step_m) : QObject::tr("%1 km").arg(step_m / 1000);
     QColor ground = look.sheet;
     ground.setAlpha(215);
     painter.fillRect(QRectF(8, from.y() - 26, length + metrics.horizontalAdvance(end) + 46, 36), ground);
     painter.setPen(QPen(look.ink, 1.4));
     painter.setFont(font);
     painter.drawLine(from, from + QPointF(length, 0));
-    for (const double part : {0.0, 0.5, 1.0}) painter.drawLine(from + QPointF(length * part, 0), from + QPointF(length * part, -5));
+    for (const double part : {0.0, 0.5, 1.0})
+        painter.drawLine(from + QPointF(length * part, 0), from + QPointF(length * part, -5));
     painter.drawText(from + QPointF(-4, -9), QStringLiteral("0"));
     painter.drawText(from + QPointF(length - 8, -9), end);
     const QPointF north = from + QPointF(length + metrics.horizontalAdvance(end) + 8, -2);
@@ -154,4 +163,4 @@ void paint_scale(QPainter& painter, const Look& look, const Camera& camera) {
     painter.drawText(north + QPointF(8, 0), QObject::tr("N"));
 }
 
-}  // namespace unstring
+} // namespace unstring

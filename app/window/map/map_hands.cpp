@@ -29,7 +29,7 @@ QPolygonF meant_outline(const QPolygonF& drawn) {
     return is_line ? QPolygonF(box) : drawn;
 }
 
-}  // namespace
+} // namespace
 
 void MapView::wheelEvent(QWheelEvent* event) {
     if (!desk_.is_open()) return;
@@ -50,7 +50,8 @@ void MapView::mousePressEvent(QMouseEvent* event) {
 void MapView::mouseMoveEvent(QMouseEvent* event) {
     if (!desk_.is_open()) return;
     pointer_ = event->position();
-    if (hand_ == Hand::pressed && std::hypot(pointer_.x() - press_.x(), pointer_.y() - press_.y()) >= kDragStarts_px) {
+    if (hand_ == Hand::pressed &&
+        std::hypot(pointer_.x() - press_.x(), pointer_.y() - press_.y()) >= kDragStarts_px) {
         hand_ = Hand::panning;
         setCursor(Qt::ClosedHandCursor);
     }
@@ -70,8 +71,10 @@ void MapView::mouseReleaseEvent(QMouseEvent* event) {
     if (was == Hand::outlining) {
         outline_ << event->position();
         const QRectF box = outline_.boundingRect();
-        if (std::max(box.width(), box.height()) < kDragStarts_px) click(event->position(), event->modifiers());
-        else select_outline();
+        if (std::max(box.width(), box.height()) < kDragStarts_px)
+            click(event->position(), event->modifiers());
+        else
+            select_outline();
         outline_.clear();
     }
     update();
@@ -80,7 +83,8 @@ void MapView::mouseReleaseEvent(QMouseEvent* event) {
 void MapView::click(QPointF at, Qt::KeyboardModifiers modifiers) {
     const PoleIx pole = pole_at(at);
     if (!pole.is_valid()) {
-        if (!modifiers.testFlag(Qt::ShiftModifier) && !modifiers.testFlag(Qt::ControlModifier)) desk_.select({});
+        if (!modifiers.testFlag(Qt::ShiftModifier) && !modifiers.testFlag(Qt::ControlModifier))
+            desk_.select({});
         return;
     }
     if (!modifiers.testFlag(Qt::ShiftModifier) && !modifiers.testFlag(Qt::ControlModifier)) {
@@ -88,8 +92,10 @@ void MapView::click(QPointF at, Qt::KeyboardModifiers modifiers) {
         return;
     }
     std::vector<PoleIx> chosen = desk_.selection();
-    if (desk_.is_selected(pole)) std::erase(chosen, pole);
-    else chosen.push_back(pole);
+    if (desk_.is_selected(pole))
+        std::erase(chosen, pole);
+    else
+        chosen.push_back(pole);
     desk_.select(std::move(chosen));
 }
 
@@ -99,7 +105,8 @@ void MapView::select_outline() {
     const MapPoint low = camera_.to_map(box.bottomLeft()), high = camera_.to_map(box.topRight());
     std::vector<PoleIx> chosen;
     desk_.scene().grid.in_rectangle(low, high, [&](const PickGrid::Place& place) {
-        if (outline.containsPoint(camera_.to_screen(place.at), Qt::OddEvenFill)) chosen.emplace_back(place.record);
+        if (outline.containsPoint(camera_.to_screen(place.at), Qt::OddEvenFill))
+            chosen.emplace_back(place.record);
     });
     std::sort(chosen.begin(), chosen.end());
     const auto count = long(chosen.size());
@@ -115,15 +122,28 @@ void MapView::mouseDoubleClickEvent(QMouseEvent* event) {
 
 void MapView::keyPressEvent(QKeyEvent* event) {
     switch (event->key()) {
-    case Qt::Key_Left: desk_.walk(-1); break;
-    case Qt::Key_Right: desk_.walk(1); break;
+    case Qt::Key_Left:
+        desk_.walk(-1);
+        break;
+    case Qt::Key_Right:
+        desk_.walk(1);
+        break;
     case Qt::Key_Plus:
-    case Qt::Key_Equal: zoom_by(1.3); break;
-    case Qt::Key_Minus: zoom_by(1 / 1.3); break;
+    case Qt::Key_Equal:
+        zoom_by(1.3);
+        break;
+    case Qt::Key_Minus:
+        zoom_by(1 / 1.3);
+        break;
     case Qt::Key_Home:
-    case Qt::Key_0: fit(); break;
-    case Qt::Key_Escape: desk_.select({}); break;
-    default: QWidget::keyPressEvent(event);
+    case Qt::Key_0:
+        fit();
+        break;
+    case Qt::Key_Escape:
+        desk_.select({});
+        break;
+    default:
+        QWidget::keyPressEvent(event);
     }
 }
 
@@ -140,8 +160,13 @@ bool MapView::event(QEvent* event) {
         if (!service.has_place) continue;
         const QPointF away = camera_.to_screen(service.place) - QPointF(help->pos());
         if (std::hypot(away.x(), away.y()) > 8) continue;
-        const QString free = service.free_kva ? tr("%1 kVA free").arg(number_text(*service.free_kva, 1)) : tr("free kVA not known");
-        QToolTip::showText(help->globalPos(), tr("%1 %2: %3 V, %4").arg(service_word(service.kind), to_q(service.id), number_text(service.volts), free), this);
+        const QString free = service.free_kva ? tr("%1 kVA free").arg(number_text(*service.free_kva, 1))
+                                              : tr("free kVA not known");
+        QToolTip::showText(
+            help->globalPos(),
+            tr("%1 %2: %3 V, %4")
+                .arg(service_word(service.kind), to_q(service.id), number_text(service.volts), free),
+            this);
         return true;
     }
     QToolTip::hideText();
@@ -158,4 +183,4 @@ void MapView::focusOutEvent(QFocusEvent*) {
     update();
 }
 
-}  // namespace unstring
+} // namespace unstring

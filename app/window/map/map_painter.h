@@ -1,6 +1,6 @@
 #pragma once
-// Paints the map from its parts, ground first: streets, buildings, canopy, trench, strings, poles. Each part draws only
-// what the camera sees.
+// Paints the map from its parts, ground first: streets, buildings, canopy, trench, strings, poles. Each part
+// draws only what the camera sees.
 
 #include <QPainter>
 #include <QPixmap>
@@ -19,7 +19,7 @@ enum class PoleColour { decision, year, shade };
 
 struct MapStyle {
     PoleColour colour = PoleColour::decision;
-    std::array<bool, 6> shown{true, true, true, true, true, true};  ///< by PoleSign: the legend is a filter
+    std::array<bool, 6> shown{true, true, true, true, true, true}; ///< by PoleSign: the legend is a filter
 };
 
 void paint_ground(QPainter& painter, const Desk& desk, const Camera& camera, const CanopyTint& tint);
@@ -33,12 +33,13 @@ void paint_circuits(QPainter& painter, const Desk& desk, const Camera& camera);
 
 /// Signs are painted once each into small pictures and stamped.
 class PolePainter {
-  public:
+public:
     void paint(QPainter& painter, const Desk& desk, const Camera& camera, const MapStyle& style);
     void forget() { stamps_.clear(); }
 
-  private:
-    const QPixmap& stamp(const Look& look, PoleSign sign, bool is_done, double r, bool with_halo, QColor tone, double ratio);
+private:
+    const QPixmap& stamp(const Look& look, PoleSign sign, bool is_done, double r, bool with_halo, QColor tone,
+                         double ratio);
     std::map<std::string, QPixmap> stamps_;
 };
 
@@ -56,4 +57,4 @@ struct LiveLoop {
 
 void paint_scale(QPainter& painter, const Look& look, const Camera& camera);
 
-}  // namespace unstring
+} // namespace unstring

@@ -13,9 +13,9 @@
 namespace unstring {
 namespace {
 
-constexpr double kGroundMargin_px = 220;  // how far a pan may go before the ground is painted anew
+constexpr double kGroundMargin_px = 220; // how far a pan may go before the ground is painted anew
 
-}  // namespace
+} // namespace
 
 MapView::MapView(Desk& desk, QWidget* parent) : QWidget(parent), desk_(desk) {
     setObjectName("map");
@@ -56,7 +56,9 @@ void MapView::read_canopy() {
     tint_of_ = raster;
     tint_ = {};
     if (raster.empty()) return;
-    reading_.setFuture(QtConcurrent::run([raster, bounds = desk_.scene().bounds, this] { return read_canopy_tint(raster, bounds, stop_reading_); }));
+    reading_.setFuture(QtConcurrent::run([raster, bounds = desk_.scene().bounds, this] {
+        return read_canopy_tint(raster, bounds, stop_reading_);
+    }));
 }
 
 void MapView::fit() {
@@ -78,7 +80,8 @@ void MapView::zoom_by(double factor) {
 }
 
 void MapView::show_place(MapPoint place) {
-    const QRectF inner = QRectF(rect()).adjusted(width() * 0.15, height() * 0.15, -width() * 0.15, -height() * 0.15);
+    const QRectF inner =
+        QRectF(rect()).adjusted(width() * 0.15, height() * 0.15, -width() * 0.15, -height() * 0.15);
     if (!inner.contains(camera_.to_screen(place))) camera_.centre = place;
     update();
 }
@@ -89,7 +92,9 @@ PoleIx MapView::pole_at(QPointF at) const {
     return found ? PoleIx{*found} : PoleIx{};
 }
 
-QPointF MapView::place_of(PoleIx pole) const { return camera_.to_screen(desk_.view().city.poles[pole.place()].place); }
+QPointF MapView::place_of(PoleIx pole) const {
+    return camera_.to_screen(desk_.view().city.poles[pole.place()].place);
+}
 
 void MapView::resizeEvent(QResizeEvent* event) {
     camera_.size = event->size();
@@ -102,7 +107,8 @@ void MapView::paint_ground_cached(QPainter& painter) {
     const double moved_x = (camera_.centre.x_m - ground_camera_.centre.x_m) / camera_.m_per_px;
     const double moved_y = (camera_.centre.y_m - ground_camera_.centre.y_m) / camera_.m_per_px;
     const bool is_near = std::abs(moved_x) <= kGroundMargin_px && std::abs(moved_y) <= kGroundMargin_px;
-    if (is_ground_stale_ || ground_.devicePixelRatio() != ratio || ground_camera_.m_per_px != camera_.m_per_px || !is_near) {
+    if (is_ground_stale_ || ground_.devicePixelRatio() != ratio ||
+        ground_camera_.m_per_px != camera_.m_per_px || !is_near) {
         ground_camera_ = camera_;
         ground_camera_.size = camera_.size + QSizeF(2 * kGroundMargin_px, 2 * kGroundMargin_px);
         ground_ = QPixmap((ground_camera_.size * ratio).toSize());
@@ -163,7 +169,8 @@ QString MapView::hover_text(PoleIx pole) const {
     const Pole& record = view.city.poles[pole.place()];
     const PolePlan& row = desk_.plan().poles[pole.place()];
     QString text = tr("Pole %1, %2").arg(to_q(record.id), lamp_text(view, pole));
-    if (record.status != PoleStatus::standing) return text + '\n' + tr("status: %1").arg(to_q(text_of(record.status)));
+    if (record.status != PoleStatus::standing)
+        return text + '\n' + tr("status: %1").arg(to_q(text_of(record.status)));
     if (!is_candidate(view.city, record)) return text;
     text += '\n' + choice_word(row.choice);
     if (row.year != 0) text += tr(" in %1").arg(row.year);
@@ -172,4 +179,4 @@ QString MapView::hover_text(PoleIx pole) const {
     return text;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -14,7 +14,7 @@ namespace unstring {
 
 class MapView : public QWidget {
     Q_OBJECT
-  public:
+public:
     explicit MapView(Desk& desk, QWidget* parent = nullptr);
     ~MapView() override;
 
@@ -30,7 +30,7 @@ class MapView : public QWidget {
     [[nodiscard]] QPointF place_of(PoleIx pole) const;
     [[nodiscard]] bool is_canopy_read() const { return !tint_.is_empty(); }
 
-  protected:
+protected:
     void paintEvent(QPaintEvent* event) override;
     void resizeEvent(QResizeEvent* event) override;
     void wheelEvent(QWheelEvent* event) override;
@@ -44,7 +44,7 @@ class MapView : public QWidget {
     void leaveEvent(QEvent* event) override;
     bool event(QEvent* event) override;
 
-  private:
+private:
     enum class Hand { none, pressed, panning, outlining };
 
     void take_view();
@@ -61,12 +61,12 @@ class MapView : public QWidget {
     PolePainter poles_;
     bool is_fitted_ = false;
 
-    QPixmap ground_;          ///< the ground over a wider rectangle than the widget, at ground_camera_
+    QPixmap ground_; ///< the ground over a wider rectangle than the widget, at ground_camera_
     Camera ground_camera_;
     bool is_ground_stale_ = true;
 
     CanopyTint tint_;
-    std::string tint_of_;     ///< raster that tint_ was read from
+    std::string tint_of_; ///< raster that tint_ was read from
     std::atomic<bool> stop_reading_ = false;
     QFutureWatcher<CanopyTint> reading_;
 
@@ -75,7 +75,7 @@ class MapView : public QWidget {
     QPolygonF outline_;
     PoleIx hover_;
     QPointF pointer_;
-    bool shows_focus_ = false;  ///< the frame shows when the keys came here, not the mouse
+    bool shows_focus_ = false; ///< the frame shows when the keys came here, not the mouse
 };
 
-}  // namespace unstring
+} // namespace unstring

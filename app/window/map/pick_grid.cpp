@@ -30,16 +30,23 @@ PickGrid::PickGrid(std::vector<Place> places) {
     for (const Place& place : places) places_[next[cell_of(place)]++] = place;
 }
 
-long PickGrid::column(double x_m) const { return std::clamp(long(std::floor((x_m - low_.x_m) / cell_m_)), 0L, columns_ - 1); }
-long PickGrid::row(double y_m) const { return std::clamp(long(std::floor((y_m - low_.y_m) / cell_m_)), 0L, rows_ - 1); }
+long PickGrid::column(double x_m) const {
+    return std::clamp(long(std::floor((x_m - low_.x_m) / cell_m_)), 0L, columns_ - 1);
+}
+long PickGrid::row(double y_m) const {
+    return std::clamp(long(std::floor((y_m - low_.y_m) / cell_m_)), 0L, rows_ - 1);
+}
 
-void PickGrid::in_rectangle(MapPoint low, MapPoint high, const std::function<void(const Place&)>& visit) const {
+void PickGrid::in_rectangle(MapPoint low, MapPoint high,
+                            const std::function<void(const Place&)>& visit) const {
     if (places_.empty()) return;
     for (long r = row(low.y_m); r <= row(high.y_m); ++r) {
-        const auto first = std::size_t(r * columns_ + column(low.x_m)), last = std::size_t(r * columns_ + column(high.x_m));
+        const auto first = std::size_t(r * columns_ + column(low.x_m)),
+                   last = std::size_t(r * columns_ + column(high.x_m));
         for (std::uint32_t i = start_[first]; i < start_[last + 1]; ++i) {
             const MapPoint at = places_[i].at;
-            if (at.x_m >= low.x_m && at.x_m <= high.x_m && at.y_m >= low.y_m && at.y_m <= high.y_m) visit(places_[i]);
+            if (at.x_m >= low.x_m && at.x_m <= high.x_m && at.y_m >= low.y_m && at.y_m <= high.y_m)
+                visit(places_[i]);
         }
     }
 }
@@ -47,13 +54,14 @@ void PickGrid::in_rectangle(MapPoint low, MapPoint high, const std::function<voi
 std::optional<std::uint32_t> PickGrid::nearest(MapPoint at, double reach_m) const {
     std::optional<std::uint32_t> best;
     double best_m = reach_m;
-    in_rectangle({at.x_m - reach_m, at.y_m - reach_m}, {at.x_m + reach_m, at.y_m + reach_m}, [&](const Place& place) {
-        const double far_m = distance_m(at, place.at);
-        if (far_m > best_m || (far_m == best_m && best && *best < place.record)) return;
-        best_m = far_m;
-        best = place.record;
-    });
+    in_rectangle({at.x_m - reach_m, at.y_m - reach_m}, {at.x_m + reach_m, at.y_m + reach_m},
+                 [&](const Place& place) {
+                     const double far_m = distance_m(at, place.at);
+                     if (far_m > best_m || (far_m == best_m && best && *best < place.record)) return;
+                     best_m = far_m;
+                     best = place.record;
+                 });
     return best;
 }
 
-}  // namespace unstring
+} // namespace unstring

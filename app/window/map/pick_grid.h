@@ -11,7 +11,7 @@
 namespace unstring {
 
 class PickGrid {
-  public:
+public:
     struct Place {
         MapPoint at;
         std::uint32_t record = 0;
@@ -26,7 +26,7 @@ class PickGrid {
     void in_rectangle(MapPoint low, MapPoint high, const std::function<void(const Place&)>& visit) const;
     [[nodiscard]] std::size_t size() const { return places_.size(); }
 
-  private:
+private:
     [[nodiscard]] long column(double x_m) const;
     [[nodiscard]] long row(double y_m) const;
 
@@ -37,4 +37,4 @@ class PickGrid {
     long columns_ = 0, rows_ = 0;
 };
 
-}  // namespace unstring
+} // namespace unstring

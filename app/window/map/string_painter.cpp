@@ -36,7 +36,8 @@ std::vector<QPointF> loop_points(const City& city, const StringLoop& loop, const
     return points;
 }
 
-void paint_loop(QPainter& painter, const Desk& desk, const Camera& camera, const StringLoop& loop, bool is_chosen) {
+void paint_loop(QPainter& painter, const Desk& desk, const Camera& camera, const StringLoop& loop,
+                bool is_chosen) {
     const std::vector<QPointF> points = loop_points(desk.view().city, loop, camera);
     QPolygonF all;
     for (const QPointF point : points) all << point;
@@ -66,7 +67,8 @@ void paint_loop(QPainter& painter, const Desk& desk, const Camera& camera, const
     }
 }
 
-void paint_station(QPainter& painter, const Desk& desk, const Camera& camera, StringIx string, std::vector<QRectF>& taken) {
+void paint_station(QPainter& painter, const Desk& desk, const Camera& camera, StringIx string,
+                   std::vector<QRectF>& taken) {
     const City& city = desk.view().city;
     const Look& look = desk.look();
     const bool is_chosen = string == desk.chosen_string();
@@ -83,10 +85,13 @@ void paint_station(QPainter& painter, const Desk& desk, const Camera& camera, St
     const QString name = to_q(city.strings[string.place()].id);
     // Beside the station where there is room; else a little lower or higher, else not at all.
     const double wide = metrics.horizontalAdvance(name);
-    const std::array<QPointF, 6> shifts{QPointF(12, -6), QPointF(12, 16), QPointF(-wide / 2, -24), QPointF(-wide / 2, 34), QPointF(-12 - wide, -28), QPointF(-12 - wide, 40)};
+    const std::array<QPointF, 6> shifts{QPointF(12, -6),          QPointF(12, 16),
+                                        QPointF(-wide / 2, -24),  QPointF(-wide / 2, 34),
+                                        QPointF(-12 - wide, -28), QPointF(-12 - wide, 40)};
     for (const QPointF shift : shifts) {
         const QRectF box = metrics.tightBoundingRect(name).translated(at + shift).adjusted(-4, -3, 4, 3);
-        const bool is_free = std::none_of(taken.begin(), taken.end(), [&box](const QRectF& other) { return other.intersects(box); });
+        const bool is_free = std::none_of(taken.begin(), taken.end(),
+                                          [&box](const QRectF& other) { return other.intersects(box); });
         const bool is_inside = QRectF(QPointF(), camera.size).contains(box);
         if ((!is_free || !is_inside) && !(is_chosen && shift == shifts.back())) continue;
         QPainterPath text;
@@ -105,7 +110,7 @@ QPen span_pen(const Look& look, SpanKind kind) {
     return pen;
 }
 
-}  // namespace
+} // namespace
 
 LiveLoop live_loop(const StringLoop& loop, const Plan& plan, int year) {
     LiveLoop live;
@@ -161,12 +166,18 @@ void paint_circuits(QPainter& painter, const Desk& desk, const Camera& camera) {
             if (camera.m_per_px >= 0.6) continue;
             const QPointF middle = (points.first() + points.last()) / 2;
             painter.setPen(look.ink2);
-            painter.drawText(middle + QPointF(5, -4), QObject::tr("%1 AWG, %2 m").arg(span.awg > 0 ? QString::number(span.awg) : QStringLiteral("%1/0").arg(1 - span.awg), number_text(span.length_m)));
+            painter.drawText(
+                middle + QPointF(5, -4),
+                QObject::tr("%1 AWG, %2 m")
+                    .arg(span.awg > 0 ? QString::number(span.awg) : QStringLiteral("%1/0").arg(1 - span.awg),
+                         number_text(span.length_m)));
         }
     }
     if (camera.m_per_px > 2.5) return;
     for (const ServicePoint& service : desk.view().city.services)
-        if (service.has_place) draw_service(painter, look, service.kind, camera.to_screen(service.place), camera.m_per_px < 0.6 ? 5.5 : 4);
+        if (service.has_place)
+            draw_service(painter, look, service.kind, camera.to_screen(service.place),
+                         camera.m_per_px < 0.6 ? 5.5 : 4);
 }
 
-}  // namespace unstring
+} // namespace unstring

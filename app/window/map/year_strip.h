@@ -1,5 +1,6 @@
 #pragma once
-// Under the map: the legend, which is a filter too, and the staircase of lamps left, which is the year slider.
+// Under the map: the legend, which is a filter too, and the staircase of lamps left, which is the year
+// slider.
 
 #include <QTimer>
 #include <QWidget>
@@ -11,13 +12,13 @@ namespace unstring {
 
 class YearStrip : public QWidget {
     Q_OBJECT
-  public:
+public:
     YearStrip(Desk& desk, MapView& map, QWidget* parent = nullptr);
     [[nodiscard]] QSize sizeHint() const override { return {600, 58}; }
     /// Where a year stands on the slider.
     [[nodiscard]] QPointF place_of_year(int year) const;
 
-  protected:
+protected:
     void paintEvent(QPaintEvent* event) override;
     void mousePressEvent(QMouseEvent* event) override;
     void mouseMoveEvent(QMouseEvent* event) override;
@@ -25,10 +26,10 @@ class YearStrip : public QWidget {
     void focusInEvent(QFocusEvent* event) override;
     void focusOutEvent(QFocusEvent* event) override;
 
-  private:
+private:
     struct Word {
         QRectF box;
-        int sign = -1;  ///< -1: the word that changes the colouring
+        int sign = -1; ///< -1: the word that changes the colouring
     };
     [[nodiscard]] QRectF slider() const;
     [[nodiscard]] QRectF play_box() const;
@@ -43,7 +44,7 @@ class YearStrip : public QWidget {
     MapView& map_;
     std::vector<Word> words_;
     QTimer play_;
-    bool shows_focus_ = false;  ///< the frame shows when the keys came here, not the mouse
+    bool shows_focus_ = false; ///< the frame shows when the keys came here, not the mouse
 };
 
-}  // namespace unstring
+} // namespace unstring

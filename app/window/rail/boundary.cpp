@@ -7,7 +7,9 @@
 namespace unstring {
 namespace {
 
-bool has_work(const PolePlan& row) { return row.year != 0 && (row.choice == Choice::rewire || row.choice == Choice::solar); }
+bool has_work(const PolePlan& row) {
+    return row.year != 0 && (row.choice == Choice::rewire || row.choice == Choice::solar);
+}
 
 bool may_move(const PolePlan& row) { return row.choice == Choice::rewire || row.choice == Choice::solar; }
 
@@ -39,7 +41,7 @@ int year_inside(const StringLoop& loop, const Plan& plan, const Fold& fold, int 
     return year;
 }
 
-}  // namespace
+} // namespace
 
 Fold fold_of(const StringLoop& loop) {
     const int lamps = int(loop.lamps.size());
@@ -51,7 +53,9 @@ int cutback_at(const StringLoop& loop, int out_on, int ret_on) {
     int found = -1;
     for (std::size_t i = 0; i < loop.cutbacks.size(); ++i) {
         const LoopCutBack& cut = loop.cutbacks[i];
-        if (cut.a == out_on && cut.b == b && (found < 0 || (cut.confirmed && !loop.cutbacks[std::size_t(found)].confirmed))) found = int(i);
+        if (cut.a == out_on && cut.b == b &&
+            (found < 0 || (cut.confirmed && !loop.cutbacks[std::size_t(found)].confirmed)))
+            found = int(i);
     }
     return found;
 }
@@ -66,20 +70,25 @@ std::vector<Boundary> boundaries_of(const StringLoop& loop, const Plan& plan) {
         Boundary boundary;
         boundary.year = year;
         int left_on = 0;
-        for (int position = 1; position <= fold.lamps; ++position) left_on += loop.burns[std::size_t(position - 1)] == 0 || is_off(loop, plan, position, year) ? 0 : 1;
-        if (left_on == 0) continue;  // the string ends here
+        for (int position = 1; position <= fold.lamps; ++position)
+            left_on +=
+                loop.burns[std::size_t(position - 1)] == 0 || is_off(loop, plan, position, year) ? 0 : 1;
+        if (left_on == 0) continue; // the string ends here
         boundary.out_on = on_before(loop, plan, fold, true, year);
         boundary.ret_on = on_before(loop, plan, fold, false, year);
         boundary.next_year = year_inside(loop, plan, fold, boundary.out_on, boundary.ret_on);
         boundary.is_nested = left_on <= boundary.out_on + boundary.ret_on;
         boundary.cutback = cutback_at(loop, boundary.out_on, boundary.ret_on);
-        if (boundary.cutback >= 0) boundary.stand = loop.cutbacks[std::size_t(boundary.cutback)].confirmed ? Stand::confirmed : Stand::candidate;
+        if (boundary.cutback >= 0)
+            boundary.stand =
+                loop.cutbacks[std::size_t(boundary.cutback)].confirmed ? Stand::confirmed : Stand::candidate;
         boundaries.push_back(boundary);
     }
     return boundaries;
 }
 
-BoundaryMove move_boundary(const StringLoop& loop, const Plan& plan, const Boundary& boundary, int out_on, int ret_on) {
+BoundaryMove move_boundary(const StringLoop& loop, const Plan& plan, const Boundary& boundary, int out_on,
+                           int ret_on) {
     const Fold fold = fold_of(loop);
     BoundaryMove move;
     move.plan = plan;
@@ -111,13 +120,17 @@ std::vector<Boundary> end_boundaries(const StringLoop& loop, const Plan& plan, i
         const PolePlan& row = row_at(loop, plan, position);
         if (!may_move(row)) continue;
         ++movable;
-        if (row.year == 0) ++without_year;
-        else earliest = earliest == 0 ? row.year : std::min(earliest, row.year), latest = std::max(latest, row.year);
+        if (row.year == 0)
+            ++without_year;
+        else
+            earliest = earliest == 0 ? row.year : std::min(earliest, row.year),
+            latest = std::max(latest, row.year);
     }
     std::vector<Boundary> ends;
     if (movable == 0) return ends;
     Boundary at_fold;
-    at_fold.year = earliest != 0 ? earliest - 1 : std::clamp(idle_year, plan.settings.first_year, plan.last_year());
+    at_fold.year =
+        earliest != 0 ? earliest - 1 : std::clamp(idle_year, plan.settings.first_year, plan.last_year());
     at_fold.next_year = earliest;
     at_fold.out_on = fold.out, at_fold.ret_on = fold.ret();
     if (at_fold.year >= plan.settings.first_year) ends.push_back(at_fold);
@@ -134,7 +147,7 @@ Depths snap_depths(const StringLoop& loop, int out_on, int ret_on, int reach) {
     for (const LoopCutBack& cut : loop.cutbacks) {
         const int cut_out = cut.a, cut_ret = int(loop.lamps.size()) + 1 - cut.b;
         const Fold fold = fold_of(loop);
-        if (cut_out > fold.out || cut_ret > fold.ret()) continue;  // it joins two places of one leg
+        if (cut_out > fold.out || cut_ret > fold.ret()) continue; // it joins two places of one leg
         const int away_out = std::abs(cut_out - out_on), away_ret = std::abs(cut_ret - ret_on);
         if (std::max(away_out, away_ret) > reach || away_out + away_ret >= best_away) continue;
         best = {cut_out, cut_ret, true};
@@ -143,4 +156,4 @@ Depths snap_depths(const StringLoop& loop, int out_on, int ret_on, int reach) {
     return best;
 }
 
-}  // namespace unstring
+} // namespace unstring

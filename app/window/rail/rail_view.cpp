@@ -13,10 +13,10 @@ namespace unstring {
 namespace {
 
 constexpr double kRow_px = 54, kLegs_px = 22;
-constexpr double kNames_px = 112;    // name and number of lamps at the left
-constexpr double kStation_px = 96;   // rings and rating at the right of the beads
+constexpr double kNames_px = 112;  // name and number of lamps at the left
+constexpr double kStation_px = 96; // rings and rating at the right of the beads
 
-}  // namespace
+} // namespace
 
 QPointF RailRow::bead(int position) const {
     return {right - pitch * (fold.depth(position) - 1), fold.on_out(position) ? y_out : y_ret};
@@ -51,7 +51,7 @@ void RailView::take_view() {
     verticalScrollBar()->setRange(0, std::max(0, all - viewport()->height()));
     verticalScrollBar()->setPageStep(viewport()->height());
     verticalScrollBar()->setSingleStep(int(kRow_px));
-    columns_ = year_columns(width(), desk_.plan().settings);  // the scroll bar stands in the right margin
+    columns_ = year_columns(width(), desk_.plan().settings); // the scroll bar stands in the right margin
     viewport()->update();
 }
 
@@ -64,8 +64,11 @@ void RailView::show_chosen() {
     if (!desk_.chosen_string().is_valid()) return viewport()->update();
     const RailRow row = row_of(desk_.chosen_string());
     if (row.string.is_valid() && !drag_) {
-        if (row.box.top() < 0) verticalScrollBar()->setValue(verticalScrollBar()->value() + int(row.box.top()));
-        if (row.box.bottom() > viewport()->height()) verticalScrollBar()->setValue(verticalScrollBar()->value() + int(row.box.bottom()) - viewport()->height());
+        if (row.box.top() < 0)
+            verticalScrollBar()->setValue(verticalScrollBar()->value() + int(row.box.top()));
+        if (row.box.bottom() > viewport()->height())
+            verticalScrollBar()->setValue(verticalScrollBar()->value() + int(row.box.bottom()) -
+                                          viewport()->height());
     }
     viewport()->update();
 }
@@ -74,7 +77,8 @@ RailRow RailView::row_at_place(std::size_t place) const {
     RailRow row;
     row.string = desk_.scene().series[place];
     row.fold = fold_of(desk_.scene().loops[row.string.place()]);
-    row.box = QRectF(0, kRow_px * double(place) - verticalScrollBar()->value() + 4, viewport()->width(), kRow_px);
+    row.box =
+        QRectF(0, kRow_px * double(place) - verticalScrollBar()->value() + 4, viewport()->width(), kRow_px);
     row.right = columns_.left - kStation_px - 28;
     const int deepest = std::max({1, row.fold.out, row.fold.ret()});
     row.pitch = std::min(18.0, (row.right - kNames_px - 24) / deepest);
@@ -100,11 +104,13 @@ std::optional<RailView::Grab> RailView::boundary_at(QPointF at) const {
         if (!row.box.contains(at) || at.x() > row.right + row.pitch) continue;
         const StringLoop& loop = desk_.scene().loops[row.string.place()];
         std::vector<Boundary> boundaries = boundaries_of(loop, desk_.plan());
-        for (const Boundary& end : end_boundaries(loop, desk_.plan(), desk_.year())) boundaries.push_back(end);
+        for (const Boundary& end : end_boundaries(loop, desk_.plan(), desk_.year()))
+            boundaries.push_back(end);
         std::optional<Grab> best;
         double best_away = 6;
         for (const Boundary& boundary : boundaries) {
-            const double x = at.y() < row.box.center().y() ? row.edge(boundary.out_on) : row.edge(boundary.ret_on);
+            const double x =
+                at.y() < row.box.center().y() ? row.edge(boundary.out_on) : row.edge(boundary.ret_on);
             if (std::abs(x - at.x()) >= best_away) continue;
             best_away = std::abs(x - at.x());
             best = Grab{row.string, boundary};
@@ -130,29 +136,46 @@ PoleIx RailView::bead_at(QPointF at) const {
 QString RailView::drag_text() const {
     if (!drag_) return {};
     if (drag_->move.moved == 0) {
-        if (drag_->move.stayed_locked > 0) return tr("%1 stay").arg(count_text(drag_->move.stayed_locked, tr("locked lamp"), tr("locked lamps")));
-        return tr("%1 | %2").arg(drag_->boundary.year).arg(drag_->boundary.next_year == 0 ? tr("no year") : QString::number(drag_->boundary.next_year));
+        if (drag_->move.stayed_locked > 0)
+            return tr("%1 stay").arg(
+                count_text(drag_->move.stayed_locked, tr("locked lamp"), tr("locked lamps")));
+        return tr("%1 | %2")
+            .arg(drag_->boundary.year)
+            .arg(drag_->boundary.next_year == 0 ? tr("no year") : QString::number(drag_->boundary.next_year));
     }
-    QString text = tr("%1 to %2").arg(count_text(drag_->move.moved, tr("lamp"), tr("lamps")), drag_->move.year == 0 ? tr("no year") : QString::number(drag_->move.year));
+    QString text = tr("%1 to %2")
+                       .arg(count_text(drag_->move.moved, tr("lamp"), tr("lamps")),
+                            drag_->move.year == 0 ? tr("no year") : QString::number(drag_->move.year));
     if (drag_->move.stayed_locked > 0) text += tr(", %1 locked stay").arg(drag_->move.stayed_locked);
     const StringYear* state = string_year(desk_.phase(), drag_->string, drag_->boundary.year);
     if (state != nullptr && desk_.has_preview())
-        text += '\n' + tr("%1 end of %2: %3, %4").arg(to_q(desk_.view().city.strings[drag_->string.place()].id)).arg(drag_->boundary.year).arg(count_text(state->lamps, tr("lamp"), tr("lamps")), verdict_word(state->verdict));
+        text +=
+            '\n' + tr("%1 end of %2: %3, %4")
+                       .arg(to_q(desk_.view().city.strings[drag_->string.place()].id))
+                       .arg(drag_->boundary.year)
+                       .arg(count_text(state->lamps, tr("lamp"), tr("lamps")), verdict_word(state->verdict));
     return text;
 }
 
 QString RailView::tip_at(QPointF at) const {
     if (const auto grab = boundary_at(at)) {
-        const QString next = grab->boundary.next_year == 0 ? tr("no year") : QString::number(grab->boundary.next_year);
-        const QString stand = grab->boundary.stand == Stand::confirmed   ? tr("on a confirmed cut-back")
-                              : grab->boundary.stand == Stand::candidate ? tr("on a cut-back that is to be confirmed on site")
-                                                                         : tr("no cut-back here: lamps are jumpered at their bases and the cable stays live");
-        return tr("Boundary %1 | %2, %3. Drag it; Alt places it off the cut-backs; Esc puts it back.").arg(grab->boundary.year).arg(next, stand);
+        const QString next =
+            grab->boundary.next_year == 0 ? tr("no year") : QString::number(grab->boundary.next_year);
+        const QString stand =
+            grab->boundary.stand == Stand::confirmed ? tr("on a confirmed cut-back")
+            : grab->boundary.stand == Stand::candidate
+                ? tr("on a cut-back that is to be confirmed on site")
+                : tr("no cut-back here: lamps are jumpered at their bases and the cable stays live");
+        return tr("Boundary %1 | %2, %3. Drag it; Alt places it off the cut-backs; Esc puts it back.")
+            .arg(grab->boundary.year)
+            .arg(next, stand);
     }
     if (const PoleIx pole = bead_at(at); pole.is_valid()) {
         const PolePlan& row = desk_.plan().poles[pole.place()];
         const QString year = row.year == 0 ? tr("no year") : QString::number(row.year);
-        return tr("Pole %1, %2: %3, %4%5").arg(to_q(desk_.view().city.poles[pole.place()].id), lamp_text(desk_.view(), pole), choice_word(row.choice), year, row.year_locked ? tr(", year locked") : QString());
+        return tr("Pole %1, %2: %3, %4%5")
+            .arg(to_q(desk_.view().city.poles[pole.place()].id), lamp_text(desk_.view(), pole),
+                 choice_word(row.choice), year, row.year_locked ? tr(", year locked") : QString());
     }
     const int year = columns_.year_at(at.x());
     for (std::size_t place = 0; place < desk_.scene().series.size(); ++place) {
@@ -168,11 +191,13 @@ bool RailView::viewportEvent(QEvent* event) {
     if (event->type() == QEvent::ToolTip && desk_.is_open() && !drag_) {
         const auto* help = static_cast<QHelpEvent*>(event);
         const QString tip = tip_at(help->pos());
-        if (tip.isEmpty()) QToolTip::hideText();
-        else QToolTip::showText(help->globalPos(), tip, viewport());
+        if (tip.isEmpty())
+            QToolTip::hideText();
+        else
+            QToolTip::showText(help->globalPos(), tip, viewport());
         return true;
     }
     return QAbstractScrollArea::viewportEvent(event);
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -1,5 +1,6 @@
 #pragma once
-// The rail: every string as its loop pressed flat; beads are lamps in wiring order, bars are year boundaries to drag.
+// The rail: every string as its loop pressed flat; beads are lamps in wiring order, bars are year boundaries
+// to drag.
 
 #include <QAbstractScrollArea>
 #include <QTimer>
@@ -17,7 +18,7 @@ struct RailRow {
     StringIx string;
     QRectF box;
     Fold fold;
-    double right = 0;   ///< x of the bead next to the station
+    double right = 0; ///< x of the bead next to the station
     double pitch = 18;
     double y_out = 0, y_ret = 0;
     [[nodiscard]] QPointF bead(int position) const;
@@ -37,7 +38,7 @@ struct BoundaryDrag {
 
 class RailView : public QAbstractScrollArea {
     Q_OBJECT
-  public:
+public:
     explicit RailView(Desk& desk, QWidget* parent = nullptr);
 
     [[nodiscard]] RailRow row_of(StringIx string) const;
@@ -46,10 +47,10 @@ class RailView : public QAbstractScrollArea {
     [[nodiscard]] const std::optional<BoundaryDrag>& drag() const { return drag_; }
     [[nodiscard]] QString drag_text() const;
 
-  Q_SIGNALS:
+Q_SIGNALS:
     void drag_changed();
 
-  protected:
+protected:
     void paintEvent(QPaintEvent* event) override;
     void resizeEvent(QResizeEvent* event) override;
     void mousePressEvent(QMouseEvent* event) override;
@@ -60,7 +61,7 @@ class RailView : public QAbstractScrollArea {
     void focusOutEvent(QFocusEvent* event) override;
     bool viewportEvent(QEvent* event) override;
 
-  private:
+private:
     struct Grab {
         StringIx string;
         Boundary boundary;
@@ -78,17 +79,23 @@ class RailView : public QAbstractScrollArea {
     void paint_row(QPainter& painter, const RailRow& row);
     void paint_thread(QPainter& painter, const RailRow& row, const StringLoop& loop);
     void paint_beads(QPainter& painter, const RailRow& row, const StringLoop& loop);
+    void paint_bead(QPainter& painter, const RailRow& row, const StringLoop& loop, int position);
+    void paint_bead_orders(QPainter& painter, const RailRow& row, const StringLoop& loop, int position);
     void paint_boundaries(QPainter& painter, const RailRow& row, const StringLoop& loop);
-    void paint_bar(QPainter& painter, const RailRow& row, const Boundary& boundary, bool is_hot, bool is_held);
+    void paint_bar(QPainter& painter, const RailRow& row, const Boundary& boundary, bool is_hot,
+                   bool is_held);
     void paint_words(QPainter& painter, const RailRow& row);
+    void paint_word(QPainter& painter, const StringYear& state, const StringYear* before, double x,
+                    double right, double y);
+    void paint_window(QPainter& painter, const StringYear& state, double x, double right, double y);
 
     Desk& desk_;
     YearColumns columns_;
-    std::optional<Grab> hot_;      ///< boundary under the pointer
+    std::optional<Grab> hot_; ///< boundary under the pointer
     std::optional<BoundaryDrag> drag_;
-    QTimer preview_timer_;         ///< one preview for all moves that came since the last one
-    int keyboard_boundary_ = 0;    ///< place of the boundary that the arrow keys move
+    QTimer preview_timer_;      ///< one preview for all moves that came since the last one
+    int keyboard_boundary_ = 0; ///< place of the boundary that the arrow keys move
     bool shows_focus_ = false;  ///< the frame shows when the keys came here, not the mouse
 };
 
-}  // namespace unstring
+} // namespace unstring

@@ -14,19 +14,26 @@ constexpr double kKnot_x = 14, kWord_x = 28;
 
 QString remedy_of(Step step) {
     switch (step) {
-    case Step::gather: return QObject::tr("reads the city's files into the project");
-    case Step::vet: return QObject::tr("checks the records and settles the wiring order");
-    case Step::shade: return QObject::tr("works out the sky over each pole and the nights dark of each solar head");
-    case Step::decide: return QObject::tr("chooses keep, rewire or solar for all poles together");
-    case Step::phase: return QObject::tr("gives every pole its year, within money and crew hours");
-    case Step::hand_out: break;
+    case Step::gather:
+        return QObject::tr("reads the city's files into the project");
+    case Step::vet:
+        return QObject::tr("checks the records and settles the wiring order");
+    case Step::shade:
+        return QObject::tr("works out the sky over each pole and the nights dark of each solar head");
+    case Step::decide:
+        return QObject::tr("chooses keep, rewire or solar for all poles together");
+    case Step::phase:
+        return QObject::tr("gives every pole its year, within money and crew hours");
+    case Step::hand_out:
+        break;
     }
     return QObject::tr("writes the work orders of each crew");
 }
 
-}  // namespace
+} // namespace
 
-StepKnot::StepKnot(Desk& desk, Step step, QWidget* parent) : QAbstractButton(parent), desk_(desk), step_(step) {
+StepKnot::StepKnot(Desk& desk, Step step, QWidget* parent)
+    : QAbstractButton(parent), desk_(desk), step_(step) {
     setObjectName(QStringLiteral("step_") + QString::fromLatin1(text_of(step)).replace('-', '_'));
     setText(step_word(step));
     setFocusPolicy(Qt::StrongFocus);
@@ -44,7 +51,8 @@ QString StepKnot::state_text() const {
     if (desk_.running_step() == step_) {
         const double done = desk_.running_frac(), seconds = desk_.running_seconds();
         if (done < 0.02 || seconds < 1) return tr("%1 done").arg(percent_text(done));
-        return tr("%1, %2 s left").arg(percent_text(done), number_text(std::ceil(seconds * (1 - done) / done)));
+        return tr("%1, %2 s left")
+            .arg(percent_text(done), number_text(std::ceil(seconds * (1 - done) / done)));
     }
     if (!desk_.is_open()) return step_ == Step::gather ? tr("start here") : tr("not yet");
     return standing_text(step_, desk_.view().steps[std::size_t(step_)]);
@@ -58,7 +66,8 @@ QSize StepKnot::sizeHint() const {
 
 void StepKnot::refresh() {
     setAccessibleName(tr("Step %1: %2").arg(text(), state_text()));
-    setToolTip(tr("%1 %2. State: %3. Click: run it, or open what it found; right click: choose.").arg(text(), remedy_of(step_), state_text()));
+    setToolTip(tr("%1 %2. State: %3. Click: run it, or open what it found; right click: choose.")
+                   .arg(text(), remedy_of(step_), state_text()));
     updateGeometry();
     update();
 }
@@ -66,23 +75,34 @@ void StepKnot::refresh() {
 void StepKnot::paint_knot(QPainter& painter, QPointF at) {
     const Look& look = desk_.look();
     if (desk_.running_step() == step_) {
-        painter.setPen(QPen(look.hand, 1.6)), painter.setBrush(Qt::NoBrush), painter.drawEllipse(at, 8.4, 8.4);
+        painter.setPen(QPen(look.hand, 1.6)), painter.setBrush(Qt::NoBrush),
+            painter.drawEllipse(at, 8.4, 8.4);
         painter.setPen(Qt::NoPen), painter.setBrush(look.hand), painter.drawEllipse(at, 5, 5);
         return;
     }
     switch (standing()) {
-    case StepStanding::stopped: painter.fillRect(QRectF(at.x() - 4.5, at.y() - 1.3, 9, 2.6), look.trouble); return;
-    case StepStanding::up_to_date: painter.setPen(Qt::NoPen), painter.setBrush(look.ink), painter.drawEllipse(at, 4.2, 4.2); return;
-    case StepStanding::by_hand: painter.setPen(Qt::NoPen), painter.setBrush(look.hand), painter.drawEllipse(at, 5, 5); return;
+    case StepStanding::stopped:
+        painter.fillRect(QRectF(at.x() - 4.5, at.y() - 1.3, 9, 2.6), look.trouble);
+        return;
+    case StepStanding::up_to_date:
+        painter.setPen(Qt::NoPen), painter.setBrush(look.ink), painter.drawEllipse(at, 4.2, 4.2);
+        return;
+    case StepStanding::by_hand:
+        painter.setPen(Qt::NoPen), painter.setBrush(look.hand), painter.drawEllipse(at, 5, 5);
+        return;
     case StepStanding::stale:
         painter.setPen(QPen(look.ink, 1.4)), painter.setBrush(Qt::NoBrush), painter.drawEllipse(at, 4, 4);
-        painter.setPen(Qt::NoPen), painter.setBrush(look.ink), painter.drawPie(QRectF(at.x() - 4, at.y() - 4, 8, 8), 90 * 16, 180 * 16);
+        painter.setPen(Qt::NoPen), painter.setBrush(look.ink),
+            painter.drawPie(QRectF(at.x() - 4, at.y() - 4, 8, 8), 90 * 16, 180 * 16);
         return;
-    case StepStanding::not_yet: painter.setPen(QPen(look.ink3, 1.4)), painter.setBrush(look.sheet), painter.drawEllipse(at, 4, 4); return;
+    case StepStanding::not_yet:
+        painter.setPen(QPen(look.ink3, 1.4)), painter.setBrush(look.sheet), painter.drawEllipse(at, 4, 4);
+        return;
     }
 }
 
-// The thread to the next knot: whole while up to date, broken from a step that is not, filling green while it runs.
+// The thread to the next knot: whole while up to date, broken from a step that is not, filling green while it
+// runs.
 void StepKnot::paint_thread(QPainter& painter, double from) {
     if (step_ == Step::hand_out || from >= width() - 2) return;
     const Look& look = desk_.look();
@@ -107,9 +127,12 @@ void StepKnot::paintEvent(QPaintEvent*) {
     painter.setFont(font), painter.setPen(look.ink);
     painter.drawText(QPointF(kWord_x, 23), text());
     paint_thread(painter, kWord_x + QFontMetricsF(text_font(15, Weight::bold)).horizontalAdvance(text()) + 8);
-    const bool has_warnings = desk_.is_open() && desk_.view().steps[std::size_t(step_)].warnings + desk_.view().steps[std::size_t(step_)].errors > 0;
+    const bool has_warnings =
+        desk_.is_open() &&
+        desk_.view().steps[std::size_t(step_)].warnings + desk_.view().steps[std::size_t(step_)].errors > 0;
     painter.setFont(text_font(11, is_bad || is_running || has_warnings ? Weight::bold : Weight::normal));
-    const bool is_green = is_running || standing() == StepStanding::by_hand || (!desk_.is_open() && step_ == Step::gather);
+    const bool is_green =
+        is_running || standing() == StepStanding::by_hand || (!desk_.is_open() && step_ == Step::gather);
     painter.setPen(is_bad ? look.trouble : is_green ? look.hand : look.ink2);
     painter.drawText(QPointF(kWord_x, 39), state_text());
     if (!hasFocus()) return;
@@ -117,4 +140,4 @@ void StepKnot::paintEvent(QPaintEvent*) {
     painter.drawRoundedRect(QRectF(rect()).adjusted(2, 2, -2, -2), 3, 3);
 }
 
-}  // namespace unstring
+} // namespace unstring

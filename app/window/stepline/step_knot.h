@@ -9,7 +9,7 @@ namespace unstring {
 
 class StepKnot : public QAbstractButton {
     Q_OBJECT
-  public:
+public:
     StepKnot(Desk& desk, Step step, QWidget* parent = nullptr);
     [[nodiscard]] QSize sizeHint() const override;
     [[nodiscard]] Step step() const { return step_; }
@@ -17,10 +17,10 @@ class StepKnot : public QAbstractButton {
     [[nodiscard]] QString state_text() const;
     void refresh();
 
-  protected:
+protected:
     void paintEvent(QPaintEvent* event) override;
 
-  private:
+private:
     void paint_knot(QPainter& painter, QPointF at);
     void paint_thread(QPainter& painter, double from);
 
@@ -28,4 +28,4 @@ class StepKnot : public QAbstractButton {
     Step step_;
 };
 
-}  // namespace unstring
+} // namespace unstring

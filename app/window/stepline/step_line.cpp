@@ -17,7 +17,7 @@ QPushButton* word_button(const QString& text, const char* name, QWidget* parent)
     return button;
 }
 
-}  // namespace
+} // namespace
 
 StepLine::StepLine(Desk& desk, QWidget* parent) : QWidget(parent), desk_(desk) {
     setObjectName("step_line");
@@ -31,7 +31,8 @@ StepLine::StepLine(Desk& desk, QWidget* parent) : QWidget(parent), desk_(desk) {
         row->addWidget(knot);
         connect(knot, &QAbstractButton::clicked, this, [this, step] { Q_EMIT step_clicked(step); });
         knot->setContextMenuPolicy(Qt::CustomContextMenu);
-        connect(knot, &QWidget::customContextMenuRequested, this, [this, knot, step](QPoint at) { show_menu(step, knot->mapToGlobal(at)); });
+        connect(knot, &QWidget::customContextMenuRequested, this,
+                [this, knot, step](QPoint at) { show_menu(step, knot->mapToGlobal(at)); });
     }
     row->addSpacing(10);
     run_ = new QPushButton(this);
@@ -57,7 +58,8 @@ StepLine::StepLine(Desk& desk, QWidget* parent) : QWidget(parent), desk_(desk) {
     connect(undo_, &QPushButton::clicked, this, [this] { desk_.undo(); });
     connect(redo_, &QPushButton::clicked, this, [this] { desk_.redo(); });
     connect(night_, &QPushButton::clicked, this, [this] { desk_.set_night(!desk_.look().is_night); });
-    for (const auto signal : {&Desk::view_changed, &Desk::closed, &Desk::step_changed, &Desk::look_changed}) connect(&desk_, signal, this, &StepLine::refresh);
+    for (const auto signal : {&Desk::view_changed, &Desk::closed, &Desk::step_changed, &Desk::look_changed})
+        connect(&desk_, signal, this, &StepLine::refresh);
     refresh();
 }
 
@@ -75,8 +77,10 @@ void StepLine::show_menu(Step step, QPoint at) {
     auto* menu = new QMenu(this);
     menu->setAttribute(Qt::WA_DeleteOnClose);
     menu->setObjectName("step_menu");
-    connect(menu->addAction(tr("Run %1").arg(step_word(step))), &QAction::triggered, this, [this, step] { Q_EMIT run_wanted(step); });
-    connect(menu->addAction(tr("Show the findings")), &QAction::triggered, this, [this] { Q_EMIT findings_wanted(); });
+    connect(menu->addAction(tr("Run %1").arg(step_word(step))), &QAction::triggered, this,
+            [this, step] { Q_EMIT run_wanted(step); });
+    connect(menu->addAction(tr("Show the findings")), &QAction::triggered, this,
+            [this] { Q_EMIT findings_wanted(); });
     menu->popup(at);
 }
 
@@ -89,19 +93,27 @@ void StepLine::refresh() {
     run_->setToolTip(tr("The first step that is not up to date. F5 does the same."));
     night_->setText(desk_.look().is_night ? tr("day") : tr("night"));
     night_->setToolTip(tr("Changes between the day and the night sheet. F9 does the same."));
-    const auto offer = [&](QPushButton* button, const std::string& label, const QString& word, const QString& keys) {
+    const auto offer = [&](QPushButton* button, const std::string& label, const QString& word,
+                           const QString& keys) {
         button->setEnabled(is_open && !is_running && !label.empty());
-        button->setToolTip(label.empty() ? tr("nothing to %1").arg(word) : tr("%1: %2 (%3)").arg(word, to_q(label), keys));
+        button->setToolTip(label.empty() ? tr("nothing to %1").arg(word)
+                                         : tr("%1: %2 (%3)").arg(word, to_q(label), keys));
         button->setAccessibleName(button->toolTip());
     };
     offer(undo_, is_open ? desk_.view().undo_label : std::string(), tr("undo"), QStringLiteral("Ctrl+Z"));
-    offer(redo_, is_open ? desk_.view().redo_label : std::string(), tr("redo"), QStringLiteral("Ctrl+Shift+Z"));
+    offer(redo_, is_open ? desk_.view().redo_label : std::string(), tr("redo"),
+          QStringLiteral("Ctrl+Shift+Z"));
     undo_->setVisible(is_open), redo_->setVisible(is_open), plan_->setVisible(is_open);
     if (!is_open) return;
     const QFont font = text_font(15, Weight::bold);
     plan_->setFont(font);
-    plan_->setText(QFontMetricsF(font).elidedText(to_q(desk_.view().plan.settings.name), Qt::ElideRight, 170));
-    plan_->setToolTip(tr("plan %1, %2 to %3; the file is %4").arg(to_q(desk_.view().plan.settings.name)).arg(desk_.view().plan.settings.first_year).arg(desk_.view().plan.last_year()).arg(to_q(desk_.view().path)));
+    plan_->setText(
+        QFontMetricsF(font).elidedText(to_q(desk_.view().plan.settings.name), Qt::ElideRight, 170));
+    plan_->setToolTip(tr("plan %1, %2 to %3; the file is %4")
+                          .arg(to_q(desk_.view().plan.settings.name))
+                          .arg(desk_.view().plan.settings.first_year)
+                          .arg(desk_.view().plan.last_year())
+                          .arg(to_q(desk_.view().path)));
 }
 
-}  // namespace unstring
+} // namespace unstring

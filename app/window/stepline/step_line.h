@@ -13,18 +13,18 @@ namespace unstring {
 
 class StepLine : public QWidget {
     Q_OBJECT
-  public:
+public:
     explicit StepLine(Desk& desk, QWidget* parent = nullptr);
     /// The first step that is not up to date, hand_out when all are.
     [[nodiscard]] Step next_step() const;
 
-  Q_SIGNALS:
+Q_SIGNALS:
     void step_clicked(unstring::Step step);
     void run_wanted(unstring::Step step);
     void findings_wanted();
     void night_wanted();
 
-  private:
+private:
     void refresh();
     void show_menu(Step step, QPoint at);
 
@@ -38,4 +38,4 @@ class StepLine : public QWidget {
     QLabel* plan_ = nullptr;
 };
 
-}  // namespace unstring
+} // namespace unstring

@@ -10,9 +10,11 @@ using namespace unstring::test;
 
 namespace {
 
-StringLoop loop_of(const Scene& scene, const char* id) { return scene.loops[find_string(scene.view->city, id).place()]; }
+StringLoop loop_of(const Scene& scene, const char* id) {
+    return scene.loops[find_string(scene.view->city, id).place()];
+}
 
-}  // namespace
+} // namespace
 
 TEST_CASE("boundary: one per year that leaves lamps on, from the far end inward, cut-backs told apart") {
     const auto scene = make_scene(small_view());
@@ -56,7 +58,8 @@ TEST_CASE("boundary: any move changes years only, of lamps of its own string, an
         const std::vector<Boundary> boundaries = boundaries_of(loop, plan);
         if (boundaries.empty()) break;
         const Boundary& boundary = boundaries[dice() % boundaries.size()];
-        const BoundaryMove move = move_boundary(loop, plan, boundary, int(dice() % 16) - 1, int(dice() % 16) - 1);
+        const BoundaryMove move =
+            move_boundary(loop, plan, boundary, int(dice() % 16) - 1, int(dice() % 16) - 1);
         int changed = 0;
         for (std::size_t i = 0; i < plan.poles.size(); ++i) {
             PolePlan before = plan.poles[i], after = move.plan.poles[i];
@@ -83,7 +86,8 @@ TEST_CASE("boundary: near a cut-back it snaps to it, further away it does not") 
     CHECK_FALSE(snap_depths(loop, 1, 1, 1).is_snapped);
 }
 
-TEST_CASE("boundary: a string whose work is all in one year is split from the fold or from the station, within the plan's years") {
+TEST_CASE("boundary: a string whose work is all in one year is split from the fold or from the station, "
+          "within the plan's years") {
     const auto scene = make_scene(small_view());
     const StringLoop loop = loop_of(*scene, "S-01");
     Plan plan = scene->view->plan;

@@ -30,9 +30,10 @@ int years_that_differ(const Plan& a, const Plan& b) {
     return count;
 }
 
-}  // namespace
+} // namespace
 
-TEST_CASE("rail: a boundary dragged shows the ledger while it is held, is one edit when let go, and undoes as one") {
+TEST_CASE("rail: a boundary dragged shows the ledger while it is held, is one edit when let go, and undoes "
+          "as one") {
     Bench bench;
     const StringIx string = find_string(bench.city->view->city, "S-02");
     const Boundary boundary = bench.boundary(string, 1);
@@ -54,7 +55,8 @@ TEST_CASE("rail: a boundary dragged shows the ledger while it is held, is one ed
     save_picture(bench.window, "rail_dragged");
 
     QTest::mouseRelease(hand, Qt::LeftButton, Qt::NoModifier, from - QPoint(int(row.pitch * 2), 0));
-    CHECK(bench.city->labels == std::vector<std::string>{"boundary of S-02: 4 lamps to " + std::to_string(boundary.next_year)});
+    CHECK(bench.city->labels ==
+          std::vector<std::string>{"boundary of S-02: 4 lamps to " + std::to_string(boundary.next_year)});
     CHECK_FALSE(bench.window.desk().has_preview());
     CHECK(years_that_differ(before, bench.city->view->plan) == 4);
     for (const PolePlan& pole : bench.city->view->plan.poles)

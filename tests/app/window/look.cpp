@@ -13,7 +13,8 @@ TEST_CASE("look: text has 4.5:1 and signs 3:1 against the sheet by day and by ni
             CHECK(contrast_of(text, look.block) >= 4.5);
         }
         CHECK(contrast_of(look.band_ink, look.band) >= 4.5);
-        for (const QColor& sign : {look.rewire, look.solar, look.dead}) CHECK(contrast_of(sign, look.street) >= 3.0);
+        for (const QColor& sign : {look.rewire, look.solar, look.dead})
+            CHECK(contrast_of(sign, look.street) >= 3.0);
         CHECK(contrast_of(look.year_edge, look.sheet) >= 3.0);
     }
 }

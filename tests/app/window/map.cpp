@@ -26,7 +26,8 @@ TEST_CASE("pick grid: the nearest pole is the one that a look at every pole find
         std::optional<std::uint32_t> best;
         double best_m = 12;
         for (const PickGrid::Place& other : places)
-            if (const double far_m = distance_m(at, other.at); far_m < best_m) best_m = far_m, best = other.record;
+            if (const double far_m = distance_m(at, other.at); far_m < best_m)
+                best_m = far_m, best = other.record;
         REQUIRE(grid.nearest(at, 12) == best);
     }
 }
@@ -48,7 +49,8 @@ TEST_CASE("map: the wheel zooms about the pointer, a drag pans by as much as the
     const QPointF at(300, 120);
     const MapPoint held = map->camera().to_map(at);
     const double scale = map->camera().m_per_px;
-    QWheelEvent wheel(at, map->mapToGlobal(at), QPoint(), QPoint(0, 240), Qt::NoButton, Qt::NoModifier, Qt::NoScrollPhase, false);
+    QWheelEvent wheel(at, map->mapToGlobal(at), QPoint(), QPoint(0, 240), Qt::NoButton, Qt::NoModifier,
+                      Qt::NoScrollPhase, false);
     QApplication::sendEvent(map, &wheel);
     CHECK(map->camera().m_per_px < scale);
     CHECK(distance_m(map->camera().to_map(at), held) < 1e-6);
@@ -85,7 +87,7 @@ TEST_CASE("map: the pixels after twenty pans are those of a fresh paint") {
     QTest::mouseMove(map, QPoint(5, 5));
     settle();
     const QImage panned = map->grab().toImage();
-    Q_EMIT window.desk().look_changed();  // throws every cached picture away
+    Q_EMIT window.desk().look_changed(); // throws every cached picture away
     settle();
     CHECK(panned == map->grab().toImage());
 }
@@ -116,11 +118,13 @@ TEST_CASE("map: the year slider follows the mouse") {
     window.show_project(link_to(small_city()));
     settle();
     auto* strip = window.findChild<YearStrip*>("year_strip");
-    QTest::mouseClick(strip, Qt::LeftButton, Qt::NoModifier, strip->place_of_year(2030).toPoint() - QPoint(0, 8));
+    QTest::mouseClick(strip, Qt::LeftButton, Qt::NoModifier,
+                      strip->place_of_year(2030).toPoint() - QPoint(0, 8));
     CHECK(window.desk().year() == 2030);
 }
 
-TEST_CASE("live loop: without cut-backs the whole cable stays live until the last lamp is off; with them the far end dies") {
+TEST_CASE("live loop: without cut-backs the whole cable stays live until the last lamp is off; with them the "
+          "far end dies") {
     const auto scene = make_scene(small_view());
     const Plan& plan = scene->view->plan;
     const StringLoop& jumpered = scene->loops[1];

@@ -8,7 +8,8 @@
 using namespace unstring;
 using namespace unstring::test;
 
-TEST_CASE("window: a click on a pole opens its card; K R S mark it, L locks it, U clears, undo and redo follow") {
+TEST_CASE(
+    "window: a click on a pole opens its card; K R S mark it, L locks it, U clears, undo and redo follow") {
     MainWindow window(closed_doors());
     window.show();
     const auto city = small_city();
@@ -74,10 +75,12 @@ TEST_CASE("window: a shift-drag chooses the poles inside it, and one key marks t
     const std::size_t chosen = window.desk().selection().size();
     CHECK(chosen >= 4);
     CHECK(chosen < 12);
-    for (const PoleIx pole : window.desk().selection()) CHECK(city->view->city.poles[pole.place()].string == StringIx{0});
+    for (const PoleIx pole : window.desk().selection())
+        CHECK(city->view->city.poles[pole.place()].string == StringIx{0});
     QTest::keyClick(map, Qt::Key_R);
     CHECK(city->labels.size() == 1);
-    for (const PoleIx pole : window.desk().selection()) CHECK(city->view->plan.poles[pole.place()].mark == Choice::rewire);
+    for (const PoleIx pole : window.desk().selection())
+        CHECK(city->view->plan.poles[pole.place()].mark == Choice::rewire);
     CHECK(window.findChild<QLabel*>("card_name")->text() == QString("%1 poles").arg(chosen));
 }
 

@@ -12,7 +12,7 @@
 namespace {
 
 class QtSession : public Catch::TestEventListenerBase {
-  public:
+public:
     using TestEventListenerBase::TestEventListenerBase;
 
     void testRunStarting(const Catch::TestRunInfo&) override {
@@ -26,10 +26,10 @@ class QtSession : public Catch::TestEventListenerBase {
     }
     void testRunEnded(const Catch::TestRunStats&) override { application_.reset(); }
 
-  private:
+private:
     std::unique_ptr<QApplication> application_;
 };
 
-}  // namespace
+} // namespace
 
 CATCH_REGISTER_LISTENER(QtSession)

@@ -45,7 +45,8 @@ void add_string(City& city, const std::string& id, const std::string& prefix, in
     for (int position = 1; position <= lamps; ++position) {
         const bool is_out = position <= out;
         const int column = is_out ? position : lamps + 1 - position;
-        const MapPoint place{station.x_m - 25.0 * column - (is_out ? 0 : 8), station.y_m + (is_out ? 18.0 : -18.0)};
+        const MapPoint place{station.x_m - 25.0 * column - (is_out ? 0 : 8),
+                             station.y_m + (is_out ? 18.0 : -18.0)};
         city.poles.push_back(lamp(prefix + "-" + std::to_string(100 + position), string, position, place));
     }
     Transformer unit;
@@ -67,7 +68,8 @@ OptionCost option(double cost, bool possible, const std::string& stopped_by, con
     OptionCost made;
     made.possible = possible;
     made.stopped_by = stopped_by;
-    made.lines = {cash_line(plan, "works", 2028, 1, cost * 0.6, Purse::capital), cash_line(plan, "energy", 2029, 100, cost * 0.003, Purse::operating),
+    made.lines = {cash_line(plan, "works", 2028, 1, cost * 0.6, Purse::capital),
+                  cash_line(plan, "energy", 2029, 100, cost * 0.003, Purse::operating),
                   cash_line(plan, "upkeep", 2030, 1, cost * 0.1, Purse::operating)};
     made.cost = std::round(present_value(made.lines) * 100) / 100;
     return made;
@@ -95,7 +97,8 @@ PoleShade shade_of(PoleIx pole, bool is_dark) {
     shade.heads = {head};
     for (int i = 0; i < 72; ++i) {
         const double bearing = 5.0 * i;
-        shade.canopy_deg.push_back(float(bearing > 120 && bearing < 250 && is_dark ? 38 + 8 * std::sin(bearing / 9) : 4));
+        shade.canopy_deg.push_back(
+            float(bearing > 120 && bearing < 250 && is_dark ? 38 + 8 * std::sin(bearing / 9) : 4));
         shade.solid_deg.push_back(float(bearing > 60 && bearing < 110 ? 24 : 2));
         shade.unknown_deg.push_back(0);
     }
@@ -115,11 +118,16 @@ void add_decisions(ProjectView& view) {
         PoleDecision decision;
         decision.pole = pole;
         decision.choice = row.choice;
-        decision.options = {option(9840, false, "the string ends in 2031", view.plan), option(6310, true, "", view.plan), option(5120, !is_dark, is_dark ? "61 nights dark a year, goal 3" : "", view.plan)};
-        decision.reason = is_dark ? "Rewired because crowns to the south hide the winter sun and five neighbours share its trench; alone it would cost $7,900." : "Solar is $1,190 cheaper than rewire, and the sky is open enough.";
+        decision.options = {
+            option(9840, false, "the string ends in 2031", view.plan), option(6310, true, "", view.plan),
+            option(5120, !is_dark, is_dark ? "61 nights dark a year, goal 3" : "", view.plan)};
+        decision.reason = is_dark ? "Rewired because crowns to the south hide the winter sun and five "
+                                    "neighbours share its trench; alone it would cost $7,900."
+                                  : "Solar is $1,190 cheaper than rewire, and the sky is open enough.";
         decision.numbers = {{"trench_m", 6.2}};
         decision.sources = {"prices: the default book"};
-        decision.trench_m = 6.2, decision.trench_share = 2480, decision.volts = 118.6, decision.drop_frac = 0.024, decision.breakeven_trench_m = 3.1;
+        decision.trench_m = 6.2, decision.trench_share = 2480, decision.volts = 118.6,
+        decision.drop_frac = 0.024, decision.breakeven_trench_m = 3.1;
         decide.poles.push_back(decision);
         shade.poles.push_back(shade_of(pole, is_dark));
     }
@@ -132,7 +140,9 @@ void add_years(ProjectView& view) {
     for (std::size_t i = 0; i < view.city.poles.size(); ++i) {
         const Pole& pole = view.city.poles[i];
         if (!is_candidate(view.city, pole)) continue;
-        const int lamps = int(std::count_if(view.city.poles.begin(), view.city.poles.end(), [&pole](const Pole& other) { return other.string == pole.string; }));
+        const int lamps =
+            int(std::count_if(view.city.poles.begin(), view.city.poles.end(),
+                              [&pole](const Pole& other) { return other.string == pole.string; }));
         const int depth = *pole.order <= (lamps + 1) / 2 ? *pole.order : lamps + 1 - *pole.order;
         const int deepest = (lamps + 1) / 2;
         view.plan.poles[i].year = kFirstYear + std::min(kYears - 1, (deepest - depth) * 4 / deepest);
@@ -140,7 +150,7 @@ void add_years(ProjectView& view) {
     }
 }
 
-}  // namespace
+} // namespace
 
 std::shared_ptr<ProjectView> small_view() {
     auto view = std::make_shared<ProjectView>();
@@ -154,11 +164,14 @@ std::shared_ptr<ProjectView> small_view() {
     SeriesString parallel;
     parallel.id = "P-9", parallel.kind = CircuitKind::parallel;
     city.strings.push_back(parallel);
-    for (int i = 0; i < 5; ++i) city.poles.push_back(lamp("P-" + std::to_string(i), StringIx{3}, i + 1, {100.0 + 30 * i, 480}));
+    for (int i = 0; i < 5; ++i)
+        city.poles.push_back(lamp("P-" + std::to_string(i), StringIx{3}, i + 1, {100.0 + 30 * i, 480}));
     city.poles[20].status = PoleStatus::down;
     city.poles[3].critical = true;
-    city.cutbacks.push_back({StringIx{0}, "S-01", "01-103", "01-110", CutBackKind::pullbox, true, 12.0, false, {}});
-    city.cutbacks.push_back({StringIx{0}, "S-01", "01-105", "01-108", CutBackKind::trench, false, 14.0, false, {}});
+    city.cutbacks.push_back(
+        {StringIx{0}, "S-01", "01-103", "01-110", CutBackKind::pullbox, true, 12.0, false, {}});
+    city.cutbacks.push_back(
+        {StringIx{0}, "S-01", "01-105", "01-108", CutBackKind::trench, false, 14.0, false, {}});
     city.services.push_back({"SV-1", ServiceKind::service, {300, 420}, true, "", 240, 12.0, 6.0, false, {}});
     city.obstacles.push_back({{{420, 300}, {460, 300}, {460, 340}, {420, 340}}, 9});
     city.canopy.push_back({{{500, 420}, {520, 425}, {525, 440}, {505, 445}}, 11, Leaf::deciduous, false});
@@ -167,8 +180,10 @@ std::shared_ptr<ProjectView> small_view() {
     view->plan.settings.first_year = kFirstYear, view->plan.settings.years = kYears;
     add_decisions(*view);
     add_years(*view);
-    view->findings = {make_finding("pole-near-twin", "poles.csv", 14, "02-101", "0.4 m from 02-102", "0.5 m or more", "Measure again, or remove one row", "poles"),
-                      make_finding("span-long", "poles.csv", 22, "02-109", "span of 131 m", "at most 120 m", "Check the wiring order", "poles")};
+    view->findings = {make_finding("pole-near-twin", "poles.csv", 14, "02-101", "0.4 m from 02-102",
+                                   "0.5 m or more", "Measure again, or remove one row", "poles"),
+                      make_finding("span-long", "poles.csv", 22, "02-109", "span of 131 m", "at most 120 m",
+                                   "Check the wiring order", "poles")};
     for (StepState& step : view->steps) step = {StepStanding::up_to_date, 0, 0, "2026-11-30T10:41:00"};
     view->steps[1].warnings = 2;
     view->steps[5].standing = StepStanding::not_yet;
@@ -192,14 +207,18 @@ PhaseResult counted_phase(const ProjectView& view, const Plan& plan) {
             state.year = year;
             state.transformer = TransformerIx{s};
             for (std::size_t i = 0; i < plan.poles.size(); ++i)
-                if (view.city.poles[i].string == state.string && is_candidate(view.city, view.city.poles[i]) && (plan.poles[i].year == 0 || plan.poles[i].year > year)) ++state.lamps;
+                if (view.city.poles[i].string == state.string &&
+                    is_candidate(view.city, view.city.poles[i]) &&
+                    (plan.poles[i].year == 0 || plan.poles[i].year > year))
+                    ++state.lamps;
             state.load_kva = state.load_kw = 0.3 * state.lamps;
             state.volts = 1000 * state.load_kva / 6.6;
             state.cable_m = 25.0 * state.lamps;
             state.loading_frac = state.load_kva / view.city.transformers[s].rated_kw;
             state.verdict = verdict_of(true, state.lamps, state.loading_frac, 0.3);
             phase.string_years.push_back(state);
-            if (year >= kFirstYear) phase.years[std::size_t(year - kFirstYear)].series_lamps_left += state.lamps;
+            if (year >= kFirstYear)
+                phase.years[std::size_t(year - kFirstYear)].series_lamps_left += state.lamps;
         }
     }
     for (const PolePlan& row : plan.poles) {
@@ -212,7 +231,11 @@ PhaseResult counted_phase(const ProjectView& view, const Plan& plan) {
     }
     phase.bound = phase.cost * 0.97;
     for (const PhaseYear& year : phase.years)
-        if (year.hours.line > *year.line_limit_h) phase.failures.push_back(make_finding("hours-short", "", 0, "year " + std::to_string(year.year), std::to_string(int(year.hours.line)) + " h of the line crew", "200 h", "Move work to another year"));
+        if (year.hours.line > *year.line_limit_h)
+            phase.failures.push_back(
+                make_finding("hours-short", "", 0, "year " + std::to_string(year.year),
+                             std::to_string(int(year.hours.line)) + " h of the line crew", "200 h",
+                             "Move work to another year"));
     return phase;
 }
 
@@ -235,7 +258,9 @@ ProjectLink link_to(const std::shared_ptr<SmallCity>& city) {
         city->before.push_back(city->view);
         city->after.clear();
         city->labels.push_back(label);
-        city->history.insert(city->history.begin(), EditLine{std::int64_t(city->labels.size()), "2026-12-01T10:42:07", "east ward", "first", label, 0});
+        city->history.insert(city->history.begin(),
+                             EditLine{std::int64_t(city->labels.size()), "2026-12-01T10:42:07", "east ward",
+                                      "first", label, 0});
         city->view = made;
         return change;
     };
@@ -258,7 +283,9 @@ ProjectLink link_to(const std::shared_ptr<SmallCity>& city) {
         return std::optional(change);
     };
     link.history = [city](const std::string&, int at_most) -> Expected<std::vector<EditLine>> {
-        return std::vector<EditLine>(city->history.begin(), city->history.begin() + std::min<long>(at_most, long(city->history.size())));
+        return std::vector<EditLine>(city->history.begin(),
+                                     city->history.begin() +
+                                         std::min<long>(at_most, long(city->history.size())));
     };
     link.preview = [city](const Plan& next) {
         ++city->previews;
@@ -283,7 +310,8 @@ ProjectLink link_to(const std::shared_ptr<SmallCity>& city) {
         city->view = made;
         return {};
     };
-    link.hand_out = [city](const HandOutOptions& options, const Progress&) -> Expected<std::vector<std::string>> {
+    link.hand_out = [city](const HandOutOptions& options,
+                           const Progress&) -> Expected<std::vector<std::string>> {
         city->handed_out.push_back(options);
         return std::vector<std::string>{options.to + "/orders.csv"};
     };
@@ -292,8 +320,13 @@ ProjectLink link_to(const std::shared_ptr<SmallCity>& city) {
 
 Doors closed_doors() {
     Doors doors;
-    doors.open = [](const std::string& path) -> Expected<ProjectLink> { return tl::make_unexpected(Fault{FaultCode::file_missing, path, 0, "", "no such file", "a project file", "Choose another file"}); };
-    doors.gather = [](const GatherWish&, const Progress&) -> Expected<std::vector<std::string>> { return std::vector<std::string>{}; };
+    doors.open = [](const std::string& path) -> Expected<ProjectLink> {
+        return tl::make_unexpected(Fault{FaultCode::file_missing, path, 0, "", "no such file",
+                                         "a project file", "Choose another file"});
+    };
+    doors.gather = [](const GatherWish&, const Progress&) -> Expected<std::vector<std::string>> {
+        return std::vector<std::string>{};
+    };
     return doors;
 }
 
@@ -319,4 +352,4 @@ double drawn_frac(QWidget& widget) {
     return double(other) / (double(picture.width()) * picture.height());
 }
 
-}  // namespace unstring::test
+} // namespace unstring::test

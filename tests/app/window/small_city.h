@@ -1,5 +1,6 @@
 #pragma once
-// A hand-made city of three strings for the window's tests: no file, no solver; what phase would say is counted here.
+// A hand-made city of three strings for the window's tests: no file, no solver; what phase would say is
+// counted here.
 
 #include <memory>
 #include <string>
@@ -11,17 +12,17 @@ namespace unstring::test {
 
 struct SmallCity {
     std::shared_ptr<const ProjectView> view;
-    std::vector<std::shared_ptr<const ProjectView>> before;  ///< undo
-    std::vector<std::shared_ptr<const ProjectView>> after;   ///< redo
-    std::vector<std::string> labels;                         ///< of every edit, oldest first
+    std::vector<std::shared_ptr<const ProjectView>> before; ///< undo
+    std::vector<std::shared_ptr<const ProjectView>> after;  ///< redo
+    std::vector<std::string> labels;                        ///< of every edit, oldest first
     std::vector<EditLine> history;
     int previews = 0;
     std::atomic<int> steps_ended = 0, steps_cancelled = 0;
     std::vector<HandOutOptions> handed_out;
 };
 
-/// Strings "S-01" of 12 lamps with cut-backs, "S-02" of 25 without, "Longford Avenue North (1938)" of 60; five parallel
-/// poles, one pole down. Decided, phased in 2027..2031.
+/// Strings "S-01" of 12 lamps with cut-backs, "S-02" of 25 without, "Longford Avenue North (1938)" of 60;
+/// five parallel poles, one pole down. Decided, phased in 2027..2031.
 [[nodiscard]] std::shared_ptr<ProjectView> small_view();
 [[nodiscard]] std::shared_ptr<SmallCity> small_city(std::shared_ptr<ProjectView> view = small_view());
 [[nodiscard]] ProjectLink link_to(const std::shared_ptr<SmallCity>& city);
@@ -37,4 +38,4 @@ std::string save_picture(QWidget& widget, const std::string& name, double ratio 
 /// Part of the pixels that differ from the corner's colour: 0 = nothing is drawn.
 [[nodiscard]] double drawn_frac(QWidget& widget);
 
-}  // namespace unstring::test
+} // namespace unstring::test

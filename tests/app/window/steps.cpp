@@ -51,7 +51,8 @@ TEST_CASE("step line: a step runs to its end by its own word, and the window say
     window.show();
     window.show_project(link_to(city));
     settle();
-    QTest::mouseClick(window.findChild<StepKnot*>("step_shade"), Qt::LeftButton, Qt::NoModifier, QPoint(40, 18));
+    QTest::mouseClick(window.findChild<StepKnot*>("step_shade"), Qt::LeftButton, Qt::NoModifier,
+                      QPoint(40, 18));
     REQUIRE(QTest::qWaitFor([&] { return city->steps_ended == 1 && !window.desk().is_running(); }, 8000));
     CHECK(window.findChild<QLabel*>("notice")->text().startsWith("shade took"));
 }
@@ -62,7 +63,8 @@ TEST_CASE("step line: a step with findings opens them, and one click leads to th
     window.show();
     window.show_project(link_to(city));
     settle();
-    QTest::mouseClick(window.findChild<StepKnot*>("step_vet"), Qt::LeftButton, Qt::NoModifier, QPoint(40, 18));
+    QTest::mouseClick(window.findChild<StepKnot*>("step_vet"), Qt::LeftButton, Qt::NoModifier,
+                      QPoint(40, 18));
     auto* list = window.findChild<QTreeWidget*>("findings_list");
     REQUIRE(list->isVisible());
     QTreeWidgetItem* finding = list->topLevelItem(0)->child(0);
@@ -74,14 +76,16 @@ TEST_CASE("step line: a step with findings opens them, and one click leads to th
 
 TEST_CASE("step line: a vet stopped by errors offers to set their records aside, and only then") {
     auto view = small_view();
-    view->findings.push_back(make_finding("pole-id-twice", "poles.csv", 30, "02-111", "the id of row 29", "an id of its own", "Give one of them another id", "poles"));
+    view->findings.push_back(make_finding("pole-id-twice", "poles.csv", 30, "02-111", "the id of row 29",
+                                          "an id of its own", "Give one of them another id", "poles"));
     view->steps[1] = {StepStanding::stopped, 1, 2, "2026-11-30T10:41:00"};
     const auto city = small_city(view);
     MainWindow window(closed_doors());
     window.show();
     window.show_project(link_to(city));
     settle();
-    QTest::mouseClick(window.findChild<StepKnot*>("step_vet"), Qt::LeftButton, Qt::NoModifier, QPoint(40, 18));
+    QTest::mouseClick(window.findChild<StepKnot*>("step_vet"), Qt::LeftButton, Qt::NoModifier,
+                      QPoint(40, 18));
     auto* aside = window.findChild<QPushButton*>("set_aside");
     REQUIRE(aside->isVisible());
     save_picture(window, "vet_stopped");
@@ -114,7 +118,8 @@ TEST_CASE("hand out: the dialogue shows the cautions, and hands folder, year, cr
     window.show();
     window.show_project(link_to(city));
     settle();
-    QTest::mouseClick(window.findChild<StepKnot*>("step_hand_out"), Qt::LeftButton, Qt::NoModifier, QPoint(40, 18));
+    QTest::mouseClick(window.findChild<StepKnot*>("step_hand_out"), Qt::LeftButton, Qt::NoModifier,
+                      QPoint(40, 18));
     auto* dialog = window.findChild<QDialog*>("hand_out_dialog");
     REQUIRE(dialog != nullptr);
     settle();

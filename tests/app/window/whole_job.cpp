@@ -1,4 +1,5 @@
-// The whole job by mouse and keys on the sample city: gather, the steps, three poles, marks, a boundary, undo, hand out.
+// The whole job by mouse and keys on the sample city: gather, the steps, three poles, marks, a boundary,
+// undo, hand out.
 #include <catch2/catch.hpp>
 
 #include <QComboBox>
@@ -18,16 +19,20 @@ using namespace unstring::test;
 
 namespace {
 
-constexpr int kStepWait_ms = 240000;  // two shared cores under a sanitizer
+constexpr int kStepWait_ms = 240000; // two shared cores under a sanitizer
 
 GatherWish sample_wish(const std::string& project) {
     const std::string city = std::string(UNSTRING_SOURCE) + "/sampledata/quillhaven/";
     GatherWish wish;
     wish.project_path = project;
-    wish.files.poles = city + "poles.csv", wish.files.circuits = city + "circuits.csv", wish.files.transformers = city + "transformers.csv";
-    wish.files.services = city + "services.csv", wish.files.streets = city + "streets.gpkg", wish.files.canopy = city + "canopy.tif";
-    wish.files.obstacles = city + "buildings.gpkg", wish.files.climate = city + "climate.csv", wish.files.prices = city + "prices.csv";
-    wish.files.budget = city + "budget.csv", wish.files.cutbacks = city + "cutbacks.csv", wish.files.marks = city + "marks.csv";
+    wish.files.poles = city + "poles.csv", wish.files.circuits = city + "circuits.csv",
+    wish.files.transformers = city + "transformers.csv";
+    wish.files.services = city + "services.csv", wish.files.streets = city + "streets.gpkg",
+    wish.files.canopy = city + "canopy.tif";
+    wish.files.obstacles = city + "buildings.gpkg", wish.files.climate = city + "climate.csv",
+    wish.files.prices = city + "prices.csv";
+    wish.files.budget = city + "budget.csv", wish.files.cutbacks = city + "cutbacks.csv",
+    wish.files.marks = city + "marks.csv";
     return wish;
 }
 
@@ -42,12 +47,15 @@ std::vector<PoleIx> three_poles(const MapView& map, const Scene& scene, StringIx
     std::vector<PoleIx> poles;
     for (const PoleIx lamp : scene.loops[string.place()].lamps) {
         if (poles.size() == 3) break;
-        if (is_candidate(scene.view->city, scene.view->city.poles[lamp.place()]) && map.pole_at(map.place_of(lamp)) == lamp) poles.push_back(lamp);
+        if (is_candidate(scene.view->city, scene.view->city.poles[lamp.place()]) &&
+            map.pole_at(map.place_of(lamp)) == lamp)
+            poles.push_back(lamp);
     }
     return poles;
 }
 
-void drag_boundary(RailView& rail, StringIx string, const Boundary& boundary, int lamps, const std::function<void()>& while_held) {
+void drag_boundary(RailView& rail, StringIx string, const Boundary& boundary, int lamps,
+                   const std::function<void()>& while_held) {
     const QPoint from = rail.handle_of(string, boundary).toPoint();
     const QPoint to = from - QPoint(int(rail.row_of(string).pitch * lamps), 0);
     QTest::mousePress(rail.viewport(), Qt::LeftButton, Qt::NoModifier, from);
@@ -58,7 +66,7 @@ void drag_boundary(RailView& rail, StringIx string, const Boundary& boundary, in
     QTest::mouseRelease(rail.viewport(), Qt::LeftButton, Qt::NoModifier, to);
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("window: the whole job on the sample city, from its files to the work orders") {
     QTemporaryDir folder;
@@ -84,7 +92,8 @@ TEST_CASE("window: the whole job on the sample city, from its files to the work 
         settle();
     }
     REQUIRE(desk.phase() != nullptr);
-    const auto beside = OpenProject::open(path, "first", true);  // a second reader of the file sees the same plan
+    const auto beside =
+        OpenProject::open(path, "first", true); // a second reader of the file sees the same plan
     REQUIRE(beside.has_value());
     REQUIRE((*beside)->view()->phase.has_value());
     CHECK((*beside)->view()->phase->cost == Approx(desk.phase()->cost).epsilon(1e-12));
@@ -104,7 +113,8 @@ TEST_CASE("window: the whole job on the sample city, from its files to the work 
     for (std::size_t i = 0; i < 3; ++i) {
         QTest::mouseClick(map, Qt::LeftButton, Qt::NoModifier, map->place_of(poles[i]).toPoint());
         REQUIRE(desk.selection() == std::vector<PoleIx>{poles[i]});
-        CHECK(window.findChild<QLabel*>("card_name")->text().toStdString() == "Pole " + desk.view().city.poles[poles[i].place()].id);
+        CHECK(window.findChild<QLabel*>("card_name")->text().toStdString() ==
+              "Pole " + desk.view().city.poles[poles[i].place()].id);
         CHECK_FALSE(window.findChild<QLabel*>("card_why")->text().isEmpty());
         QTest::keyClick(map, keys[i]);
         CHECK(desk.view().plan.poles[poles[i].place()].mark == marks[i]);
@@ -120,7 +130,9 @@ TEST_CASE("window: the whole job on the sample city, from its files to the work 
     std::vector<Boundary> boundaries = boundaries_of(loop, desk.view().plan);
     if (boundaries.empty()) boundaries = end_boundaries(loop, desk.view().plan, desk.year());
     REQUIRE_FALSE(boundaries.empty());
-    const int inward = boundaries.front().out_on > 0 ? -3 : 3;  // lamps: from the fold to the right, from the station to the left
+    const int inward = boundaries.front().out_on > 0
+                           ? -3
+                           : 3; // lamps: from the fold to the right, from the station to the left
     const Plan marked = desk.view().plan;
     const std::size_t edits = labels(desk).size();
     drag_boundary(*rail, string, boundaries.front(), inward, [&] {
@@ -130,18 +142,21 @@ TEST_CASE("window: the whole job on the sample city, from its files to the work 
     REQUIRE(labels(desk).size() == edits + 1);
     CHECK(labels(desk).front().starts_with("boundary of S-04"));
     CHECK(desk.view().plan.poles != marked.poles);
-    CHECK(desk.view().steps[4].standing == StepStanding::stale);  // the marks outrank the hand: decide is to run first
+    CHECK(desk.view().steps[4].standing ==
+          StepStanding::stale); // the marks outrank the hand: decide is to run first
     for (int i = 0; i < 4; ++i) QTest::keyClick(map, Qt::Key_Z, Qt::ControlModifier);
     CHECK(desk.view().plan.poles == phased.poles);
     CHECK(desk.view().steps[3].standing == StepStanding::up_to_date);
     drag_boundary(*rail, string, boundaries.front(), inward, [] {});
     const StepStanding dragged = desk.view().steps[4].standing;
-    CHECK((dragged == StepStanding::by_hand || dragged == StepStanding::stopped));  // stopped: a hard check fails so
+    CHECK((dragged == StepStanding::by_hand ||
+           dragged == StepStanding::stopped)); // stopped: a hard check fails so
     QTest::mouseClick(window.findChild<QPushButton*>("undo"), Qt::LeftButton);
     CHECK(desk.view().plan.poles == phased.poles);
     CHECK(desk.view().steps[4].standing == phased_standing);
 
-    QTest::mouseClick(window.findChild<StepKnot*>("step_hand_out"), Qt::LeftButton, Qt::NoModifier, QPoint(40, 18));
+    QTest::mouseClick(window.findChild<StepKnot*>("step_hand_out"), Qt::LeftButton, Qt::NoModifier,
+                      QPoint(40, 18));
     auto* dialog = window.findChild<QDialog*>("hand_out_dialog");
     REQUIRE(dialog != nullptr);
     const QString orders = folder.path() + "/orders";

@@ -126,9 +126,20 @@ void YearStrip::paint_legend(QPainter& painter) {
     };
     double full_width = 0;
     for (const PoleSign sign : signs) full_width += 33 + metrics.horizontalAdvance(full_word(sign));
-    const bool is_compact = x + full_width > limit; // then the shapes and their numbers speak alone
+    // Where there is no room the shapes and their numbers speak alone, those outside the plan first.
+    const auto is_outside = [](PoleSign sign) {
+        return sign == PoleSign::parallel || sign == PoleSign::out_of_plan;
+    };
+    double plan_width = 0;
+    for (const PoleSign sign : signs)
+        plan_width +=
+            33 + metrics.horizontalAdvance(is_outside(sign) ? number_text(double(counts[std::size_t(sign)]))
+                                                            : full_word(sign));
+    const bool all_in_words = x + full_width <= limit, is_compact = x + plan_width > limit;
     for (const PoleSign sign : signs) {
-        const QString word = is_compact ? number_text(double(counts[std::size_t(sign)])) : full_word(sign);
+        const QString word = all_in_words || (!is_compact && !is_outside(sign))
+                                 ? full_word(sign)
+                                 : number_text(double(counts[std::size_t(sign)]));
         if (x + 17 + metrics.horizontalAdvance(word) > limit + 8) break;
         const bool is_shown = map_.style().shown[std::size_t(sign)];
         draw_pole_sign(painter, look, sign, true, QPointF(x + 6, 17.5), 6, false);

@@ -262,10 +262,11 @@ void RailView::paint_bar(QPainter& painter, const RailRow& row, const Boundary& 
     const Look& look = desk_.look();
     const double out_x = row.edge(boundary.out_on), ret_x = row.edge(boundary.ret_on),
                  middle = row.box.center().y();
+    // One bar where both legs are cut at the same depth; else two, and a thin link between them.
     QPainterPath bar(QPointF(out_x, row.y_out - 11));
-    bar.lineTo(out_x, middle - 3);
-    bar.lineTo(ret_x, middle + 3);
-    bar.lineTo(ret_x, row.y_ret + 11);
+    const bool is_straight = std::abs(out_x - ret_x) < 0.5;
+    bar.lineTo(out_x, is_straight ? row.y_ret + 11 : middle - 1);
+    if (!is_straight) bar.moveTo(ret_x, middle + 1), bar.lineTo(ret_x, row.y_ret + 11);
     painter.setBrush(Qt::NoBrush);
     painter.setPen(QPen(look.sheet, is_held ? 10 : 7));
     painter.drawPath(bar);
@@ -277,6 +278,9 @@ void RailView::paint_bar(QPainter& painter, const RailRow& row, const Boundary& 
     if (boundary.stand == Stand::candidate) pen.setDashPattern({2, 1.5});
     painter.setPen(pen);
     painter.drawPath(bar);
+    pen.setWidthF(1.2);
+    painter.setPen(pen);
+    if (!is_straight) painter.drawLine(QPointF(out_x, middle), QPointF(ret_x, middle));
     const QPointF at((out_x + ret_x) / 2, middle);
     if (boundary.stand == Stand::jumpered) {
         painter.setPen(QPen(is_hot ? look.hand : look.ink, 1.3)), painter.setBrush(look.sheet);

@@ -53,7 +53,7 @@ Expected<void> write_prices(const std::string& folder) {
 
 Expected<void> write_budget(const std::string& folder, long poles) {
     // Enough for the whole conversion, with little to spare in money, diggers' and electricians' hours.
-    constexpr std::array<double, 8> kMoney_k = {950, 1050, 1100, 1150, 1200, 1250, 1250, 1250};
+    constexpr std::array<double, 8> kMoney_k = {1000, 1100, 1200, 1250, 1250, 1300, 1300, 1300};
     CsvFile file(folder + "/budget.csv",
                  "year,money,fund,wards,kinds,spend_by,match_frac,line_h,civil_h,lighting_h,electric_h");
     const double size = static_cast<double>(poles) / 1400;
@@ -62,7 +62,11 @@ Expected<void> write_budget(const std::string& folder, long poles) {
     };
     for (std::size_t i = 0; i < kMoney_k.size(); ++i)
         file.row({std::to_string(2027 + i), scaled(kMoney_k[i] * 1000), "street lighting", "", "", "", "",
-                  scaled(200), scaled(i < 2 ? 2300 : 2700), scaled(350), scaled(i < 2 ? 1000 : 1100)});
+                  scaled(250),
+                  scaled(i == 0   ? 2600
+                         : i == 1 ? 2800
+                                  : 3200),
+                  scaled(400), scaled(i < 2 ? 850 : 900)});
     return file.close();
 }
 

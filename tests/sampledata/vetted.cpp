@@ -1,5 +1,5 @@
-// Both sets through gather and vet: the dirty one gives each finding at the record that it was made for, and after its
-// errors are set aside none is left; the clean one has strings that a unit carries.
+// Both sets through gather and vet: the dirty one gives each finding at the record that it was made for, and
+// after its errors are set aside none is left; the clean one has strings that a unit carries.
 #include <algorithm>
 #include <set>
 
@@ -20,7 +20,8 @@ const std::string kFolder = std::string(UNSTRING_SOURCE) + "/sampledata/";
 unstring::Gathered gathered(const std::string& folder) {
     const std::string path = kFolder + folder + "/";
     unstring::GatherFiles files;
-    files.poles = path + "poles.csv", files.circuits = path + "circuits.csv", files.transformers = path + "transformers.csv";
+    files.poles = path + "poles.csv", files.circuits = path + "circuits.csv",
+    files.transformers = path + "transformers.csv";
     files.services = path + "services.csv", files.cutbacks = path + "cutbacks.csv";
     files.crs = "EPSG:32609";
     if (folder == "dirty") files.columns = path + "map.json";
@@ -31,7 +32,8 @@ unstring::Gathered gathered(const std::string& folder) {
 }
 
 long errors_in(const std::vector<Finding>& findings) {
-    return std::count_if(findings.begin(), findings.end(), [](const Finding& each) { return each.severity == Severity::error; });
+    return std::count_if(findings.begin(), findings.end(),
+                         [](const Finding& each) { return each.severity == Severity::error; });
 }
 
 bool is_there(const std::vector<Finding>& findings, const Row& row) {
@@ -46,17 +48,20 @@ bool is_there(const std::vector<Finding>& findings, const Row& row) {
 TEST_CASE("dirty set: vet gives each finding that its rows were made for, and set aside no error is left") {
     const unstring::Gathered read = gathered("dirty");
     const unstring::VetResult result = unstring::vet_city(read.city, read.catalog);
-    const std::set<std::string> at_gather = {"row-broken",   "number-unreadable", "string-name-variant", "column-missing",
-                                             "pole-unknown", "unit-guessed",      "encoding-guessed"};
+    const std::set<std::string> at_gather = {"row-broken",      "number-unreadable", "string-name-variant",
+                                             "column-missing",  "pole-unknown",      "unit-guessed",
+                                             "encoding-guessed"};
     for (const Row& row : read_csv(kFolder + "dirty/expected.csv")) {
         if (at_gather.contains(row.at("code"))) continue;
-        INFO(row.at("code") << " " << row.at("file") << " " << row.at("record") << " line " << row.at("line"));
+        INFO(row.at("code") << " " << row.at("file") << " " << row.at("record") << " line "
+                            << row.at("line"));
         CHECK(is_there(result.findings, row));
     }
     const unstring::City kept = unstring::set_aside_errors(read.city, result.findings);
     const unstring::VetResult again = unstring::vet_city(kept, read.catalog);
     for (const Finding& each : again.findings)
-        if (each.severity == Severity::error) UNSCOPED_INFO(each.code << " " << each.record << " " << each.found);
+        if (each.severity == Severity::error)
+            UNSCOPED_INFO(each.code << " " << each.record << " " << each.found);
     CHECK(errors_in(again.findings) == 0);
 }
 
@@ -64,7 +69,8 @@ TEST_CASE("Quillhaven: vet finds no error") {
     const unstring::Gathered read = gathered("quillhaven");
     const unstring::VetResult result = unstring::vet_city(read.city, read.catalog);
     for (const Finding& each : result.findings)
-        if (each.severity == Severity::error) UNSCOPED_INFO(each.code << " " << each.record << " " << each.found);
+        if (each.severity == Severity::error)
+            UNSCOPED_INFO(each.code << " " << each.record << " " << each.found);
     CHECK(errors_in(result.findings) == 0);
     CHECK(result.strings.size() == 14);
     for (const unstring::VetString& string : result.strings) {

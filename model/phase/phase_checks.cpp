@@ -34,6 +34,9 @@ class Checks {
         for (Finding& finding : fund_findings(facts_, book_)) result_.failures.push_back(std::move(finding));
         for (const Finding& finding : result_.failures)
             if (finding.severity == Severity::error || finding.code == "money-short" || finding.code == "hours-short") result_.feasible = false;
+        // A year that is not reached breaks no limit: what it would take is said, and the plan stands.
+        check_money_for_rest();
+        check_hours_for_rest();
     }
 
   private:
@@ -207,30 +210,28 @@ class Checks {
     }
 
     void check_poles() {
-        std::vector<std::vector<std::size_t>> unreached(facts_.city.strings.size());
+        unreached_.resize(facts_.city.strings.size());
         for (std::size_t i = 0; i < facts_.city.poles.size(); ++i) {
             const Pole& pole = facts_.city.poles[i];
             if (!is_candidate(facts_.city, pole)) continue;
             const Choice choice = facts_.plan.poles[i].choice;
-            if (facts_.pole_year[i] == 0 && choice != Choice::keep) unreached[pole.string.place()].push_back(i);
+            if (facts_.pole_year[i] == 0 && choice != Choice::keep) unreached_[pole.string.place()].push_back(i);
             if (facts_.pole_year[i] == 0) continue;
             if (pole.earliest_year && facts_.pole_year[i] < *pole.earliest_year)
                 say("owner-consent", pole.id, fmt::format("work in {}", facts_.pole_year[i]), fmt::format("not before {}", *pole.earliest_year),
                     "move it to a later year", "poles");
             check_choice(i);
         }
-        for (std::size_t s = 0; s < unreached.size(); ++s) check_unreached(s, unreached[s]);
-        check_money_for_rest(unreached);
-        check_hours_for_rest(unreached);
+        for (std::size_t s = 0; s < unreached_.size(); ++s) check_unreached(s, unreached_[s]);
     }
 
     /// What the poles without a year would take of the last year's money, beside what is left of it.
-    void check_money_for_rest(const std::vector<std::vector<std::size_t>>& unreached) {
+    void check_money_for_rest() {
         if (result_.not_reached == 0 || result_.years.empty() || !result_.years.back().money_limit) return;
         const PhaseYear& year = result_.years.back();
         double needed = 0;
         int poles = 0;
-        for (const auto& of_string : unreached)
+        for (const auto& of_string : unreached_)
             for (const std::size_t i : of_string) {
                 const PolePlan& row = facts_.plan.poles[i];
                 if (row.choice != Choice::rewire && row.choice != Choice::solar) continue;
@@ -245,11 +246,11 @@ class Checks {
     }
 
     /// Likewise of each crew's hours.
-    void check_hours_for_rest(const std::vector<std::vector<std::size_t>>& unreached) {
+    void check_hours_for_rest() {
         if (result_.not_reached == 0 || result_.years.empty()) return;
         const PhaseYear& year = result_.years.back();
         TaskHours needed;
-        for (const auto& of_string : unreached)
+        for (const auto& of_string : unreached_)
             for (const std::size_t i : of_string) needed += pole_hours(facts_.prices, facts_.city.poles[i], facts_.plan.poles[i].choice, year.year);
         const auto check = [&](const char* crew, double wanted, double used, const std::optional<double>& limit) {
             if (!limit || wanted <= std::max(0.0, *limit - used)) return;
@@ -303,6 +304,7 @@ class Checks {
     const PhaseFacts& facts_;
     CashBook& book_;
     PhaseResult& result_;
+    std::vector<std::vector<std::size_t>> unreached_;  ///< [string] poles without a year
 };
 
 }  // namespace

@@ -69,7 +69,7 @@ struct PhaseResult {
     std::vector<int> pole_year;  ///< one per pole of the city: calendar year, 0 = none
     int not_reached = 0;
     double cost = 0, bound = 0;  ///< dollars, present value
-    bool feasible = true;        ///< no hard check failed
+    bool feasible = true;        ///< no hard check failed and no year over its money or hours; poles not reached do not count
     std::vector<Finding> failures;
     double seconds = 0;
 };

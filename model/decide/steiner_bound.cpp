@@ -27,6 +27,7 @@ class Cut {
     void start(int t) {
         ++mark_;
         entering_.clear();
+        stack_.clear();  // a cut whose prize was used up leaves vertices that it never took in
         has_root_ = false;
         add(t);
     }

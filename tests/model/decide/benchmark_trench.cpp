@@ -93,3 +93,16 @@ TEST_CASE("trench benchmarks: every cost is within 0.5 % of the proved optimum a
     CHECK(gaps / static_cast<double>(list.size()) < 0.005);
     std::printf("benchmarks: %d of 53\n", reached);
 }
+
+TEST_CASE("trench benchmarks: with no root given the files without one give the same optimum") {
+    for (const Known& known : known_optima()) {
+        if (!known.file.starts_with("JMP") && !known.file.starts_with("CRR")) continue;
+        const SteinerProblem problem = read_problem(known.file);
+        REQUIRE(problem.root == -1);
+        const SteinerAnswer answer = solve_steiner(problem);
+        INFO(known.file);
+        CHECK(static_cast<double>(answer.bound) / 1e6 <= known.optimum);
+        CHECK(static_cast<double>(answer.cost) / 1e6 == Approx(known.optimum).epsilon(0.001));
+        CHECK(check_steiner(problem, answer.edges, answer.vertices).cost == answer.cost);
+    }
+}

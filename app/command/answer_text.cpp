@@ -1,11 +1,11 @@
 #include "app/command/answer_text.h"
 
 #include <algorithm>
-#include <cmath>
 
 #include <fmt/format.h>
 
 #include "app/command/answer_json.h"
+#include "model/money/money_text.h"
 
 namespace unstring {
 namespace {
@@ -42,19 +42,6 @@ std::string option_text(const char* name, const OptionCost& option) {
 }
 
 }  // namespace
-
-std::string dollars_text(double dollars, bool with_cents) {
-    const bool is_negative = dollars < 0;
-    const long long cents = std::llround(std::abs(dollars) * 100);
-    long long whole = with_cents ? cents / 100 : std::llround(std::abs(dollars));
-    std::string digits = std::to_string(whole), grouped;
-    for (std::size_t i = 0; i < digits.size(); ++i) {
-        if (i > 0 && (digits.size() - i) % 3 == 0) grouped += ' ';
-        grouped += digits[i];
-    }
-    if (with_cents) grouped += fmt::format(".{:02}", cents % 100);
-    return (is_negative ? "-" : "") + grouped;
-}
 
 std::string findings_text(const std::vector<Finding>& findings) {
     std::vector<Finding> sorted = findings;
@@ -121,7 +108,7 @@ std::string decide_text(const ProjectView& view) {
                         r.all_rewire_not_possible, dollars_text(r.all_solar_cost), r.all_solar_not_possible, dollars_text(r.greedy_cost));
     text += fmt::format("decided at {} prices, before phasing: {} keep, {} rewire, {} solar; {:.0f} m of trench, {}\n", view.plan.decide_year(), r.keep,
                         r.rewire, r.solar, r.trench_m, plural(r.services_new, "new service", "new services"));
-    return text + fmt::format("cost {} US$ present value, bound {}, {}", dollars_text(r.cost), dollars_text(r.bound), gap_text(r.cost, r.bound, r.feasible));
+    return text + fmt::format("cost {} present value, bound {}, {}", dollars_text(r.cost), dollars_text(r.bound), gap_text(r.cost, r.bound, r.feasible));
 }
 
 std::string phase_text(const ProjectView& view) {
@@ -150,7 +137,7 @@ std::string summary_text(const ProjectView& view) {
     }
     std::string text = fmt::format("plan \"{}\", {} to {}: {} rewire, {} solar, {} keep, {} not reached by {}\n", view.plan.settings.name,
                                    view.plan.settings.first_year, view.plan.last_year(), rewire, solar, keep, r.not_reached, view.plan.last_year());
-    text += fmt::format("cost {} US$ present value over {} years at {:.1f} %, bound {}, {}", dollars_text(r.cost, true), view.plan.settings.horizon_years,
+    text += fmt::format("cost {} present value over {} years at {:.1f} %, bound {}, {}", dollars_text(r.cost, true), view.plan.settings.horizon_years,
                         100 * view.plan.settings.rate, dollars_text(r.bound, true), gap_text(r.cost, r.bound, r.feasible));
     const int errors = count_errors(r.failures);
     if (errors > 0) text += fmt::format("\n{} must be mended before hand-out", plural(errors, "failed check", "failed checks"));

@@ -19,7 +19,4 @@ namespace unstring {
 [[nodiscard]] std::string hand_out_text(const HandOutReport& report);
 [[nodiscard]] std::string why_text(const ProjectView& view, PoleIx pole);
 
-/// "1 234 567" dollars, whole; "1 234.50" with cents.
-[[nodiscard]] std::string dollars_text(double dollars, bool with_cents = false);
-
 }  // namespace unstring

@@ -71,7 +71,7 @@ int run_shade_command(const StepCall& call, const Console& console) {
 
 Expected<DecideOptions> decide_options(const StepCall& call) {
     DecideOptions options = call.decide;
-    if (call.services_anywhere) options.services_anywhere = true;
+    options.services_anywhere = call.services_anywhere;  // a flag that is not given is off
     constexpr std::string_view kMustStay = "must-stay=";
     if (call.policy.empty()) return options;
     if (call.policy == "end") options.policy = Policy::end;

@@ -3,6 +3,7 @@
 #include <fmt/format.h>
 
 #include "model/decide/span_cost.h"
+#include "model/money/money_text.h"
 #include "model/money/new_light.h"
 
 namespace unstring {
@@ -28,13 +29,12 @@ void add_share_line(const MoneyInput& input, const Share& share, OptionCost& rew
     rewire.cost = to_dollars(to_cents(present_value(rewire.lines)));
 }
 
-std::string money(double dollars) { return fmt::format("{:.0f}", dollars); }
 
 std::string against(const PoleDecision& at, Choice other) {
     const OptionCost& option = at.options[static_cast<Place>(other) - 1];
     if (!option.possible) return fmt::format("{} is not possible: {}", text_of(other), option.stopped_by);
-    if (other != Choice::rewire) return fmt::format("{} would cost {}", text_of(other), money(option.cost));
-    return fmt::format("rewire would cost {}, of which {} for {:.0f} m of its own connection", money(option.cost), money(at.trench_share), at.trench_m);
+    if (other != Choice::rewire) return fmt::format("{} would cost {}", text_of(other), dollars_text(option.cost));
+    return fmt::format("rewire would cost {}, of which {} for {:.0f} m of its own connection", dollars_text(option.cost), dollars_text(at.trench_share), at.trench_m);
 }
 
 std::string reason_of(const PoleCase& each, const PoleDecision& at) {
@@ -44,12 +44,12 @@ std::string reason_of(const PoleCase& each, const PoleDecision& at) {
     else if (each.mark_followed) text = fmt::format("Marked {} by the staff. ", text_of(at.choice));
     switch (at.choice) {
         case Choice::undecided: return text + "No option is possible: " + against(at, Choice::rewire) + "; " + against(at, Choice::solar) + ".";
-        case Choice::keep: return text + fmt::format("Stays on its string at {}; {}; {}.", money(cost), against(at, Choice::rewire), against(at, Choice::solar));
+        case Choice::keep: return text + fmt::format("Stays on its string at {}; {}; {}.", dollars_text(cost), against(at, Choice::rewire), against(at, Choice::solar));
         case Choice::rewire:
-            return text + fmt::format("Rewire at {}, of which {} for {:.0f} m of trench that only this pole needs; {}.", money(cost), money(at.trench_share),
+            return text + fmt::format("Rewire at {}, of which {} for {:.0f} m of trench that only this pole needs; {}.", dollars_text(cost), dollars_text(at.trench_share),
                                       at.trench_m, against(at, Choice::solar));
         case Choice::solar:
-            return text + fmt::format("Solar{} at {}; {}.", at.head.empty() ? "" : " (" + at.head + ")", money(cost), against(at, Choice::rewire));
+            return text + fmt::format("Solar{} at {}; {}.", at.head.empty() ? "" : " (" + at.head + ")", dollars_text(cost), against(at, Choice::rewire));
     }
     return text;
 }

@@ -6,6 +6,7 @@
 #include <fmt/format.h>
 
 #include "model/money/hours.h"
+#include "model/money/money_text.h"
 #include "model/phase/duct_live.h"
 #include "model/phase/failure_drill.h"
 #include "model/phase/fund_check.h"
@@ -241,8 +242,8 @@ class Checks {
         const double left = std::max(0.0, *year.money_limit - to_dollars(year.money));
         if (poles == 0 || needed <= left) return;
         say("money-short", fmt::format("year {}", year.year),
-            fmt::format("{} poles not reached want {:.0f} more, trench and transformers apart; {:.0f} is left, short by {:.0f}", poles, needed, left, needed - left),
-            fmt::format("at least {:.0f} in that year, or years after it", to_dollars(year.money) + needed), "raise money, or add years", "budget");
+            fmt::format("{} poles not reached want {} more, trench and transformers apart; {} is left, short by {}", poles, dollars_text(needed), dollars_text(left), dollars_text(needed - left)),
+            fmt::format("at least {} in that year, or years after it", dollars_text(to_dollars(year.money) + needed)), "raise money, or add years", "budget");
     }
 
     /// Likewise of each crew's hours.
@@ -297,7 +298,7 @@ class Checks {
         const double other = is_rewire ? solar_then.cost : rewire_cost;
         if (!solar_then.possible || chosen <= other + 0.01) return;
         say("choice-late", facts_.city.poles[i].id,
-            fmt::format("in {} {} costs {:.0f}, {} {:.0f}", year, text_of(row.choice), chosen, is_rewire ? "solar" : "rewire", other),
+            fmt::format("in {} {} costs {}, {} {}", year, text_of(row.choice), dollars_text(chosen), is_rewire ? "solar" : "rewire", dollars_text(other)),
             fmt::format("the cheaper way at the prices of {}", year), "run decide again at that year, or leave it", "poles");
     }
 

@@ -20,10 +20,6 @@ Fault not_ready(const std::string& path, std::string found, std::string remedy) 
     return {FaultCode::not_ready, path, 0, "", std::move(found), "", std::move(remedy)};
 }
 
-bool has_hand_years(const Plan& plan) {
-    return std::any_of(plan.poles.begin(), plan.poles.end(), [](const PolePlan& pole) { return pole.year_by == YearBy::hand; });
-}
-
 bool follows_decisions(const Plan& plan, const DecideResult& decide) {
     return std::all_of(decide.poles.begin(), decide.poles.end(), [&](const PoleDecision& decision) {
         const PolePlan& row = plan.poles[decision.pole.place()];
@@ -129,7 +125,7 @@ std::array<StepState, 6> OpenProject::Inside::step_states(const std::optional<Ph
                 break;
             case Step::phase:
                 if (!phase || run->input_hash != hash_of(step)) each.standing = StepStanding::stale;
-                else if (each.standing == StepStanding::up_to_date && has_hand_years(plan)) each.standing = StepStanding::by_hand;
+                else if (each.standing == StepStanding::up_to_date && phase_run->plan_hash != hand_out_input_hash(tables, plan, {})) each.standing = StepStanding::by_hand;
                 if (phase) counts(step, phase->failures);
                 break;
             case Step::hand_out:

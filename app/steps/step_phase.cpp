@@ -45,7 +45,7 @@ Expected<void> OpenProject::run_phase(const PhaseOptions& options, const Progres
     const std::string label = fmt::format("phase: {} poles in {} years", poles_with_year(next), next.settings.years);
     const std::vector<VetString> none;
     const std::string hash = phase_input_hash(inside.tables, inside.vet ? inside.vet->strings : none, next, inside.stored_hash(Step::decide));
-    const PhaseRun run{outcome->result.bound, outcome->result.seconds};
+    const PhaseRun run{outcome->result.bound, outcome->result.seconds, hand_out_input_hash(inside.tables, next, {})};
     auto written = inside.write_plan(next, label, [&] { write_phase(*inside.database, next.settings.name, run, hash); });
     if (!written) return tl::make_unexpected(written.error());
     inside.phase_run = run;

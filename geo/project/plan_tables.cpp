@@ -14,10 +14,14 @@ namespace {
 
 nlohmann::json cells_json(const Cells& cells) {
     nlohmann::json json = nlohmann::json::object();
-    for (const auto& [name, value] : cells) std::visit([&json, &name](const auto& each) {
-        if constexpr (std::is_same_v<std::decay_t<decltype(each)>, std::monostate>) json[name] = nullptr;
-        else json[name] = each;
-    }, value);
+    for (const auto& [name, value] : cells) {
+        nlohmann::json& cell = json[name];
+        const auto put = [&cell](const auto& each) {
+            if constexpr (std::is_same_v<std::decay_t<decltype(each)>, std::monostate>) cell = nullptr;
+            else cell = each;
+        };
+        std::visit(put, value);
+    }
     return json;
 }
 

@@ -265,13 +265,13 @@ std::optional<DecideResult> read_decide(Database& database, const City& city, co
 }
 
 void write_phase(Database& database, const std::string& plan, const PhaseRun& run, const std::string& hash) {
-    write_step_run(database, Step::phase, plan, hash, dumped(json{{"bound", run.bound}, {"seconds", run.seconds}}));
+    write_step_run(database, Step::phase, plan, hash, dumped(json{{"bound", run.bound}, {"seconds", run.seconds}, {"plan_hash", run.plan_hash}}));
 }
 
 std::optional<PhaseRun> read_phase(Database& database, const std::string& plan) {
     const auto stored = run_json(database, Step::phase, plan);
     if (!stored) return std::nullopt;
-    return guarded([&] { return PhaseRun{stored->at("bound").get<double>(), stored->at("seconds").get<double>()}; });
+    return guarded([&] { return PhaseRun{stored->at("bound").get<double>(), stored->at("seconds").get<double>(), stored->at("plan_hash").get<std::string>()}; });
 }
 
 }  // namespace unstring

@@ -21,6 +21,7 @@ struct StepRun {
 
 struct PhaseRun {  ///< what evaluating the plan again does not give
     double bound = 0, seconds = 0;
+    std::string plan_hash;  ///< of the plan that the run wrote: another one was edited by hand since
 };
 
 /// Steps up to shade are of no plan: pass an empty name.

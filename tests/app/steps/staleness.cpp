@@ -75,6 +75,30 @@ TEST_CASE("staleness: a mark makes decide stale and its undo does not leave it s
     const StepStanding by_hand = standing(*project, Step::phase);
     CHECK((by_hand == StepStanding::by_hand || by_hand == StepStanding::stopped));
     CHECK(standing(*project, Step::decide) != StepStanding::stale);
+    REQUIRE(project->undo());
+    check_all_good(*project);
+}
+
+TEST_CASE("staleness: a year that came locked with the marks is no edit by hand") {
+    const PlannedCity city;
+    GatherFiles files = city.files();
+    files.marks = city.folder.file("marks.csv");
+    {
+        std::ifstream poles(city.files().poles);
+        std::string line;
+        std::getline(poles, line);
+        std::getline(poles, line);
+        std::ofstream(files.marks) << "pole_id,mark,lock,year,who,note\n" << line.substr(0, line.find(',')) << ",,1,2028,planner,\n";
+    }
+    city.gather(files);
+    const auto project = city.open();
+    REQUIRE(project->run_vet(true, {}));
+    REQUIRE(project->run_shade({}, {}));
+    REQUIRE(project->run_decide({}, {}));
+    REQUIRE(project->run_phase({}, {}));
+    CHECK(project->view()->plan.poles[0].year == 2028);
+    CHECK(project->view()->plan.poles[0].year_locked);
+    check_all_good(*project);
 }
 
 TEST_CASE("staleness: new records make every step after gather stale, and results of the old ones are not shown") {

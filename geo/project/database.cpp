@@ -39,13 +39,16 @@ Fault sqlite_fault(const std::string& path, int code, const std::string& message
     return fault;
 }
 
+constexpr int kIsEmpty = 4;
+int function_numbers[] = {0, 1, 2, 3, kIsEmpty};  // SQLite hands back the address
+
 // GeoPackage's R-tree triggers call these; a box of nothing is null.
 void envelope_function(sqlite3_context* context, int, sqlite3_value** values) {
     const auto* data = static_cast<const unsigned char*>(sqlite3_value_blob(values[0]));
     const auto size = static_cast<std::size_t>(sqlite3_value_bytes(values[0]));
     const auto box = geometry_envelope({data, data == nullptr ? 0 : size});
-    const auto which = reinterpret_cast<std::intptr_t>(sqlite3_user_data(context));
-    if (which == 4) return sqlite3_result_int(context, box ? 0 : 1);
+    const int which = *static_cast<const int*>(sqlite3_user_data(context));
+    if (which == kIsEmpty) return sqlite3_result_int(context, box ? 0 : 1);
     if (!box) return sqlite3_result_null(context);
     const double sides[] = {box->low.x_m, box->high.x_m, box->low.y_m, box->high.y_m};
     sqlite3_result_double(context, sides[which]);
@@ -53,9 +56,9 @@ void envelope_function(sqlite3_context* context, int, sqlite3_value** values) {
 
 void add_functions(sqlite3* handle) {
     const char* names[] = {"ST_MinX", "ST_MaxX", "ST_MinY", "ST_MaxY", "ST_IsEmpty"};
-    for (std::intptr_t i = 0; i < 5; ++i)
-        sqlite3_create_function(handle, names[i], 1, SQLITE_UTF8 | SQLITE_DETERMINISTIC | SQLITE_INNOCUOUS,
-                                reinterpret_cast<void*>(i), envelope_function, nullptr, nullptr);
+    for (std::size_t i = 0; i < 5; ++i)
+        sqlite3_create_function(handle, names[i], 1, SQLITE_UTF8 | SQLITE_DETERMINISTIC | SQLITE_INNOCUOUS, &function_numbers[i],
+                                envelope_function, nullptr, nullptr);
 }
 
 }  // namespace

@@ -1,7 +1,7 @@
 #include "model/finding.h"
 
-#include <array>
 #include <algorithm>
+#include <array>
 #include <string_view>
 #include <utility>
 
@@ -9,13 +9,14 @@ namespace unstring {
 namespace {
 
 constexpr std::array<std::string_view, 17> kErrors = {
-    "row-broken",      "number-unreadable", "column-missing", "pole-id-twice", "place-missing", "place-swapped",
-    "string-unknown",  "current-mixed",     "transformer-twice", "order-twice", "load-over",    "volts-over",
-    "no-way",          "unit-twice",        "duct-live",      "control-lost",  "critical-dark"};
+    "row-broken",    "number-unreadable", "column-missing", "pole-id-twice",     "place-missing",
+    "place-swapped", "string-unknown",    "current-mixed",  "transformer-twice", "order-twice",
+    "load-over",     "volts-over",        "no-way",         "unit-twice",        "duct-live",
+    "control-lost",  "critical-dark"};
 constexpr std::array<std::string_view, 5> kNotices = {"unit-guessed", "order-inferred", "cutback-unconfirmed",
                                                       "untested-spare", "encoding-guessed"};
 
-}  // namespace
+} // namespace
 
 Severity severity_of(const std::string& code) {
     if (std::find(kErrors.begin(), kErrors.end(), code) != kErrors.end()) return Severity::error;
@@ -25,9 +26,12 @@ Severity severity_of(const std::string& code) {
 
 const char* severity_text(Severity severity) {
     switch (severity) {
-        case Severity::error: return "error";
-        case Severity::warning: return "warning";
-        case Severity::notice: return "notice";
+    case Severity::error:
+        return "error";
+    case Severity::warning:
+        return "warning";
+    case Severity::notice:
+        return "notice";
     }
     return "warning";
 }
@@ -35,8 +39,8 @@ const char* severity_text(Severity severity) {
 Finding make_finding(std::string code, std::string file, long row, std::string record, std::string found,
                      std::string wanted, std::string remedy, std::string table) {
     const Severity severity = severity_of(code);
-    return {std::move(code),  severity,          std::move(file),   row, std::move(record), std::move(found),
+    return {std::move(code),   severity,          std::move(file), row, std::move(record), std::move(found),
             std::move(wanted), std::move(remedy), std::move(table)};
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -12,10 +12,12 @@ struct Progress {
     /// Set by the user; may be null.
     const std::atomic<bool>* cancel = nullptr;
 
-    [[nodiscard]] bool is_cancelled() const { return cancel != nullptr && cancel->load(std::memory_order_relaxed); }
+    [[nodiscard]] bool is_cancelled() const {
+        return cancel != nullptr && cancel->load(std::memory_order_relaxed);
+    }
     void at(double done_frac) const {
         if (on_progress) on_progress(done_frac);
     }
 };
 
-}  // namespace unstring
+} // namespace unstring

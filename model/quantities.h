@@ -11,7 +11,8 @@
 namespace unstring {
 
 /// A place in one table; the tag keeps a pole's index out of a string's table.
-template <class Tag> struct Index {
+template <class Tag>
+struct Index {
     static constexpr std::uint32_t kNone = 0xffffffffU;
     std::uint32_t value = kNone;
 
@@ -51,7 +52,9 @@ inline constexpr double kMetresPerFoot = 0.3048;
 inline constexpr double kMetresPerSurveyFoot = 1200.0 / 3937.0;
 inline constexpr double kRadPerDeg = std::numbers::pi / 180.0;
 
-[[nodiscard]] inline double distance_m(MapPoint a, MapPoint b) { return std::hypot(a.x_m - b.x_m, a.y_m - b.y_m); }
+[[nodiscard]] inline double distance_m(MapPoint a, MapPoint b) {
+    return std::hypot(a.x_m - b.x_m, a.y_m - b.y_m);
+}
 
 /// Bearing from a to b [deg], clockwise from grid north, in [0, 360).
 [[nodiscard]] inline double bearing_deg(MapPoint a, MapPoint b) {
@@ -59,4 +62,4 @@ inline constexpr double kRadPerDeg = std::numbers::pi / 180.0;
     return angle < 0 ? angle + 360.0 : angle;
 }
 
-}  // namespace unstring
+} // namespace unstring

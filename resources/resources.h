@@ -8,4 +8,4 @@ namespace unstring {
 /// The content of one file of resources/, by its name ("prices.csv"); empty when there is none of that name.
 [[nodiscard]] std::string_view resource(std::string_view name);
 
-}  // namespace unstring
+} // namespace unstring

@@ -39,7 +39,10 @@ Json option_json(const OptionCost& option) {
                          {"unit_price", line.unit_price},
                          {"amount", to_dollars(line.amount)},
                          {"factor", line.factor}});
-    return {{"possible", option.possible}, {"stopped_by", option.stopped_by}, {"cost", option.cost}, {"lines", lines}};
+    return {{"possible", option.possible},
+            {"stopped_by", option.stopped_by},
+            {"cost", option.cost},
+            {"lines", lines}};
 }
 
 Json year_json(const PhaseYear& year) {
@@ -54,7 +57,11 @@ Json year_json(const PhaseYear& year) {
             {"money", to_dollars(year.money)},
             {"money_limit", year.money_limit ? Json(*year.money_limit) : Json(nullptr)},
             {"operating", to_dollars(year.operating)},
-            {"hours", {{"line", year.hours.line}, {"civil", year.hours.civil}, {"lighting", year.hours.lighting}, {"electric", year.hours.electric}}},
+            {"hours",
+             {{"line", year.hours.line},
+              {"civil", year.hours.civil},
+              {"lighting", year.hours.lighting},
+              {"electric", year.hours.electric}}},
             {"poles", {{"rewire", year.rewire}, {"solar", year.solar}}},
             {"series_lamps_left", year.series_lamps_left},
             {"dark_lamp_nights", {{"transformers", year.dark_transformers}, {"cable", year.dark_cable}}},
@@ -64,9 +71,10 @@ Json year_json(const PhaseYear& year) {
 Json string_years_json(const City& city, const PhaseResult& phase, int first_year) {
     Json strings = Json::array();
     for (const StringYear& each : phase.string_years) {
-        if (each.year < first_year) continue;  // today's state stands in vet's answer
+        if (each.year < first_year) continue; // today's state stands in vet's answer
         const std::string& id = city.strings[each.string.place()].id;
-        if (strings.empty() || strings.back()["string_id"] != id) strings.push_back({{"string_id", id}, {"years", Json::array()}});
+        if (strings.empty() || strings.back()["string_id"] != id)
+            strings.push_back({{"string_id", id}, {"years", Json::array()}});
         strings.back()["years"].push_back({{"year", each.year},
                                            {"lamps", each.lamps},
                                            {"load_kva", each.load_kva},
@@ -86,15 +94,17 @@ Json not_planned(const std::string& why) {
 }
 
 std::string why_not_planned(const City& city, const Pole& pole) {
-    if (pole.set_aside || (pole.string.is_valid() && city.strings[pole.string.place()].set_aside)) return "set aside by vet: mend its record first";
+    if (pole.set_aside || (pole.string.is_valid() && city.strings[pole.string.place()].set_aside))
+        return "set aside by vet: mend its record first";
     if (is_parallel(city, pole)) return "already on a parallel lighting circuit";
     if (!pole.string.is_valid()) return "on no string that is known";
     if (!pole.has_place) return "its place is not known";
-    if (pole.status != PoleStatus::standing) return std::string("no lamp to decide on: ") + text_of(pole.status);
+    if (pole.status != PoleStatus::standing)
+        return std::string("no lamp to decide on: ") + text_of(pole.status);
     return "not decided yet: run decide";
 }
 
-}  // namespace
+} // namespace
 
 Json findings_json(const std::vector<Finding>& findings) {
     Json list = Json::array();
@@ -112,14 +122,23 @@ Json findings_json(const std::vector<Finding>& findings) {
 
 Json gather_json(const GatherReport& report) {
     Json rows = Json::object();
-    for (const auto& [table, count] : report.rows) rows[table] = {{"read", count.read}, {"kept", count.kept}, {"set_aside", count.set_aside}};
-    return {{"poles", report.poles},       {"strings", report.strings}, {"series_poles", report.series_poles}, {"transformers", report.transformers},
-            {"services", report.services}, {"crs", report.crs},         {"crs_from", report.crs_from},         {"rows", rows},
-            {"notes", report.notes},       {"findings", findings_json(report.findings)}};
+    for (const auto& [table, count] : report.rows)
+        rows[table] = {{"read", count.read}, {"kept", count.kept}, {"set_aside", count.set_aside}};
+    return {{"poles", report.poles},
+            {"strings", report.strings},
+            {"series_poles", report.series_poles},
+            {"transformers", report.transformers},
+            {"services", report.services},
+            {"crs", report.crs},
+            {"crs_from", report.crs_from},
+            {"rows", rows},
+            {"notes", report.notes},
+            {"findings", findings_json(report.findings)}};
 }
 
 int count_errors(const std::vector<Finding>& findings) {
-    return static_cast<int>(std::count_if(findings.begin(), findings.end(), [](const Finding& f) { return f.severity == Severity::error; }));
+    return static_cast<int>(std::count_if(findings.begin(), findings.end(),
+                                          [](const Finding& f) { return f.severity == Severity::error; }));
 }
 
 std::vector<Finding> vetted_findings(const ProjectView& view) {
@@ -135,13 +154,15 @@ int poles_set_aside(const ProjectView& view) {
     const auto is_aside = [&](const Pole& pole) {
         return pole.set_aside || (pole.string.is_valid() && view.city.strings[pole.string.place()].set_aside);
     };
-    return static_cast<int>(std::count_if(view.city.poles.begin(), view.city.poles.end(), is_aside)) + static_cast<int>(view.pole_rows_not_kept);
+    return static_cast<int>(std::count_if(view.city.poles.begin(), view.city.poles.end(), is_aside)) +
+           static_cast<int>(view.pole_rows_not_kept);
 }
 
 Json vet_json(const ProjectView& view) {
     const auto findings = vetted_findings(view);
     const auto count = [&](Severity severity) {
-        return std::count_if(findings.begin(), findings.end(), [&](const Finding& f) { return f.severity == severity; });
+        return std::count_if(findings.begin(), findings.end(),
+                             [&](const Finding& f) { return f.severity == severity; });
     };
     Json strings = Json::array();
     if (view.vet)
@@ -174,17 +195,22 @@ Json shade_json(const ProjectView& view, bool per_pole) {
     for (const PoleShade& sky : view.shade->poles) {
         bool any = false;
         for (const HeadAnswer& head : sky.heads) {
-            auto at = std::find_if(counts.begin(), counts.end(), [&](const auto& each) { return each.first == head.head; });
+            auto at = std::find_if(counts.begin(), counts.end(),
+                                   [&](const auto& each) { return each.first == head.head; });
             if (at == counts.end()) at = counts.insert(counts.end(), {head.head, 0});
             at->second += head.eligible ? 1 : 0;
             any = any || head.eligible;
         }
         eligible += any ? 1 : 0;
         if (per_pole && !sky.heads.empty())
-            poles.push_back(head_json(view.city.poles[sky.pole.place()], sky.heads[static_cast<std::size_t>(std::max(sky.best, 0))]));
+            poles.push_back(head_json(view.city.poles[sky.pole.place()],
+                                      sky.heads[static_cast<std::size_t>(std::max(sky.best, 0))]));
     }
     for (const auto& [head, count] : counts) by_head.push_back({{"head", head}, {"eligible", count}});
-    Json json = {{"poles", view.shade->poles.size()}, {"eligible", eligible}, {"seconds", view.shade->seconds}, {"by_head", by_head}};
+    Json json = {{"poles", view.shade->poles.size()},
+                 {"eligible", eligible},
+                 {"seconds", view.shade->seconds},
+                 {"by_head", by_head}};
     if (per_pole) json["per_pole"] = poles;
     return json;
 }
@@ -193,7 +219,8 @@ Json decide_json(const ProjectView& view) {
     if (!view.decide) return Json::object();
     const DecideResult& r = *view.decide;
     Json refused = Json::array();
-    for (const auto& each : r.marks_refused) refused.push_back({{"pole_id", view.city.poles[each.pole.place()].id}, {"reason", each.reason}});
+    for (const auto& each : r.marks_refused)
+        refused.push_back({{"pole_id", view.city.poles[each.pole.place()].id}, {"reason", each.reason}});
     return {{"keep", r.keep},
             {"rewire", r.rewire},
             {"solar", r.solar},
@@ -221,9 +248,15 @@ Json phase_json(const ProjectView& view) {
     Json years = Json::array(), ledger = Json::array(), moves = Json::array();
     for (const PhaseYear& year : r.years) years.push_back(year_json(year));
     for (const LedgerYear& year : r.ledger)
-        ledger.push_back({{"year", year.year}, {"capital", to_dollars(year.capital)}, {"operating", to_dollars(year.operating)}, {"factor", year.factor}});
+        ledger.push_back({{"year", year.year},
+                          {"capital", to_dollars(year.capital)},
+                          {"operating", to_dollars(year.operating)},
+                          {"factor", year.factor}});
     for (const UnitMove& move : r.moves)
-        moves.push_back({{"year", move.year}, {"transformer_id", id_of(view.city, move.transformer)}, {"from", move.from}, {"to", move.to}});
+        moves.push_back({{"year", move.year},
+                         {"transformer_id", id_of(view.city, move.transformer)},
+                         {"from", move.from},
+                         {"to", move.to}});
     return {{"years", years},
             {"strings", string_years_json(view.city, r, view.plan.settings.first_year)},
             {"moves", moves},
@@ -239,7 +272,11 @@ Json phase_json(const ProjectView& view) {
 Json hand_out_json(const HandOutReport& report) {
     Json orders = Json::array();
     for (const OrderLine& order : report.orders)
-        orders.push_back({{"order_id", order.order_id}, {"year", order.year}, {"crew", order.crew}, {"poles", order.poles}, {"hours", order.hours}});
+        orders.push_back({{"order_id", order.order_id},
+                          {"year", order.year},
+                          {"crew", order.crew},
+                          {"poles", order.poles},
+                          {"hours", order.hours}});
     return {{"files", report.files}, {"orders", orders}};
 }
 
@@ -253,7 +290,10 @@ Json why_json(const ProjectView& view, PoleIx pole) {
                  {"mark", row.mark == Choice::undecided ? Json(nullptr) : Json(text_of(row.mark))}};
     if (decision == nullptr) {
         const std::string why = why_not_planned(view.city, record);
-        json.update({{"options", not_planned(why)}, {"reason", why}, {"numbers", Json::object()}, {"sources", Json::array()}});
+        json.update({{"options", not_planned(why)},
+                     {"reason", why},
+                     {"numbers", Json::object()},
+                     {"sources", Json::array()}});
         return json;
     }
     json["options"] = {{"keep", option_json(decision->options[0])},
@@ -269,4 +309,4 @@ Json why_json(const ProjectView& view, PoleIx pole) {
     return json;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -27,4 +27,4 @@ using Json = nlohmann::ordered_json;
 /// Poles that no step plans on: set aside, or on a string that is, and rows that could not be read.
 [[nodiscard]] int poles_set_aside(const ProjectView& view);
 
-}  // namespace unstring
+} // namespace unstring

@@ -19,4 +19,4 @@ namespace unstring {
 [[nodiscard]] std::string hand_out_text(const HandOutReport& report);
 [[nodiscard]] std::string why_text(const ProjectView& view, PoleIx pole);
 
-}  // namespace unstring
+} // namespace unstring

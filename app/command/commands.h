@@ -8,7 +8,7 @@
 
 namespace unstring {
 
-struct CommandLine {  ///< shared by the subcommands of one call
+struct CommandLine { ///< shared by the subcommands of one call
     bool is_json = false;
     int exit_status = 0;
     int argc = 0;
@@ -26,4 +26,4 @@ void add_hand_out(CLI::App& app, CommandLine& line);
 void add_why(CLI::App& app, CommandLine& line);
 void add_work_out(CLI::App& app, CommandLine& line);
 
-}  // namespace unstring
+} // namespace unstring

@@ -18,9 +18,11 @@ static_assert(std::atomic<bool>::is_always_lock_free);
 extern "C" void ask_to_stop(int) { is_stop_asked.store(true, std::memory_order_relaxed); }
 
 // Bytes that are no UTF-8 (a file name, a field) must not stop the answer.
-std::string dumped(const nlohmann::ordered_json& json) { return json.dump(1, ' ', false, nlohmann::ordered_json::error_handler_t::replace); }
+std::string dumped(const nlohmann::ordered_json& json) {
+    return json.dump(1, ' ', false, nlohmann::ordered_json::error_handler_t::replace);
+}
 
-}  // namespace
+} // namespace
 
 void Console::say(const std::string& text) const {
     std::FILE* to = is_json_ ? stderr : stdout;
@@ -66,4 +68,4 @@ Progress Console::progress(std::string what) const {
     return progress;
 }
 
-}  // namespace unstring
+} // namespace unstring

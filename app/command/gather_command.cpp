@@ -32,7 +32,9 @@ int run_gather(const GatherCall& call, const Console& console) {
         return 0;
     }
     if (call.project.empty())
-        return console.fail({FaultCode::bad_usage, "", 0, "PROJECT", "no project", "the path of a project file", "For example: unstring gather city.gpkg --poles poles.csv"});
+        return console.fail({FaultCode::bad_usage, "", 0, "PROJECT", "no project",
+                             "the path of a project file",
+                             "For example: unstring gather city.gpkg --poles poles.csv"});
     auto report = gather_project(call.project, call.files, console.progress("gather"));
     if (!report) return console.fail(report.error());
     console.say(gather_text(*report));
@@ -40,16 +42,18 @@ int run_gather(const GatherCall& call, const Console& console) {
     return 0;
 }
 
-}  // namespace
+} // namespace
 
 void add_gather(CLI::App& app, CommandLine& line) {
     auto call = std::make_shared<GatherCall>();
-    CLI::App* gather = app.add_subcommand("gather", "Reads a city's files into a project, new or already there");
+    CLI::App* gather =
+        app.add_subcommand("gather", "Reads a city's files into a project, new or already there");
     gather->add_option("project", call->project, "The project file (GeoPackage)");
     GatherFiles& f = call->files;
     gather->add_option("--poles", f.poles, "Poles: CSV or any vector file");
     gather->add_option("--circuits", f.circuits, "Series strings and parallel circuits");
-    gather->add_option("--transformers", f.transformers, "RO transformers in service and spare; says which one feeds which string");
+    gather->add_option("--transformers", f.transformers,
+                       "RO transformers in service and spare; says which one feeds which string");
     gather->add_option("--services", f.services, "Service points, ends of lighting circuits, candidates");
     gather->add_option("--streets", f.streets, "Street centre lines: a vector file");
     gather->add_option("--canopy", f.canopy, "Height above ground: a raster in metres, or crown polygons");
@@ -65,8 +69,9 @@ void add_gather(CLI::App& app, CommandLine& line) {
     gather->add_option("--columns", f.columns, "JSON that says which of your columns is which of ours");
     gather->add_option("--encoding", f.encoding, "Character set of tables that are not UTF-8");
     gather->add_flag("--help-prices", call->help_prices, "Prints the closed list of price items");
-    gather->footer("Example: unstring gather city.gpkg --poles poles.csv --circuits circuits.csv --transformers transformers.csv --crs EPSG:32609");
+    gather->footer("Example: unstring gather city.gpkg --poles poles.csv --circuits circuits.csv "
+                   "--transformers transformers.csv --crs EPSG:32609");
     gather->callback([call, &line] { line.exit_status = run_gather(*call, line.console()); });
 }
 
-}  // namespace unstring
+} // namespace unstring

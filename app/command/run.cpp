@@ -22,12 +22,15 @@ void add_json_flag(CLI::App& app, bool& is_json) {
 }
 
 int run_or_throw(int argc, char** argv, const Outside& outside) {
-    CLI::App app{"Unstring plans a city's way off series street lighting: gather, vet, shade, decide, phase, hand out.\n"
+    CLI::App app{"Unstring plans a city's way off series street lighting: gather, vet, shade, decide, phase, "
+                 "hand out.\n"
                  "Without a subcommand it opens the window.",
                  "unstring"};
     app.set_version_flag("--version", UNSTRING_VERSION);
-    app.footer("Example: unstring gather city.gpkg --poles poles.csv --circuits circuits.csv && unstring vet city.gpkg\n"
-               "Its answers are for planning. Work on live strings, at height and in traffic follows local codes and licensed practice.");
+    app.footer("Example: unstring gather city.gpkg --poles poles.csv --circuits circuits.csv && unstring vet "
+               "city.gpkg\n"
+               "Its answers are for planning. Work on live strings, at height and in traffic follows local "
+               "codes and licensed practice.");
     CommandLine line;
     line.argc = argc;
     line.argv = argv;
@@ -47,23 +50,28 @@ int run_or_throw(int argc, char** argv, const Outside& outside) {
     try {
         app.parse(argc, argv);
     } catch (const CLI::ParseError& error) {
-        if (error.get_exit_code() == static_cast<int>(CLI::ExitCodes::Success)) return app.exit(error);  // --help, --version
+        if (error.get_exit_code() == static_cast<int>(CLI::ExitCodes::Success))
+            return app.exit(error); // --help, --version
         return Console(wants_json(argc, argv))
-            .fail({FaultCode::bad_usage, "", 0, "", error.what(), "", "See: unstring --help, or --help after a subcommand"});
+            .fail({FaultCode::bad_usage, "", 0, "", error.what(), "",
+                   "See: unstring --help, or --help after a subcommand"});
     }
     if (!app.get_subcommands().empty()) return line.exit_status;
     return outside.open_window(argc, argv, project);
 }
 
-}  // namespace
+} // namespace
 
 int run_command_line(int argc, char** argv, const Outside& outside) {
     try {
         return run_or_throw(argc, argv, outside);
     } catch (const std::exception& error) {
-        std::fprintf(stderr, "unstring: a fault of the program itself: %s\nThe project is as it was before this step.\n", error.what());
+        std::fprintf(
+            stderr,
+            "unstring: a fault of the program itself: %s\nThe project is as it was before this step.\n",
+            error.what());
         return 70;
     }
 }
 
-}  // namespace unstring
+} // namespace unstring

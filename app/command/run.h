@@ -9,7 +9,7 @@
 
 namespace unstring {
 
-struct Outside {  ///< what the command line does not link: screen and paper
+struct Outside { ///< what the command line does not link: screen and paper
     std::function<int(int argc, char** argv, const std::string& project_path)> open_window;
     std::function<std::unique_ptr<Printer>(int& argc, char** argv)> make_printer;
 };
@@ -17,4 +17,4 @@ struct Outside {  ///< what the command line does not link: screen and paper
 /// @return the exit status of the contract
 int run_command_line(int argc, char** argv, const Outside& outside);
 
-}  // namespace unstring
+} // namespace unstring

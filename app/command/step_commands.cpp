@@ -28,7 +28,8 @@ CLI::App* add_step(CLI::App& app, const char* name, const char* what, StepCall& 
 }
 
 /// Opens for writing, or says why not. Null: the status is set.
-std::unique_ptr<OpenProject> open_for(const StepCall& call, bool is_look, const Console& console, int& status) {
+std::unique_ptr<OpenProject> open_for(const StepCall& call, bool is_look, const Console& console,
+                                      int& status) {
     auto project = OpenProject::open(call.project, call.plan, is_look);
     if (!project) {
         status = console.fail(project.error());
@@ -36,7 +37,8 @@ std::unique_ptr<OpenProject> open_for(const StepCall& call, bool is_look, const 
     }
     const auto view = (*project)->view();
     if (!is_look && view->is_read_only) {
-        status = console.fail({FaultCode::file_busy, call.project, 0, "", view->read_only_reason, "a project that nobody else writes",
+        status = console.fail({FaultCode::file_busy, call.project, 0, "", view->read_only_reason,
+                               "a project that nobody else writes",
                                "Close it there, or look meanwhile: unstring why, unstring vet --look"});
         return nullptr;
     }
@@ -48,9 +50,11 @@ int run_vet_command(const StepCall& call, const Console& console) {
     auto project = open_for(call, call.look, console, status);
     if (!project) return status;
     if (call.look && call.set_aside)
-        return console.fail({FaultCode::bad_usage, "", 0, "--look", "--look with --set-aside", "one of the two", "--look only reads; --set-aside writes"});
+        return console.fail({FaultCode::bad_usage, "", 0, "--look", "--look with --set-aside",
+                             "one of the two", "--look only reads; --set-aside writes"});
     if (!call.look)
-        if (auto done = project->run_vet(call.set_aside, console.progress("vet")); !done) return console.fail(done.error());
+        if (auto done = project->run_vet(call.set_aside, console.progress("vet")); !done)
+            return console.fail(done.error());
     auto view = *project->view();
     if (!view.vet) view.vet = vet_city(view.city, view.catalog);
     console.say(vet_text(view));
@@ -62,7 +66,8 @@ int run_shade_command(const StepCall& call, const Console& console) {
     int status = 0;
     auto project = open_for(call, false, console, status);
     if (!project) return status;
-    if (auto done = project->run_shade(call.heads, console.progress("shade")); !done) return console.fail(done.error());
+    if (auto done = project->run_shade(call.heads, console.progress("shade")); !done)
+        return console.fail(done.error());
     const auto view = project->view();
     console.say(shade_text(*view));
     console.answer(shade_json(*view, call.per_pole));
@@ -71,12 +76,15 @@ int run_shade_command(const StepCall& call, const Console& console) {
 
 Expected<DecideOptions> decide_options(const StepCall& call) {
     DecideOptions options = call.decide;
-    options.services_anywhere = call.services_anywhere;  // a flag that is not given is off
+    options.services_anywhere = call.services_anywhere; // a flag that is not given is off
     constexpr std::string_view kMustStay = "must-stay=";
     if (call.policy.empty()) return options;
-    if (call.policy == "end") options.policy = Policy::end;
-    else if (call.policy == "may-stay") options.policy = Policy::may_stay;
-    else if (call.policy.starts_with(kMustStay)) options.policy = Policy::must_stay;
+    if (call.policy == "end")
+        options.policy = Policy::end;
+    else if (call.policy == "may-stay")
+        options.policy = Policy::may_stay;
+    else if (call.policy.starts_with(kMustStay))
+        options.policy = Policy::must_stay;
     if (options.policy == Policy::must_stay) {
         std::string ids = call.policy.substr(kMustStay.size());
         for (std::size_t from = 0; from <= ids.size();) {
@@ -86,7 +94,9 @@ Expected<DecideOptions> decide_options(const StepCall& call) {
         }
     }
     if (!options.policy || (options.policy == Policy::must_stay && options.must_stay.empty()))
-        return tl::make_unexpected(Fault{FaultCode::bad_usage, "", 0, "--policy", call.policy, "end, may-stay or must-stay=ID,ID", "For example --policy must-stay=S-04,S-07"});
+        return tl::make_unexpected(Fault{FaultCode::bad_usage, "", 0, "--policy", call.policy,
+                                         "end, may-stay or must-stay=ID,ID",
+                                         "For example --policy must-stay=S-04,S-07"});
     return options;
 }
 
@@ -96,7 +106,8 @@ int run_decide_command(const StepCall& call, const Console& console) {
     int status = 0;
     auto project = open_for(call, false, console, status);
     if (!project) return status;
-    if (auto done = project->run_decide(*options, console.progress("decide")); !done) return console.fail(done.error());
+    if (auto done = project->run_decide(*options, console.progress("decide")); !done)
+        return console.fail(done.error());
     const auto view = project->view();
     console.say(decide_text(*view));
     console.answer(decide_json(*view));
@@ -107,19 +118,22 @@ int run_phase_command(const StepCall& call, const Console& console) {
     int status = 0;
     auto project = open_for(call, false, console, status);
     if (!project) return status;
-    if (auto done = project->run_phase(call.phase, console.progress("phase")); !done) return console.fail(done.error());
+    if (auto done = project->run_phase(call.phase, console.progress("phase")); !done)
+        return console.fail(done.error());
     const auto view = project->view();
     console.say(phase_text(*view));
     console.answer(phase_json(*view));
     return count_errors(view->phase->failures) > 0 ? 1 : 0;
 }
 
-}  // namespace
+} // namespace
 
 void add_vet(CLI::App& app, CommandLine& line) {
     auto call = std::make_shared<StepCall>();
-    CLI::App* vet = add_step(app, "vet", "Says what is wrong with the records, and settles the wiring order", *call, false);
-    vet->add_flag("--set-aside", call->set_aside, "Leaves records with errors out of planning; they stay counted, drawn and printed");
+    CLI::App* vet = add_step(app, "vet", "Says what is wrong with the records, and settles the wiring order",
+                             *call, false);
+    vet->add_flag("--set-aside", call->set_aside,
+                  "Leaves records with errors out of planning; they stay counted, drawn and printed");
     vet->add_flag("--look", call->look, "Only reads: shows what the last run found");
     vet->footer("Example: unstring vet city.gpkg --set-aside");
     vet->callback([call, &line] { line.exit_status = run_vet_command(*call, line.console()); });
@@ -138,22 +152,30 @@ void add_decide(CLI::App& app, CommandLine& line) {
     auto call = std::make_shared<StepCall>();
     CLI::App* decide = add_step(app, "decide", "Chooses keep, rewire or solar for every pole", *call, true);
     decide->add_option("--policy", call->policy, "end | may-stay | must-stay=IDS");
-    decide->add_option("--rate", call->decide.rate, "Real discount rate, for example 0.03")->check(CLI::Range(0.0, 0.5));
-    decide->add_option("--nights", call->decide.nights_goal, "Nights dark a year that are borne at the end of battery life")->check(CLI::Range(0.0, 365.0));
+    decide->add_option("--rate", call->decide.rate, "Real discount rate, for example 0.03")
+        ->check(CLI::Range(0.0, 0.5));
+    decide
+        ->add_option("--nights", call->decide.nights_goal,
+                     "Nights dark a year that are borne at the end of battery life")
+        ->check(CLI::Range(0.0, 365.0));
     decide->add_option("--decide-year", call->decide.decide_year, "Year that prices are taken at");
-    decide->add_flag("--services-anywhere", call->services_anywhere, "New services may also stand where no row of the file proposes one");
+    decide->add_flag("--services-anywhere", call->services_anywhere,
+                     "New services may also stand where no row of the file proposes one");
     decide->footer("Example: unstring decide city.gpkg --policy may-stay --rate 0.03");
     decide->callback([call, &line] { line.exit_status = run_decide_command(*call, line.console()); });
 }
 
 void add_phase(CLI::App& app, CommandLine& line) {
     auto call = std::make_shared<StepCall>();
-    CLI::App* phase = add_step(app, "phase", "Gives every pole its year, inside money and crew hours", *call, true);
+    CLI::App* phase =
+        add_step(app, "phase", "Gives every pole its year, inside money and crew hours", *call, true);
     phase->add_option("--years", call->phase.years, "Years in which work may fall")->check(CLI::Range(1, 60));
-    phase->add_flag("--free", call->phase.free_hand_years, "Years set by hand may be moved; locked ones never are");
-    phase->add_flag("--settle-rest", call->phase.settle_rest, "Years set by hand stay, the others are solved around them");
+    phase->add_flag("--free", call->phase.free_hand_years,
+                    "Years set by hand may be moved; locked ones never are");
+    phase->add_flag("--settle-rest", call->phase.settle_rest,
+                    "Years set by hand stay, the others are solved around them");
     phase->footer("Example: unstring phase city.gpkg --years 8");
     phase->callback([call, &line] { line.exit_status = run_phase_command(*call, line.console()); });
 }
 
-}  // namespace unstring
+} // namespace unstring

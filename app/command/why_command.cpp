@@ -18,13 +18,15 @@ int run_why_command(const WhyCall& call, const Console& console) {
     const auto view = (*project)->view();
     const PoleIx pole = find_pole(view->city, call.pole_id);
     if (!pole.is_valid())
-        return console.fail({FaultCode::bad_usage, call.project, 0, "POLE_ID", call.pole_id, "the id of a pole of this project", "Look it up on the map or in the pole file"});
+        return console.fail({FaultCode::bad_usage, call.project, 0, "POLE_ID", call.pole_id,
+                             "the id of a pole of this project",
+                             "Look it up on the map or in the pole file"});
     console.say(why_text(*view, pole));
     console.answer(why_json(*view, pole));
     return 0;
 }
 
-}  // namespace
+} // namespace
 
 void add_why(CLI::App& app, CommandLine& line) {
     auto call = std::make_shared<WhyCall>();
@@ -36,4 +38,4 @@ void add_why(CLI::App& app, CommandLine& line) {
     why->callback([call, &line] { line.exit_status = run_why_command(*call, line.console()); });
 }
 
-}  // namespace unstring
+} // namespace unstring

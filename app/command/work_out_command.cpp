@@ -19,10 +19,13 @@ namespace unstring {
 
 void add_work_out(CLI::App& app, CommandLine& line) {
     auto answer = std::make_shared<WorkOutAnswer>();
-    CLI::App* work_out = app.add_subcommand("work-out", "One calculation by itself, its inputs and steps shown");
+    CLI::App* work_out =
+        app.add_subcommand("work-out", "One calculation by itself, its inputs and steps shown");
     work_out->require_subcommand(1);
     work_out->footer("Example: unstring work-out worth --rate 0.03 --years 20");
-    for (const auto add : {add_work_out_sun, add_work_out_sky, add_work_out_night, add_work_out_horizon, add_work_out_string, add_work_out_loop, add_work_out_route, add_work_out_drop, add_work_out_worth, add_work_out_spares, add_work_out_trench, add_work_out_years})
+    for (const auto add : {add_work_out_sun, add_work_out_sky, add_work_out_night, add_work_out_horizon,
+                           add_work_out_string, add_work_out_loop, add_work_out_route, add_work_out_drop,
+                           add_work_out_worth, add_work_out_spares, add_work_out_trench, add_work_out_years})
         add(*work_out, *answer);
     work_out->callback([answer, &line] {
         const Console console = line.console();
@@ -35,4 +38,4 @@ void add_work_out(CLI::App& app, CommandLine& line) {
     });
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -19,13 +19,13 @@ std::string shown(const nlohmann::json& value) {
     return text;
 }
 
-}  // namespace
+} // namespace
 
 Expected<nlohmann::json> read_json_file(const std::string& path) {
     std::ifstream stream(path, std::ios::binary);
     if (!stream)
-        return tl::unexpected(Fault{FaultCode::file_missing, path, 0, {}, "no readable file", "a JSON file",
-                                    "check the path"});
+        return tl::unexpected(
+            Fault{FaultCode::file_missing, path, 0, {}, "no readable file", "a JSON file", "check the path"});
     std::stringstream content;
     content << stream.rdbuf();
     std::string text = content.str();
@@ -35,8 +35,13 @@ Expected<nlohmann::json> read_json_file(const std::string& path) {
     } catch (const nlohmann::json::parse_error& error) {
         const auto end = text.begin() + static_cast<long>(std::min(error.byte, text.size()));
         const long row = 1 + std::count(text.begin(), end, '\n');
-        return tl::unexpected(Fault{FaultCode::file_broken, path, row, {}, fmt::format("no JSON at byte {}", error.byte),
-                                    "valid JSON", "mend the file there"});
+        return tl::unexpected(Fault{FaultCode::file_broken,
+                                    path,
+                                    row,
+                                    {},
+                                    fmt::format("no JSON at byte {}", error.byte),
+                                    "valid JSON",
+                                    "mend the file there"});
     }
 }
 
@@ -49,7 +54,12 @@ void JsonFields::refuse(std::string_view key, std::string found, std::string wan
     if (fault_) return;
     std::string field = path_;
     if (!key.empty()) field += (field.empty() ? "" : ".") + std::string(key);
-    fault_ = Fault{FaultCode::value_unreadable, file_,  0, std::move(field), std::move(found), std::move(wanted),
+    fault_ = Fault{FaultCode::value_unreadable,
+                   file_,
+                   0,
+                   std::move(field),
+                   std::move(found),
+                   std::move(wanted),
                    std::move(remedy)};
 }
 
@@ -114,10 +124,11 @@ std::vector<double> JsonFields::numbers(std::string_view key, double low, double
         return out;
     }
     for (std::size_t i = 0; i < list.size(); ++i) {
-        const bool fits = list[i].is_number() && list[i].get<double>() >= low && list[i].get<double>() <= high;
+        const bool fits =
+            list[i].is_number() && list[i].get<double>() >= low && list[i].get<double>() <= high;
         if (!fits) {
-            refuse(fmt::format("{}[{}]", key, i), shown(list[i]), fmt::format("a number from {} to {}", low, high),
-                   "check the value and its unit");
+            refuse(fmt::format("{}[{}]", key, i), shown(list[i]),
+                   fmt::format("a number from {} to {}", low, high), "check the value and its unit");
             return out;
         }
         out.push_back(list[i].get<double>());
@@ -135,4 +146,4 @@ void JsonFields::only(std::initializer_list<std::string_view> known) {
     }
 }
 
-}  // namespace unstring
+} // namespace unstring

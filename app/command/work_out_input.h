@@ -1,6 +1,7 @@
 #pragma once
-// Fields of a work-out input file, read with their checks: what is missing, of the wrong type or out of range is a
-// fault that names file and field; a key that no topic knows is one too, so that a misspelt option cannot pass.
+// Fields of a work-out input file, read with their checks: what is missing, of the wrong type or out of range
+// is a fault that names file and field; a key that no topic knows is one too, so that a misspelt option
+// cannot pass.
 
 #include <initializer_list>
 #include <optional>
@@ -15,13 +16,14 @@
 namespace unstring {
 
 class JsonFields {
-  public:
+public:
     JsonFields(const nlohmann::json& object, std::string file, std::string path = {});
 
     /// Each answers the value, or remembers the first fault and answers a harmless value.
     double number(std::string_view key, double low, double high);
     double number_or(std::string_view key, double fallback, double low, double high);
-    std::optional<double> optional_number(std::string_view key, double low, double high);  ///< null counts as absent
+    std::optional<double> optional_number(std::string_view key, double low,
+                                          double high); ///< null counts as absent
     long integer(std::string_view key, long low, long high);
     std::string text_or(std::string_view key, std::string fallback);
     std::vector<double> numbers(std::string_view key, double low, double high);
@@ -32,10 +34,10 @@ class JsonFields {
 
     [[nodiscard]] const std::optional<Fault>& fault() const { return fault_; }
 
-  private:
+private:
     const nlohmann::json& object_;
     std::string file_, path_;
     std::optional<Fault> fault_;
 };
 
-}  // namespace unstring
+} // namespace unstring

@@ -7,4 +7,4 @@ namespace unstring {
 
 void add_work_out_route(CLI::App& work_out, WorkOutAnswer& answer);
 
-}  // namespace unstring
+} // namespace unstring

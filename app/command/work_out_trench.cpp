@@ -28,24 +28,35 @@ Expected<int> root_of(const TrenchChoices& choices, const StpFile& file) {
     const char* end = choices.root.data() + choices.root.size();
     const auto [at, error] = std::from_chars(choices.root.data(), end, root);
     if (error != std::errc{} || at != end || root < 1 || root > file.vertices_given)
-        return tl::unexpected(Fault{FaultCode::bad_usage, {}, 0, "--root", choices.root,
-                                    fmt::format("a vertex from 1 to {}", file.vertices_given), "name a vertex of the file"});
+        return tl::unexpected(Fault{FaultCode::bad_usage,
+                                    {},
+                                    0,
+                                    "--root",
+                                    choices.root,
+                                    fmt::format("a vertex from 1 to {}", file.vertices_given),
+                                    "name a vertex of the file"});
     return root - 1;
 }
 
-std::string steps_of(const TrenchChoices& choices, const StpFile& file, int root, const SteinerAnswer& found, double gap_frac) {
+std::string steps_of(const TrenchChoices& choices, const StpFile& file, int root, const SteinerAnswer& found,
+                     double gap_frac) {
     std::int64_t edges = 0;
     for (const int e : found.edges) edges += file.problem.edges[static_cast<std::size_t>(e)].cost;
-    std::string text = fmt::format("Input: {}: {} vertices, {} edges, {} that have to be in, {} with a prize, root {}\n", choices.file,
-                                   file.vertices_given, file.edges_given, file.terminals, file.prizes,
-                                   root < 0 ? std::string("free") : std::to_string(root + 1));
-    text += fmt::format("Tree: {} vertices, {} edges that cost {}\n", found.vertices.size(), found.edges.size(), from_scaled(edges));
-    text += fmt::format("Prizes left outside: {}\nCost: {}\n", from_scaled(found.cost - edges), from_scaled(found.cost));
-    text += fmt::format("Bound by dual ascent, fixing and branching: {}; gap {:.4f} %{}\n", from_scaled(found.bound), gap_frac * 100,
-                        found.is_proven ? " (proven best)" : "");
+    std::string text =
+        fmt::format("Input: {}: {} vertices, {} edges, {} that have to be in, {} with a prize, root {}\n",
+                    choices.file, file.vertices_given, file.edges_given, file.terminals, file.prizes,
+                    root < 0 ? std::string("free") : std::to_string(root + 1));
+    text += fmt::format("Tree: {} vertices, {} edges that cost {}\n", found.vertices.size(),
+                        found.edges.size(), from_scaled(edges));
+    text += fmt::format("Prizes left outside: {}\nCost: {}\n", from_scaled(found.cost - edges),
+                        from_scaled(found.cost));
+    text += fmt::format("Bound by dual ascent, fixing and branching: {}; gap {:.4f} %{}\n",
+                        from_scaled(found.bound), gap_frac * 100, found.is_proven ? " (proven best)" : "");
     if (!found.feasible) text += "No tree holds every vertex that has to be in.\n";
-    text += "Source: R. T. Wong, A dual ascent approach for Steiner tree problems on a directed graph, Mathematical "
-            "Programming 28 (1984); D. S. Johnson, M. Minkoff, S. Phillips, The prize collecting Steiner tree problem, SODA 2000.\n";
+    text += "Source: R. T. Wong, A dual ascent approach for Steiner tree problems on a directed graph, "
+            "Mathematical "
+            "Programming 28 (1984); D. S. Johnson, M. Minkoff, S. Phillips, The prize collecting Steiner "
+            "tree problem, SODA 2000.\n";
     return text;
 }
 
@@ -63,7 +74,8 @@ void run(const TrenchChoices& choices, WorkOutAnswer& answer) {
     }
     file->problem.root = *root;
     const SteinerAnswer found = solve_steiner(file->problem);
-    const double gap_frac = found.cost > 0 ? static_cast<double>(found.cost - found.bound) / static_cast<double>(found.cost) : 0;
+    const double gap_frac =
+        found.cost > 0 ? static_cast<double>(found.cost - found.bound) / static_cast<double>(found.cost) : 0;
 
     answer.json["cost"] = from_scaled(found.cost);
     answer.json["bound"] = from_scaled(found.bound);
@@ -77,22 +89,28 @@ void run(const TrenchChoices& choices, WorkOutAnswer& answer) {
     for (const int v : found.vertices) answer.json["nodes"].push_back(v + 1);
     answer.json["feasible"] = found.feasible;
     if (!found.feasible) {
-        answer.fault = Fault{FaultCode::no_solution, choices.file, 0, "T", "a vertex that has to be in and hangs together with no root",
-                             "one connected part that holds root and all T", "add the missing edges"};
+        answer.fault = Fault{FaultCode::no_solution,
+                             choices.file,
+                             0,
+                             "T",
+                             "a vertex that has to be in and hangs together with no root",
+                             "one connected part that holds root and all T",
+                             "add the missing edges"};
     }
     answer.json["seconds"] = std::chrono::duration<double>(std::chrono::steady_clock::now() - start).count();
     answer.steps_text = steps_of(choices, *file, *root, found, gap_frac);
 }
 
-}  // namespace
+} // namespace
 
 void add_work_out_trench(CLI::App& work_out, WorkOutAnswer& answer) {
     const auto choices = std::make_shared<TrenchChoices>();
-    CLI::App* topic = work_out.add_subcommand("trench", "Cheapest tree of trenches: edges of the tree + prizes left outside, with a proven bound");
+    CLI::App* topic = work_out.add_subcommand(
+        "trench", "Cheapest tree of trenches: edges of the tree + prizes left outside, with a proven bound");
     topic->add_option("file", choices->file, "Steiner problem in STP format (T, TP, RootP)")->required();
     topic->add_option("--root", choices->root, "vertex that the tree has to hold, 1..n");
     topic->footer("Example: unstring work-out trench street.stp --root 12");
     topic->callback([choices, &answer] { run(*choices, answer); });
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -10,4 +10,4 @@ void add_work_out_years(CLI::App& work_out, WorkOutAnswer& answer);
 /// The answer for one file. @return with fault where a field is missing, of the wrong type or out of range
 [[nodiscard]] WorkOutAnswer work_out_years(const std::string& path);
 
-}  // namespace unstring
+} // namespace unstring

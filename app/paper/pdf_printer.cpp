@@ -1,5 +1,7 @@
 #include "app/paper/pdf_printer.h"
 
+#include <cstdio>
+
 #include <QGuiApplication>
 #include <QPainter>
 #include <QPdfWriter>
@@ -69,10 +71,20 @@ private:
 
 } // namespace
 
+namespace {
+
+// On a machine without a desktop Qt warns of folders that paper does not need.
+void say_only_failures(QtMsgType type, const QMessageLogContext&, const QString& text) {
+    if (type == QtCriticalMsg || type == QtFatalMsg) std::fprintf(stderr, "%s\n", qPrintable(text));
+}
+
+} // namespace
+
 std::unique_ptr<Printer> make_pdf_printer(int& argc, char** argv) {
     std::unique_ptr<QGuiApplication> application;
     if (QCoreApplication::instance() == nullptr) {
         qputenv("QT_QPA_PLATFORM", "offscreen");
+        qInstallMessageHandler(say_only_failures);
         application = std::make_unique<QGuiApplication>(argc, argv);
     }
     return std::make_unique<PdfPrinter>(std::move(application));

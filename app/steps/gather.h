@@ -19,9 +19,11 @@ struct GatherReport {
     std::vector<std::string> notes;
 };
 
-/// Creates the project where there is none, else adds or replaces the tables whose files are given. Marks become one edit
-/// of the plan. A project is whole before it has its name; a failed or cancelled run leaves an old one as it was.
+/// Creates the project where there is none, else adds or replaces the tables whose files are given. Marks
+/// become one edit of the plan. A project is whole before it has its name; a failed or cancelled run leaves
+/// an old one as it was.
 /// @fault bad_usage (nothing to do), file_busy, and what reading reports
-[[nodiscard]] Expected<GatherReport> gather_project(const std::string& path, const GatherFiles& files, const Progress& progress);
+[[nodiscard]] Expected<GatherReport> gather_project(const std::string& path, const GatherFiles& files,
+                                                    const Progress& progress);
 
-}  // namespace unstring
+} // namespace unstring

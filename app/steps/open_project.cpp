@@ -14,7 +14,8 @@ OpenProject::~OpenProject() {
     inside_->database.reset();
 }
 
-Expected<std::unique_ptr<OpenProject>> OpenProject::open(const std::string& path, const std::string& plan_name, bool read_only) {
+Expected<std::unique_ptr<OpenProject>> OpenProject::open(const std::string& path,
+                                                         const std::string& plan_name, bool read_only) {
     std::unique_ptr<OpenProject> project(new OpenProject);
     Inside& inside = *project->inside_;
     inside.path = path;
@@ -22,8 +23,10 @@ Expected<std::unique_ptr<OpenProject>> OpenProject::open(const std::string& path
     if (auto known = check_version(path); !known) return tl::make_unexpected(known.error());
     if (!read_only) {
         auto lock = WriterLock::take(path);
-        if (lock) inside.lock = std::move(*lock);
-        else inside.read_only_reason = lock.error().found;
+        if (lock)
+            inside.lock = std::move(*lock);
+        else
+            inside.read_only_reason = lock.error().found;
     }
     if (inside.lock)
         if (auto ready = bring_up_to_date(path); !ready) return tl::make_unexpected(ready.error());
@@ -57,7 +60,8 @@ Expected<std::optional<Change>> OpenProject::redo() {
 
 Expected<std::vector<EditLine>> OpenProject::history(const std::string& pole_id, int at_most) const {
     std::vector<EditLine> lines;
-    for (const EditRecord& record : edits_of(*inside_->database, inside_->plan.settings.name, pole_id, at_most))
+    for (const EditRecord& record :
+         edits_of(*inside_->database, inside_->plan.settings.name, pole_id, at_most))
         lines.push_back({record.id, record.at, record.who, record.plan, record.label, record.undoes});
     if (const auto& failure = inside_->database->failure()) return tl::make_unexpected(*failure);
     return lines;
@@ -69,7 +73,9 @@ PhaseResult OpenProject::preview(const Plan& next) const {
     static const ShadeResult none;
     const std::lock_guard held(inside_->desk_mutex);
     if (inside_->desk_view != now) {
-        inside_->desk = std::make_unique<PhaseDesk>(MoneyInput{now->city, now->catalog, now->prices, next, now->shade ? *now->shade : none}, *now->decide);
+        inside_->desk = std::make_unique<PhaseDesk>(
+            MoneyInput{now->city, now->catalog, now->prices, next, now->shade ? *now->shade : none},
+            *now->decide);
         inside_->desk_view = now;
     }
     PhaseResult result = inside_->desk->evaluate(next, false);
@@ -77,4 +83,4 @@ PhaseResult OpenProject::preview(const Plan& next) const {
     return result;
 }
 
-}  // namespace unstring
+} // namespace unstring

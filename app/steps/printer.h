@@ -10,10 +10,11 @@
 namespace unstring {
 
 class Printer {
-  public:
+public:
     virtual ~Printer() = default;
     /// One PDF with these orders. @param paper "a4" or "letter"
-    [[nodiscard]] virtual Expected<void> print_orders(const std::vector<WorkOrder>& orders, const std::string& path, const std::string& paper) = 0;
+    [[nodiscard]] virtual Expected<void> print_orders(const std::vector<WorkOrder>& orders,
+                                                      const std::string& path, const std::string& paper) = 0;
 };
 
-}  // namespace unstring
+} // namespace unstring

@@ -14,7 +14,9 @@
 namespace unstring {
 namespace {
 
-std::string plan_of(Step step, const Plan& plan) { return step < Step::decide ? std::string() : plan.settings.name; }
+std::string plan_of(Step step, const Plan& plan) {
+    return step < Step::decide ? std::string() : plan.settings.name;
+}
 
 Fault not_ready(const std::string& path, std::string found, std::string remedy) {
     return {FaultCode::not_ready, path, 0, "", std::move(found), "", std::move(remedy)};
@@ -32,10 +34,11 @@ const ShadeResult& no_shade() {
     return none;
 }
 
-}  // namespace
+} // namespace
 
 int count_of(const std::vector<Finding>& findings, Severity severity) {
-    return static_cast<int>(std::count_if(findings.begin(), findings.end(), [&](const Finding& f) { return f.severity == severity; }));
+    return static_cast<int>(std::count_if(findings.begin(), findings.end(),
+                                          [&](const Finding& f) { return f.severity == severity; }));
 }
 
 Expected<void> OpenProject::Inside::load(const std::string& plan_name) {
@@ -71,12 +74,18 @@ std::string OpenProject::Inside::hash_of(Step step, const std::vector<std::strin
     const std::vector<VetString> none;
     const auto& wiring = vet ? vet->strings : none;
     switch (step) {
-        case Step::vet: return vet_input_hash(tables);
-        case Step::shade: return shade_input_hash(tables, plan.settings.nights_goal, heads);
-        case Step::decide: return decide_input_hash(tables, wiring, plan, stored_hash(Step::shade));
-        case Step::phase: return phase_input_hash(tables, wiring, plan, stored_hash(Step::decide));
-        case Step::hand_out: return hand_out_input_hash(tables, plan, stored_hash(Step::phase));
-        default: return {};
+    case Step::vet:
+        return vet_input_hash(tables);
+    case Step::shade:
+        return shade_input_hash(tables, plan.settings.nights_goal, heads);
+    case Step::decide:
+        return decide_input_hash(tables, wiring, plan, stored_hash(Step::shade));
+    case Step::phase:
+        return phase_input_hash(tables, wiring, plan, stored_hash(Step::decide));
+    case Step::hand_out:
+        return hand_out_input_hash(tables, plan, stored_hash(Step::phase));
+    default:
+        return {};
     }
 }
 
@@ -98,43 +107,49 @@ std::array<StepState, 6> OpenProject::Inside::step_states(const std::optional<Ph
         each.at = run->at;
         each.standing = is_upstream_good ? StepStanding::up_to_date : StepStanding::stale;
         switch (step) {
-            case Step::gather:
-                counts(step, gather_findings);
-                if (gather_errors_set_aside) each.errors = 0;
-                break;
-            case Step::vet:
-                if (!vet || run->input_hash != hash_of(step)) each.standing = StepStanding::stale;
-                if (vet) counts(step, vet->findings);
-                each.errors += state(Step::gather).errors;
-                break;
-            case Step::shade: {
-                const std::string heads = meta_value(*database, "shade_heads");
-                std::vector<std::string> chosen;
-                for (std::size_t from = 0; from < heads.size();) {
-                    const std::size_t end = std::min(heads.find('\n', from), heads.size());
-                    chosen.push_back(heads.substr(from, end - from));
-                    from = end + 1;
-                }
-                if (!shade || run->input_hash != hash_of(step, chosen)) each.standing = StepStanding::stale;
-                counts(step, shade_findings);
-                break;
+        case Step::gather:
+            counts(step, gather_findings);
+            if (gather_errors_set_aside) each.errors = 0;
+            break;
+        case Step::vet:
+            if (!vet || run->input_hash != hash_of(step)) each.standing = StepStanding::stale;
+            if (vet) counts(step, vet->findings);
+            each.errors += state(Step::gather).errors;
+            break;
+        case Step::shade: {
+            const std::string heads = meta_value(*database, "shade_heads");
+            std::vector<std::string> chosen;
+            for (std::size_t from = 0; from < heads.size();) {
+                const std::size_t end = std::min(heads.find('\n', from), heads.size());
+                chosen.push_back(heads.substr(from, end - from));
+                from = end + 1;
             }
-            case Step::decide:
-                if (!decide || run->input_hash != hash_of(step) || !follows_decisions(plan, *decide)) each.standing = StepStanding::stale;
-                if (decide) counts(step, decide->findings);
-                break;
-            case Step::phase:
-                if (!phase || run->input_hash != hash_of(step)) each.standing = StepStanding::stale;
-                else if (each.standing == StepStanding::up_to_date && phase_run->plan_hash != hand_out_input_hash(tables, plan, {})) each.standing = StepStanding::by_hand;
-                if (phase) counts(step, phase->failures);
-                break;
-            case Step::hand_out:
-                if (run->input_hash != hash_of(step)) each.standing = StepStanding::stale;
-                break;
+            if (!shade || run->input_hash != hash_of(step, chosen)) each.standing = StepStanding::stale;
+            counts(step, shade_findings);
+            break;
+        }
+        case Step::decide:
+            if (!decide || run->input_hash != hash_of(step) || !follows_decisions(plan, *decide))
+                each.standing = StepStanding::stale;
+            if (decide) counts(step, decide->findings);
+            break;
+        case Step::phase:
+            if (!phase || run->input_hash != hash_of(step))
+                each.standing = StepStanding::stale;
+            else if (each.standing == StepStanding::up_to_date &&
+                     phase_run->plan_hash != hand_out_input_hash(tables, plan, {}))
+                each.standing = StepStanding::by_hand;
+            if (phase) counts(step, phase->failures);
+            break;
+        case Step::hand_out:
+            if (run->input_hash != hash_of(step)) each.standing = StepStanding::stale;
+            break;
         }
         const bool can_stop = step != Step::gather && step != Step::hand_out;
-        if (can_stop && each.errors > 0 && each.standing != StepStanding::stale) each.standing = StepStanding::stopped;
-        is_upstream_good = is_upstream_good && (each.standing == StepStanding::up_to_date || each.standing == StepStanding::by_hand);
+        if (can_stop && each.errors > 0 && each.standing != StepStanding::stale)
+            each.standing = StepStanding::stopped;
+        is_upstream_good = is_upstream_good && (each.standing == StepStanding::up_to_date ||
+                                                each.standing == StepStanding::by_hand);
     }
     return states;
 }
@@ -168,7 +183,8 @@ void OpenProject::Inside::show() {
         next->phase->seconds = phase_run->seconds;
     }
     next->steps = step_states(next->phase);
-    if (next->phase && next->steps[static_cast<std::size_t>(Step::phase)].standing == StepStanding::stale) next->phase->bound = 0;
+    if (next->phase && next->steps[static_cast<std::size_t>(Step::phase)].standing == StepStanding::stale)
+        next->phase->bound = 0;
     const UndoLabels labels = undo_labels(*database, plan.settings.name);
     next->undo_label = labels.undo;
     next->redo_label = labels.redo;
@@ -178,7 +194,8 @@ void OpenProject::Inside::show() {
 
 Expected<void> OpenProject::Inside::may_write() const {
     if (lock) return {};
-    return tl::make_unexpected(Fault{FaultCode::file_busy, path, 0, "", read_only_reason, "a project that nobody else writes",
+    return tl::make_unexpected(Fault{FaultCode::file_busy, path, 0, "", read_only_reason,
+                                     "a project that nobody else writes",
                                      "Close it there, or work on a copy"});
 }
 
@@ -189,16 +206,22 @@ Expected<void> OpenProject::Inside::ready_for(Step step) const {
         const std::string word = text_of(earlier);
         if (earlier == Step::gather || (earlier == Step::vet && step == Step::vet)) continue;
         switch (each.standing) {
-            case StepStanding::not_yet:
-                return tl::make_unexpected(not_ready(path, fmt::format("{} has not been run", word), fmt::format("Run first: unstring {} {}", word, path)));
-            case StepStanding::stale:
-                return tl::make_unexpected(
-                    not_ready(path, fmt::format("{} is stale: what it rests on has changed since", word), fmt::format("Run again: unstring {} {}", word, path)));
-            case StepStanding::stopped:
-                return tl::make_unexpected(not_ready(path, fmt::format("{} is stopped by {} error{}", word, each.errors, each.errors == 1 ? "" : "s"),
-                                                     earlier == Step::vet ? fmt::format("Mend the records, or set them aside: unstring vet {} --set-aside", path)
-                                                                          : fmt::format("Look at the findings: unstring {} {}", word, path)));
-            default: break;
+        case StepStanding::not_yet:
+            return tl::make_unexpected(not_ready(path, fmt::format("{} has not been run", word),
+                                                 fmt::format("Run first: unstring {} {}", word, path)));
+        case StepStanding::stale:
+            return tl::make_unexpected(
+                not_ready(path, fmt::format("{} is stale: what it rests on has changed since", word),
+                          fmt::format("Run again: unstring {} {}", word, path)));
+        case StepStanding::stopped:
+            return tl::make_unexpected(not_ready(
+                path,
+                fmt::format("{} is stopped by {} error{}", word, each.errors, each.errors == 1 ? "" : "s"),
+                earlier == Step::vet
+                    ? fmt::format("Mend the records, or set them aside: unstring vet {} --set-aside", path)
+                    : fmt::format("Look at the findings: unstring {} {}", word, path)));
+        default:
+            break;
         }
     }
     return {};
@@ -207,9 +230,11 @@ Expected<void> OpenProject::Inside::ready_for(Step step) const {
 Change OpenProject::Inside::change_to(const Plan& next, const std::string& label) {
     Change change = plan_difference(city, plan, next, label);
     const auto names = plan_names(*database);
-    if (change.rows.empty() || std::find(names.begin(), names.end(), plan.settings.name) != names.end()) return change;
+    if (change.rows.empty() || std::find(names.begin(), names.end(), plan.settings.name) != names.end())
+        return change;
     std::erase_if(change.rows, [](const RowChange& row) { return row.table == kPlansTable; });
-    change.rows.insert(change.rows.begin(), RowChange{kPlansTable, plan.settings.name, {}, settings_cells(next.settings)});
+    change.rows.insert(change.rows.begin(),
+                       RowChange{kPlansTable, plan.settings.name, {}, settings_cells(next.settings)});
     return change;
 }
 
@@ -217,7 +242,7 @@ Expected<std::optional<Change>> OpenProject::Inside::take_back(const std::option
     if (auto may = may_write(); !may) return tl::make_unexpected(may.error());
     if (!line) return std::optional<Change>();
     Change change = inverse(line->change);
-    change.who.clear();  // who takes it back, not who made it
+    change.who.clear(); // who takes it back, not who made it
     if (auto written = database->transaction([&] { write_change(*database, change, line->id); }); !written)
         return tl::make_unexpected(written.error());
     if (auto loaded = load_plan(plan.settings.name); !loaded) return tl::make_unexpected(loaded.error());
@@ -225,7 +250,8 @@ Expected<std::optional<Change>> OpenProject::Inside::take_back(const std::option
     return std::optional<Change>(change);
 }
 
-Expected<Change> OpenProject::Inside::write_plan(const Plan& next, const std::string& label, const std::function<void()>& more) {
+Expected<Change> OpenProject::Inside::write_plan(const Plan& next, const std::string& label,
+                                                 const std::function<void()>& more) {
     if (auto may = may_write(); !may) return tl::make_unexpected(may.error());
     const Change change = change_to(next, label);
     if (change.is_empty() && !more) return change;
@@ -238,4 +264,4 @@ Expected<Change> OpenProject::Inside::write_plan(const Plan& next, const std::st
     return change;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -1,5 +1,6 @@
 #pragma once
-// What an open project holds besides the view it shows: the file, the writer's lock, and the parts that views are made of.
+// What an open project holds besides the view it shows: the file, the writer's lock, and the parts that views
+// are made of.
 
 #include <memory>
 #include <mutex>
@@ -20,11 +21,11 @@ namespace unstring {
 
 struct OpenProject::Inside {
     std::string path, read_only_reason;
-    std::unique_ptr<WriterLock> lock;  ///< null = read-only
+    std::unique_ptr<WriterLock> lock; ///< null = read-only
     std::unique_ptr<Database> database;
 
-    CityTables tables;  ///< as gathered
-    City city;          ///< the same, in the wiring order that vet settled
+    CityTables tables; ///< as gathered
+    City city;         ///< the same, in the wiring order that vet settled
     Plan plan;
     std::vector<Finding> gather_findings;
     bool gather_errors_set_aside = false;
@@ -37,7 +38,7 @@ struct OpenProject::Inside {
     mutable std::mutex view_mutex;
     std::shared_ptr<const ProjectView> view;
 
-    mutable std::mutex desk_mutex;  ///< of what preview keeps from one plan to the next
+    mutable std::mutex desk_mutex; ///< of what preview keeps from one plan to the next
     mutable std::shared_ptr<const ProjectView> desk_view;
     mutable std::unique_ptr<PhaseDesk> desk;
 
@@ -61,10 +62,12 @@ struct OpenProject::Inside {
     /// Undo and redo: the inverse of an edit, written as a line of its own.
     Expected<std::optional<Change>> take_back(const std::optional<UndoLine>& line);
     /// Rows, line in edits and what else `more` writes, in one transaction; then the plan is `next`.
-    Expected<Change> write_plan(const Plan& next, const std::string& label, const std::function<void()>& more = {});
+    Expected<Change> write_plan(const Plan& next, const std::string& label,
+                                const std::function<void()>& more = {});
 };
 
-/// An error that still stops the next step: gather's until its rows are mended or set aside, vet's as they are found.
+/// An error that still stops the next step: gather's until its rows are mended or set aside, vet's as they
+/// are found.
 [[nodiscard]] int count_of(const std::vector<Finding>& findings, Severity severity);
 
-}  // namespace unstring
+} // namespace unstring

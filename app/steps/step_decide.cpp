@@ -11,23 +11,27 @@ namespace unstring {
 namespace {
 
 Fault bad_option(std::string option, std::string found, std::string wanted) {
-    return {FaultCode::bad_usage, "", 0, std::move(option), std::move(found), std::move(wanted), "Give another value"};
+    return {FaultCode::bad_usage, "", 0, std::move(option), std::move(found), std::move(wanted),
+            "Give another value"};
 }
 
 Expected<PlanSettings> settings_with(const City& city, PlanSettings settings, const DecideOptions& options) {
     if (options.policy) settings.policy = *options.policy;
     if (options.policy) settings.must_stay = options.must_stay;
     for (const std::string& id : settings.must_stay)
-        if (!find_string(city, id).is_valid()) return tl::make_unexpected(bad_option("--policy must-stay", id, "the id of a string"));
+        if (!find_string(city, id).is_valid())
+            return tl::make_unexpected(bad_option("--policy must-stay", id, "the id of a string"));
     if (options.rate) settings.rate = *options.rate;
     if (options.nights_goal) settings.nights_goal = *options.nights_goal;
     if (options.services_anywhere) settings.services_anywhere = *options.services_anywhere;
     if (options.decide_year) {
         // The contract's Y is a calendar year; a small number is the plan's own count of years.
-        const int year = *options.decide_year < 1000 ? settings.first_year + *options.decide_year - 1 : *options.decide_year;
+        const int year = *options.decide_year < 1000 ? settings.first_year + *options.decide_year - 1
+                                                     : *options.decide_year;
         const int last = settings.first_year + settings.horizon_years - 1;
         if (year < settings.first_year || year > last)
-            return tl::make_unexpected(bad_option("--decide-year", std::to_string(*options.decide_year), fmt::format("{} to {}", settings.first_year, last)));
+            return tl::make_unexpected(bad_option("--decide-year", std::to_string(*options.decide_year),
+                                                  fmt::format("{} to {}", settings.first_year, last)));
         settings.decide_year = year;
     }
     return settings;
@@ -39,7 +43,7 @@ Plan plan_with(Plan plan, const DecideResult& result) {
         const bool is_same = row.choice == decision.choice && row.head == decision.head;
         row.choice = decision.choice;
         row.head = decision.head;
-        if (!is_same && !row.year_locked && row.year_by != YearBy::hand) {  // its year was for another choice
+        if (!is_same && !row.year_locked && row.year_by != YearBy::hand) { // its year was for another choice
             row.year = 0;
             row.year_by = YearBy::none;
         }
@@ -51,7 +55,7 @@ Plan plan_with(Plan plan, const DecideResult& result) {
     return plan;
 }
 
-}  // namespace
+} // namespace
 
 Expected<void> OpenProject::run_decide(const DecideOptions& options, const Progress& progress) {
     Inside& inside = *inside_;
@@ -62,7 +66,9 @@ Expected<void> OpenProject::run_decide(const DecideOptions& options, const Progr
     asked.settings = *settings;
     if (settings->nights_goal != inside.plan.settings.nights_goal && inside.shade) {
         // Which heads are good enough hangs on the goal: the sky's answers are judged again before deciding.
-        if (auto written = inside.write_plan(asked, fmt::format("nights-dark goal {} a year", settings->nights_goal)); !written)
+        if (auto written =
+                inside.write_plan(asked, fmt::format("nights-dark goal {} a year", settings->nights_goal));
+            !written)
             return tl::make_unexpected(written.error());
         inside.show();
         if (auto shaded = run_shade({}, progress); !shaded) return shaded;
@@ -73,14 +79,17 @@ Expected<void> OpenProject::run_decide(const DecideOptions& options, const Progr
     auto result = decide_city(inside.money_input(asked), progress);
     if (!result) return tl::make_unexpected(result.error());
     const Plan next = plan_with(asked, *result);
-    const std::string label = fmt::format("decide: {} keep, {} rewire, {} solar", result->keep, result->rewire, result->solar);
+    const std::string label =
+        fmt::format("decide: {} keep, {} rewire, {} solar", result->keep, result->rewire, result->solar);
     const std::vector<VetString> none;
-    const std::string hash = decide_input_hash(inside.tables, inside.vet ? inside.vet->strings : none, next, inside.stored_hash(Step::shade));
-    auto written = inside.write_plan(next, label, [&] { write_decide(*inside.database, inside.city, next.settings.name, *result, hash); });
+    const std::string hash = decide_input_hash(inside.tables, inside.vet ? inside.vet->strings : none, next,
+                                               inside.stored_hash(Step::shade));
+    auto written = inside.write_plan(
+        next, label, [&] { write_decide(*inside.database, inside.city, next.settings.name, *result, hash); });
     if (!written) return tl::make_unexpected(written.error());
     inside.decide = std::move(*result);
     inside.show();
     return {};
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -12,19 +12,25 @@ NLOHMANN_JSON_SERIALIZE_ENUM(LampKind, {{LampKind::hps, "hps"},
 NLOHMANN_JSON_SERIALIZE_ENUM(Metal, {{Metal::copper, "cu"}, {Metal::aluminium, "al"}})
 NLOHMANN_DEFINE_TYPE_NON_INTRUSIVE(Lamp, fixture, aliases, system_w, pf, kind)
 NLOHMANN_DEFINE_TYPE_NON_INTRUSIVE(DimStep, from_h, to_h, frac)
-NLOHMANN_DEFINE_TYPE_NON_INTRUSIVE(Head, head, panel_wp, tilt_deg, turn_deg, battery_wh, led_w, lumens, dimming, epa_m2, mass_kg,
-                                   price_item, battery_item, life_yr, warranty_yr, cct_k, domestic, ies)
+NLOHMANN_DEFINE_TYPE_NON_INTRUSIVE(Head, head, panel_wp, tilt_deg, turn_deg, battery_wh, led_w, lumens,
+                                   dimming, epa_m2, mass_kg, price_item, battery_item, life_yr, warranty_yr,
+                                   cct_k, domestic, ies)
 NLOHMANN_DEFINE_TYPE_NON_INTRUSIVE(Luminaire, luminaire, led_w, pf, lumens, price_item, ies)
 NLOHMANN_DEFINE_TYPE_NON_INTRUSIVE(Cable, awg, metal, ohm_per_km, x_ohm_per_km, area_mm2, ampacity_a)
 
 namespace {
 
-template <class Row> void write_kind(Statement& insert, const char* kind, const std::vector<Row>& rows) {
+template <class Row>
+void write_kind(Statement& insert, const char* kind, const std::vector<Row>& rows) {
     for (std::size_t i = 0; i < rows.size(); ++i)
-        insert.bind(1, std::string_view(kind)).bind(2, static_cast<std::int64_t>(i)).bind(3, std::string_view(nlohmann::json(rows[i]).dump())).run();
+        insert.bind(1, std::string_view(kind))
+            .bind(2, static_cast<std::int64_t>(i))
+            .bind(3, std::string_view(nlohmann::json(rows[i]).dump()))
+            .run();
 }
 
-template <class Row> std::vector<Row> read_kind(Database& database, const char* kind) {
+template <class Row>
+std::vector<Row> read_kind(Database& database, const char* kind) {
     Statement select = database.prepare("SELECT json FROM catalogue WHERE kind=?1 ORDER BY place");
     select.bind(1, std::string_view(kind));
     std::vector<Row> rows;
@@ -33,13 +39,14 @@ template <class Row> std::vector<Row> read_kind(Database& database, const char* 
         try {
             rows.push_back(json.get<Row>());
         } catch (const nlohmann::json::exception& error) {
-            database.fail({FaultCode::file_broken, "", 0, kind, error.what(), "a catalogue row", "Gather the catalogue again"});
+            database.fail({FaultCode::file_broken, "", 0, kind, error.what(), "a catalogue row",
+                           "Gather the catalogue again"});
         }
     }
     return rows;
 }
 
-}  // namespace
+} // namespace
 
 void write_catalog(Database& database, const Catalog& catalog) {
     database.run("DELETE FROM catalogue");
@@ -51,12 +58,16 @@ void write_catalog(Database& database, const Catalog& catalog) {
 }
 
 Catalog read_catalog(Database& database) {
-    return {read_kind<Lamp>(database, "lamps"), read_kind<Head>(database, "heads"), read_kind<Luminaire>(database, "luminaires"),
-            read_kind<Cable>(database, "cables")};
+    return {read_kind<Lamp>(database, "lamps"), read_kind<Head>(database, "heads"),
+            read_kind<Luminaire>(database, "luminaires"), read_kind<Cable>(database, "cables")};
 }
 
 std::string catalog_text(const Catalog& catalog) {
-    return nlohmann::json{{"lamps", catalog.lamps}, {"heads", catalog.heads}, {"luminaires", catalog.luminaires}, {"cables", catalog.cables}}.dump();
+    return nlohmann::json{{"lamps", catalog.lamps},
+                          {"heads", catalog.heads},
+                          {"luminaires", catalog.luminaires},
+                          {"cables", catalog.cables}}
+        .dump();
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -11,4 +11,4 @@ void write_catalog(Database& database, const Catalog& catalog);
 /// The same rows as one text, for the input hash.
 [[nodiscard]] std::string catalog_text(const Catalog& catalog);
 
-}  // namespace unstring
+} // namespace unstring

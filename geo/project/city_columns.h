@@ -17,4 +17,4 @@ namespace unstring {
 [[nodiscard]] const std::vector<Column<YearBudget>>& budget_columns();
 [[nodiscard]] const std::vector<Column<PriceRow>>& price_columns();
 
-}  // namespace unstring
+} // namespace unstring

@@ -13,16 +13,19 @@
 namespace unstring {
 namespace {
 
-template <class Record> struct Table {
+template <class Record>
+struct Table {
     const char* name;
-    const char* geometry;  ///< "" = no places
+    const char* geometry; ///< "" = no places
     const char* what;
     const std::vector<Column<Record>>& columns;
-    std::function<Bytes(const Record&, int srs_id)> blob;             ///< null geometry when empty
+    std::function<Bytes(const Record&, int srs_id)> blob; ///< null geometry when empty
     std::function<void(Record&, std::vector<MapPoint>)> take_points;
 };
 
-template <class Record> void write_table(Database& database, const City& city, const std::vector<Record>& records, const Table<Record>& table) {
+template <class Record>
+void write_table(Database& database, const City& city, const std::vector<Record>& records,
+                 const Table<Record>& table) {
     const bool has_place = *table.geometry != '\0';
     std::string columns, names, marks;
     int place = has_place ? 2 : 1;
@@ -32,8 +35,9 @@ template <class Record> void write_table(Database& database, const City& city, c
         marks += fmt::format(", ?{}", ++place);
     }
     make_layer(database, {table.name, table.geometry, columns, table.what});
-    Statement insert = database.prepare(fmt::format("INSERT INTO \"{}\" (fid{}{}) VALUES (?1{}{})", table.name, has_place ? ", geom" : "", names,
-                                                    has_place ? ", ?2" : "", marks));
+    Statement insert =
+        database.prepare(fmt::format("INSERT INTO \"{}\" (fid{}{}) VALUES (?1{}{})", table.name,
+                                     has_place ? ", geom" : "", names, has_place ? ", ?2" : "", marks));
     const int srs_id = srs_id_of(database);
     std::int64_t fid = 0;
     for (const Record& record : records) {
@@ -47,11 +51,13 @@ template <class Record> void write_table(Database& database, const City& city, c
     if (has_place) finish_layer(database, table.name);
 }
 
-template <class Record> std::vector<Record> read_table(Database& database, const City& city, const Table<Record>& table) {
+template <class Record>
+std::vector<Record> read_table(Database& database, const City& city, const Table<Record>& table) {
     const bool has_place = *table.geometry != '\0';
     std::string names;
     for (const auto& column : table.columns) names += fmt::format(", \"{}\"", column.name);
-    Statement select = database.prepare(fmt::format("SELECT {}{} FROM \"{}\" ORDER BY fid", has_place ? "geom" : "fid", names, table.name));
+    Statement select = database.prepare(
+        fmt::format("SELECT {}{} FROM \"{}\" ORDER BY fid", has_place ? "geom" : "fid", names, table.name));
     std::vector<Record> records;
     while (select.step()) {
         Record record;
@@ -66,33 +72,60 @@ template <class Record> std::vector<Record> read_table(Database& database, const
 
 bool is_finite(MapPoint point) { return std::isfinite(point.x_m) && std::isfinite(point.y_m); }
 
-template <class Record> void take_place(Record& record, std::vector<MapPoint> points) {
+template <class Record>
+void take_place(Record& record, std::vector<MapPoint> points) {
     if (points.empty()) return;
     record.place = points.front();
     record.has_place = true;
 }
 
-template <class Record> Bytes place_blob(const Record& record, int srs_id) {
+template <class Record>
+Bytes place_blob(const Record& record, int srs_id) {
     return record.has_place && is_finite(record.place) ? point_blob(record.place, srs_id) : Bytes();
 }
 
-const Table<SeriesString> kStrings = {"strings", "POINT", "Circuits: series strings and parallel lighting circuits, at their stations",
-                                      string_columns(),
-                                      [](const SeriesString& s, int srs_id) { return s.station && is_finite(*s.station) ? point_blob(*s.station, srs_id) : Bytes(); },
-                                      [](SeriesString& s, std::vector<MapPoint> points) { if (!points.empty()) s.station = points.front(); }};
+const Table<SeriesString> kStrings = {
+    "strings",
+    "POINT",
+    "Circuits: series strings and parallel lighting circuits, at their stations",
+    string_columns(),
+    [](const SeriesString& s, int srs_id) {
+        return s.station && is_finite(*s.station) ? point_blob(*s.station, srs_id) : Bytes();
+    },
+    [](SeriesString& s, std::vector<MapPoint> points) {
+        if (!points.empty()) s.station = points.front();
+    }};
 const Table<Pole> kPoles = {"poles", "POINT", "Poles", pole_columns(), place_blob<Pole>, take_place<Pole>};
-const Table<Transformer> kTransformers = {"transformers", "", "Regulated-output transformers, in service and spare", transformer_columns(), {}, {}};
-const Table<CutBack> kCutBacks = {"cutbacks", "", "Places where a string can be spliced across", cutback_columns(), {}, {}};
-const Table<ServicePoint> kServices = {"services", "POINT", "Service points, ends of lighting circuits, candidates", service_columns(),
-                                       place_blob<ServicePoint>, take_place<ServicePoint>};
-const Table<Street> kStreets = {"streets", "LINESTRING", "Streets", street_columns(), [](const Street& s, int srs_id) { return line_blob(s.line, srs_id); },
+const Table<Transformer> kTransformers = {
+    "transformers", "", "Regulated-output transformers, in service and spare", transformer_columns(), {}, {}};
+const Table<CutBack> kCutBacks = {"cutbacks",        "", "Places where a string can be spliced across",
+                                  cutback_columns(), {}, {}};
+const Table<ServicePoint> kServices = {"services",
+                                       "POINT",
+                                       "Service points, ends of lighting circuits, candidates",
+                                       service_columns(),
+                                       place_blob<ServicePoint>,
+                                       take_place<ServicePoint>};
+const Table<Street> kStreets = {"streets",
+                                "LINESTRING",
+                                "Streets",
+                                street_columns(),
+                                [](const Street& s, int srs_id) { return line_blob(s.line, srs_id); },
                                 [](Street& s, std::vector<MapPoint> points) { s.line = std::move(points); }};
-const Table<CanopyArea> kCanopy = {"canopy_areas", "POLYGON", "Tree crowns", canopy_columns(),
-                                   [](const CanopyArea& a, int srs_id) { return polygon_blob(a.ring, srs_id); },
-                                   [](CanopyArea& a, std::vector<MapPoint> points) { a.ring = std::move(points); }};
-const Table<Obstacle> kObstacles = {"obstacles", "POLYGON", "Buildings", obstacle_columns(),
-                                    [](const Obstacle& o, int srs_id) { return polygon_blob(o.ring, srs_id); },
-                                    [](Obstacle& o, std::vector<MapPoint> points) { o.ring = std::move(points); }};
+const Table<CanopyArea> kCanopy = {
+    "canopy_areas",
+    "POLYGON",
+    "Tree crowns",
+    canopy_columns(),
+    [](const CanopyArea& a, int srs_id) { return polygon_blob(a.ring, srs_id); },
+    [](CanopyArea& a, std::vector<MapPoint> points) { a.ring = std::move(points); }};
+const Table<Obstacle> kObstacles = {
+    "obstacles",
+    "POLYGON",
+    "Buildings",
+    obstacle_columns(),
+    [](const Obstacle& o, int srs_id) { return polygon_blob(o.ring, srs_id); },
+    [](Obstacle& o, std::vector<MapPoint> points) { o.ring = std::move(points); }};
 const Table<YearBudget> kBudget = {"budget", "", "Money and crew hours by year", budget_columns(), {}, {}};
 const Table<PriceRow> kPrices = {"prices", "", "Price book", price_columns(), {}, {}};
 
@@ -101,7 +134,11 @@ void write_climate(Database& database, const std::optional<Climate>& climate) {
     if (!climate) return;
     Statement insert = database.prepare("INSERT INTO climate VALUES (?1,?2,?3,?4)");
     for (std::size_t m = 0; m < 12; ++m)
-        insert.bind(1, static_cast<std::int64_t>(m + 1)).bind(2, climate->ghi_kwh_m2_day[m]).bind(3, climate->temp_c[m]).bind(4, climate->albedo[m]).run();
+        insert.bind(1, static_cast<std::int64_t>(m + 1))
+            .bind(2, climate->ghi_kwh_m2_day[m])
+            .bind(3, climate->temp_c[m])
+            .bind(4, climate->albedo[m])
+            .run();
 }
 
 std::optional<Climate> read_climate(Database& database) {
@@ -124,18 +161,25 @@ void write_counts(Database& database, const std::vector<TableCount>& counts) {
     database.run("DELETE FROM row_counts");
     Statement insert = database.prepare("INSERT INTO row_counts VALUES (?1,?2,?3,?4)");
     for (const TableCount& count : counts)
-        insert.bind(1, std::string_view(count.table)).bind(2, std::int64_t{count.read}).bind(3, std::int64_t{count.kept}).bind(4, std::int64_t{count.set_aside}).run();
+        insert.bind(1, std::string_view(count.table))
+            .bind(2, std::int64_t{count.read})
+            .bind(3, std::int64_t{count.kept})
+            .bind(4, std::int64_t{count.set_aside})
+            .run();
 }
 
 std::string number_text(double value) { return fmt::format("{}", value); }
 
-template <class Record> void write_flags(Database& database, const char* table, const std::vector<Record>& records) {
-    Statement update = database.prepare(fmt::format("UPDATE \"{}\" SET set_aside=?2 WHERE fid=?1 AND set_aside<>?2", table));
+template <class Record>
+void write_flags(Database& database, const char* table, const std::vector<Record>& records) {
+    Statement update =
+        database.prepare(fmt::format("UPDATE \"{}\" SET set_aside=?2 WHERE fid=?1 AND set_aside<>?2", table));
     std::int64_t fid = 0;
-    for (const Record& record : records) update.bind(1, ++fid).bind(2, std::int64_t{record.set_aside ? 1 : 0}).run();
+    for (const Record& record : records)
+        update.bind(1, ++fid).bind(2, std::int64_t{record.set_aside ? 1 : 0}).run();
 }
 
-}  // namespace
+} // namespace
 
 void write_city_tables(Database& database, const CityTables& tables) {
     const City& city = tables.city;
@@ -177,10 +221,12 @@ CityTables read_city_tables(Database& database) {
     tables.catalog = read_catalog(database);
     tables.climate = read_climate(database);
     Statement counts = database.prepare("SELECT name, read, kept, set_aside FROM row_counts ORDER BY name");
-    while (counts.step()) tables.counts.push_back({counts.text(0), counts.integer(1), counts.integer(2), counts.integer(3)});
+    while (counts.step())
+        tables.counts.push_back({counts.text(0), counts.integer(1), counts.integer(2), counts.integer(3)});
     city.crs = meta_value(database, "crs");
     tables.crs_from = meta_value(database, "crs_from");
-    city.centre = {std::atof(meta_value(database, "centre_lon_deg").c_str()), std::atof(meta_value(database, "centre_lat_deg").c_str())};
+    city.centre = {std::atof(meta_value(database, "centre_lon_deg").c_str()),
+                   std::atof(meta_value(database, "centre_lat_deg").c_str())};
     city.convergence_deg = std::atof(meta_value(database, "convergence_deg").c_str());
     tables.canopy_raster = meta_value(database, "canopy_raster");
     tables.canopy_fingerprint = meta_value(database, "canopy_fingerprint");
@@ -195,4 +241,4 @@ void write_set_aside(Database& database, const City& city) {
     write_flags(database, "services", city.services);
 }
 
-}  // namespace unstring
+} // namespace unstring

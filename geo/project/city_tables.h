@@ -18,7 +18,7 @@ struct TableCount {
     long read = 0, kept = 0, set_aside = 0;
 };
 
-struct CityTables {  ///< everything that gather settles
+struct CityTables { ///< everything that gather settles
     City city;
     Catalog catalog;
     PriceBook prices;
@@ -34,4 +34,4 @@ void write_city_tables(Database& database, const CityTables& tables);
 /// Only the marks of records that vet set aside (or took back in), in the tables as they lie.
 void write_set_aside(Database& database, const City& city);
 
-}  // namespace unstring
+} // namespace unstring

@@ -15,32 +15,32 @@ Fault sqlite_fault(const std::string& path, int code, const std::string& message
     fault.file = path;
     fault.found = message;
     switch (code & 0xff) {
-        case SQLITE_BUSY:
-        case SQLITE_LOCKED:
-            fault.code = FaultCode::file_busy;
-            fault.remedy = "Another program is writing this file; close it there and try again";
-            break;
-        case SQLITE_FULL:
-        case SQLITE_IOERR:
-        case SQLITE_READONLY:
-        case SQLITE_PERM:
-            fault.code = FaultCode::write_failed;
-            fault.remedy = "Make room on the disk or give permission to write; the file is as it was";
-            break;
-        case SQLITE_CANTOPEN:
-            fault.code = FaultCode::file_missing;
-            fault.remedy = "Check the path and the permissions of the folder";
-            break;
-        default:
-            fault.code = FaultCode::file_broken;
-            fault.wanted = "an Unstring project";
-            fault.remedy = "Take a copy that opens, or gather the files again into a new project";
+    case SQLITE_BUSY:
+    case SQLITE_LOCKED:
+        fault.code = FaultCode::file_busy;
+        fault.remedy = "Another program is writing this file; close it there and try again";
+        break;
+    case SQLITE_FULL:
+    case SQLITE_IOERR:
+    case SQLITE_READONLY:
+    case SQLITE_PERM:
+        fault.code = FaultCode::write_failed;
+        fault.remedy = "Make room on the disk or give permission to write; the file is as it was";
+        break;
+    case SQLITE_CANTOPEN:
+        fault.code = FaultCode::file_missing;
+        fault.remedy = "Check the path and the permissions of the folder";
+        break;
+    default:
+        fault.code = FaultCode::file_broken;
+        fault.wanted = "an Unstring project";
+        fault.remedy = "Take a copy that opens, or gather the files again into a new project";
     }
     return fault;
 }
 
 constexpr int kIsEmpty = 4;
-int function_numbers[] = {0, 1, 2, 3, kIsEmpty};  // SQLite hands back the address
+int function_numbers[] = {0, 1, 2, 3, kIsEmpty}; // SQLite hands back the address
 
 // GeoPackage's R-tree triggers call these; a box of nothing is null.
 void envelope_function(sqlite3_context* context, int, sqlite3_value** values) {
@@ -57,11 +57,11 @@ void envelope_function(sqlite3_context* context, int, sqlite3_value** values) {
 void add_functions(sqlite3* handle) {
     const char* names[] = {"ST_MinX", "ST_MaxX", "ST_MinY", "ST_MaxY", "ST_IsEmpty"};
     for (std::size_t i = 0; i < 5; ++i)
-        sqlite3_create_function(handle, names[i], 1, SQLITE_UTF8 | SQLITE_DETERMINISTIC | SQLITE_INNOCUOUS, &function_numbers[i],
-                                envelope_function, nullptr, nullptr);
+        sqlite3_create_function(handle, names[i], 1, SQLITE_UTF8 | SQLITE_DETERMINISTIC | SQLITE_INNOCUOUS,
+                                &function_numbers[i], envelope_function, nullptr, nullptr);
 }
 
-}  // namespace
+} // namespace
 
 Statement::Statement(Statement&& other) noexcept
     : database_(other.database_), handle_(std::exchange(other.handle_, nullptr)) {}
@@ -80,7 +80,8 @@ Statement& Statement::bind(int place, double value) {
 
 Statement& Statement::bind(int place, std::string_view value) {
     if (handle_ != nullptr)
-        sqlite3_bind_text64(handle_, place, value.data() == nullptr ? "" : value.data(), value.size(), SQLITE_TRANSIENT, SQLITE_UTF8);
+        sqlite3_bind_text64(handle_, place, value.data() == nullptr ? "" : value.data(), value.size(),
+                            SQLITE_TRANSIENT, SQLITE_UTF8);
     return *this;
 }
 
@@ -118,7 +119,9 @@ double Statement::real(int column) const { return sqlite3_column_double(handle_,
 
 std::string Statement::text(int column) const {
     const auto* data = reinterpret_cast<const char*>(sqlite3_column_text(handle_, column));
-    return data == nullptr ? std::string() : std::string(data, static_cast<std::size_t>(sqlite3_column_bytes(handle_, column)));
+    return data == nullptr
+               ? std::string()
+               : std::string(data, static_cast<std::size_t>(sqlite3_column_bytes(handle_, column)));
 }
 
 Bytes Statement::bytes(int column) const {
@@ -128,10 +131,14 @@ Bytes Statement::bytes(int column) const {
 
 CellValue Statement::cell(int column) const {
     switch (sqlite3_column_type(handle_, column)) {
-        case SQLITE_INTEGER: return integer(column);
-        case SQLITE_FLOAT: return real(column);
-        case SQLITE_TEXT: return text(column);
-        default: return {};
+    case SQLITE_INTEGER:
+        return integer(column);
+    case SQLITE_FLOAT:
+        return real(column);
+    case SQLITE_TEXT:
+        return text(column);
+    default:
+        return {};
     }
 }
 
@@ -161,7 +168,8 @@ Expected<std::unique_ptr<Database>> Database::open(const std::string& path, Acce
         database->run("PRAGMA synchronous=FULL");
     }
     database->run("PRAGMA foreign_keys=ON");
-    (void)database->integer("SELECT count(*) FROM sqlite_master");  // shows now whether it is a database at all
+    (void)database->integer(
+        "SELECT count(*) FROM sqlite_master"); // shows now whether it is a database at all
     if (database->failure()) return tl::make_unexpected(*database->failure());
     return database;
 }
@@ -218,7 +226,7 @@ Expected<void> Database::transaction(const std::function<void()>& work) {
     if (!is_failed()) return {};
     if (sqlite3_get_autocommit(handle_) == 0) sqlite3_exec(handle_, "ROLLBACK", nullptr, nullptr, nullptr);
     Fault fault = *failure_;
-    failure_.reset();  // the file is as it was: the next call may try again
+    failure_.reset(); // the file is as it was: the next call may try again
     return tl::make_unexpected(std::move(fault));
 }
 
@@ -239,4 +247,4 @@ Expected<void> Database::copy_to(const std::string& path) {
     return tl::make_unexpected(std::move(fault));
 }
 
-}  // namespace unstring
+} // namespace unstring

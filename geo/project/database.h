@@ -1,6 +1,6 @@
 #pragma once
-// The only place that speaks to SQLite. A database remembers its first failure: after it every call does nothing, so
-// that a long run of writes is checked once, at its transaction.
+// The only place that speaks to SQLite. A database remembers its first failure: after it every call does
+// nothing, so that a long run of writes is checked once, at its transaction.
 
 #include <cstdint>
 #include <functional>
@@ -24,16 +24,16 @@ using Bytes = std::vector<unsigned char>;
 class Database;
 
 class Statement {
-  public:
+public:
     Statement(Statement&& other) noexcept;
     Statement& operator=(Statement&&) = delete;
     ~Statement();
 
     /// Parameters count from 1.
     Statement& bind(int place, std::int64_t value);
-    Statement& bind(int place, double value);  ///< NaN is stored as null
+    Statement& bind(int place, double value); ///< NaN is stored as null
     Statement& bind(int place, std::string_view value);
-    Statement& bind(int place, const Bytes& value);  ///< empty = null
+    Statement& bind(int place, const Bytes& value); ///< empty = null
     Statement& bind(int place, const CellValue& value);
     /// Runs to the next row; false at the end or after a failure.
     bool step();
@@ -49,7 +49,7 @@ class Statement {
     [[nodiscard]] int columns() const;
     [[nodiscard]] std::string column_name(int column) const;
 
-  private:
+private:
     friend class Database;
     Statement(Database& database, sqlite3_stmt* handle) : database_(database), handle_(handle) {}
     Database& database_;
@@ -57,10 +57,11 @@ class Statement {
 };
 
 class Database {
-  public:
+public:
     enum class Access { read, write, create };
 
-    /// WAL, full synchronisation and foreign keys are on for writers; a schema's own functions are not trusted.
+    /// WAL, full synchronisation and foreign keys are on for writers; a schema's own functions are not
+    /// trusted.
     /// @fault file_missing, file_broken, write_failed
     static Expected<std::unique_ptr<Database>> open(const std::string& path, Access access);
     ~Database();
@@ -89,7 +90,7 @@ class Database {
     /// Remembers a failure of the caller's own, so that the transaction is undone.
     void fail(Fault fault);
 
-  private:
+private:
     friend class Statement;
     Database(std::string path, sqlite3* handle) : path_(std::move(path)), handle_(handle) {}
     void note_failure(int code);
@@ -98,4 +99,4 @@ class Database {
     std::optional<Fault> failure_;
 };
 
-}  // namespace unstring
+} // namespace unstring

@@ -10,13 +10,15 @@ namespace {
 constexpr std::uint32_t kPoint = 1, kLine = 2, kPolygon = 3;
 constexpr std::size_t kHeader = 8;
 
-template <class T> void put(std::vector<unsigned char>& blob, T value) {
+template <class T>
+void put(std::vector<unsigned char>& blob, T value) {
     const std::size_t at = blob.size();
     blob.resize(at + sizeof(T));
     std::memcpy(blob.data() + at, &value, sizeof(T));
 }
 
-template <class T> std::optional<T> get(std::span<const unsigned char> blob, std::size_t at) {
+template <class T>
+std::optional<T> get(std::span<const unsigned char> blob, std::size_t at) {
     if (at + sizeof(T) > blob.size()) return std::nullopt;
     T value;
     std::memcpy(&value, blob.data() + at, sizeof(T));
@@ -61,7 +63,7 @@ bool is_ours(std::span<const unsigned char> blob) {
     return blob.size() > kHeader && blob[0] == 'G' && blob[1] == 'P' && (blob[3] & 1U) != 0;
 }
 
-}  // namespace
+} // namespace
 
 std::vector<unsigned char> point_blob(MapPoint point, int srs_id) {
     auto blob = header({&point, 1}, srs_id, kPoint);
@@ -131,4 +133,4 @@ std::optional<MapBox> geometry_envelope(std::span<const unsigned char> blob) {
     return box_of(*points);
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -1,6 +1,6 @@
 #pragma once
-// Geometries as GeoPackage stores them: a header with the envelope, then well-known binary (little endian, x then y).
-// Source: OGC 12-128r18, clause 2.1.3 (StandardGeoPackageBinary).
+// Geometries as GeoPackage stores them: a header with the envelope, then well-known binary (little endian, x
+// then y). Source: OGC 12-128r18, clause 2.1.3 (StandardGeoPackageBinary).
 
 #include <optional>
 #include <span>
@@ -25,4 +25,4 @@ struct MapBox {
 /// From the header where it is there, else from the points.
 [[nodiscard]] std::optional<MapBox> geometry_envelope(std::span<const unsigned char> blob);
 
-}  // namespace unstring
+} // namespace unstring

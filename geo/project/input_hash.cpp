@@ -15,21 +15,25 @@ namespace unstring {
 namespace {
 
 class Hash {
-  public:
+public:
     Hash() : state_(XXH3_createState(), XXH3_freeState) { XXH3_128bits_reset(state_.get()); }
 
     // Each value goes in with its kind and length, so that no two lists of values make the same bytes.
     void add(std::string_view text) { tagged('t', text.data(), text.size()); }
     void add(double value) {
-        if (value == 0) value = 0;  // one zero
+        if (value == 0) value = 0; // one zero
         tagged('r', &value, sizeof value);
     }
     void add(std::int64_t value) { tagged('i', &value, sizeof value); }
     void add(const CellValue& cell) {
-        if (const auto* text = std::get_if<std::string>(&cell)) add(std::string_view(*text));
-        else if (const auto* real = std::get_if<double>(&cell)) add(*real);
-        else if (const auto* integer = std::get_if<std::int64_t>(&cell)) add(*integer);
-        else tagged('n', "", 0);
+        if (const auto* text = std::get_if<std::string>(&cell))
+            add(std::string_view(*text));
+        else if (const auto* real = std::get_if<double>(&cell))
+            add(*real);
+        else if (const auto* integer = std::get_if<std::int64_t>(&cell))
+            add(*integer);
+        else
+            tagged('n', "", 0);
     }
     void add(MapPoint point) {
         add(point.x_m);
@@ -46,7 +50,7 @@ class Hash {
         return fmt::format("{:016x}{:016x}", hash.high64, hash.low64);
     }
 
-  private:
+private:
     void tagged(char kind, const void* data, std::size_t size) {
         const std::uint64_t head = (std::uint64_t{size} << 8U) | static_cast<unsigned char>(kind);
         XXH3_128bits_update(state_.get(), &head, sizeof head);
@@ -55,15 +59,18 @@ class Hash {
     std::unique_ptr<XXH3_state_t, decltype(&XXH3_freeState)> state_;
 };
 
-template <class Record> std::vector<std::size_t> by_id(const std::vector<Record>& records) {
+template <class Record>
+std::vector<std::size_t> by_id(const std::vector<Record>& records) {
     std::vector<std::size_t> order(records.size());
     std::iota(order.begin(), order.end(), std::size_t{0});
     if constexpr (requires { records.front().id; })
-        std::stable_sort(order.begin(), order.end(), [&](std::size_t a, std::size_t b) { return records[a].id < records[b].id; });
+        std::stable_sort(order.begin(), order.end(),
+                         [&](std::size_t a, std::size_t b) { return records[a].id < records[b].id; });
     return order;
 }
 
-template <class Record> void add_place(Hash& hash, const Record& record) {
+template <class Record>
+void add_place(Hash& hash, const Record& record) {
     if constexpr (requires { record.has_place; }) {
         hash.add(std::int64_t{record.has_place ? 1 : 0});
         if (record.has_place) hash.add(record.place);
@@ -80,14 +87,16 @@ template <class Record> void add_place(Hash& hash, const Record& record) {
 using Names = std::vector<std::string_view>;
 
 template <class Record>
-void add_table(Hash& hash, const City& city, std::string_view name, const std::vector<Record>& records, const std::vector<Column<Record>>& columns,
-               const Names& only = {}) {
+void add_table(Hash& hash, const City& city, std::string_view name, const std::vector<Record>& records,
+               const std::vector<Column<Record>>& columns, const Names& only = {}) {
     hash.add(name);
     hash.add(static_cast<std::int64_t>(records.size()));
     for (std::size_t place : by_id(records)) {
         add_place(hash, records[place]);
         for (const auto& column : columns) {
-            const bool is_wanted = only.empty() ? column.is_hashed : std::find(only.begin(), only.end(), column.name) != only.end();
+            const bool is_wanted = only.empty()
+                                       ? column.is_hashed
+                                       : std::find(only.begin(), only.end(), column.name) != only.end();
             if (is_wanted) hash.add(column.get(city, records[place]));
         }
     }
@@ -111,19 +120,23 @@ void add_wiring(Hash& hash, const City& city, const std::vector<VetString>& wiri
 
 void add_settings(Hash& hash, const PlanSettings& settings) {
     Cells cells = settings_cells(settings);
-    cells.erase("years");  // what decide sees of the two is the year it prices at
+    cells.erase("years"); // what decide sees of the two is the year it prices at
     cells.erase("decide_year");
     hash.add(cells);
 }
 
-template <class Each> void for_each_planned_pole(const City& city, const Plan& plan, Each each) {
+template <class Each>
+void for_each_planned_pole(const City& city, const Plan& plan, Each each) {
     for (std::size_t place : by_id(city.poles))
-        if (place < plan.poles.size() && plan.poles[place] != PolePlan{}) each(city.poles[place], plan.poles[place]);
+        if (place < plan.poles.size() && plan.poles[place] != PolePlan{})
+            each(city.poles[place], plan.poles[place]);
 }
 
-void add_prices(Hash& hash, const CityTables& tables) { add_table(hash, tables.city, "prices", tables.prices.rows(), price_columns()); }
+void add_prices(Hash& hash, const CityTables& tables) {
+    add_table(hash, tables.city, "prices", tables.prices.rows(), price_columns());
+}
 
-}  // namespace
+} // namespace
 
 std::string vet_input_hash(const CityTables& tables) {
     Hash hash;
@@ -132,12 +145,14 @@ std::string vet_input_hash(const CityTables& tables) {
     return hash.text();
 }
 
-std::string shade_input_hash(const CityTables& tables, double nights_goal, const std::vector<std::string>& heads) {
+std::string shade_input_hash(const CityTables& tables, double nights_goal,
+                             const std::vector<std::string>& heads) {
     Hash hash;
     const City& city = tables.city;
     add_table(hash, city, "poles", city.poles, pole_columns(),
-              {"pole_id", "string_id", "status", "mount_m", "arm_m", "arm_deg", "epa_allow_m2", "need_lm", "critical", "street", "side", "solar_ok",
-               "owner", "consent", "set_aside", "road_class", "fixture", "lamp_w", "pole_kind"});
+              {"pole_id", "string_id", "status", "mount_m", "arm_m", "arm_deg", "epa_allow_m2", "need_lm",
+               "critical", "street", "side", "solar_ok", "owner", "consent", "set_aside", "road_class",
+               "fixture", "lamp_w", "pole_kind"});
     add_table(hash, city, "strings", city.strings, string_columns(), {"string_id", "kind", "set_aside"});
     add_table(hash, city, "streets", city.streets, street_columns());
     add_table(hash, city, "canopy", city.canopy, canopy_columns());
@@ -155,7 +170,8 @@ std::string shade_input_hash(const CityTables& tables, double nights_goal, const
     return hash.text();
 }
 
-std::string decide_input_hash(const CityTables& tables, const std::vector<VetString>& wiring, const Plan& plan, const std::string& shade_hash) {
+std::string decide_input_hash(const CityTables& tables, const std::vector<VetString>& wiring,
+                              const Plan& plan, const std::string& shade_hash) {
     Hash hash;
     hash.add(std::string_view(shade_hash));
     add_city(hash, tables.city);
@@ -172,7 +188,8 @@ std::string decide_input_hash(const CityTables& tables, const std::vector<VetStr
     return hash.text();
 }
 
-std::string phase_input_hash(const CityTables& tables, const std::vector<VetString>& wiring, const Plan& plan, const std::string& decide_hash) {
+std::string phase_input_hash(const CityTables& tables, const std::vector<VetString>& wiring, const Plan& plan,
+                             const std::string& decide_hash) {
     Hash hash;
     hash.add(std::string_view(decide_hash));
     add_table(hash, tables.city, "transformers", tables.city.transformers, transformer_columns());
@@ -206,4 +223,4 @@ std::string hand_out_input_hash(const CityTables& tables, const Plan& plan, cons
     return hash.text();
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -30,23 +30,27 @@ std::string holder_of(int file) {
 
 // The file behind the name may have been unlinked by its last holder between open and lock.
 bool is_still_named(int file, const std::string& path) {
-    struct stat held {}, named {};
-    return fstat(file, &held) == 0 && stat(path.c_str(), &named) == 0 && held.st_ino == named.st_ino && held.st_dev == named.st_dev;
+    struct stat held {
+    }, named{};
+    return fstat(file, &held) == 0 && stat(path.c_str(), &named) == 0 && held.st_ino == named.st_ino &&
+           held.st_dev == named.st_dev;
 }
 
-}  // namespace
+} // namespace
 
 Expected<std::unique_ptr<WriterLock>> WriterLock::take(const std::string& project_path) {
     const std::string path = project_path + ".lock";
     for (int round = 0; round < 16; ++round) {
         const int file = ::open(path.c_str(), O_RDWR | O_CREAT | O_CLOEXEC, 0664);
         if (file < 0)
-            return tl::make_unexpected(Fault{FaultCode::write_failed, path, 0, "", std::strerror(errno), "a folder that can be written",
-                                             "Give permission to write in the folder, or open the project read-only"});
+            return tl::make_unexpected(Fault{
+                FaultCode::write_failed, path, 0, "", std::strerror(errno), "a folder that can be written",
+                "Give permission to write in the folder, or open the project read-only"});
         if (flock(file, LOCK_EX | LOCK_NB) != 0) {
             const std::string holder = holder_of(file);
             ::close(file);
-            return tl::make_unexpected(Fault{FaultCode::file_busy, project_path, 0, "", "written by " + holder, "no other writer",
+            return tl::make_unexpected(Fault{FaultCode::file_busy, project_path, 0, "",
+                                             "written by " + holder, "no other writer",
                                              "Close it there, or look at it read-only meanwhile"});
         }
         if (!is_still_named(file, path)) {
@@ -56,11 +60,13 @@ Expected<std::unique_ptr<WriterLock>> WriterLock::take(const std::string& projec
         const std::string text = fmt::format("{} on {} since {}\n", user_name(), host_name(), now_text());
         if (ftruncate(file, 0) != 0 || pwrite(file, text.data(), text.size(), 0) < 0) {
             ::close(file);
-            return tl::make_unexpected(Fault{FaultCode::write_failed, path, 0, "", std::strerror(errno), "", "Make room on the disk"});
+            return tl::make_unexpected(Fault{FaultCode::write_failed, path, 0, "", std::strerror(errno), "",
+                                             "Make room on the disk"});
         }
         return std::unique_ptr<WriterLock>(new WriterLock(file, path));
     }
-    return tl::make_unexpected(Fault{FaultCode::file_busy, project_path, 0, "", "a lock that changes hands", "", "Try again"});
+    return tl::make_unexpected(
+        Fault{FaultCode::file_busy, project_path, 0, "", "a lock that changes hands", "", "Try again"});
 }
 
 WriterLock::~WriterLock() {
@@ -84,4 +90,4 @@ std::string now_text() {
     return text;
 }
 
-}  // namespace unstring
+} // namespace unstring

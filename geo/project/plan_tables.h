@@ -1,5 +1,6 @@
 #pragma once
-// Plans and the history of their edits. Every change of a plan is one transaction: the rows, and a line in `edits`.
+// Plans and the history of their edits. Every change of a plan is one transaction: the rows, and a line in
+// `edits`.
 
 #include <optional>
 #include <string>
@@ -13,7 +14,8 @@ namespace unstring {
 struct EditRecord {
     std::int64_t id = 0;
     std::string at, who, plan, label;
-    std::int64_t undoes = 0;  ///< id of the edit that this line takes back or, for a redo, brings back by taking back an undo
+    std::int64_t undoes =
+        0; ///< id of the edit that this line takes back or, for a redo, brings back by taking back an undo
 };
 
 [[nodiscard]] std::vector<std::string> plan_names(Database& database);
@@ -25,7 +27,7 @@ void write_change(Database& database, const Change& change, std::int64_t undoes 
 
 struct UndoLine {
     std::int64_t id = 0;
-    Change change;  ///< as it was made
+    Change change; ///< as it was made
 };
 /// The edit that undo takes back next; nothing when there is none.
 [[nodiscard]] std::optional<UndoLine> next_undo(Database& database, const std::string& plan);
@@ -33,11 +35,12 @@ struct UndoLine {
 [[nodiscard]] std::optional<UndoLine> next_redo(Database& database, const std::string& plan);
 
 struct UndoLabels {
-    std::string undo, redo;  ///< empty: nothing to undo, to redo
+    std::string undo, redo; ///< empty: nothing to undo, to redo
 };
 [[nodiscard]] UndoLabels undo_labels(Database& database, const std::string& plan);
 
 /// Newest first; empty pole_id = every edit.
-[[nodiscard]] std::vector<EditRecord> edits_of(Database& database, const std::string& plan, const std::string& pole_id, int at_most);
+[[nodiscard]] std::vector<EditRecord> edits_of(Database& database, const std::string& plan,
+                                               const std::string& pole_id, int at_most);
 
-}  // namespace unstring
+} // namespace unstring

@@ -35,8 +35,10 @@ std::optional<json> run_json(Database& database, Step step, const std::string& p
     return json::parse(select.text(0), nullptr, false);
 }
 
-// A result that does not fit its records (made by another version, or mended by hand) counts as not there: the step runs again.
-template <class Read> auto guarded(Read read) -> std::optional<decltype(read())> {
+// A result that does not fit its records (made by another version, or mended by hand) counts as not there:
+// the step runs again.
+template <class Read>
+auto guarded(Read read) -> std::optional<decltype(read())> {
     try {
         return read();
     } catch (const json::exception&) {
@@ -44,7 +46,10 @@ template <class Read> auto guarded(Read read) -> std::optional<decltype(read())>
     }
 }
 
-template <class Tag> bool fits(Index<Tag> index, std::size_t size) { return !index.is_valid() || index.place() < size; }
+template <class Tag>
+bool fits(Index<Tag> index, std::size_t size) {
+    return !index.is_valid() || index.place() < size;
+}
 
 bool fit(const City& city, const std::vector<PoleIx>& poles) {
     for (PoleIx pole : poles)
@@ -54,8 +59,9 @@ bool fit(const City& city, const std::vector<PoleIx>& poles) {
 
 bool fit(const City& city, const CircuitSpan& span) {
     const std::size_t poles = city.poles.size();
-    return fits(span.pole, poles) && fits(span.duct_from, poles) && fits(span.duct_to, poles) && fits(span.service, city.services.size()) &&
-           fits(span.duct_string, city.strings.size()) && fit(city, span.poles_beyond);
+    return fits(span.pole, poles) && fits(span.duct_from, poles) && fits(span.duct_to, poles) &&
+           fits(span.service, city.services.size()) && fits(span.duct_string, city.strings.size()) &&
+           fit(city, span.poles_beyond);
 }
 
 bool fit(const City& city, const DecideResult& result) {
@@ -117,15 +123,21 @@ DecideResult decide_of(const json& j) {
 }
 
 // For other programs: the spans as lines on the map.
-void write_span_layer(Database& database, const City& city, const std::string& plan, const DecideResult& result) {
+void write_span_layer(Database& database, const City& city, const std::string& plan,
+                      const DecideResult& result) {
     make_layer(database, {"circuit_spans", "LINESTRING",
-                          "plan TEXT, span INTEGER, parent INTEGER, kind TEXT, service_id TEXT, pole_id TEXT, length_m REAL, awg INTEGER, cost REAL",
+                          "plan TEXT, span INTEGER, parent INTEGER, kind TEXT, service_id TEXT, pole_id "
+                          "TEXT, length_m REAL, awg INTEGER, cost REAL",
                           "Spans of the new lighting circuits"});
-    Statement insert = database.prepare("INSERT INTO circuit_spans VALUES (NULL,?1,?2,?3,?4,?5,?6,?7,?8,?9,?10)");
+    Statement insert =
+        database.prepare("INSERT INTO circuit_spans VALUES (NULL,?1,?2,?3,?4,?5,?6,?7,?8,?9,?10)");
     const int srs_id = srs_id_of(database);
     for (const CircuitSpan& span : result.spans) {
-        insert.bind(1, line_blob(span.line, srs_id)).bind(2, std::string_view(plan)).bind(3, std::int64_t{span.id});
-        insert.bind(4, std::int64_t{span.parent}).bind(5, std::string_view(json(span.kind).get<std::string>()));
+        insert.bind(1, line_blob(span.line, srs_id))
+            .bind(2, std::string_view(plan))
+            .bind(3, std::int64_t{span.id});
+        insert.bind(4, std::int64_t{span.parent})
+            .bind(5, std::string_view(json(span.kind).get<std::string>()));
         if (span.service.is_valid()) insert.bind(6, std::string_view(city.services[span.service.place()].id));
         if (span.pole.is_valid()) insert.bind(7, std::string_view(city.poles[span.pole.place()].id));
         insert.bind(8, span.length_m).bind(9, std::int64_t{span.awg}).bind(10, to_dollars(span.cost));
@@ -134,7 +146,7 @@ void write_span_layer(Database& database, const City& city, const std::string& p
     finish_layer(database, "circuit_spans");
 }
 
-}  // namespace
+} // namespace
 
 std::optional<StepRun> step_run(Database& database, Step step, const std::string& plan) {
     Statement select = database.prepare("SELECT input_hash, at FROM step_runs WHERE step=?1 AND plan=?2");
@@ -144,38 +156,53 @@ std::optional<StepRun> step_run(Database& database, Step step, const std::string
 }
 
 void forget_results(Database& database) {
-    database.run("UPDATE step_runs SET result_json='' WHERE step<>'gather'; DELETE FROM pole_skies; DELETE FROM pole_decisions;"
+    database.run("UPDATE step_runs SET result_json='' WHERE step<>'gather'; DELETE FROM pole_skies; DELETE "
+                 "FROM pole_decisions;"
                  "DELETE FROM findings WHERE step<>'gather'");
 }
 
-void write_step_run(Database& database, Step step, const std::string& plan, const std::string& hash, const std::string& result_json) {
+void write_step_run(Database& database, Step step, const std::string& plan, const std::string& hash,
+                    const std::string& result_json) {
     Statement insert = database.prepare("INSERT OR REPLACE INTO step_runs VALUES (?1,?2,?3,?4,?5)");
-    insert.bind(1, std::string_view(text_of(step))).bind(2, std::string_view(plan)).bind(3, std::string_view(hash));
+    insert.bind(1, std::string_view(text_of(step)))
+        .bind(2, std::string_view(plan))
+        .bind(3, std::string_view(hash));
     insert.bind(4, std::string_view(now_text())).bind(5, std::string_view(result_json)).run();
 }
 
-void write_findings(Database& database, Step step, const std::string& plan, const std::vector<Finding>& findings) {
+void write_findings(Database& database, Step step, const std::string& plan,
+                    const std::vector<Finding>& findings) {
     Statement remove = database.prepare("DELETE FROM findings WHERE step=?1 AND plan=?2");
     remove.bind(1, std::string_view(text_of(step))).bind(2, std::string_view(plan)).run();
-    Statement insert = database.prepare("INSERT INTO findings VALUES (NULL,?1,?2,?3,?4,?5,?6,?7,?8,?9,?10,?11)");
+    Statement insert =
+        database.prepare("INSERT INTO findings VALUES (NULL,?1,?2,?3,?4,?5,?6,?7,?8,?9,?10,?11)");
     for (const Finding& f : findings) {
-        insert.bind(1, std::string_view(text_of(step))).bind(2, std::string_view(plan)).bind(3, std::string_view(f.code));
-        insert.bind(4, std::string_view(severity_text(f.severity))).bind(5, std::string_view(f.file)).bind(6, std::int64_t{f.row});
-        insert.bind(7, std::string_view(f.record)).bind(8, std::string_view(f.found)).bind(9, std::string_view(f.wanted));
+        insert.bind(1, std::string_view(text_of(step)))
+            .bind(2, std::string_view(plan))
+            .bind(3, std::string_view(f.code));
+        insert.bind(4, std::string_view(severity_text(f.severity)))
+            .bind(5, std::string_view(f.file))
+            .bind(6, std::int64_t{f.row});
+        insert.bind(7, std::string_view(f.record))
+            .bind(8, std::string_view(f.found))
+            .bind(9, std::string_view(f.wanted));
         insert.bind(10, std::string_view(f.remedy)).bind(11, std::string_view(f.table)).run();
     }
 }
 
 std::vector<Finding> read_findings(Database& database, Step step, const std::string& plan) {
-    Statement select = database.prepare(
-        "SELECT code, severity, file, row, record, found, wanted, remedy, record_table FROM findings WHERE step=?1 AND plan=?2 ORDER BY id");
+    Statement select = database.prepare("SELECT code, severity, file, row, record, found, wanted, remedy, "
+                                        "record_table FROM findings WHERE step=?1 AND plan=?2 ORDER BY id");
     select.bind(1, std::string_view(text_of(step))).bind(2, std::string_view(plan));
     std::vector<Finding> findings;
     while (select.step()) {
         const std::string severity = select.text(1);
-        findings.push_back({select.text(0), severity == "error" ? Severity::error : severity == "notice" ? Severity::notice : Severity::warning,
-                            select.text(2), static_cast<long>(select.integer(3)), select.text(4), select.text(5), select.text(6), select.text(7),
-                            select.text(8)});
+        findings.push_back({select.text(0),
+                            severity == "error"    ? Severity::error
+                            : severity == "notice" ? Severity::notice
+                                                   : Severity::warning,
+                            select.text(2), static_cast<long>(select.integer(3)), select.text(4),
+                            select.text(5), select.text(6), select.text(7), select.text(8)});
     }
     return findings;
 }
@@ -188,24 +215,35 @@ void write_vet(Database& database, const City&, const VetResult& result, const s
 std::optional<VetResult> read_vet(Database& database, const City& city) {
     const auto stored = run_json(database, Step::vet, "");
     if (!stored) return std::nullopt;
-    auto result = guarded([&] { return VetResult{read_findings(database, Step::vet, ""), stored->at("strings").get<std::vector<VetString>>()}; });
+    auto result = guarded([&] {
+        return VetResult{read_findings(database, Step::vet, ""),
+                         stored->at("strings").get<std::vector<VetString>>()};
+    });
     if (!result) return std::nullopt;
     for (const VetString& string : result->strings)
-        if (!string.string.is_valid() || string.string.place() >= city.strings.size() || !fits(string.transformer, city.transformers.size()) ||
-            !fit(city, string.wiring))
+        if (!string.string.is_valid() || string.string.place() >= city.strings.size() ||
+            !fits(string.transformer, city.transformers.size()) || !fit(city, string.wiring))
             return std::nullopt;
     return result;
 }
 
-void write_shade(Database& database, const City& city, const ShadeResult& result, const std::vector<Finding>& findings, const std::string& hash) {
+void write_shade(Database& database, const City& city, const ShadeResult& result,
+                 const std::vector<Finding>& findings, const std::string& hash) {
     write_step_run(database, Step::shade, "", hash, dumped(json{{"seconds", result.seconds}}));
     write_findings(database, Step::shade, "", findings);
     database.run("DELETE FROM pole_skies");
     Statement insert = database.prepare("INSERT INTO pole_skies VALUES (?1,?2,?3,?4,?5,?6)");
     for (const PoleShade& sky : result.poles) {
-        const json row = {{"best", sky.best}, {"panel_height_m", sky.panel_height_m}, {"bearing_deg", sky.bearing_deg}, {"bearing_from", sky.bearing_from}, {"heads", sky.heads}};
-        insert.bind(1, std::string_view(city.poles[sky.pole.place()].id)).bind(2, static_cast<std::int64_t>(sky.pole.place()));
-        insert.bind(3, std::string_view(dumped(row))).bind(4, floats_blob(sky.canopy_deg)).bind(5, floats_blob(sky.solid_deg));
+        const json row = {{"best", sky.best},
+                          {"panel_height_m", sky.panel_height_m},
+                          {"bearing_deg", sky.bearing_deg},
+                          {"bearing_from", sky.bearing_from},
+                          {"heads", sky.heads}};
+        insert.bind(1, std::string_view(city.poles[sky.pole.place()].id))
+            .bind(2, static_cast<std::int64_t>(sky.pole.place()));
+        insert.bind(3, std::string_view(dumped(row)))
+            .bind(4, floats_blob(sky.canopy_deg))
+            .bind(5, floats_blob(sky.solid_deg));
         insert.bind(6, floats_blob(sky.unknown_deg)).run();
     }
 }
@@ -216,7 +254,8 @@ std::optional<ShadeResult> read_shade(Database& database, const City& city) {
     return guarded([&] {
         ShadeResult result;
         result.seconds = stored->at("seconds");
-        Statement select = database.prepare("SELECT place, json, canopy, solid, unknown FROM pole_skies ORDER BY place");
+        Statement select =
+            database.prepare("SELECT place, json, canopy, solid, unknown FROM pole_skies ORDER BY place");
         while (select.step()) {
             const json row = json::parse(select.text(1));
             PoleShade sky;
@@ -236,7 +275,8 @@ std::optional<ShadeResult> read_shade(Database& database, const City& city) {
     });
 }
 
-void write_decide(Database& database, const City& city, const std::string& plan, const DecideResult& result, const std::string& hash) {
+void write_decide(Database& database, const City& city, const std::string& plan, const DecideResult& result,
+                  const std::string& hash) {
     write_step_run(database, Step::decide, plan, hash, dumped(summary_of(result)));
     write_findings(database, Step::decide, plan, result.findings);
     Statement remove = database.prepare("DELETE FROM pole_decisions WHERE plan=?1");
@@ -244,7 +284,9 @@ void write_decide(Database& database, const City& city, const std::string& plan,
     Statement insert = database.prepare("INSERT INTO pole_decisions VALUES (?1,?2,?3,?4)");
     for (const PoleDecision& decision : result.poles) {
         insert.bind(1, std::string_view(plan)).bind(2, static_cast<std::int64_t>(decision.pole.place()));
-        insert.bind(3, std::string_view(city.poles[decision.pole.place()].id)).bind(4, std::string_view(dumped(decision))).run();
+        insert.bind(3, std::string_view(city.poles[decision.pole.place()].id))
+            .bind(4, std::string_view(dumped(decision)))
+            .run();
     }
     write_span_layer(database, city, plan, result);
 }
@@ -265,13 +307,18 @@ std::optional<DecideResult> read_decide(Database& database, const City& city, co
 }
 
 void write_phase(Database& database, const std::string& plan, const PhaseRun& run, const std::string& hash) {
-    write_step_run(database, Step::phase, plan, hash, dumped(json{{"bound", run.bound}, {"seconds", run.seconds}, {"plan_hash", run.plan_hash}}));
+    write_step_run(
+        database, Step::phase, plan, hash,
+        dumped(json{{"bound", run.bound}, {"seconds", run.seconds}, {"plan_hash", run.plan_hash}}));
 }
 
 std::optional<PhaseRun> read_phase(Database& database, const std::string& plan) {
     const auto stored = run_json(database, Step::phase, plan);
     if (!stored) return std::nullopt;
-    return guarded([&] { return PhaseRun{stored->at("bound").get<double>(), stored->at("seconds").get<double>(), stored->at("plan_hash").get<std::string>()}; });
+    return guarded([&] {
+        return PhaseRun{stored->at("bound").get<double>(), stored->at("seconds").get<double>(),
+                        stored->at("plan_hash").get<std::string>()};
+    });
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -10,7 +10,7 @@
 namespace unstring {
 namespace {
 
-constexpr int kGeoPackageId = 0x47504B47;  // "GPKG"
+constexpr int kGeoPackageId = 0x47504B47; // "GPKG"
 
 constexpr const char* kGeoPackageTables = R"(
 CREATE TABLE gpkg_spatial_ref_sys (srs_name TEXT NOT NULL, srs_id INTEGER NOT NULL PRIMARY KEY, organization TEXT NOT NULL,
@@ -71,7 +71,12 @@ void migrate(Database& database, int from) {
 }
 
 Fault not_a_project(const std::string& path, std::string found) {
-    return {FaultCode::file_broken, path, 0, "", std::move(found), "a project that `unstring gather` made",
+    return {FaultCode::file_broken,
+            path,
+            0,
+            "",
+            std::move(found),
+            "a project that `unstring gather` made",
             "Gather your files into a new project; this file was not touched"};
 }
 
@@ -95,7 +100,7 @@ CREATE TRIGGER "rtree_{0}_geom_delete" AFTER DELETE ON "{0}" WHEN old."geom" NOT
                        t);
 }
 
-}  // namespace
+} // namespace
 
 void create_schema(Database& database, const std::string& crs, const std::string& crs_wkt) {
     database.run(fmt::format("PRAGMA application_id={}; PRAGMA user_version=10300", kGeoPackageId));
@@ -109,8 +114,11 @@ void set_project_crs(Database& database, const std::string& crs, const std::stri
     int srs_id = -1;
     if (crs.starts_with("EPSG:")) {
         srs_id = std::atoi(crs.c_str() + 5);
-        Statement insert = database.prepare("INSERT OR IGNORE INTO gpkg_spatial_ref_sys VALUES (?1, ?2, 'EPSG', ?2, ?3, '')");
-        insert.bind(1, std::string_view(crs)).bind(2, std::int64_t{srs_id}).bind(3, std::string_view(crs_wkt.empty() ? "undefined" : crs_wkt));
+        Statement insert = database.prepare(
+            "INSERT OR IGNORE INTO gpkg_spatial_ref_sys VALUES (?1, ?2, 'EPSG', ?2, ?3, '')");
+        insert.bind(1, std::string_view(crs))
+            .bind(2, std::int64_t{srs_id})
+            .bind(3, std::string_view(crs_wkt.empty() ? "undefined" : crs_wkt));
         insert.run();
     }
     set_meta_value(database, "srs_id", std::to_string(srs_id));
@@ -119,19 +127,22 @@ void set_project_crs(Database& database, const std::string& crs, const std::stri
 Expected<int> check_version(const std::string& path) {
     std::error_code ignored;
     if (!std::filesystem::is_regular_file(path, ignored))
-        return tl::make_unexpected(Fault{FaultCode::file_missing, path, 0, "", "no such file", "a project file",
-                                         "Make one with: unstring gather " + path + " --poles poles.csv --circuits circuits.csv"});
+        return tl::make_unexpected(
+            Fault{FaultCode::file_missing, path, 0, "", "no such file", "a project file",
+                  "Make one with: unstring gather " + path + " --poles poles.csv --circuits circuits.csv"});
     auto database = Database::open(path, Database::Access::read);
     if (!database) return tl::make_unexpected(database.error());
     if (!(*database)->has_table("unstring_meta")) {
         const auto failure = (*database)->failure();
-        return tl::make_unexpected(failure ? *failure : not_a_project(path, "a file without Unstring's tables"));
+        return tl::make_unexpected(failure ? *failure
+                                           : not_a_project(path, "a file without Unstring's tables"));
     }
     const int version = std::atoi(meta_value(**database, "version").c_str());
     if (version > kProjectVersion)
-        return tl::make_unexpected(Fault{FaultCode::file_newer, path, 0, "version", std::to_string(version),
-                                         fmt::format("at most {}", kProjectVersion),
-                                         "A newer Unstring wrote this file; open it with that one. It was not touched"});
+        return tl::make_unexpected(
+            Fault{FaultCode::file_newer, path, 0, "version", std::to_string(version),
+                  fmt::format("at most {}", kProjectVersion),
+                  "A newer Unstring wrote this file; open it with that one. It was not touched"});
     if (version < 1) return tl::make_unexpected(not_a_project(path, "no version"));
     return version;
 }
@@ -155,14 +166,16 @@ Expected<void> bring_up_to_date(const std::string& path) {
         if (!target) return tl::make_unexpected(target.error());
         auto done = (*target)->transaction([&] { migrate(**target, version); });
         if (!done) return done;
-        if ((*target)->text("PRAGMA integrity_check") != "ok") return tl::make_unexpected(not_a_project(path, "a damaged file"));
+        if ((*target)->text("PRAGMA integrity_check") != "ok")
+            return tl::make_unexpected(not_a_project(path, "a damaged file"));
         (*target)->close_to_one_file();
     }
     std::filesystem::rename(path, fmt::format("{}.before-{}", path, kProjectVersion), ignored);
     std::error_code failed;
     std::filesystem::rename(copy, path, failed);
     if (failed)
-        return tl::make_unexpected(Fault{FaultCode::write_failed, path, 0, "", failed.message(), "", "Rename " + copy + " by hand"});
+        return tl::make_unexpected(
+            Fault{FaultCode::write_failed, path, 0, "", failed.message(), "", "Rename " + copy + " by hand"});
     return {};
 }
 
@@ -178,12 +191,14 @@ Expected<void> check_schema(Database& database, const std::string& path) {
             from = triggers.find("CREATE", end);
         }
     }
-    Statement rows = database.prepare("SELECT type, name, sql FROM sqlite_master WHERE type IN ('trigger','view')");
+    Statement rows =
+        database.prepare("SELECT type, name, sql FROM sqlite_master WHERE type IN ('trigger','view')");
     while (rows.step())
         if (ours.count(rows.text(2)) == 0)
-            return tl::make_unexpected(Fault{FaultCode::file_broken, path, 0, "", fmt::format("the {} \"{}\"", rows.text(0), rows.text(1)),
-                                             "a project without foreign triggers and views",
-                                             "Another program added it; drop it there, or take a copy from before"});
+            return tl::make_unexpected(Fault{
+                FaultCode::file_broken, path, 0, "", fmt::format("the {} \"{}\"", rows.text(0), rows.text(1)),
+                "a project without foreign triggers and views",
+                "Another program added it; drop it there, or take a copy from before"});
     if (database.failure()) return tl::make_unexpected(*database.failure());
     database.trust_schema();
     return {};
@@ -195,29 +210,37 @@ void make_layer(Database& database, const Layer& layer) {
     const std::string& t = layer.table;
     database.run(fmt::format("DROP TABLE IF EXISTS \"rtree_{0}_geom\"; DROP TABLE IF EXISTS \"{0}\";"
                              "DELETE FROM gpkg_geometry_columns WHERE table_name='{0}';"
-                             "DELETE FROM gpkg_extensions WHERE table_name='{0}'; DELETE FROM gpkg_contents WHERE table_name='{0}'",
+                             "DELETE FROM gpkg_extensions WHERE table_name='{0}'; DELETE FROM gpkg_contents "
+                             "WHERE table_name='{0}'",
                              t));
     const bool has_place = !layer.geometry.empty();
-    database.run(fmt::format("CREATE TABLE \"{}\" (fid INTEGER PRIMARY KEY AUTOINCREMENT NOT NULL{}{}, {})", t, has_place ? ", geom " : "",
-                             layer.geometry, layer.columns));
-    Statement contents = database.prepare("INSERT INTO gpkg_contents(table_name, data_type, identifier, description, srs_id) VALUES (?1,?2,?1,?3,?4)");
-    contents.bind(1, std::string_view(t)).bind(2, std::string_view(has_place ? "features" : "attributes")).bind(3, std::string_view(layer.what));
+    database.run(fmt::format("CREATE TABLE \"{}\" (fid INTEGER PRIMARY KEY AUTOINCREMENT NOT NULL{}{}, {})",
+                             t, has_place ? ", geom " : "", layer.geometry, layer.columns));
+    Statement contents = database.prepare("INSERT INTO gpkg_contents(table_name, data_type, identifier, "
+                                          "description, srs_id) VALUES (?1,?2,?1,?3,?4)");
+    contents.bind(1, std::string_view(t))
+        .bind(2, std::string_view(has_place ? "features" : "attributes"))
+        .bind(3, std::string_view(layer.what));
     if (has_place) contents.bind(4, std::int64_t{srs_id_of(database)});
     contents.run();
     if (!has_place) return;
-    database.run(fmt::format("INSERT INTO gpkg_geometry_columns VALUES ('{}','geom','{}',{},0,0)", t, layer.geometry, srs_id_of(database)));
+    database.run(fmt::format("INSERT INTO gpkg_geometry_columns VALUES ('{}','geom','{}',{},0,0)", t,
+                             layer.geometry, srs_id_of(database)));
 }
 
 void finish_layer(Database& database, const std::string& t) {
-    database.run(fmt::format("CREATE VIRTUAL TABLE \"rtree_{0}_geom\" USING rtree(id, minx, maxx, miny, maxy);"
-                             "INSERT INTO \"rtree_{0}_geom\" SELECT fid, ST_MinX(geom), ST_MaxX(geom), ST_MinY(geom), ST_MaxY(geom)"
-                             "  FROM \"{0}\" WHERE geom NOT NULL AND NOT ST_IsEmpty(geom);"
-                             "INSERT INTO gpkg_extensions VALUES ('{0}','geom','gpkg_rtree_index','http://www.geopackage.org/spec120/#extension_rtree','write-only');"
-                             "UPDATE gpkg_contents SET last_change=strftime('%Y-%m-%dT%H:%M:%fZ','now'),"
-                             "  min_x=(SELECT min(ST_MinX(geom)) FROM \"{0}\"), max_x=(SELECT max(ST_MaxX(geom)) FROM \"{0}\"),"
-                             "  min_y=(SELECT min(ST_MinY(geom)) FROM \"{0}\"), max_y=(SELECT max(ST_MaxY(geom)) FROM \"{0}\")"
-                             "  WHERE table_name='{0}'",
-                             t));
+    database.run(fmt::format(
+        "CREATE VIRTUAL TABLE \"rtree_{0}_geom\" USING rtree(id, minx, maxx, miny, maxy);"
+        "INSERT INTO \"rtree_{0}_geom\" SELECT fid, ST_MinX(geom), ST_MaxX(geom), ST_MinY(geom), "
+        "ST_MaxY(geom)"
+        "  FROM \"{0}\" WHERE geom NOT NULL AND NOT ST_IsEmpty(geom);"
+        "INSERT INTO gpkg_extensions VALUES "
+        "('{0}','geom','gpkg_rtree_index','http://www.geopackage.org/spec120/#extension_rtree','write-only');"
+        "UPDATE gpkg_contents SET last_change=strftime('%Y-%m-%dT%H:%M:%fZ','now'),"
+        "  min_x=(SELECT min(ST_MinX(geom)) FROM \"{0}\"), max_x=(SELECT max(ST_MaxX(geom)) FROM \"{0}\"),"
+        "  min_y=(SELECT min(ST_MinY(geom)) FROM \"{0}\"), max_y=(SELECT max(ST_MaxY(geom)) FROM \"{0}\")"
+        "  WHERE table_name='{0}'",
+        t));
     database.run(rtree_triggers(t));
 }
 
@@ -233,4 +256,4 @@ void set_meta_value(Database& database, const std::string& key, const std::strin
     insert.run();
 }
 
-}  // namespace unstring
+} // namespace unstring

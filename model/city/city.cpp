@@ -7,7 +7,8 @@
 namespace unstring {
 namespace {
 
-template <class Value, std::size_t n> using Words = std::array<std::pair<Value, const char*>, n>;
+template <class Value, std::size_t n>
+using Words = std::array<std::pair<Value, const char*>, n>;
 
 constexpr Words<PoleStatus, 4> kStatus = {{{PoleStatus::standing, "standing"},
                                            {PoleStatus::down, "down"},
@@ -21,9 +22,11 @@ constexpr Words<Duct, 6> kDuct = {{{Duct::unknown, "unknown"},
                                    {Duct::assumed, "assumed"},
                                    {Duct::bad, "bad"},
                                    {Duct::direct_buried, "direct-buried"}}};
-constexpr Words<Owner, 3> kOwner = {{{Owner::city, "city"}, {Owner::utility, "utility"}, {Owner::other, "other"}}};
+constexpr Words<Owner, 3> kOwner = {
+    {{Owner::city, "city"}, {Owner::utility, "utility"}, {Owner::other, "other"}}};
 constexpr Words<Surface, 2> kSurface = {{{Surface::verge, "verge"}, {Surface::paved, "paved"}}};
-constexpr Words<CircuitKind, 2> kCircuit = {{{CircuitKind::series, "series"}, {CircuitKind::parallel, "parallel"}}};
+constexpr Words<CircuitKind, 2> kCircuit = {
+    {{CircuitKind::series, "series"}, {CircuitKind::parallel, "parallel"}}};
 constexpr Words<Control, 3> kControl = {
     {{Control::photocell, "photocell"}, {Control::relay, "relay"}, {Control::clock, "clock"}}};
 constexpr Words<Build, 2> kBuild = {{{Build::moving_coil, "moving-coil"}, {Build::static_unit, "static"}}};
@@ -32,14 +35,16 @@ constexpr Words<Oil, 4> kOil = {
     {{Oil::unknown, "unknown"}, {Oil::none, "none"}, {Oil::mineral, "mineral"}, {Oil::pcb, "pcb"}}};
 constexpr Words<UnitState, 3> kUnit = {
     {{UnitState::in_service, "in-service"}, {UnitState::spare, "spare"}, {UnitState::scrapped, "scrapped"}}};
-constexpr Words<CutBackKind, 3> kCutBack = {
-    {{CutBackKind::pullbox, "pullbox"}, {CutBackKind::trench, "trench"}, {CutBackKind::crossing, "crossing"}}};
+constexpr Words<CutBackKind, 3> kCutBack = {{{CutBackKind::pullbox, "pullbox"},
+                                             {CutBackKind::trench, "trench"},
+                                             {CutBackKind::crossing, "crossing"}}};
 constexpr Words<ServiceKind, 3> kService = {{{ServiceKind::service, "service"},
                                              {ServiceKind::circuit_end, "circuit-end"},
                                              {ServiceKind::candidate, "candidate"}}};
 constexpr Words<Leaf, 2> kLeaf = {{{Leaf::deciduous, "deciduous"}, {Leaf::evergreen, "evergreen"}}};
 
-template <class Value, std::size_t n> const char* word_of(const Words<Value, n>& words, Value value) {
+template <class Value, std::size_t n>
+const char* word_of(const Words<Value, n>& words, Value value) {
     for (const auto& [each, word] : words)
         if (each == value) return word;
     return "";
@@ -52,12 +57,14 @@ std::optional<Value> value_of(const Words<Value, n>& words, std::string_view tex
     return std::nullopt;
 }
 
-template <class Table> auto find_id(const Table& table, std::string_view id) {
+template <class Table>
+auto find_id(const Table& table, std::string_view id) {
     return static_cast<std::size_t>(
-        std::find_if(table.begin(), table.end(), [&](const auto& row) { return row.id == id; }) - table.begin());
+        std::find_if(table.begin(), table.end(), [&](const auto& row) { return row.id == id; }) -
+        table.begin());
 }
 
-}  // namespace
+} // namespace
 
 bool is_parallel(const City& city, const Pole& pole) {
     return pole.string.is_valid() && city.strings[pole.string.place()].kind == CircuitKind::parallel;
@@ -112,19 +119,61 @@ const char* text_of(CutBackKind value) { return word_of(kCutBack, value); }
 const char* text_of(ServiceKind value) { return word_of(kService, value); }
 const char* text_of(Leaf value) { return word_of(kLeaf, value); }
 
-template <> std::optional<PoleStatus> read_word(std::string_view text) { return value_of(kStatus, text); }
-template <> std::optional<Feed> read_word(std::string_view text) { return value_of(kFeed, text); }
-template <> std::optional<Duct> read_word(std::string_view text) { return value_of(kDuct, text); }
-template <> std::optional<Owner> read_word(std::string_view text) { return value_of(kOwner, text); }
-template <> std::optional<Surface> read_word(std::string_view text) { return value_of(kSurface, text); }
-template <> std::optional<CircuitKind> read_word(std::string_view text) { return value_of(kCircuit, text); }
-template <> std::optional<Control> read_word(std::string_view text) { return value_of(kControl, text); }
-template <> std::optional<Build> read_word(std::string_view text) { return value_of(kBuild, text); }
-template <> std::optional<Mount> read_word(std::string_view text) { return value_of(kMount, text); }
-template <> std::optional<Oil> read_word(std::string_view text) { return value_of(kOil, text); }
-template <> std::optional<UnitState> read_word(std::string_view text) { return value_of(kUnit, text); }
-template <> std::optional<CutBackKind> read_word(std::string_view text) { return value_of(kCutBack, text); }
-template <> std::optional<ServiceKind> read_word(std::string_view text) { return value_of(kService, text); }
-template <> std::optional<Leaf> read_word(std::string_view text) { return value_of(kLeaf, text); }
+template <>
+std::optional<PoleStatus> read_word(std::string_view text) {
+    return value_of(kStatus, text);
+}
+template <>
+std::optional<Feed> read_word(std::string_view text) {
+    return value_of(kFeed, text);
+}
+template <>
+std::optional<Duct> read_word(std::string_view text) {
+    return value_of(kDuct, text);
+}
+template <>
+std::optional<Owner> read_word(std::string_view text) {
+    return value_of(kOwner, text);
+}
+template <>
+std::optional<Surface> read_word(std::string_view text) {
+    return value_of(kSurface, text);
+}
+template <>
+std::optional<CircuitKind> read_word(std::string_view text) {
+    return value_of(kCircuit, text);
+}
+template <>
+std::optional<Control> read_word(std::string_view text) {
+    return value_of(kControl, text);
+}
+template <>
+std::optional<Build> read_word(std::string_view text) {
+    return value_of(kBuild, text);
+}
+template <>
+std::optional<Mount> read_word(std::string_view text) {
+    return value_of(kMount, text);
+}
+template <>
+std::optional<Oil> read_word(std::string_view text) {
+    return value_of(kOil, text);
+}
+template <>
+std::optional<UnitState> read_word(std::string_view text) {
+    return value_of(kUnit, text);
+}
+template <>
+std::optional<CutBackKind> read_word(std::string_view text) {
+    return value_of(kCutBack, text);
+}
+template <>
+std::optional<ServiceKind> read_word(std::string_view text) {
+    return value_of(kService, text);
+}
+template <>
+std::optional<Leaf> read_word(std::string_view text) {
+    return value_of(kLeaf, text);
+}
 
-}  // namespace unstring
+} // namespace unstring

@@ -17,20 +17,22 @@ namespace {
 using Place = std::size_t;
 constexpr int kMostChanges = 400;
 
-struct Branch {      ///< one way to relieve a circuit
-    int head = -1;   ///< the branch is what hangs at this vertex
-    int entry = -1;  ///< vertex of the branch by which it joins another source; -1 = it goes to solar
+struct Branch {     ///< one way to relieve a circuit
+    int head = -1;  ///< the branch is what hangs at this vertex
+    int entry = -1; ///< vertex of the branch by which it joins another source; -1 = it goes to solar
     Cents price = 0;
     double kva = 0;
 };
 
 class Limits {
-  public:
-    Limits(const MoneyInput& input, const GroundGraph& graph, const std::vector<PoleCase>& cases, JointPlan plan, std::vector<Finding>& findings)
+public:
+    Limits(const MoneyInput& input, const GroundGraph& graph, const std::vector<PoleCase>& cases,
+           JointPlan plan, std::vector<Finding>& findings)
         : input_(input), graph_(graph), cases_(cases), plan_(std::move(plan)), findings_(findings) {
         case_at_.assign(graph.places.size(), -1);
         for (Place i = 0; i < cases.size(); ++i)
-            if (const int v = graph.vertex_of[cases[i].pole.place()]; v >= 0) case_at_[Place(v)] = static_cast<int>(i);
+            if (const int v = graph.vertex_of[cases[i].pole.place()]; v >= 0)
+                case_at_[Place(v)] = static_cast<int>(i);
         at_.resize(graph.places.size());
         for (Place e = 0; e < graph.edges.size(); ++e) {
             at_[Place(graph.edges[e].u)].push_back(static_cast<int>(e));
@@ -44,9 +46,12 @@ class Limits {
             const int source = next_broken();
             if (source < 0) break;
             const Branch branch = cheapest_relief(source);
-            if (branch.head < 0) give_up(source);
-            else if (branch.entry < 0) to_solar(branch);
-            else move(branch);
+            if (branch.head < 0)
+                give_up(source);
+            else if (branch.entry < 0)
+                to_solar(branch);
+            else
+                move(branch);
             look();
         }
         plan_.cost = 0;
@@ -55,7 +60,7 @@ class Limits {
         return std::move(plan_);
     }
 
-  private:
+private:
     [[nodiscard]] const GroundEdge& edge(int e) const { return graph_.edges[Place(e)]; }
     [[nodiscard]] int other(int e, int v) const { return edge(e).u == v ? edge(e).v : edge(e).u; }
     [[nodiscard]] ServiceIx service_at(int source) const { return edge(tree_.edge[Place(source)]).service; }
@@ -82,14 +87,16 @@ class Limits {
         load.source_v = source_volts(input_.city, service_at(source));
         std::map<int, int> span_at;
         for (const int v : tree_.order) {
-            if (v == GroundGraph::kRoot || tree_.source[Place(v)] != source || tree_.lamps[Place(v)] == 0) continue;
+            if (v == GroundGraph::kRoot || tree_.source[Place(v)] != source || tree_.lamps[Place(v)] == 0)
+                continue;
             if (v == source && service_at(source).is_valid()) continue;
             const auto above = span_at.find(tree_.parent[Place(v)]);
             SizingSpan span;
             span.parent = above == span_at.end() ? -1 : above->second;
             span.length_m = edge(tree_.edge[Place(v)]).length_m;
             if (tree_.is_rewired[Place(v)]) {
-                const LampLoad lamp = lamp_load(input_.catalog, input_.city.poles[graph_.pole_at[Place(v)].place()]);
+                const LampLoad lamp =
+                    lamp_load(input_.catalog, input_.city.poles[graph_.pole_at[Place(v)].place()]);
                 span.watts = lamp.watts;
                 span.pf = lamp.pf;
             }
@@ -98,13 +105,16 @@ class Limits {
         }
         return load;
     }
-    /// What a circuit breaks; empty = nothing. A circuit is worked out again only when its lamps have changed.
+    /// What a circuit breaks; empty = nothing. A circuit is worked out again only when its lamps have
+    /// changed.
     std::string broken(int source) {
         const double free = free_kva(service_at(source));
-        if (kva_[Place(source)] > free + 1e-9) return fmt::format("{:.2f} kVA of lamps, {:.2f} kVA free", kva_[Place(source)], free);
+        if (kva_[Place(source)] > free + 1e-9)
+            return fmt::format("{:.2f} kVA of lamps, {:.2f} kVA free", kva_[Place(source)], free);
         std::vector<int> members;
         for (const int v : tree_.order)
-            if (v != GroundGraph::kRoot && tree_.source[Place(v)] == source) members.push_back(v * 2 + tree_.is_rewired[Place(v)]);
+            if (v != GroundGraph::kRoot && tree_.source[Place(v)] == source)
+                members.push_back(v * 2 + tree_.is_rewired[Place(v)]);
         const auto known = known_.find(source);
         if (known != known_.end() && known->second.first == members) return known->second.second;
         std::string text = beyond_any_wire(input_, load_of(source), kDropLimitFrac);
@@ -113,24 +123,32 @@ class Limits {
     }
     int next_broken() {
         for (const int v : tree_.order)
-            if (tree_.parent[Place(v)] == GroundGraph::kRoot && tree_.lamps[Place(v)] > 0 && !given_up_.contains(v) && !broken(v).empty()) return v;
+            if (tree_.parent[Place(v)] == GroundGraph::kRoot && tree_.lamps[Place(v)] > 0 &&
+                !given_up_.contains(v) && !broken(v).empty())
+                return v;
         return -1;
     }
     void give_up(int source) {
         given_up_.insert(source);
         const ServiceIx service = service_at(source);
-        const std::string id = service.is_valid() ? input_.city.services[service.place()].id : input_.city.poles[graph_.pole_at[Place(source)].place()].id;
-        findings_.push_back(make_finding("circuit-over", {}, 0, id, broken(source), "within what the source, the drop and the wire allow",
-                                         "give another service near by, or lock some of its poles to solar", service.is_valid() ? "services" : "poles"));
+        const std::string id = service.is_valid()
+                                   ? input_.city.services[service.place()].id
+                                   : input_.city.poles[graph_.pole_at[Place(source)].place()].id;
+        findings_.push_back(make_finding("circuit-over", {}, 0, id, broken(source),
+                                         "within what the source, the drop and the wire allow",
+                                         "give another service near by, or lock some of its poles to solar",
+                                         service.is_valid() ? "services" : "poles"));
     }
 
-    /// The chain that is no longer needed when the branch at `head` leaves: up to the next fork, lamp or source.
+    /// The chain that is no longer needed when the branch at `head` leaves: up to the next fork, lamp or
+    /// source.
     std::vector<int> chain_above(int head) const {
         std::vector<int> chain;
         for (int v = head;; v = tree_.parent[Place(v)]) {
             chain.push_back(tree_.edge[Place(v)]);
             const int above = tree_.parent[Place(v)];
-            if (above == GroundGraph::kRoot || tree_.lamps[Place(above)] != tree_.lamps[Place(head)]) return chain;
+            if (above == GroundGraph::kRoot || tree_.lamps[Place(above)] != tree_.lamps[Place(head)])
+                return chain;
         }
     }
     Cents cost_of(const std::vector<int>& edges) const {
@@ -164,7 +182,8 @@ class Limits {
         for (const int v : tree_.order) {
             const int at = tree_.source[Place(v)];
             if (v == GroundGraph::kRoot || at == source || tree_.lamps[Place(v)] == 0) continue;
-            if (free_kva(service_at(at)) - kva_[Place(at)] > 0.01 && !given_up_.contains(at)) offer(v, 0, -1, at);
+            if (free_kva(service_at(at)) - kva_[Place(at)] > 0.01 && !given_up_.contains(at))
+                offer(v, 0, -1, at);
         }
         for (const int e : at_[Place(GroundGraph::kRoot)]) {
             const int v = other(e, GroundGraph::kRoot);
@@ -174,10 +193,11 @@ class Limits {
             const auto [cost, v] = queue.top();
             queue.pop();
             if (cost > way_[Place(v)]) continue;
-            if (tree_.source[Place(v)] == source && tree_.lamps[Place(v)] > 0) continue;  // the way ends here
+            if (tree_.source[Place(v)] == source && tree_.lamps[Place(v)] > 0) continue; // the way ends here
             for (const int e : at_[Place(v)]) {
                 const int w = other(e, v);
-                const bool is_other = w == GroundGraph::kRoot || (tree_.source[Place(w)] >= 0 && tree_.source[Place(w)] != source);
+                const bool is_other = w == GroundGraph::kRoot ||
+                                      (tree_.source[Place(w)] >= 0 && tree_.source[Place(w)] != source);
                 if (!is_other) offer(w, cost + edge(e).cost, e, way_from_[Place(v)]);
             }
         }
@@ -196,7 +216,9 @@ class Limits {
         Branch cure, step;
         double step_ratio = 0;
         for (const int head : tree_.order) {
-            if (head == GroundGraph::kRoot || tree_.source[Place(head)] != source || tree_.lamps[Place(head)] == 0 || leads_on(head)) continue;
+            if (head == GroundGraph::kRoot || tree_.source[Place(head)] != source ||
+                tree_.lamps[Place(head)] == 0 || leads_on(head))
+                continue;
             for (const Branch& branch : ways_out(head)) {
                 const double ratio = static_cast<double>(branch.price) / branch.kva;
                 if (branch.kva >= need && (cure.head < 0 || branch.price < cure.price)) cure = branch;
@@ -209,7 +231,9 @@ class Limits {
     [[nodiscard]] bool leads_on(int v) const {
         for (const int e : at_[Place(v)]) {
             const int w = other(e, v);
-            if (tree_.edge[Place(w)] == e && tree_.parent[Place(w)] == v && tree_.lamps[Place(w)] == tree_.lamps[Place(v)]) return true;
+            if (tree_.edge[Place(w)] == e && tree_.parent[Place(w)] == v &&
+                tree_.lamps[Place(w)] == tree_.lamps[Place(v)])
+                return true;
         }
         return false;
     }
@@ -227,7 +251,8 @@ class Limits {
                 all_open = all_open && each.mode == Mode::open;
                 worth += each.cents(Choice::solar) - each.cents(Choice::rewire);
             }
-            const bool is_nearer = way_[Place(v)] >= 0 && (moved.entry < 0 || way_[Place(v)] < way_[Place(moved.entry)]);
+            const bool is_nearer =
+                way_[Place(v)] >= 0 && (moved.entry < 0 || way_[Place(v)] < way_[Place(moved.entry)]);
             if (is_nearer && room_at(way_from_[Place(v)]) >= moved.kva) moved.entry = v;
         }
         if (all_open) out.push_back({head, -1, worth - inner - saved, moved.kva});
@@ -251,7 +276,8 @@ class Limits {
     }
     void move(const Branch& branch) {
         drop_edges(chain_above(branch.head));
-        for (int v = branch.entry, e = way_edge_[Place(v)]; e >= 0; e = v == GroundGraph::kRoot ? -1 : way_edge_[Place(v)]) {
+        for (int v = branch.entry, e = way_edge_[Place(v)]; e >= 0;
+             e = v == GroundGraph::kRoot ? -1 : way_edge_[Place(v)]) {
             plan_.edges.push_back(e);
             v = other(e, v);
         }
@@ -273,12 +299,14 @@ class Limits {
     std::map<int, std::pair<std::vector<int>, std::string>> known_;
 };
 
-}  // namespace
+} // namespace
 
-double source_volts(const City& city, ServiceIx service) { return service.is_valid() ? city.services[service.place()].volts : 240; }
+double source_volts(const City& city, ServiceIx service) {
+    return service.is_valid() ? city.services[service.place()].volts : 240;
+}
 
-JointPlan keep_limits(const MoneyInput& input, const GroundGraph& graph, const std::vector<PoleCase>& cases, JointPlan plan, std::vector<Finding>& findings,
-                      const Progress& progress) {
+JointPlan keep_limits(const MoneyInput& input, const GroundGraph& graph, const std::vector<PoleCase>& cases,
+                      JointPlan plan, std::vector<Finding>& findings, const Progress& progress) {
     return Limits(input, graph, cases, std::move(plan), findings).run(progress);
 }
 
@@ -288,7 +316,8 @@ std::vector<double> size_circuits(const MoneyInput& input, DecideResult& result)
     for (Place c = 0; c < result.circuits.size(); ++c)
         for (const PoleIx pole : result.circuits[c].poles) circuit_of.emplace(pole, c);
     std::vector<std::vector<int>> spans_of(result.circuits.size());
-    for (const CircuitSpan& span : result.spans) spans_of[circuit_of.at(span.poles_beyond.front())].push_back(span.id);
+    for (const CircuitSpan& span : result.spans)
+        spans_of[circuit_of.at(span.poles_beyond.front())].push_back(span.id);
 
     tbb::parallel_for(Place{0}, result.circuits.size(), [&](Place c) {
         Circuit& circuit = result.circuits[c];
@@ -318,11 +347,13 @@ std::vector<double> size_circuits(const MoneyInput& input, DecideResult& result)
             CircuitSpan& span = result.spans[Place(spans_of[c][i])];
             if (i < answer.awg.size()) span.awg = answer.awg[i];
             span.cost = 0;
-            for (const CashLine& line : span_lines(input, span, input.plan.decide_year())) span.cost += line.amount;
-            if (span.pole.is_valid() && i < answer.volts.volts.size()) pole_volts[span.pole.place()] = answer.volts.volts[i];
+            for (const CashLine& line : span_lines(input, span, input.plan.decide_year()))
+                span.cost += line.amount;
+            if (span.pole.is_valid() && i < answer.volts.volts.size())
+                pole_volts[span.pole.place()] = answer.volts.volts[i];
         }
     });
     return pole_volts;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -17,7 +17,9 @@ using Place = std::size_t;
 /// Copper from AWG 8 up: the sizes that the price book has and a street circuit is pulled with.
 std::vector<Cable> street_cables(const Catalog& catalog) {
     std::vector<Cable> all = catalog.cables.empty() ? default_cables() : catalog.cables;
-    std::erase_if(all, [](const Cable& cable) { return cable.metal != Metal::copper || cable.awg > 8 || cable.awg < -3; });
+    std::erase_if(all, [](const Cable& cable) {
+        return cable.metal != Metal::copper || cable.awg > 8 || cable.awg < -3;
+    });
     std::erase_if(all, [](const Cable& cable) { return find_price_item(wire_item(cable.awg)) == nullptr; });
     return all;
 }
@@ -39,7 +41,7 @@ RadialCase with_cable(const CircuitLoad& load, const Cable& cable) {
 
 struct Merged {
     std::vector<SizingSpan> spans;
-    std::vector<int> of;  ///< merged span of each span
+    std::vector<int> of; ///< merged span of each span
 };
 
 /// Spans without a lamp that only lead on are one with the next.
@@ -68,7 +70,7 @@ Merged merged(const std::vector<SizingSpan>& spans) {
     return out;
 }
 
-}  // namespace
+} // namespace
 
 LampLoad lamp_load(const Catalog& catalog, const Pole& pole) {
     const NewLight light = new_light(catalog, pole);
@@ -80,12 +82,13 @@ LampLoad lamp_load(const Catalog& catalog, const Pole& pole) {
 CircuitAnswer work_circuit(const MoneyInput& input, const CircuitLoad& load, double drop_frac) {
     CircuitAnswer answer;
     const std::vector<Cable> cables = street_cables(input.catalog);
-    const auto eight = std::find_if(cables.begin(), cables.end(), [](const Cable& cable) { return cable.awg == 8; });
+    const auto eight =
+        std::find_if(cables.begin(), cables.end(), [](const Cable& cable) { return cable.awg == 8; });
     if (eight != cables.end()) {
         answer.volts = solve_radial(with_cable(load, *eight));
         answer.device_a = answer.volts.converged ? device_for(answer.volts.source_a) : 0;
-        answer.possible = answer.volts.converged && answer.volts.worst_drop_frac <= drop_frac && answer.device_a > 0 &&
-                          largest_device(*eight) >= answer.device_a;
+        answer.possible = answer.volts.converged && answer.volts.worst_drop_frac <= drop_frac &&
+                          answer.device_a > 0 && largest_device(*eight) >= answer.device_a;
         answer.awg.assign(load.spans.size(), 8);
         if (answer.possible || load.spans.empty()) return answer;
     }
@@ -123,16 +126,20 @@ std::string beyond_any_wire(const MoneyInput& input, const CircuitLoad& load, do
     const std::vector<Cable> cables = street_cables(input.catalog);
     if (load.spans.empty()) return {};
     if (cables.empty()) return "no copper cable of AWG 8 or larger in the catalogue";
-    const Cable& thickest = *std::min_element(cables.begin(), cables.end(), [](const Cable& a, const Cable& b) { return a.ohm_per_km < b.ohm_per_km; });
+    const Cable& thickest =
+        *std::min_element(cables.begin(), cables.end(),
+                          [](const Cable& a, const Cable& b) { return a.ohm_per_km < b.ohm_per_km; });
     const RadialResult volts = solve_radial(with_cable(load, thickest));
     if (!volts.converged) return "the load is more than the circuit can carry at any size";
     if (volts.worst_drop_frac > drop_frac)
-        return fmt::format("drop {:.1f} % with AWG {}, {:.1f} % allowed", 100 * volts.worst_drop_frac, awg_text(thickest.awg), 100 * drop_frac);
+        return fmt::format("drop {:.1f} % with AWG {}, {:.1f} % allowed", 100 * volts.worst_drop_frac,
+                           awg_text(thickest.awg), 100 * drop_frac);
     double source_va = 0;
     for (const SizingSpan& span : load.spans) source_va += span.watts / span.pf;
     const int device_a = device_for(source_va / (load.source_v * (1 - drop_frac)));
-    if (device_a == 0 || largest_device(thickest) < device_a) return fmt::format("{:.0f} A is more than any device and wire carries", volts.source_a);
+    if (device_a == 0 || largest_device(thickest) < device_a)
+        return fmt::format("{:.0f} A is more than any device and wire carries", volts.source_a);
     return {};
 }
 
-}  // namespace unstring
+} // namespace unstring

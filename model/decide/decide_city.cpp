@@ -20,7 +20,8 @@ using Place = std::size_t;
 
 Fault cancelled() { return {FaultCode::cancelled, {}, 0, {}, {}, {}, {}}; }
 
-/// Long exact search gains little on a whole city and would be felt; the iterated search gains (Quillhaven: gap 0.75 % to 0.46 %).
+/// Long exact search gains little on a whole city and would be felt; the iterated search gains (Quillhaven:
+/// gap 0.75 % to 0.46 %).
 SteinerLimits plan_limits() {
     SteinerLimits limits;
     limits.shakes = 120;
@@ -39,22 +40,27 @@ SteinerLimits quick_limits() {
 }
 
 /// What all poles would cost by one kind, each where it is possible, else by the other kind.
-double all_of(const GroundGraph& graph, std::vector<PoleCase> cases, Choice choice, int& not_possible, const Progress& progress) {
+double all_of(const GroundGraph& graph, std::vector<PoleCase> cases, Choice choice, int& not_possible,
+              const Progress& progress) {
     not_possible = 0;
     for (PoleCase& each : cases) {
         if (each.mode == Mode::keep) continue;
         const Choice other = choice == Choice::rewire ? Choice::solar : Choice::rewire;
         if (!each.of(choice).possible) ++not_possible;
         const Choice taken = each.of(choice).possible ? choice : other;
-        each.mode = !each.of(taken).possible ? Mode::stuck : taken == Choice::rewire ? Mode::rewire : Mode::solar;
+        each.mode = !each.of(taken).possible  ? Mode::stuck
+                    : taken == Choice::rewire ? Mode::rewire
+                                              : Mode::solar;
     }
     return to_dollars(solve_joint(graph, cases, quick_limits(), progress).cost);
 }
 
 /// What larger wire adds to the edges' price: the spans as they are now against the edges that they lie on.
-Cents larger_wire(const MoneyInput& input, const GroundGraph& graph, const JointPlan& plan, const DecideResult& result) {
+Cents larger_wire(const MoneyInput& input, const GroundGraph& graph, const JointPlan& plan,
+                  const DecideResult& result) {
     Cents sum = 0;
-    for (const CircuitSpan& span : result.spans) sum += to_cents(present_value(span_lines(input, span, input.plan.decide_year())));
+    for (const CircuitSpan& span : result.spans)
+        sum += to_cents(present_value(span_lines(input, span, input.plan.decide_year())));
     for (const int e : plan.edges)
         if (!graph.edges[Place(e)].service.is_valid()) sum -= graph.edges[Place(e)].cost;
     return sum;
@@ -64,7 +70,9 @@ void set_volts(const MoneyInput& input, const std::vector<double>& volts, Decide
     for (const Circuit& circuit : result.circuits) {
         const double source = source_volts(input.city, circuit.service);
         for (const PoleIx pole : circuit.poles) {
-            const auto at = std::lower_bound(result.poles.begin(), result.poles.end(), pole, [](const PoleDecision& each, PoleIx wanted) { return each.pole < wanted; });
+            const auto at =
+                std::lower_bound(result.poles.begin(), result.poles.end(), pole,
+                                 [](const PoleDecision& each, PoleIx wanted) { return each.pole < wanted; });
             at->volts = volts[pole.place()];
             at->drop_frac = at->volts > 0 ? 1 - at->volts / source : 0;
         }
@@ -80,7 +88,8 @@ void say_stays(const MoneyInput& input, const std::vector<StringCost>& strings, 
         const StringIx string = input.city.poles[each.pole.place()].string;
         if (each.choice != Choice::keep || saving[string.place()] <= 0) continue;
         each.numbers["string_saving"] = to_dollars(saving[string.place()]);
-        each.reason += fmt::format(" String {} stays: ending it would cost {:.0f} more.", input.city.strings[string.place()].id, to_dollars(saving[string.place()]));
+        each.reason += fmt::format(" String {} stays: ending it would cost {:.0f} more.",
+                                   input.city.strings[string.place()].id, to_dollars(saving[string.place()]));
     }
 }
 
@@ -92,10 +101,12 @@ void count(DecideResult& result) {
     }
 }
 
-}  // namespace
+} // namespace
 
 const PoleDecision* DecideResult::find(PoleIx pole) const {
-    const auto at = std::lower_bound(poles.begin(), poles.end(), pole, [](const PoleDecision& each, PoleIx wanted) { return each.pole < wanted; });
+    const auto at =
+        std::lower_bound(poles.begin(), poles.end(), pole,
+                         [](const PoleDecision& each, PoleIx wanted) { return each.pole < wanted; });
     return at != poles.end() && at->pole == pole ? &*at : nullptr;
 }
 
@@ -132,8 +143,10 @@ Expected<DecideResult> decide_city(const MoneyInput& input, const Progress& prog
     say_stays(input, strings, result);
     progress.at(0.8);
 
-    result.all_rewire_cost = to_dollars(ended) + all_of(graph, settled, Choice::rewire, result.all_rewire_not_possible, progress);
-    result.all_solar_cost = to_dollars(ended) + all_of(graph, settled, Choice::solar, result.all_solar_not_possible, progress);
+    result.all_rewire_cost =
+        to_dollars(ended) + all_of(graph, settled, Choice::rewire, result.all_rewire_not_possible, progress);
+    result.all_solar_cost =
+        to_dollars(ended) + all_of(graph, settled, Choice::solar, result.all_solar_not_possible, progress);
     result.greedy_cost = to_dollars(ended + greedy_plan(graph, settled).cost);
     if (progress.is_cancelled()) return tl::unexpected(cancelled());
     progress.at(1);
@@ -141,4 +154,4 @@ Expected<DecideResult> decide_city(const MoneyInput& input, const Progress& prog
     return result;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -16,22 +16,25 @@ namespace {
 
 using Place = std::size_t;
 constexpr double kStreetReachM = 60;
-constexpr double kStraightReachM = 150;  ///< to a neighbour where no street is near
-constexpr double kAerialReachM = 70;     ///< longest aerial span, common practice, no source
+constexpr double kStraightReachM = 150; ///< to a neighbour where no street is near
+constexpr double kAerialReachM = 70;    ///< longest aerial span, common practice, no source
 constexpr double kConduitReachM = 300;
 constexpr int kNeighbours = 4;
 
 bool is_wood(const Pole& pole) {
     std::string kind = pole.pole_kind;
-    std::transform(kind.begin(), kind.end(), kind.begin(), [](unsigned char c) { return static_cast<char>(std::tolower(c)); });
+    std::transform(kind.begin(), kind.end(), kind.begin(),
+                   [](unsigned char c) { return static_cast<char>(std::tolower(c)); });
     return kind.find("wood") != std::string::npos;
 }
 
-double turn(MapPoint a, MapPoint b, MapPoint c) { return (b.x_m - a.x_m) * (c.y_m - a.y_m) - (b.y_m - a.y_m) * (c.x_m - a.x_m); }
+double turn(MapPoint a, MapPoint b, MapPoint c) {
+    return (b.x_m - a.x_m) * (c.y_m - a.y_m) - (b.y_m - a.y_m) * (c.x_m - a.x_m);
+}
 
 /// Streets by cell, to see whether a straight line would cross one.
 class StreetLines {
-  public:
+public:
     explicit StreetLines(const City& city) : near_(60) {
         for (const Street& street : city.streets)
             for (Place i = 1; i < street.line.size(); ++i) {
@@ -49,15 +52,15 @@ class StreetLines {
         return crossed;
     }
 
-  private:
+private:
     NearPoints near_;
     std::vector<std::pair<MapPoint, MapPoint>> lines_;
 };
 
 class Builder {
-  public:
+public:
     explicit Builder(const MoneyInput& input) : input_(input), city_(input.city), near_(kStraightReachM) {
-        graph_.add_vertex({});  // the root
+        graph_.add_vertex({}); // the root
         graph_.vertex_of.assign(city_.poles.size(), -1);
         for (const Street& street : city_.streets)
             if (!street.name.empty()) surface_.emplace(street.name, street.surface);
@@ -73,9 +76,13 @@ class Builder {
         return std::move(graph_);
     }
 
-  private:
-    [[nodiscard]] const Pole& pole_of(int vertex) const { return city_.poles[graph_.pole_at[Place(vertex)].place()]; }
-    [[nodiscard]] double between_m(int u, int v) const { return distance_m(graph_.places[Place(u)], graph_.places[Place(v)]); }
+private:
+    [[nodiscard]] const Pole& pole_of(int vertex) const {
+        return city_.poles[graph_.pole_at[Place(vertex)].place()];
+    }
+    [[nodiscard]] double between_m(int u, int v) const {
+        return distance_m(graph_.places[Place(u)], graph_.places[Place(v)]);
+    }
 
     /// Poles on series strings, and poles that services stand at.
     int pole_vertex(PoleIx pole) {
@@ -102,7 +109,8 @@ class Builder {
             const PoleIx pole = service.pole_given.empty() ? PoleIx() : find_pole(city_, service.pole_given);
             const bool at_pole = pole.is_valid() && city_.poles[pole.place()].has_place;
             if (!service.has_place && !at_pole) continue;
-            const int vertex = graph_.add_vertex(service.has_place ? service.place : city_.poles[pole.place()].place);
+            const int vertex =
+                graph_.add_vertex(service.has_place ? service.place : city_.poles[pole.place()].place);
             fixed_.push_back(vertex);
             service_vertices_.push_back(vertex);
             add(GroundGraph::kRoot, vertex, SpanKind::service, 0, 0).service = ServiceIx(i);
@@ -124,7 +132,8 @@ class Builder {
         const std::vector<std::vector<PoleIx>> strings = lamps_by_string(city_);
         for (Place s = 0; s < strings.size(); ++s) {
             if (city_.strings[s].kind != CircuitKind::series || city_.strings[s].set_aside) continue;
-            for (Place i = 1; i < strings[s].size(); ++i) add_conduit(StringIx(s), strings[s][i - 1], strings[s][i]);
+            for (Place i = 1; i < strings[s].size(); ++i)
+                add_conduit(StringIx(s), strings[s][i - 1], strings[s][i]);
         }
     }
     void add_conduit(StringIx string, PoleIx from, PoleIx to) {
@@ -142,7 +151,8 @@ class Builder {
         if (b.spare_duct != true) edge.duct_string = string;
     }
     /// The nearest vertices within reach for which `fits` says yes, nearest first.
-    template <class Fits> std::vector<int> nearest(int vertex, double reach_m, Fits fits) const {
+    template <class Fits>
+    std::vector<int> nearest(int vertex, double reach_m, Fits fits) const {
         std::vector<std::pair<double, int>> found;
         near_.visit_near(graph_.places[Place(vertex)], reach_m, [&](int other, MapPoint) {
             const double away = between_m(vertex, other);
@@ -153,7 +163,8 @@ class Builder {
         for (Place i = 0; i < found.size() && i < kNeighbours; ++i) out.push_back(found[i].second);
         return out;
     }
-    /// Straight trenches that cross no street: from what no street is near to its neighbours, from services to the poles at hand.
+    /// Straight trenches that cross no street: from what no street is near to its neighbours, from services
+    /// to the poles at hand.
     void add_straight(const std::vector<char>& has_lead) {
         constexpr double kAtHandM = 40;
         const StreetLines streets(city_);
@@ -162,18 +173,22 @@ class Builder {
         for (Place i = 0; i < fixed_.size(); ++i) {
             const int vertex = fixed_[i];
             if (has_lead[i] && !is_service[Place(vertex)]) continue;
-            const auto is_open = [&](int other) { return !streets.is_crossed(graph_.places[Place(vertex)], graph_.places[Place(other)]); };
+            const auto is_open = [&](int other) {
+                return !streets.is_crossed(graph_.places[Place(vertex)], graph_.places[Place(other)]);
+            };
             for (const int other : nearest(vertex, has_lead[i] ? kAtHandM : kStraightReachM, is_open))
                 add(vertex, other, SpanKind::trench_verge, between_m(vertex, other), 1);
         }
     }
     void add_aerial() {
         const auto is_aerial = [&](int vertex) {
-            return graph_.pole_at[Place(vertex)].is_valid() && pole_of(vertex).feed == Feed::overhead && is_wood(pole_of(vertex));
+            return graph_.pole_at[Place(vertex)].is_valid() && pole_of(vertex).feed == Feed::overhead &&
+                   is_wood(pole_of(vertex));
         };
         for (const int vertex : fixed_) {
             if (!is_aerial(vertex)) continue;
-            for (const int other : nearest(vertex, kAerialReachM, is_aerial)) add(vertex, other, SpanKind::aerial, between_m(vertex, other), 0);
+            for (const int other : nearest(vertex, kAerialReachM, is_aerial))
+                add(vertex, other, SpanKind::aerial, between_m(vertex, other), 0);
         }
     }
     /// A crossing is bored or dug, whichever is cheaper.
@@ -196,13 +211,13 @@ class Builder {
     const MoneyInput& input_;
     const City& city_;
     GroundGraph graph_;
-    std::vector<int> fixed_;             ///< poles and services, in the order in which they were added
+    std::vector<int> fixed_; ///< poles and services, in the order in which they were added
     std::vector<int> service_vertices_;
     NearPoints near_;
-    std::unordered_map<std::string, Surface> surface_;  ///< by the street's name
+    std::unordered_map<std::string, Surface> surface_; ///< by the street's name
 };
 
-}  // namespace
+} // namespace
 
 int GroundGraph::add_vertex(MapPoint place, PoleIx pole) {
     places.push_back(place);
@@ -227,4 +242,4 @@ CircuitSpan span_of(const GroundGraph& graph, const GroundEdge& edge, int from) 
     return span;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -9,15 +9,21 @@ namespace {
 using Place = std::size_t;
 
 /// Choice and prize of a case as the Steiner problem sees it.
-Cents prize_of(const PoleCase& each) { return std::max<Cents>(0, each.cents(Choice::solar) - each.cents(Choice::rewire)); }
+Cents prize_of(const PoleCase& each) {
+    return std::max<Cents>(0, each.cents(Choice::solar) - each.cents(Choice::rewire));
+}
 
 Choice outside_choice(const PoleCase& each) {
     switch (each.mode) {
-        case Mode::open:
-        case Mode::solar: return Choice::solar;
-        case Mode::rewire: return Choice::rewire;
-        case Mode::keep: return Choice::keep;
-        case Mode::stuck: return Choice::undecided;
+    case Mode::open:
+    case Mode::solar:
+        return Choice::solar;
+    case Mode::rewire:
+        return Choice::rewire;
+    case Mode::keep:
+        return Choice::keep;
+    case Mode::stuck:
+        return Choice::undecided;
     }
     return Choice::undecided;
 }
@@ -28,15 +34,16 @@ void add_up(const std::vector<PoleCase>& cases, const GroundGraph& graph, JointP
     for (const int e : plan.edges) plan.cost += graph.edges[Place(e)].cost;
 }
 
-}  // namespace
+} // namespace
 
-JointPlan solve_joint(const GroundGraph& graph, const std::vector<PoleCase>& cases, const SteinerLimits& limits, const Progress& progress) {
+JointPlan solve_joint(const GroundGraph& graph, const std::vector<PoleCase>& cases,
+                      const SteinerLimits& limits, const Progress& progress) {
     SteinerProblem problem;
     problem.root = GroundGraph::kRoot;
     problem.prize.assign(graph.places.size(), 0);
     problem.must.assign(graph.places.size(), 0);
     for (const GroundEdge& edge : graph.edges) problem.edges.push_back({edge.u, edge.v, edge.cost});
-    Cents rewired = 0;  // own costs as if every open pole were rewired; a prize left outside makes it solar
+    Cents rewired = 0; // own costs as if every open pole were rewired; a prize left outside makes it solar
     for (const PoleCase& each : cases) {
         const int vertex = graph.vertex_of[each.pole.place()];
         if (each.mode == Mode::open && prize_of(each) > 0) {
@@ -72,7 +79,8 @@ JointPlan greedy_plan(const GroundGraph& graph, const std::vector<PoleCase>& cas
         Choice choice = outside_choice(each);
         int v = graph.vertex_of[each.pole.place()];
         const bool is_reached = v >= 0 && ways.cost[Place(v)] >= 0;
-        if (each.mode == Mode::open && is_reached && each.cents(Choice::rewire) + ways.cost[Place(v)] < each.cents(Choice::solar))
+        if (each.mode == Mode::open && is_reached &&
+            each.cents(Choice::rewire) + ways.cost[Place(v)] < each.cents(Choice::solar))
             choice = Choice::rewire;
         plan.choices.push_back(choice);
         if (choice != Choice::rewire || !is_reached) continue;
@@ -93,7 +101,8 @@ Ways shortest_ways(const GroundGraph& graph, const std::vector<int>& from) {
         at[Place(graph.edges[e].u)].push_back(static_cast<int>(e));
         at[Place(graph.edges[e].v)].push_back(static_cast<int>(e));
     }
-    Ways ways{std::vector<Cents>(graph.places.size(), -1), std::vector<double>(graph.places.size(), 0), std::vector<int>(graph.places.size(), -1)};
+    Ways ways{std::vector<Cents>(graph.places.size(), -1), std::vector<double>(graph.places.size(), 0),
+              std::vector<int>(graph.places.size(), -1)};
     using Item = std::pair<Cents, int>;
     std::priority_queue<Item, std::vector<Item>, std::greater<>> queue;
     for (const int v : from) {
@@ -118,4 +127,4 @@ Ways shortest_ways(const GroundGraph& graph, const std::vector<int>& from) {
     return ways;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -49,8 +49,10 @@ std::vector<PoleCase> with_string_kept(std::vector<PoleCase> cases, const String
     return cases;
 }
 
-/// The most that keeping the string could save: its lamps' own costs as they are and every edge that one of them uses.
-Cents most_saved(const GroundGraph& graph, const std::vector<PoleCase>& cases, const JointPlan& plan, const StringCost& string) {
+/// The most that keeping the string could save: its lamps' own costs as they are and every edge that one of
+/// them uses.
+Cents most_saved(const GroundGraph& graph, const std::vector<PoleCase>& cases, const JointPlan& plan,
+                 const StringCost& string) {
     Cents sum = string.end - string.live;
     bool uses_trench = false;
     for (const int i : string.cases) {
@@ -63,7 +65,7 @@ Cents most_saved(const GroundGraph& graph, const std::vector<PoleCase>& cases, c
     return sum;
 }
 
-}  // namespace
+} // namespace
 
 std::vector<StringCost> string_costs(const MoneyInput& input, const std::vector<PoleCase>& cases) {
     std::vector<StringCost> out;
@@ -86,12 +88,14 @@ std::vector<StringCost> string_costs(const MoneyInput& input, const std::vector<
     return out;
 }
 
-void choose_stays(const GroundGraph& graph, std::vector<PoleCase>& cases, std::vector<StringCost>& strings, const Progress& progress) {
+void choose_stays(const GroundGraph& graph, std::vector<PoleCase>& cases, std::vector<StringCost>& strings,
+                  const Progress& progress) {
     JointPlan now = solve_joint(graph, cases, quick_limits(), progress);
     for (int pass = 0; pass < 3; ++pass) {
         bool changed = false;
         for (StringCost& string : strings) {
-            if (string.saving > 0 || progress.is_cancelled() || most_saved(graph, cases, now, string) <= 0) continue;
+            if (string.saving > 0 || progress.is_cancelled() || most_saved(graph, cases, now, string) <= 0)
+                continue;
             std::vector<PoleCase> kept = with_string_kept(cases, string);
             JointPlan other = solve_joint(graph, kept, quick_limits(), progress);
             const Cents saving = now.cost - other.cost + (string.is_forced ? 0 : string.end - string.live);
@@ -105,7 +109,8 @@ void choose_stays(const GroundGraph& graph, std::vector<PoleCase>& cases, std::v
     }
 }
 
-Cents bound_with_stays(const GroundGraph& graph, std::vector<PoleCase> cases, const std::vector<StringCost>& strings, const Progress& progress) {
+Cents bound_with_stays(const GroundGraph& graph, std::vector<PoleCase> cases,
+                       const std::vector<StringCost>& strings, const Progress& progress) {
     Cents fixed = 0;
     for (const StringCost& string : strings) {
         const Cents more = string.is_forced ? 0 : std::max<Cents>(0, string.live - string.end);
@@ -132,4 +137,4 @@ Cents sum_of(const std::vector<StringCost>& strings) {
     return sum;
 }
 
-}  // namespace unstring
+} // namespace unstring

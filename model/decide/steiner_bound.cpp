@@ -11,8 +11,12 @@ using Place = std::size_t;
 constexpr Cost kFar = std::numeric_limits<Cost>::max() / 4;
 
 /// Arc of edge e that enters v.
-Place entering(const WorkGraph& graph, int e, int v) { return Place(2 * e + (graph.edges[Place(e)].v == v ? 0 : 1)); }
-Place leaving(const WorkGraph& graph, int e, int v) { return Place(2 * e + (graph.edges[Place(e)].u == v ? 0 : 1)); }
+Place entering(const WorkGraph& graph, int e, int v) {
+    return Place(2 * e + (graph.edges[Place(e)].v == v ? 0 : 1));
+}
+Place leaving(const WorkGraph& graph, int e, int v) {
+    return Place(2 * e + (graph.edges[Place(e)].u == v ? 0 : 1));
+}
 
 struct CutArc {
     int tail = 0;
@@ -21,13 +25,13 @@ struct CutArc {
 
 /// The set that reaches one prize vertex over saturated arcs, and the arcs that enter it.
 class Cut {
-  public:
+public:
     explicit Cut(const WorkGraph& graph) : graph_(graph), stamp_(graph.prize.size(), 0) {}
 
     void start(int t) {
         ++mark_;
         entering_.clear();
-        stack_.clear();  // a cut whose prize was used up leaves vertices that it never took in
+        stack_.clear(); // a cut whose prize was used up leaves vertices that it never took in
         has_root_ = false;
         add(t);
     }
@@ -40,8 +44,10 @@ class Cut {
             for (const Arc* a = graph_.begin_of(v); a != graph_.end_of(v); ++a) {
                 if (is_in(a->to)) continue;
                 const Place arc = entering(graph_, a->edge, v);
-                if (reduced[arc] == 0) add(a->to);
-                else entering_.push_back({a->to, arc});
+                if (reduced[arc] == 0)
+                    add(a->to);
+                else
+                    entering_.push_back({a->to, arc});
             }
         }
         if (has_root_) stack_.clear();
@@ -63,7 +69,7 @@ class Cut {
     }
     [[nodiscard]] long width() const { return static_cast<long>(entering_.size()); }
 
-  private:
+private:
     [[nodiscard]] bool is_in(int v) const { return stamp_[Place(v)] == mark_; }
     void add(int v) {
         stamp_[Place(v)] = mark_;
@@ -78,13 +84,14 @@ class Cut {
     bool has_root_ = false;
 };
 
-}  // namespace
+} // namespace
 
 DualAscent raise_duals(const WorkGraph& graph, const Progress& progress) {
     DualAscent out;
     out.bound = graph.constant;
     out.reduced.resize(graph.edges.size() * 2);
-    for (Place e = 0; e < graph.edges.size(); ++e) out.reduced[2 * e] = out.reduced[2 * e + 1] = graph.edges[e].cost;
+    for (Place e = 0; e < graph.edges.size(); ++e)
+        out.reduced[2 * e] = out.reduced[2 * e + 1] = graph.edges[e].cost;
     out.prize_left = graph.prize;
 
     using Key = std::pair<long, int>;
@@ -165,7 +172,8 @@ Fixed fix_by_reduced_cost(const WorkGraph& graph, const DualAscent& dual, Cost u
     const Cost room = upper - dual.bound;
     for (Place e = 0; e < graph.edges.size(); ++e) {
         const Place u = Place(graph.edges[e].u), v = Place(graph.edges[e].v);
-        if (from[u] + dual.reduced[2 * e] + on[v] < room || from[v] + dual.reduced[2 * e + 1] + on[u] < room) continue;
+        if (from[u] + dual.reduced[2 * e] + on[v] < room || from[v] + dual.reduced[2 * e + 1] + on[u] < room)
+            continue;
         out.gone_edge[e] = 1;
         ++out.edges;
     }
@@ -182,4 +190,4 @@ Fixed fix_by_reduced_cost(const WorkGraph& graph, const DualAscent& dual, Cost u
     return out;
 }
 
-}  // namespace unstring::steiner
+} // namespace unstring::steiner

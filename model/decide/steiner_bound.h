@@ -1,6 +1,6 @@
 #pragma once
-// Lower bound by Wong's dual ascent on the directed form of the prize-collecting tree: every prize vertex t has a copy t'
-// that is reached either from t for nothing or straight from the root for its prize.
+// Lower bound by Wong's dual ascent on the directed form of the prize-collecting tree: every prize vertex t
+// has a copy t' that is reached either from t for nothing or straight from the root for its prize.
 //
 //   root --prize--> t' <--0-- t <--cost-- ...
 
@@ -9,10 +9,10 @@
 namespace unstring::steiner {
 
 struct DualAscent {
-    Cost bound = 0;                ///< with the graph's constant
-    std::vector<Cost> reduced;     ///< of arc 2e = u to v, 2e + 1 = v to u
-    std::vector<Cost> prize_left;  ///< reduced cost of root -> t'
-    long work = 0;                 ///< arcs looked at
+    Cost bound = 0;               ///< with the graph's constant
+    std::vector<Cost> reduced;    ///< of arc 2e = u to v, 2e + 1 = v to u
+    std::vector<Cost> prize_left; ///< reduced cost of root -> t'
+    long work = 0;                ///< arcs looked at
 };
 
 /// Raises the duals cut by cut, the prize vertex with the smallest cut first.
@@ -23,12 +23,12 @@ struct DualAscent {
 [[nodiscard]] std::vector<char> reached_by_root(const WorkGraph& graph, const DualAscent& dual);
 
 struct Fixed {
-    std::vector<char> gone_edge, gone_vertex;  ///< in no tree cheaper than `upper`
-    std::vector<char> is_in;                   ///< in every tree cheaper than `upper`
-    int edges = 0, vertices = 0, in = 0;       ///< how many
+    std::vector<char> gone_edge, gone_vertex; ///< in no tree cheaper than `upper`
+    std::vector<char> is_in;                  ///< in every tree cheaper than `upper`
+    int edges = 0, vertices = 0, in = 0;      ///< how many
 };
 
 /// Reduced-cost fixing: bound + way from the root + arc + way on to a prize >= upper.
 [[nodiscard]] Fixed fix_by_reduced_cost(const WorkGraph& graph, const DualAscent& dual, Cost upper);
 
-}  // namespace unstring::steiner
+} // namespace unstring::steiner

@@ -36,18 +36,20 @@ Cost spanning_cost(const SteinerProblem& problem) {
 struct Draft {
     WorkGraph graph;
     std::vector<char> edge_gone, vertex_gone;
-    std::vector<std::vector<int>> at;  ///< edges of each vertex, gone ones swept now and then
-    std::vector<Cost> distance;        ///< room for searches, -1 between them
+    std::vector<std::vector<int>> at; ///< edges of each vertex, gone ones swept now and then
+    std::vector<Cost> distance;       ///< room for searches, -1 between them
 
     explicit Draft(const WorkGraph& from)
-        : graph(from), edge_gone(from.edges.size(), 0), vertex_gone(from.prize.size(), 0), at(from.prize.size()),
-          distance(from.prize.size(), -1) {
+        : graph(from), edge_gone(from.edges.size(), 0), vertex_gone(from.prize.size(), 0),
+          at(from.prize.size()), distance(from.prize.size(), -1) {
         for (Place e = 0; e < graph.edges.size(); ++e) {
             at[Place(graph.edges[e].u)].push_back(static_cast<int>(e));
             at[Place(graph.edges[e].v)].push_back(static_cast<int>(e));
         }
     }
-    [[nodiscard]] int other(int e, int v) const { return graph.edges[Place(e)].u == v ? graph.edges[Place(e)].v : graph.edges[Place(e)].u; }
+    [[nodiscard]] int other(int e, int v) const {
+        return graph.edges[Place(e)].u == v ? graph.edges[Place(e)].v : graph.edges[Place(e)].u;
+    }
     void sweep(int v) {
         std::erase_if(at[Place(v)], [&](int e) { return edge_gone[Place(e)] != 0; });
     }
@@ -64,18 +66,22 @@ void drop_parallel(Draft& draft) {
     for (Place e = 0; e < draft.graph.edges.size(); ++e) {
         if (draft.edge_gone[e]) continue;
         const WorkEdge& edge = draft.graph.edges[e];
-        if (edge.u == edge.v) draft.edge_gone[e] = 1;
-        else list.emplace_back(std::min(edge.u, edge.v), std::max(edge.u, edge.v), edge.cost, static_cast<int>(e));
+        if (edge.u == edge.v)
+            draft.edge_gone[e] = 1;
+        else
+            list.emplace_back(std::min(edge.u, edge.v), std::max(edge.u, edge.v), edge.cost,
+                              static_cast<int>(e));
     }
     std::sort(list.begin(), list.end());
     for (Place i = 1; i < list.size(); ++i)
-        if (std::get<0>(list[i]) == std::get<0>(list[i - 1]) && std::get<1>(list[i]) == std::get<1>(list[i - 1]))
+        if (std::get<0>(list[i]) == std::get<0>(list[i - 1]) &&
+            std::get<1>(list[i]) == std::get<1>(list[i - 1]))
             draft.edge_gone[Place(std::get<3>(list[i]))] = 1;
 }
 
 /// An edge that is no shorter than another way between its ends is never needed.
 class LongEdges {
-  public:
+public:
     explicit LongEdges(Draft& draft) : draft_(draft), distance_(draft.distance) {}
 
     void drop() {
@@ -83,10 +89,10 @@ class LongEdges {
             if (!draft_.edge_gone[e] && has_way_round(static_cast<int>(e))) draft_.edge_gone[e] = 1;
     }
 
-  private:
+private:
     using Item = std::pair<Cost, int>;
     using Queue = std::priority_queue<Item, std::vector<Item>, std::greater<>>;
-    static constexpr int kLook = 120;  ///< vertices looked at per edge
+    static constexpr int kLook = 120; ///< vertices looked at per edge
 
     bool has_way_round(int e) {
         const WorkEdge& edge = draft_.graph.edges[Place(e)];
@@ -117,12 +123,12 @@ class LongEdges {
     }
 
     Draft& draft_;
-    std::vector<Cost>& distance_;  ///< -1 = not reached
+    std::vector<Cost>& distance_; ///< -1 = not reached
     std::vector<int> touched_;
 };
 
-/// Dead ends not worth their edge, and vertices with two edges that can only be passed through: a vertex whose prize is
-/// at most its cheaper edge is never the end of a branch, so both edges or none are used.
+/// Dead ends not worth their edge, and vertices with two edges that can only be passed through: a vertex
+/// whose prize is at most its cheaper edge is never the end of a branch, so both edges or none are used.
 bool contract(Draft& draft, Chains& chains) {
     WorkGraph& graph = draft.graph;
     std::vector<int> stack(graph.prize.size());
@@ -199,7 +205,7 @@ WorkGraph compact(const Draft& draft) {
     return out;
 }
 
-}  // namespace
+} // namespace
 
 int Chains::join(int a, int b) {
     pairs_.emplace_back(a, b);
@@ -245,7 +251,8 @@ WorkGraph work_graph(const SteinerProblem& problem, int root) {
         out.prize[v] = problem.must[v] ? out.must_prize : problem.prize[v];
     out.prize[Place(root)] = out.must_prize;
     for (Place e = 0; e < problem.edges.size(); ++e)
-        out.edges.push_back({problem.edges[e].u, problem.edges[e].v, problem.edges[e].cost, static_cast<int>(e)});
+        out.edges.push_back(
+            {problem.edges[e].u, problem.edges[e].v, problem.edges[e].cost, static_cast<int>(e)});
     Draft draft(out);
     drop_parallel(draft);
     drop_unreached(draft);
@@ -254,7 +261,8 @@ WorkGraph work_graph(const SteinerProblem& problem, int root) {
     return compact(draft);
 }
 
-WorkGraph reduced(const WorkGraph& graph, Chains& chains, const std::vector<char>& gone_vertex, const std::vector<char>& gone_edge) {
+WorkGraph reduced(const WorkGraph& graph, Chains& chains, const std::vector<char>& gone_vertex,
+                  const std::vector<char>& gone_edge) {
     Draft draft(graph);
     for (Place e = 0; e < gone_edge.size(); ++e)
         if (gone_edge[e]) draft.edge_gone[e] = 1;
@@ -272,4 +280,4 @@ WorkGraph reduced(const WorkGraph& graph, Chains& chains, const std::vector<char
     return compact(draft);
 }
 
-}  // namespace unstring::steiner
+} // namespace unstring::steiner

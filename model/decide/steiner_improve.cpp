@@ -11,8 +11,8 @@ namespace {
 using Place = std::size_t;
 constexpr Cost kFar = std::numeric_limits<Cost>::max() / 4;
 using Item = std::pair<Cost, int>;
-constexpr int kClimb = 600;          ///< steps walked up the tree for one exchange
-constexpr std::size_t kBranch = 4000;  ///< vertices of a branch that is still moved as a whole
+constexpr int kClimb = 600;           ///< steps walked up the tree for one exchange
+constexpr std::size_t kBranch = 4000; ///< vertices of a branch that is still moved as a whole
 
 /// Makes `v` the head of its branch by turning the parents round from v up to `top`.
 void turn_round(Tree& tree, int v, int top) {
@@ -27,10 +27,12 @@ void turn_round(Tree& tree, int v, int top) {
     }
 }
 
-/// Puts vertices in: each joins by its cheapest edge, and every further edge of it drives out the dearest of the circle.
+/// Puts vertices in: each joins by its cheapest edge, and every further edge of it drives out the dearest of
+/// the circle.
 class VertexInsertion {
-  public:
-    VertexInsertion(const WorkGraph& graph, Tree& tree) : graph_(graph), tree_(tree), stamp_(graph.prize.size(), 0) {}
+public:
+    VertexInsertion(const WorkGraph& graph, Tree& tree)
+        : graph_(graph), tree_(tree), stamp_(graph.prize.size(), 0) {}
 
     bool run() {
         bool better = false;
@@ -39,7 +41,7 @@ class VertexInsertion {
         return better;
     }
 
-  private:
+private:
     struct Was {
         int vertex, parent, edge;
     };
@@ -76,20 +78,25 @@ class VertexInsertion {
         tree_.parent[Place(v)] = parent;
         tree_.parent_edge[Place(v)] = edge;
     }
-    /// Adds edge v-w and takes out the dearest edge of the circle; the gain, 0 when the new one is the dearest.
+    /// Adds edge v-w and takes out the dearest edge of the circle; the gain, 0 when the new one is the
+    /// dearest.
     Cost exchange(int v, int w, int edge) {
         ++mark_;
         int x = v;
-        for (int step = 0; x >= 0 && step < kClimb; ++step, x = tree_.parent[Place(x)]) stamp_[Place(x)] = mark_;
+        for (int step = 0; x >= 0 && step < kClimb; ++step, x = tree_.parent[Place(x)])
+            stamp_[Place(x)] = mark_;
         Cost dearest = cost(edge);
         int cut = -1, meet = w;
-        for (int step = 0; meet >= 0 && stamp_[Place(meet)] != mark_; ++step, meet = tree_.parent[Place(meet)]) {
+        for (int step = 0; meet >= 0 && stamp_[Place(meet)] != mark_;
+             ++step, meet = tree_.parent[Place(meet)]) {
             if (step >= kClimb || tree_.parent[Place(meet)] < 0) return 0;
-            if (cost(tree_.parent_edge[Place(meet)]) > dearest) dearest = cost(tree_.parent_edge[Place(meet)]), cut = meet;
+            if (cost(tree_.parent_edge[Place(meet)]) > dearest)
+                dearest = cost(tree_.parent_edge[Place(meet)]), cut = meet;
         }
         bool on_w_side = cut >= 0;
         for (x = v; x != meet; x = tree_.parent[Place(x)])
-            if (cost(tree_.parent_edge[Place(x)]) > dearest) dearest = cost(tree_.parent_edge[Place(x)]), cut = x, on_w_side = false;
+            if (cost(tree_.parent_edge[Place(x)]) > dearest)
+                dearest = cost(tree_.parent_edge[Place(x)]), cut = x, on_w_side = false;
         if (cut < 0) return 0;
         hang(on_w_side ? w : v, cut, on_w_side ? v : w, edge);
         return dearest - cost(edge);
@@ -114,13 +121,14 @@ class VertexInsertion {
     int mark_ = 0;
 };
 
-/// Key-path exchange: the chain from a branch up to the next fork is cut, the branch joins again where it is cheapest,
-/// at the root (another service) too.
+/// Key-path exchange: the chain from a branch up to the next fork is cut, the branch joins again where it is
+/// cheapest, at the root (another service) too.
 class KeyPaths {
-  public:
+public:
     KeyPaths(const WorkGraph& graph, Tree& tree)
         : graph_(graph), tree_(tree), children_(graph.prize.size(), 0), branch_(graph.prize.size(), 0),
-          chain_mark_(graph.prize.size(), 0), distance_(graph.prize.size(), kFar), before_(graph.prize.size(), -1), before_edge_(graph.prize.size(), -1) {}
+          chain_mark_(graph.prize.size(), 0), distance_(graph.prize.size(), kFar),
+          before_(graph.prize.size(), -1), before_edge_(graph.prize.size(), -1) {}
 
     bool run(const Progress& progress) {
         std::fill(children_.begin(), children_.end(), 0);
@@ -136,7 +144,7 @@ class KeyPaths {
         return better;
     }
 
-  private:
+private:
     [[nodiscard]] Cost cost(int e) const { return graph_.edges[Place(e)].cost; }
 
     /// The chain above v whose removal saves most: fills chain_ with its inner vertices, answers the saving.
@@ -162,12 +170,14 @@ class KeyPaths {
             const int x = branch_list_[i];
             branch_[Place(x)] = mark_;
             for (const Arc* a = graph_.begin_of(x); a != graph_.end_of(x); ++a)
-                if (tree_.parent[Place(a->to)] == x && tree_.parent_edge[Place(a->to)] == a->edge) branch_list_.push_back(a->to);
+                if (tree_.parent[Place(a->to)] == x && tree_.parent_edge[Place(a->to)] == a->edge)
+                    branch_list_.push_back(a->to);
             if (branch_list_.size() > kBranch) return false;
         }
         return true;
     }
-    /// Nearest vertex of the remaining tree within `room`, prizes on the way counted as cheaper edges; -1 = none.
+    /// Nearest vertex of the remaining tree within `room`, prizes on the way counted as cheaper edges; -1 =
+    /// none.
     int rejoin(Cost room) {
         std::priority_queue<Item, std::vector<Item>, std::greater<>> queue;
         touched_.clear();
@@ -185,7 +195,8 @@ class KeyPaths {
             for (const Arc* a = graph_.begin_of(x); a != graph_.end_of(x); ++a) {
                 const int y = a->to;
                 const bool is_outside = !tree_.in[Place(y)] || chain_mark_[Place(y)] == mark_;
-                const Cost next = d + std::max<Cost>(0, cost(a->edge) - (is_outside ? graph_.prize[Place(y)] : 0));
+                const Cost next =
+                    d + std::max<Cost>(0, cost(a->edge) - (is_outside ? graph_.prize[Place(y)] : 0));
                 if (next >= room || next >= distance_[Place(y)]) continue;
                 if (distance_[Place(y)] == kFar) touched_.push_back(y);
                 distance_[Place(y)] = next;
@@ -255,7 +266,7 @@ bool take_if_better(Tree& tree, Tree&& other) {
     return true;
 }
 
-}  // namespace
+} // namespace
 
 void improve(const WorkGraph& graph, Tree& tree, const Progress& progress) {
     for (int round = 0; round < 30 && !progress.is_cancelled(); ++round) {
@@ -288,8 +299,10 @@ void shake(const WorkGraph& graph, Tree& tree, int times, const Progress& progre
         const std::size_t drop = 1 + below(4), add = 1 + below(6);
         for (const int v : ball) {
             if (v == graph.root) continue;
-            if (in[Place(v)]) in[Place(v)] = below(5) >= drop ? 1 : 0;
-            else in[Place(v)] = below(8) < add ? 1 : 0;
+            if (in[Place(v)])
+                in[Place(v)] = below(5) >= drop ? 1 : 0;
+            else
+                in[Place(v)] = below(8) < add ? 1 : 0;
         }
         // What lost the root comes back by the shortest ways.
         Tree start = spanning_tree(graph, in);
@@ -303,4 +316,4 @@ void shake(const WorkGraph& graph, Tree& tree, int times, const Progress& progre
     }
 }
 
-}  // namespace unstring::steiner
+} // namespace unstring::steiner

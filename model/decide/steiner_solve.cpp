@@ -17,7 +17,7 @@ using Place = std::size_t;
 struct Best {
     bool exists = false;
     Cost cost = 0;
-    int root = -1;  ///< -1 = no tree at all
+    int root = -1; ///< -1 = no tree at all
     std::vector<int> edges;
 };
 
@@ -26,8 +26,8 @@ struct Search {
     const Progress& progress;
     Chains& chains;
     Best& best;
-    Cost step;  ///< every cost is a multiple of it
-    int root = -1;  ///< of the trees that are being looked for
+    Cost step;     ///< every cost is a multiple of it
+    int root = -1; ///< of the trees that are being looked for
 };
 
 /// No tree can cost between two multiples of the step.
@@ -67,7 +67,8 @@ std::optional<Node> work_through(Search& search, WorkGraph graph, int rounds, in
     for (int round = 0; round < rounds; ++round) {
         DualAscent dual = raise_duals(graph, search.progress);
         work += dual.work + static_cast<long>(graph.arcs.size()) * 4;
-        if (search.progress.is_cancelled()) return Node{std::move(graph), std::max(bound, rounded_up(dual.bound, search.step))};
+        if (search.progress.is_cancelled())
+            return Node{std::move(graph), std::max(bound, rounded_up(dual.bound, search.step))};
         bound = std::max(bound, rounded_up(dual.bound, search.step));
         if (search.best.exists && bound >= search.best.cost) return std::nullopt;
         Tree tree = first_tree(graph, dual, search.progress);
@@ -96,11 +97,13 @@ std::optional<Node> work_through(Search& search, WorkGraph graph, int rounds, in
 int branch_vertex(const WorkGraph& graph) {
     int best = -1;
     for (int v = 0; v < graph.size(); ++v)
-        if (v != graph.root && !graph.is_must(v) && (best < 0 || graph.degree(v) > graph.degree(best))) best = v;
+        if (v != graph.root && !graph.is_must(v) && (best < 0 || graph.degree(v) > graph.degree(best)))
+            best = v;
     return best;
 }
 
-/// Branch and bound, the node with the least bound first. The bound over all that is still open (best.cost: none is).
+/// Branch and bound, the node with the least bound first. The bound over all that is still open (best.cost:
+/// none is).
 Cost branch_and_bound(Search& search, Node start) {
     std::vector<Node> open;
     open.push_back(std::move(start));
@@ -114,15 +117,19 @@ Cost branch_and_bound(Search& search, Node start) {
         const int v = branch_vertex(node.graph);
         if (v < 0) {
             // Every vertex has to be in: the shortest spanning tree is the answer of this node.
-            offer(search, node.graph, spanning_tree(node.graph, std::vector<char>(node.graph.prize.size(), 1)));
+            offer(search, node.graph,
+                  spanning_tree(node.graph, std::vector<char>(node.graph.prize.size(), 1)));
             continue;
         }
         for (const bool is_in : {true, false}) {
             WorkGraph graph = node.graph;
             std::vector<char> gone(graph.prize.size(), 0);
-            if (is_in) graph.prize[Place(v)] = graph.must_prize;
-            else gone[Place(v)] = 1;
-            std::optional<Node> next = work_through(search, reduced(graph, search.chains, gone, {}), 3, 0, work);
+            if (is_in)
+                graph.prize[Place(v)] = graph.must_prize;
+            else
+                gone[Place(v)] = 1;
+            std::optional<Node> next =
+                work_through(search, reduced(graph, search.chains, gone, {}), 3, 0, work);
             if (!next) continue;
             next->bound = std::max(next->bound, node.bound);
             open.push_back(std::move(*next));
@@ -161,7 +168,8 @@ std::vector<WorkGraph> parts_at_root(const WorkGraph& graph) {
     for (const WorkEdge& edge : graph.edges) {
         const int inner = edge.u == graph.root ? edge.v : edge.u;
         WorkGraph& at = parts[Place(part[Place(inner)])];
-        at.edges.push_back({edge.u == graph.root ? 0 : number[Place(edge.u)], edge.v == graph.root ? 0 : number[Place(edge.v)], edge.cost, edge.chain});
+        at.edges.push_back({edge.u == graph.root ? 0 : number[Place(edge.u)],
+                            edge.v == graph.root ? 0 : number[Place(edge.v)], edge.cost, edge.chain});
     }
     for (WorkGraph& each : parts) index_arcs(each);
     return parts;
@@ -175,16 +183,20 @@ Cost solve_parts(Search& search, const Node& node) {
     for (const WorkGraph& part : parts) {
         Best best;
         SteinerLimits limits = search.limits;
-        limits.branch_work = static_cast<long>(static_cast<double>(limits.branch_work) * static_cast<double>(part.edges.size()) /
+        limits.branch_work = static_cast<long>(static_cast<double>(limits.branch_work) *
+                                               static_cast<double>(part.edges.size()) /
                                                static_cast<double>(node.graph.edges.size()));
         Search inner{limits, search.progress, search.chains, best, search.step, search.root};
         long work = 0;
         const bool is_small = part.size() <= limits.exact_vertices;
-        std::optional<Node> left = work_through(inner, part, is_small ? 2 : 1, is_small ? limits.shakes : 0, work);
+        std::optional<Node> left =
+            work_through(inner, part, is_small ? 2 : 1, is_small ? limits.shakes : 0, work);
         Cost part_bound = best.cost;
-        if (left && limits.branch_work > 0 && left->graph.size() <= limits.exact_vertices) part_bound = branch_and_bound(inner, std::move(*left));
-        else if (left) part_bound = std::min(best.cost, left->bound);
-        if (!best.exists) return std::min(node.bound, search.best.cost);  // cancelled
+        if (left && limits.branch_work > 0 && left->graph.size() <= limits.exact_vertices)
+            part_bound = branch_and_bound(inner, std::move(*left));
+        else if (left)
+            part_bound = std::min(best.cost, left->bound);
+        if (!best.exists) return std::min(node.bound, search.best.cost); // cancelled
         bound += part_bound;
         cost += best.cost;
         edges.insert(edges.end(), best.edges.begin(), best.edges.end());
@@ -200,30 +212,33 @@ Cost solve_rooted(const SteinerProblem& problem, int root, Cost constant, Search
     graph.constant += constant;
     graph = reduced(graph, search.chains, {}, {});
     long work = 0;
-    std::optional<Node> node = work_through(search, std::move(graph), std::max(1, search.limits.rounds), 0, work);
+    std::optional<Node> node =
+        work_through(search, std::move(graph), std::max(1, search.limits.rounds), 0, work);
     if (!node) return search.best.cost;
     const bool is_searched = search.limits.branch_work > 0 || search.limits.shakes > 0;
     if (!is_searched || search.progress.is_cancelled()) return std::min(node->bound, search.best.cost);
     return solve_parts(search, *node);
 }
 
-/// No root given and none that has to be in: the best tree holds the vertex of the largest prize, or does not and then
-/// the next one, and so on, until the prizes given up cost more than the best tree.
+/// No root given and none that has to be in: the best tree holds the vertex of the largest prize, or does not
+/// and then the next one, and so on, until the prizes given up cost more than the best tree.
 Cost solve_free(const SteinerProblem& problem, Search& search) {
     const Cost all = std::accumulate(problem.prize.begin(), problem.prize.end(), Cost{0});
     search.best = {true, all, -1, {}};
     std::vector<int> order(problem.prize.size());
     std::iota(order.begin(), order.end(), 0);
-    std::stable_sort(order.begin(), order.end(), [&](int a, int b) { return problem.prize[Place(a)] > problem.prize[Place(b)]; });
+    std::stable_sort(order.begin(), order.end(),
+                     [&](int a, int b) { return problem.prize[Place(a)] > problem.prize[Place(b)]; });
     SteinerProblem rest = problem;
     Cost given_up = 0, bound = all;
     for (const int v : order) {
-        if (problem.prize[Place(v)] == 0 || given_up >= search.best.cost || search.progress.is_cancelled()) break;
+        if (problem.prize[Place(v)] == 0 || given_up >= search.best.cost || search.progress.is_cancelled())
+            break;
         bound = std::min(bound, solve_rooted(rest, v, given_up, search));
         given_up += problem.prize[Place(v)];
         rest.prize[Place(v)] = 0;
         for (SteinerEdge& edge : rest.edges)
-            if (edge.u == v || edge.v == v) edge.v = edge.u;  // a loop: gone, and the places stay
+            if (edge.u == v || edge.v == v) edge.v = edge.u; // a loop: gone, and the places stay
     }
     if (search.progress.is_cancelled()) bound = 0;
     return std::min(bound, search.best.cost);
@@ -231,7 +246,8 @@ Cost solve_free(const SteinerProblem& problem, Search& search) {
 
 void check_input(const SteinerProblem& problem) {
     const int n = static_cast<int>(problem.prize.size());
-    if (problem.must.size() != problem.prize.size()) throw std::logic_error("solve_steiner: one must per prize");
+    if (problem.must.size() != problem.prize.size())
+        throw std::logic_error("solve_steiner: one must per prize");
     if (problem.root >= n) throw std::logic_error("solve_steiner: root out of range");
     for (const Cost prize : problem.prize)
         if (prize < 0) throw std::logic_error("solve_steiner: negative prize");
@@ -247,10 +263,11 @@ Cost common_step(const SteinerProblem& problem) {
     return std::max<Cost>(1, step);
 }
 
-}  // namespace
-}  // namespace steiner
+} // namespace
+} // namespace steiner
 
-SteinerAnswer solve_steiner(const SteinerProblem& problem, const SteinerLimits& limits, const Progress& progress) {
+SteinerAnswer solve_steiner(const SteinerProblem& problem, const SteinerLimits& limits,
+                            const Progress& progress) {
     using namespace steiner;
     check_input(problem);
     int root = problem.root;
@@ -265,11 +282,14 @@ SteinerAnswer solve_steiner(const SteinerProblem& problem, const SteinerLimits& 
     answer.was_cancelled = progress.is_cancelled();
 
     std::vector<char> in(problem.prize.size(), 0);
-    if (best.root >= 0) in[Place(best.root)] = 1;
-    else if (root >= 0) in[Place(root)] = 1;
+    if (best.root >= 0)
+        in[Place(best.root)] = 1;
+    else if (root >= 0)
+        in[Place(root)] = 1;
     answer.edges = std::move(best.edges);
     std::sort(answer.edges.begin(), answer.edges.end());
-    for (const int e : answer.edges) in[Place(problem.edges[Place(e)].u)] = in[Place(problem.edges[Place(e)].v)] = 1;
+    for (const int e : answer.edges)
+        in[Place(problem.edges[Place(e)].u)] = in[Place(problem.edges[Place(e)].v)] = 1;
     for (Place v = 0; v < in.size(); ++v)
         if (in[v]) answer.vertices.push_back(static_cast<int>(v));
 
@@ -282,4 +302,4 @@ SteinerAnswer solve_steiner(const SteinerProblem& problem, const SteinerLimits& 
     return answer;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -20,8 +20,10 @@ void prune(const WorkGraph& graph, Tree& tree, const std::vector<int>& order) {
         const int v = *at;
         if (v == graph.root) continue;
         const Cost net = worth[Place(v)] - graph.edges[Place(tree.parent_edge[Place(v)])].cost;
-        if (net > 0) worth[Place(tree.parent[Place(v)])] += net;
-        else tree.in[Place(v)] = 0;
+        if (net > 0)
+            worth[Place(tree.parent[Place(v)])] += net;
+        else
+            tree.in[Place(v)] = 0;
     }
     for (const int v : order) {
         if (v == graph.root) continue;
@@ -32,13 +34,15 @@ void prune(const WorkGraph& graph, Tree& tree, const std::vector<int>& order) {
     }
 }
 
-}  // namespace
+} // namespace
 
 Cost cost_of(const WorkGraph& graph, const Tree& tree) {
     Cost sum = graph.constant;
     for (Place v = 0; v < graph.prize.size(); ++v) {
-        if (!tree.in[v]) sum += graph.prize[v];
-        else if (tree.parent_edge[v] >= 0) sum += graph.edges[Place(tree.parent_edge[v])].cost;
+        if (!tree.in[v])
+            sum += graph.prize[v];
+        else if (tree.parent_edge[v] >= 0)
+            sum += graph.edges[Place(tree.parent_edge[v])].cost;
     }
     return sum;
 }
@@ -109,4 +113,4 @@ void reach_out(const WorkGraph& graph, std::vector<char>& in, bool only_paying) 
     in = std::move(next_in);
 }
 
-}  // namespace unstring::steiner
+} // namespace unstring::steiner

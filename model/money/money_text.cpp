@@ -25,9 +25,9 @@ std::string text_with(const char* sign, double dollars, bool with_cents) {
     return with_cents ? text + fmt::format(".{:02}", cents % 100) : text;
 }
 
-}  // namespace
+} // namespace
 
 std::string amount_text(double dollars, bool with_cents) { return text_with("", dollars, with_cents); }
 std::string dollars_text(double dollars, bool with_cents) { return text_with("$", dollars, with_cents); }
 
-}  // namespace unstring
+} // namespace unstring

@@ -10,4 +10,4 @@ namespace unstring {
 /// The same with its sign: "$1,234,567", "-$40".
 [[nodiscard]] std::string dollars_text(double dollars, bool with_cents = false);
 
-}  // namespace unstring
+} // namespace unstring

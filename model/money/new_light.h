@@ -9,8 +9,8 @@
 
 namespace unstring {
 
-/// System watts of the series lamp: the file's, else the catalogue's for its fixture; 188 (150 W sodium) where neither tells.
-/// Source of the 188: common system watts, from memory.
+/// System watts of the series lamp: the file's, else the catalogue's for its fixture; 188 (150 W sodium)
+/// where neither tells. Source of the 188: common system watts, from memory.
 [[nodiscard]] double lamp_watts(const Catalog& catalog, const Pole& pole);
 
 struct NewLight {
@@ -19,9 +19,9 @@ struct NewLight {
     std::string_view price_item;
 };
 
-/// The smallest luminaire of the catalogue with the lumens that the pole needs (need_lm); where that is not told, with
-/// 0.32 of the old lamp's system watts (188 W of sodium to 60 W of LED, an assumption). None that large: the largest.
-/// An empty catalogue: a nameless luminaire of that wattage at the price of "led_head".
+/// The smallest luminaire of the catalogue with the lumens that the pole needs (need_lm); where that is not
+/// told, with 0.32 of the old lamp's system watts (188 W of sodium to 60 W of LED, an assumption). None that
+/// large: the largest. An empty catalogue: a nameless luminaire of that wattage at the price of "led_head".
 [[nodiscard]] NewLight new_light(const Catalog& catalog, const Pole& pole);
 
 enum class RoadClass { local, collector, arterial };
@@ -31,4 +31,4 @@ enum class RoadClass { local, collector, arterial };
 /// Surface of the pole's street; verge where the street is not known.
 [[nodiscard]] Surface surface_at(const City& city, const Pole& pole);
 
-}  // namespace unstring
+} // namespace unstring

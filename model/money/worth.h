@@ -17,4 +17,4 @@ namespace unstring {
 /// Capital recovery: the equal yearly flow that a present dollar is worth; 1 / years where the rate is 0.
 [[nodiscard]] double crf(double rate, double years);
 
-}  // namespace unstring
+} // namespace unstring

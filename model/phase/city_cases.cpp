@@ -10,22 +10,23 @@
 namespace unstring {
 namespace {
 
-constexpr double kNoUnitPenalty = 2e5;   ///< a string left without a unit that carries it, a year end
-constexpr double kLowPenalty = 2000;     ///< a load under the unit's range, a year end (assumption)
-constexpr double kLeftFlat = 20000;      ///< a section not reached, beside three times its price
+constexpr double kNoUnitPenalty = 2e5; ///< a string left without a unit that carries it, a year end
+constexpr double kLowPenalty = 2000;   ///< a load under the unit's range, a year end (assumption)
+constexpr double kLeftFlat = 20000;    ///< a section not reached, beside three times its price
 constexpr double kWaitPenalty = 1e8;
 
 enum class For { search, bound };
 
 class Builder {
-  public:
-    Builder(const CityYears& city, For purpose) : city_(city), purpose_(purpose), years_(static_cast<std::size_t>(city.years())) {}
+public:
+    Builder(const CityYears& city, For purpose)
+        : city_(city), purpose_(purpose), years_(static_cast<std::size_t>(city.years())) {}
 
     PackageCase run() {
         PackageCase packages;
         packages.years = city_.years();
         packages.classes = static_cast<int>(city_.classes.size());
-        packages.over_weight = 1000;  // what money does not reach is left, not over-run
+        packages.over_weight = 1000; // what money does not reach is left, not over-run
         packages.wait_penalty = kWaitPenalty;
         packages.buy_cost.assign(years_, kNever);
         packages.owned.assign(years_, {});
@@ -33,7 +34,8 @@ class Builder {
             packages.limit.push_back(limit(t));
             for (const auto& units : city_.classes) {
                 std::size_t places = 0;
-                for (const TransformerIx unit : units) places += std::max<std::size_t>(1, transformer(unit).strings.size());
+                for (const TransformerIx unit : units)
+                    places += std::max<std::size_t>(1, transformer(unit).strings.size());
                 packages.owned[t].push_back(static_cast<double>(places));
             }
         }
@@ -41,14 +43,15 @@ class Builder {
         return packages;
     }
 
-  private:
+private:
     const City& records() const { return city_.input.city; }
     const Transformer& transformer(TransformerIx unit) const { return records().transformers[unit.place()]; }
 
     Use limit(std::size_t t) const {
         const YearLimits limits = limits_of(records(), city_.year(t));
-        Use use = {limits.money.value_or(kNever), limits.line_h.value_or(kNever), limits.civil_h.value_or(kNever),
-                   limits.lighting_h.value_or(kNever), limits.electric_h.value_or(kNever)};
+        Use use = {limits.money.value_or(kNever), limits.line_h.value_or(kNever),
+                   limits.civil_h.value_or(kNever), limits.lighting_h.value_or(kNever),
+                   limits.electric_h.value_or(kNever)};
         if (purpose_ == For::bound) use[1] = kNever;
         return use;
     }
@@ -74,8 +77,9 @@ class Builder {
         out.classes = city_.local_classes[s];
         for (std::size_t t = 0; t < years_; ++t) {
             out.least.push_back(0);
-            const auto late = std::find_if(given.sections.begin(), given.sections.end(),
-                                           [&](const CitySection& each) { return each.earliest_t > static_cast<int>(t); });
+            const auto late =
+                std::find_if(given.sections.begin(), given.sections.end(),
+                             [&](const CitySection& each) { return each.earliest_t > static_cast<int>(t); });
             out.most.push_back(static_cast<int>(late - given.sections.begin()));
             out.ends.push_back(city_.states[s][t].back().lamps == 0 ? 1 : 0);
             out.done_cost.push_back(0);
@@ -108,13 +112,16 @@ class Builder {
         out.finish_use.push_back(use(s, finish, finish.retires ? 1 : 0));
     }
 
-    /// A two-loop unit is taken away once, when its second string ends: left out, so that the bound stays one.
+    /// A two-loop unit is taken away once, when its second string ends: left out, so that the bound stays
+    /// one.
     bool pays_removal(std::size_t s) const {
         const TransformerIx today = unit_today(records(), city_.strings[s].string);
         return today.is_valid() && transformer(today).strings.size() < 2;
     }
 
-    static bool is_suspect(const Transformer& unit) { return unit.oil == Oil::pcb || unit.oil == Oil::unknown; }
+    static bool is_suspect(const Transformer& unit) {
+        return unit.oil == Oil::pcb || unit.oil == Oil::unknown;
+    }
     bool oil_is_suspect(std::size_t s) const {
         if (purpose_ == For::search) {
             const TransformerIx today = unit_today(records(), city_.strings[s].string);
@@ -135,10 +142,14 @@ class Builder {
             Use sum_use{};
             for (const PoleIx pole : section.poles) {
                 const PolePlan& row = city_.input.plan.poles[pole.place()];
-                const YearCash& cash = city_.book.pole({pole, row.choice, city_.year(t), row.choice == Choice::solar ? row.head : std::string()});
-                const TaskHours hours = pole_hours(city_.input.prices, records().poles[pole.place()], row.choice, city_.year(t));
+                const YearCash& cash =
+                    city_.book.pole({pole, row.choice, city_.year(t),
+                                     row.choice == Choice::solar ? row.head : std::string()});
+                const TaskHours hours =
+                    pole_hours(city_.input.prices, records().poles[pole.place()], row.choice, city_.year(t));
                 sum += cash.cost;
-                const Use more = {to_dollars(cash.capital_sum()), hours.line, hours.civil, hours.lighting, hours.electric};
+                const Use more = {to_dollars(cash.capital_sum()), hours.line, hours.civil, hours.lighting,
+                                  hours.electric};
                 for (std::size_t l = 0; l < kLimits; ++l) sum_use[l] += more[l];
             }
             cost.push_back(sum);
@@ -148,7 +159,8 @@ class Builder {
         out.work_use.push_back(std::move(uses));
     }
 
-    /// What a state costs in year t; in the last year what it costs from then to the horizon, and the keep of what is left.
+    /// What a state costs in year t; in the last year what it costs from then to the horizon, and the keep of
+    /// what is left.
     double running(std::size_t s, std::size_t t, const StringState& state, double rated_kw) const {
         double sum = 0;
         const int last = t + 1 == years_ ? ledger_last_year(city_.input.plan.settings) : city_.year(t);
@@ -178,10 +190,14 @@ class Builder {
                 for (std::size_t k = n; k < given.sections.size(); ++k) left += keep_cost(given.sections[k]);
             std::vector<double> by_class, steer;
             for (const int cls : out.classes) {
-                const double rated_kw = cls == kNoClass ? 0 : loop_rating_kw(transformer(city_.classes[static_cast<std::size_t>(cls)].front()));
+                const double rated_kw =
+                    cls == kNoClass
+                        ? 0
+                        : loop_rating_kw(transformer(city_.classes[static_cast<std::size_t>(cls)].front()));
                 const bool is_legal = cls == kNoClass || carries(cls, state.load_kva);
                 by_class.push_back(is_legal ? running(s, t, state, rated_kw) + left : kNever);
-                steer.push_back(cls == kNoClass ? kNoUnitPenalty : low_penalty(given.string, cls, state.load_kva));
+                steer.push_back(cls == kNoClass ? kNoUnitPenalty
+                                                : low_penalty(given.string, cls, state.load_kva));
             }
             cost.push_back(std::move(by_class));
             penalty.push_back(std::move(steer));
@@ -193,7 +209,8 @@ class Builder {
     bool carries(int cls, double load_kva) const {
         const Transformer& unit = transformer(city_.classes[static_cast<std::size_t>(cls)].front());
         if (load_kva > loop_rating_kw(unit) * (1 + 1e-9)) return false;
-        return unit.build != Build::static_unit || load_kva >= min_frac_of(unit) * loop_rating_kw(unit) * (1 - 1e-9);
+        return unit.build != Build::static_unit ||
+               load_kva >= min_frac_of(unit) * loop_rating_kw(unit) * (1 - 1e-9);
     }
 
     double low_penalty(StringIx string, int cls, double load_kva) const {
@@ -230,7 +247,8 @@ class Builder {
     std::vector<PoleIx> poles_between(std::size_t s, std::size_t n, std::size_t next) const {
         std::vector<PoleIx> poles;
         for (std::size_t k = n; k < next; ++k)
-            poles.insert(poles.end(), city_.strings[s].sections[k].poles.begin(), city_.strings[s].sections[k].poles.end());
+            poles.insert(poles.end(), city_.strings[s].sections[k].poles.begin(),
+                         city_.strings[s].sections[k].poles.end());
         return poles;
     }
 
@@ -266,30 +284,37 @@ void add_to_section(const SharedItem& item, PackageCase& packages) {
 }
 
 /// Which states of the duct's string leave its cable live.
-std::vector<std::vector<char>> live_states(const CityYears& city, const CircuitSpan& span, std::size_t string) {
+std::vector<std::vector<char>> live_states(const CityYears& city, const CircuitSpan& span,
+                                           std::size_t string) {
     const DuctLegs legs = duct_legs(city.loops[span.duct_string.place()], span);
     std::vector<std::vector<char>> blocks;
     for (const auto& year : city.legs[string]) {
         blocks.emplace_back();
         for (const std::vector<char>& live : year)
-            blocks.back().push_back(std::any_of(live.begin() + legs.first, live.begin() + legs.last + 1, [](char leg) { return leg != 0; }) ? 1 : 0);
+            blocks.back().push_back(std::any_of(live.begin() + legs.first, live.begin() + legs.last + 1,
+                                                [](char leg) { return leg != 0; })
+                                        ? 1
+                                        : 0);
     }
     return blocks;
 }
 
 bool has_fixed(const CityString& string) {
-    return std::any_of(string.fixed_year.begin(), string.fixed_year.end(), [](int year) { return year != 0; });
+    return std::any_of(string.fixed_year.begin(), string.fixed_year.end(),
+                       [](int year) { return year != 0; });
 }
 
 /// A duct of the string itself: a jump that leaves its cable live digs.
-void add_own_dig(const SharedItem& item, std::size_t s, int section, const std::vector<std::vector<char>>& live, PackageCase& packages) {
+void add_own_dig(const SharedItem& item, std::size_t s, int section,
+                 const std::vector<std::vector<char>>& live, PackageCase& packages) {
     PackageString& string = packages.strings[s];
     for (std::size_t t = 0; t < live.size(); ++t)
         for (std::size_t n = 0; n <= static_cast<std::size_t>(section); ++n)
             for (std::size_t next = static_cast<std::size_t>(section) + 1; next < live[t].size(); ++next) {
                 if (live[t][next] == 0) continue;
                 string.jump_cost[t][n][next - n - 1] += item.dig_cost[t];
-                for (std::size_t l = 0; l < kLimits; ++l) string.jump_use[t][n][next - n - 1][l] += item.dig_use[t][l];
+                for (std::size_t l = 0; l < kLimits; ++l)
+                    string.jump_use[t][n][next - n - 1][l] += item.dig_use[t][l];
             }
 }
 
@@ -302,22 +327,29 @@ void add_wait(PackageWait wait, PackageCase& packages) {
     PackageString& string = packages.strings[wait.waiting];
     for (std::size_t t = 0; t < wait.blocks.size(); ++t)
         for (std::size_t n = 0; n <= static_cast<std::size_t>(wait.section); ++n)
-            for (std::size_t next = static_cast<std::size_t>(wait.section) + 1; next < wait.blocks[t].size(); ++next)
-                if (wait.blocks[t][next] != 0) string.jump_penalty[t][n][next - n - 1] += packages.wait_penalty;
+            for (std::size_t next = static_cast<std::size_t>(wait.section) + 1; next < wait.blocks[t].size();
+                 ++next)
+                if (wait.blocks[t][next] != 0)
+                    string.jump_penalty[t][n][next - n - 1] += packages.wait_penalty;
 }
 
 void add_items(const CityYears& city, PackageCase& packages) {
     for (const SharedItem& given : city.items) {
-        const CircuitSpan* span = given.dig_cost.empty() ? nullptr : &city.decide.spans[static_cast<std::size_t>(given.span)];
+        const CircuitSpan* span =
+            given.dig_cost.empty() ? nullptr : &city.decide.spans[static_cast<std::size_t>(given.span)];
         const int in = span == nullptr ? -1 : place_of(city, span->duct_string);
-        const bool is_own = in < 0 || (given.firsts.size() == 1 && given.firsts[0].first == static_cast<std::size_t>(in));
+        const bool is_own =
+            in < 0 || (given.firsts.size() == 1 && given.firsts[0].first == static_cast<std::size_t>(in));
         const bool hand = in >= 0 && has_fixed(city.strings[static_cast<std::size_t>(in)]);
         if (given.firsts.size() == 1 && given.fixed_t < 0 && is_own && !hand) {
             add_to_section(given, packages);
-            if (in >= 0) add_own_dig(given, given.firsts[0].first, given.firsts[0].second, live_states(city, *span, static_cast<std::size_t>(in)), packages);
+            if (in >= 0)
+                add_own_dig(given, given.firsts[0].first, given.firsts[0].second,
+                            live_states(city, *span, static_cast<std::size_t>(in)), packages);
             continue;
         }
-        PackageItem item{given.firsts, given.fixed_t, given.cost, given.use, in, {}, given.dig_cost, given.dig_use};
+        PackageItem item{given.firsts, given.fixed_t,  given.cost,   given.use, in,
+                         {},           given.dig_cost, given.dig_use};
         if (in >= 0) item.live = live_states(city, *span, static_cast<std::size_t>(in));
         // Where a hand has set years, a live duct is an error, not a trench.
         if (hand || (in >= 0 && given.fixed_t >= 0)) {
@@ -338,9 +370,12 @@ void take_fixed(const CityYears& city, PackageCase& packages) {
             if (year == 0) continue;
             const auto t = static_cast<std::size_t>(year - city.input.plan.settings.first_year);
             const PolePlan& row = city.input.plan.poles[loop.lamps[i].place()];
-            const YearCash& cash = city.book.pole({loop.lamps[i], row.choice, year, row.choice == Choice::solar ? row.head : std::string()});
-            const TaskHours hours = pole_hours(city.input.prices, city.input.city.poles[loop.lamps[i].place()], row.choice, year);
-            const Use use = {to_dollars(cash.capital_sum()), hours.line, hours.civil, hours.lighting, hours.electric};
+            const YearCash& cash = city.book.pole(
+                {loop.lamps[i], row.choice, year, row.choice == Choice::solar ? row.head : std::string()});
+            const TaskHours hours =
+                pole_hours(city.input.prices, city.input.city.poles[loop.lamps[i].place()], row.choice, year);
+            const Use use = {to_dollars(cash.capital_sum()), hours.line, hours.civil, hours.lighting,
+                             hours.electric};
             for (std::size_t l = 0; l < kLimits; ++l) packages.limit[t][l] -= use[l];
             if (has_work[t] == 0) packages.limit[t][0] -= city.input.prices.at("mobilisation", year);
             has_work[t] = 1;
@@ -374,14 +409,18 @@ void add_control_waits(const CityYears& city, PackageCase& packages) {
     }
 }
 
-/// See bound_case: exact where one string alone has the item, else equal shares at prices that are never too high.
+/// See bound_case: exact where one string alone has the item, else equal shares at prices that are never too
+/// high.
 void add_item_to_bound(const CityYears& city, const SharedItem& item, BoundCase& bound) {
     PackageCase& packages = bound.packages;
     const double share = 1.0 / static_cast<double>(item.firsts.size() + (item.fixed_t >= 0 ? 1 : 0));
     const bool is_one_strings = item.firsts.size() == 1 && item.fixed_t < 0;
     const bool may_dig = !item.dig_cost.empty();
-    const int in = may_dig ? place_of(city, city.decide.spans[static_cast<std::size_t>(item.span)].duct_string) : -1;
-    const bool digs_exactly = is_one_strings && in >= 0 && static_cast<std::size_t>(in) == item.firsts[0].first && !has_fixed(city.strings[item.firsts[0].first]);
+    const int in =
+        may_dig ? place_of(city, city.decide.spans[static_cast<std::size_t>(item.span)].duct_string) : -1;
+    const bool digs_exactly = is_one_strings && in >= 0 &&
+                              static_cast<std::size_t>(in) == item.firsts[0].first &&
+                              !has_fixed(city.strings[item.firsts[0].first]);
     double cheapest = kNever;
     for (std::size_t t = 0; t < static_cast<std::size_t>(packages.years); ++t) {
         const double here = item.cost[t] + (may_dig && !digs_exactly ? std::min(0.0, item.dig_cost[t]) : 0);
@@ -391,15 +430,19 @@ void add_item_to_bound(const CityYears& city, const SharedItem& item, BoundCase&
             packages.strings[string].work_cost[t][k] += share * cheapest;
             if (!is_one_strings) continue;
             for (std::size_t l = 0; l < kLimits; ++l)
-                packages.strings[string].work_use[t][k][l] += item.use[t][l] + (may_dig && !digs_exactly ? std::min(0.0, item.dig_use[t][l]) : 0);
+                packages.strings[string].work_use[t][k][l] +=
+                    item.use[t][l] + (may_dig && !digs_exactly ? std::min(0.0, item.dig_use[t][l]) : 0);
         }
         if (static_cast<int>(t) == item.fixed_t) bound.fixed_cost += share * cheapest;
     }
     if (digs_exactly)
-        add_own_dig(item, item.firsts[0].first, item.firsts[0].second, live_states(city, city.decide.spans[static_cast<std::size_t>(item.span)], static_cast<std::size_t>(in)), packages);
+        add_own_dig(item, item.firsts[0].first, item.firsts[0].second,
+                    live_states(city, city.decide.spans[static_cast<std::size_t>(item.span)],
+                                static_cast<std::size_t>(in)),
+                    packages);
 }
 
-}  // namespace
+} // namespace
 
 PackageCase search_case(const CityYears& city) {
     PackageCase packages = Builder(city, For::search).run();
@@ -435,7 +478,8 @@ BoundCase bound_case(const CityYears& city, bool all_reached, bool all_carried) 
         for (std::size_t i = 0; i < string.fixed_year.size(); ++i) {
             if (string.fixed_year[i] == 0) continue;
             fixed[city.loops[string.string.place()].lamps[i].place()] = string.fixed_year[i];
-            char& has = has_work[static_cast<std::size_t>(string.fixed_year[i] - city.input.plan.settings.first_year)];
+            char& has = has_work[static_cast<std::size_t>(string.fixed_year[i] -
+                                                          city.input.plan.settings.first_year)];
             StringYearCash mobilise;
             mobilise.year = string.fixed_year[i];
             mobilise.has_work = has == 0;
@@ -447,11 +491,14 @@ BoundCase bound_case(const CityYears& city, bool all_reached, bool all_carried) 
         if (moves[i] != 0 || !is_candidate(city.input.city, city.input.city.poles[i])) continue;
         const PolePlan& row = city.input.plan.poles[i];
         const bool works = fixed[i] != 0;
-        bound.fixed_cost += city.book.pole({PoleIx(i), works ? row.choice : Choice::keep, fixed[i], works && row.choice == Choice::solar ? row.head : std::string()}).cost;
+        bound.fixed_cost += city.book
+                                .pole({PoleIx(i), works ? row.choice : Choice::keep, fixed[i],
+                                       works && row.choice == Choice::solar ? row.head : std::string()})
+                                .cost;
     }
     // Design shares are rounded once a string and year in the ledger, here once for each of its parts.
     bound.fixed_cost -= 0.03 * static_cast<double>(city.strings.size()) * packages.years;
     return bound;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -6,11 +6,13 @@
 namespace unstring {
 namespace {
 
-/// Units of the pool by name, year by year: who holds one of the class asked keeps it, the others take a free one.
+/// Units of the pool by name, year by year: who holds one of the class asked keeps it, the others take a free
+/// one.
 class Hands {
-  public:
+public:
     Hands(const CityYears& city, const std::vector<StringPlan>& plans) : city_(city), plans_(plans) {
-        for (const CityString& string : city.strings) held_.push_back(unit_today(city.input.city, string.string));
+        for (const CityString& string : city.strings)
+            held_.push_back(unit_today(city.input.city, string.string));
     }
 
     void year(std::size_t t, std::vector<StringUnit>& out) {
@@ -29,7 +31,7 @@ class Hands {
         }
     }
 
-  private:
+private:
     int class_at(std::size_t s, std::size_t t) const {
         const int local = plans_[s].cls[t];
         return local == kNoClass ? kNoClass : city_.local_classes[s][static_cast<std::size_t>(local)];
@@ -43,7 +45,8 @@ class Hands {
         if (cls == kNoClass) return {};
         for (const TransformerIx unit : city_.classes[static_cast<std::size_t>(cls)]) {
             const auto& own = city_.input.city.transformers[unit.place()].strings;
-            const bool is_shared = own.size() >= 2 && std::find(own.begin(), own.end(), city_.strings[s].string) != own.end();
+            const bool is_shared =
+                own.size() >= 2 && std::find(own.begin(), own.end(), city_.strings[s].string) != own.end();
             if (is_shared || std::find(held_.begin(), held_.end(), unit) == held_.end()) return unit;
         }
         return {};
@@ -54,7 +57,7 @@ class Hands {
     std::vector<TransformerIx> held_;
 };
 
-}  // namespace
+} // namespace
 
 Plan with_years(const CityYears& city, const PackageCase& packages, const std::vector<StringPlan>& plans) {
     Plan plan = city.input.plan;
@@ -81,4 +84,4 @@ Plan with_years(const CityYears& city, const PackageCase& packages, const std::v
     return plan;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -19,7 +19,8 @@ bool is_fixed(const PolePlan& row, const PhaseChoices& choices) {
 
 bool is_converted(const CityYears& city, PoleIx pole) {
     const Choice choice = city.input.plan.poles[pole.place()].choice;
-    return (choice == Choice::rewire || choice == Choice::solar) && is_candidate(city.input.city, city.input.city.poles[pole.place()]);
+    return (choice == Choice::rewire || choice == Choice::solar) &&
+           is_candidate(city.input.city, city.input.city.poles[pole.place()]);
 }
 
 int earliest_t(const CityYears& city, PoleIx ix, const std::vector<ServiceIx>& service_of) {
@@ -28,11 +29,12 @@ int earliest_t(const CityYears& city, PoleIx ix, const std::vector<ServiceIx>& s
     int year = std::max(first, pole.earliest_year.value_or(first));
     const ServiceIx service = service_of[ix.place()];
     if (city.input.plan.poles[ix.place()].choice == Choice::rewire && service.is_valid())
-        year = std::max(year, service_ready_year(city.input.city, city.input.prices, city.input.plan.settings, service));
+        year = std::max(
+            year, service_ready_year(city.input.city, city.input.prices, city.input.plan.settings, service));
     return year - first;
 }
 
-struct Place {  ///< where a pole stands in the case
+struct Place { ///< where a pole stands in the case
     int string = -1, section = -1;
     int fixed_year = 0;
 };
@@ -51,7 +53,8 @@ void add_strings(CityYears& city, const PhaseChoices& choices, std::vector<Place
             if (!is_converted(city, loop.lamps[i]) || !is_fixed(row, choices)) continue;
             const int year = work_year(city.input.city, city.input.plan, loop.lamps[i]);
             string.fixed_year[i] = year;
-            places[loop.lamps[i].place()] = {static_cast<int>(city.strings.size()), -1, year == 0 ? -1 : year};
+            places[loop.lamps[i].place()] = {static_cast<int>(city.strings.size()), -1,
+                                             year == 0 ? -1 : year};
         }
         city.strings.push_back(std::move(string));
     }
@@ -64,7 +67,8 @@ void add_strings(CityYears& city, const PhaseChoices& choices, std::vector<Place
             if (!is_converted(city, pole) || places[pole.place()].fixed_year != 0) continue;
             section.poles.push_back(pole);
             section.earliest_t = std::max(section.earliest_t, earliest_t(city, pole, service_of));
-            places[pole.place()] = {static_cast<int>(at->second), static_cast<int>(string.sections.size()), 0};
+            places[pole.place()] = {static_cast<int>(at->second), static_cast<int>(string.sections.size()),
+                                    0};
         }
         if (!section.poles.empty()) string.sections.push_back(std::move(section));
     }
@@ -74,7 +78,8 @@ Use use_of(const YearCash& cash, const CrewHours& hours) {
     return {to_dollars(cash.capital_sum()), hours.line, hours.civil, hours.lighting, hours.electric};
 }
 
-SharedItem item_of(const CityYears& city, const std::vector<PoleIx>& beyond, const std::vector<Place>& places) {
+SharedItem item_of(const CityYears& city, const std::vector<PoleIx>& beyond,
+                   const std::vector<Place>& places) {
     SharedItem item;
     std::map<int, int> first;
     for (const PoleIx pole : beyond) {
@@ -88,7 +93,8 @@ SharedItem item_of(const CityYears& city, const std::vector<PoleIx>& beyond, con
             at->second = std::min(at->second, place.section);
         }
     }
-    for (const auto& [string, section] : first) item.firsts.emplace_back(static_cast<std::size_t>(string), section);
+    for (const auto& [string, section] : first)
+        item.firsts.emplace_back(static_cast<std::size_t>(string), section);
     return item;
 }
 
@@ -103,9 +109,11 @@ void add_items(CityYears& city, const std::vector<Place>& places) {
             const CircuitSpan& span = city.decide.spans[i];
             const double cost = city.book.span(i, city.year(t), false).cost;
             item.cost.push_back(cost);
-            item.use.push_back(use_of(city.book.span(i, city.year(t), false), span_crew_hours(records, city.input.prices, span, city.year(t))));
+            item.use.push_back(use_of(city.book.span(i, city.year(t), false),
+                                      span_crew_hours(records, city.input.prices, span, city.year(t))));
             if (is_free_of_duct(records, span)) continue;
-            Use more = use_of(city.book.span(i, city.year(t), true), span_crew_hours(records, city.input.prices, dug_span(span), city.year(t)));
+            Use more = use_of(city.book.span(i, city.year(t), true),
+                              span_crew_hours(records, city.input.prices, dug_span(span), city.year(t)));
             for (std::size_t l = 0; l < kLimits; ++l) more[l] -= item.use.back()[l];
             item.dig_cost.push_back(city.book.span(i, city.year(t), true).cost - cost);
             item.dig_use.push_back(more);
@@ -118,7 +126,8 @@ void add_items(CityYears& city, const std::vector<Place>& places) {
         for (std::size_t t = 0; t < years; ++t) {
             const YearCash& cash = city.book.connection(circuit.service, city.year(t));
             item.cost.push_back(cash.cost);
-            item.use.push_back(use_of(cash, connection_crew_hours(records, city.input.prices, circuit.service, city.year(t))));
+            item.use.push_back(use_of(
+                cash, connection_crew_hours(records, city.input.prices, circuit.service, city.year(t))));
         }
         city.items.push_back(std::move(item));
     }
@@ -129,7 +138,8 @@ void fill_states(CityYears& city, std::size_t s) {
     const CityString& string = city.strings[s];
     const StringLoop& loop = city.loops[string.string.place()];
     const auto years = static_cast<std::size_t>(city.years());
-    const bool has_fixed = std::any_of(string.fixed_year.begin(), string.fixed_year.end(), [](int year) { return year != 0; });
+    const bool has_fixed =
+        std::any_of(string.fixed_year.begin(), string.fixed_year.end(), [](int year) { return year != 0; });
     city.states[s].resize(years);
     city.legs[s].resize(years);
     for (std::size_t t = 0; t < years; ++t) {
@@ -144,14 +154,16 @@ void fill_states(CityYears& city, std::size_t s) {
         for (std::size_t n = 0; n <= string.sections.size(); ++n) {
             if (n > 0)
                 for (const PoleIx pole : string.sections[n - 1].poles)
-                    live[static_cast<std::size_t>(std::find(loop.lamps.begin(), loop.lamps.end(), pole) - loop.lamps.begin())] = 0;
+                    live[static_cast<std::size_t>(std::find(loop.lamps.begin(), loop.lamps.end(), pole) -
+                                                  loop.lamps.begin())] = 0;
             city.states[s][t].push_back(string_state(loop, live));
             city.legs[s][t].push_back(live_legs(loop, city.states[s][t].back()));
         }
     }
 }
 
-/// Units alike in all that the pool asks are one class; a two-loop unit is a class of its own, for its two strings.
+/// Units alike in all that the pool asks are one class; a two-loop unit is a class of its own, for its two
+/// strings.
 void add_classes(CityYears& city) {
     const std::vector<Transformer>& units = city.input.city.transformers;
     std::map<std::tuple<double, double, int, double, int, double, int>, std::size_t> known;
@@ -160,8 +172,9 @@ void add_classes(CityYears& city) {
         const Transformer& unit = units[u];
         if (unit.set_aside || unit.state == UnitState::scrapped) continue;
         const int own = unit.strings.size() >= 2 ? static_cast<int>(u) : -1;
-        const auto key = std::tuple(unit.output_a.value_or(0), unit.primary_v.value_or(0), unit.mount ? static_cast<int>(*unit.mount) : -1,
-                                    loop_rating_kw(unit), static_cast<int>(unit.build), min_frac_of(unit), own);
+        const auto key = std::tuple(unit.output_a.value_or(0), unit.primary_v.value_or(0),
+                                    unit.mount ? static_cast<int>(*unit.mount) : -1, loop_rating_kw(unit),
+                                    static_cast<int>(unit.build), min_frac_of(unit), own);
         const auto [at, is_new] = known.try_emplace(key, city.classes.size());
         if (is_new) city.classes.emplace_back();
         city.classes[at->second].push_back(TransformerIx(u));
@@ -173,12 +186,15 @@ void add_classes(CityYears& city) {
         std::vector<int> local;
         for (std::size_t c = 0; c < city.classes.size(); ++c) {
             const Transformer& first = units[city.classes[c].front().place()];
-            const bool is_own = first.strings.size() < 2 || std::find(first.strings.begin(), first.strings.end(), string.string) != first.strings.end();
+            const bool is_own =
+                first.strings.size() < 2 ||
+                std::find(first.strings.begin(), first.strings.end(), string.string) != first.strings.end();
             const bool fits = is_own && city.kinds->is_kind(string.string, city.classes[c].front());
             if (fits || static_cast<int>(c) == today_class) local.push_back(static_cast<int>(c));
         }
         local.push_back(kNoClass);
-        city.start_class.push_back(static_cast<int>(std::find(local.begin(), local.end(), today_class) - local.begin()));
+        city.start_class.push_back(
+            static_cast<int>(std::find(local.begin(), local.end(), today_class) - local.begin()));
         city.local_classes.push_back(std::move(local));
     }
 }
@@ -191,17 +207,23 @@ std::vector<PoleAsk> asks_of(const CityYears& city) {
         if (!is_converted(city, PoleIx(i))) continue;
         const PolePlan& row = city.input.plan.poles[i];
         const std::string head = row.choice == Choice::solar ? row.head : std::string();
-        for (std::size_t t = 0; t < static_cast<std::size_t>(city.years()); ++t) asks.push_back({PoleIx(i), row.choice, city.year(t), head});
+        for (std::size_t t = 0; t < static_cast<std::size_t>(city.years()); ++t)
+            asks.push_back({PoleIx(i), row.choice, city.year(t), head});
     }
     return asks;
 }
 
-}  // namespace
+} // namespace
 
-Expected<std::unique_ptr<CityYears>> city_years(const MoneyInput& input, const DecideResult& decide, const PhaseChoices& choices,
-                                                CashBook& book, const Progress& progress) {
-    const auto stopped = [] { return tl::unexpected(Fault{FaultCode::cancelled, {}, 0, {}, "stopped by the user", {}, "run phase again"}); };
-    auto city = std::unique_ptr<CityYears>(new CityYears{input, decide, book, {}, {}, {}, {}, {}, {}, {}, {}, {}, {}});
+Expected<std::unique_ptr<CityYears>> city_years(const MoneyInput& input, const DecideResult& decide,
+                                                const PhaseChoices& choices, CashBook& book,
+                                                const Progress& progress) {
+    const auto stopped = [] {
+        return tl::unexpected(
+            Fault{FaultCode::cancelled, {}, 0, {}, "stopped by the user", {}, "run phase again"});
+    };
+    auto city = std::unique_ptr<CityYears>(
+        new CityYears{input, decide, book, {}, {}, {}, {}, {}, {}, {}, {}, {}, {}});
     city->loops = string_loops(input.city, input.catalog);
     city->sections = sections_of(city->loops);
     city->kinds = std::make_unique<UnitKinds>(input.city, city->loops);
@@ -219,4 +241,4 @@ Expected<std::unique_ptr<CityYears>> city_years(const MoneyInput& input, const D
     return city;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -15,8 +15,8 @@ bool is_solvers(const PhaseFacts& facts, PoleIx pole) {
     return row.year_by == YearBy::solver && !row.year_locked;
 }
 
-/// Whether the solver set every year that makes the duct live: of the poles that the span is built for, and of the
-/// lamps of the duct's string that leave after it.
+/// Whether the solver set every year that makes the duct live: of the poles that the span is built for, and
+/// of the lamps of the duct's string that leave after it.
 bool years_are_solvers(const PhaseFacts& facts, const CircuitSpan& span, int year) {
     for (const PoleIx pole : span.poles_beyond)
         if (facts.pole_year[pole.place()] == year && !is_solvers(facts, pole)) return false;
@@ -25,7 +25,7 @@ bool years_are_solvers(const PhaseFacts& facts, const CircuitSpan& span, int yea
     return true;
 }
 
-}  // namespace
+} // namespace
 
 bool is_free_of_duct(const City& city, const CircuitSpan& span) {
     if (span.kind != SpanKind::conduit || !span.duct_string.is_valid()) return true;
@@ -42,7 +42,7 @@ DuctLegs duct_legs(const StringLoop& loop, const CircuitSpan& span) {
     const int from = span.duct_from.is_valid() ? position(span.duct_from) : -1;
     const int to = span.duct_to.is_valid() ? position(span.duct_to) : -1;
     if (from < 0 && to < 0) return {};
-    if (from < 0 || to < 0) {  // from the station to a lamp: the home leg that is nearer
+    if (from < 0 || to < 0) { // from the station to a lamp: the home leg that is nearer
         const int lamp = std::max(from, to);
         return lamp * 2 <= n + 1 ? DuctLegs{0, lamp - 1} : DuctLegs{lamp, n};
     }
@@ -58,7 +58,8 @@ std::vector<DuctState> duct_states(const PhaseFacts& facts) {
         const auto t = static_cast<std::size_t>(facts.span_year[i] - facts.plan.settings.first_year + 1);
         const DuctLegs legs = duct_legs(facts.loops[s], span);
         const std::vector<char>& live = facts.at(s, t).leg_is_live;
-        if (legs.first > legs.last || std::none_of(live.begin() + legs.first, live.begin() + legs.last + 1, [](char leg) { return leg != 0; }))
+        if (legs.first > legs.last || std::none_of(live.begin() + legs.first, live.begin() + legs.last + 1,
+                                                   [](char leg) { return leg != 0; }))
             continue;
         states[i] = years_are_solvers(facts, span, facts.span_year[i]) ? DuctState::dug : DuctState::live;
     }
@@ -67,7 +68,7 @@ std::vector<DuctState> duct_states(const PhaseFacts& facts) {
 
 std::vector<Finding> duct_findings(const PhaseFacts& facts) {
     std::vector<Finding> findings;
-    std::map<std::pair<std::size_t, int>, std::pair<int, double>> dug;  // string, year -> spans, metres
+    std::map<std::pair<std::size_t, int>, std::pair<int, double>> dug; // string, year -> spans, metres
     for (std::size_t i = 0; i < facts.duct.size(); ++i) {
         const CircuitSpan& span = facts.decide.spans[i];
         if (facts.duct[i] == DuctState::free) continue;
@@ -80,15 +81,23 @@ std::vector<Finding> duct_findings(const PhaseFacts& facts) {
         }
         const PoleIx record = span.duct_to.is_valid() ? span.duct_to : span.pole;
         findings.push_back(make_finding(
-            "duct-live", {}, 0, record.is_valid() ? facts.city.poles[record.place()].id : facts.city.strings[s].id,
-            fmt::format("the duct is to be pulled in {}, the cable of string {} in it is live at that year's end", facts.span_year[i], facts.city.strings[s].id),
-            "series cable dead and pulled first", "move these poles to the year in which that part of the string is off, or let phase set the years: it digs",
+            "duct-live", {}, 0,
+            record.is_valid() ? facts.city.poles[record.place()].id : facts.city.strings[s].id,
+            fmt::format(
+                "the duct is to be pulled in {}, the cable of string {} in it is live at that year's end",
+                facts.span_year[i], facts.city.strings[s].id),
+            "series cable dead and pulled first",
+            "move these poles to the year in which that part of the string is off, or let phase set the "
+            "years: it digs",
             "poles"));
     }
     for (const auto& [at, sum] : dug) {
-        findings.push_back(make_finding("duct-dug", {}, 0, facts.city.strings[at.first].id,
-                                        fmt::format("{}: {} spans, {:.0f} m, are dug beside ducts whose cable is live; priced as trench", at.second, sum.first, sum.second),
-                                        "a duct whose cable is dead", "nothing, where the plan is right; else end that part of the string sooner", "strings"));
+        findings.push_back(make_finding(
+            "duct-dug", {}, 0, facts.city.strings[at.first].id,
+            fmt::format("{}: {} spans, {:.0f} m, are dug beside ducts whose cable is live; priced as trench",
+                        at.second, sum.first, sum.second),
+            "a duct whose cable is dead",
+            "nothing, where the plan is right; else end that part of the string sooner", "strings"));
         findings.back().severity = Severity::notice;
     }
     return findings;
@@ -109,11 +118,13 @@ DecideResult as_built(DecideResult decide, const PhaseResult& phase) {
     return decide;
 }
 
-int service_ready_year(const City& city, const PriceBook& prices, const PlanSettings& settings, ServiceIx ix) {
+int service_ready_year(const City& city, const PriceBook& prices, const PlanSettings& settings,
+                       ServiceIx ix) {
     const ServicePoint& service = city.services[ix.place()];
     double weeks = service.lead_weeks.value_or(0);
-    if (!service.lead_weeks && service.kind == ServiceKind::candidate) weeks = prices.at("service_lead_weeks", settings.first_year);
+    if (!service.lead_weeks && service.kind == ServiceKind::candidate)
+        weeks = prices.at("service_lead_weeks", settings.first_year);
     return settings.first_year + std::max(0, static_cast<int>(std::ceil(weeks / 52)) - 1);
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -8,9 +8,10 @@
 namespace unstring {
 
 enum class DuctState {
-    free,  ///< no duct is reused, or its cable is dead by the end of the year in which the span is built
-    dug,   ///< live, and every year that makes it so is the solver's: the span is dug beside it and priced as trench
-    live,  ///< live by a year that a hand has set: an error until someone decides
+    free, ///< no duct is reused, or its cable is dead by the end of the year in which the span is built
+    dug,  ///< live, and every year that makes it so is the solver's: the span is dug beside it and priced as
+          ///< trench
+    live, ///< live by a year that a hand has set: an error until someone decides
 };
 
 /// One for each span of decide. Live is judged at the end of the year in which the span is built.
@@ -25,16 +26,19 @@ enum class DuctState {
 /// Decide's circuits as phase builds them: spans_dug as trench. For orders and drawings.
 [[nodiscard]] DecideResult as_built(DecideResult decide, const PhaseResult& phase);
 
-/// The leg of the string's loop that lies in a span's old conduit (legs are numbered by the position before them); -1 =
-/// it cannot be told. The legs between the two poles in wiring order, where others lie between: the first of them.
+/// The leg of the string's loop that lies in a span's old conduit (legs are numbered by the position before
+/// them); -1 = it cannot be told. The legs between the two poles in wiring order, where others lie between:
+/// the first of them.
 struct DuctLegs {
-    int first = 0, last = -1;  ///< empty where first > last
+    int first = 0, last = -1; ///< empty where first > last
 };
 [[nodiscard]] DuctLegs duct_legs(const StringLoop& loop, const CircuitSpan& span);
 /// Nothing is to be waited for: no conduit is reused, or a spare one lies beside it.
 [[nodiscard]] bool is_free_of_duct(const City& city, const CircuitSpan& span);
 
-/// First calendar year in which a service can feed lamps: ordered at the start of the plan, lead time in whole years.
-[[nodiscard]] int service_ready_year(const City& city, const PriceBook& prices, const PlanSettings& settings, ServiceIx service);
+/// First calendar year in which a service can feed lamps: ordered at the start of the plan, lead time in
+/// whole years.
+[[nodiscard]] int service_ready_year(const City& city, const PriceBook& prices, const PlanSettings& settings,
+                                     ServiceIx service);
 
-}  // namespace unstring
+} // namespace unstring

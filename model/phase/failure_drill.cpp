@@ -13,7 +13,7 @@ namespace {
 constexpr double kMetresPerMile = 1609.344;
 constexpr double kWeeksPerYear = 52;
 
-using ClassKey = std::tuple<double, double, double>;  ///< rated kW, output amperes, primary volts
+using ClassKey = std::tuple<double, double, double>; ///< rated kW, output amperes, primary volts
 
 ClassKey class_of(const Transformer& unit) {
     return {unit.rated_kw, unit.output_a.value_or(0), unit.primary_v.value_or(0)};
@@ -21,12 +21,13 @@ ClassKey class_of(const Transformer& unit) {
 
 struct ClassSum {
     int idle = 0;
-    double demand = 0;  ///< failures expected over the lead time
+    double demand = 0; ///< failures expected over the lead time
     int idle_that_fit = 0;
     bool in_service = false;
 };
 
-double loop_faults_year(const City& city, const PriceBook& prices, StringIx string, double cable_m, double cable_today_m, int year) {
+double loop_faults_year(const City& city, const PriceBook& prices, StringIx string, double cable_m,
+                        double cable_today_m, int year) {
     const auto& own = city.strings[string.place()].faults_year;
     if (own && cable_today_m > 0) return *own * cable_m / cable_today_m;
     return prices.at("loop_faults", year) * cable_m / kMetresPerMile;
@@ -52,9 +53,11 @@ std::vector<SpareCover> covers_of(const PhaseFacts& facts, std::size_t t) {
         is_counted[unit.place()] = 1;
         std::vector<char>& fits = fitting.try_emplace(key, units.idle[t].size(), char{0}).first->second;
         for (std::size_t i = 0; i < fits.size(); ++i)
-            if (fits[i] == 0 && facts.kinds.fit(StringIx(s), units.idle[t][i], facts.at(s, t).state.load_kva)) fits[i] = 1;
+            if (fits[i] == 0 && facts.kinds.fit(StringIx(s), units.idle[t][i], facts.at(s, t).state.load_kva))
+                fits[i] = 1;
     }
-    for (const auto& [key, fits] : fitting) classes[key].idle_that_fit = static_cast<int>(std::count(fits.begin(), fits.end(), 1));
+    for (const auto& [key, fits] : fitting)
+        classes[key].idle_that_fit = static_cast<int>(std::count(fits.begin(), fits.end(), 1));
     std::vector<SpareCover> covers;
     for (const auto& [key, sum] : classes) {
         const double cover = sum.in_service ? poisson_cover(sum.demand, sum.idle_that_fit) : 1;
@@ -63,7 +66,7 @@ std::vector<SpareCover> covers_of(const PhaseFacts& facts, std::size_t t) {
     return covers;
 }
 
-}  // namespace
+} // namespace
 
 double failure_frac(const PriceBook& prices, const Transformer& unit, int year) {
     constexpr double kYoungTo = 40, kOldFrom = 60;
@@ -80,7 +83,8 @@ StringIx control_string(const City& city, StringIx string) {
     if (from.empty()) return {};
     StringIx other = find_string(city, from);
     if (!other.is_valid())
-        if (const PoleIx pole = find_pole(city, from); pole.is_valid()) other = city.poles[pole.place()].string;
+        if (const PoleIx pole = find_pole(city, from); pole.is_valid())
+            other = city.poles[pole.place()].string;
     return other == string ? StringIx() : other;
 }
 
@@ -89,25 +93,28 @@ DrillYear drill_year(const PhaseFacts& facts, std::size_t t) {
     const PriceBook& prices = facts.prices;
     const int year = facts.year(t);
     DrillYear drill;
-    std::vector<int> dark_with(facts.loops.size(), 0);  // lamps that go dark when this string does
+    std::vector<int> dark_with(facts.loops.size(), 0); // lamps that go dark when this string does
     for (std::size_t s = 0; s < facts.loops.size(); ++s) {
         dark_with[s] += facts.at(s, t).state.lamps;
-        if (const StringIx from = control_string(city, StringIx(s)); from.is_valid() && facts.at(from.place(), t).state.lamps > 0)
+        if (const StringIx from = control_string(city, StringIx(s));
+            from.is_valid() && facts.at(from.place(), t).state.lamps > 0)
             dark_with[from.place()] += facts.at(s, t).state.lamps;
     }
     for (std::size_t s = 0; s < facts.loops.size(); ++s) {
         const StringState& state = facts.at(s, t).state;
         if (state.lamps == 0) continue;
-        const double faults = loop_faults_year(city, prices, StringIx(s), state.cable_m, facts.at(s, 0).state.cable_m, year);
+        const double faults =
+            loop_faults_year(city, prices, StringIx(s), state.cable_m, facts.at(s, 0).state.cable_m, year);
         drill.dark_cable += faults * prices.at("loop_repair_nights", year) * dark_with[s];
         const TransformerIx unit = facts.units.strings[s][t].unit;
         if (!unit.is_valid()) continue;
         const bool has_spare = facts.kinds.best(StringIx(s), facts.units.idle[t], state.load_kva).has_value();
         const double nights = prices.at(has_spare ? "swap_days" : "emergency_days", year);
-        drill.dark_transformers += failure_frac(prices, city.transformers[unit.place()], year) * nights * dark_with[s];
+        drill.dark_transformers +=
+            failure_frac(prices, city.transformers[unit.place()], year) * nights * dark_with[s];
     }
     drill.spares = covers_of(facts, t);
     return drill;
 }
 
-}  // namespace unstring
+} // namespace unstring

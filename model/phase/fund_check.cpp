@@ -25,7 +25,7 @@ bool holds(std::string_view list, std::string_view word) {
     return false;
 }
 
-}  // namespace
+} // namespace
 
 std::vector<Finding> fund_findings(const PhaseFacts& facts, CashBook& book) {
     std::vector<Finding> findings;
@@ -37,15 +37,20 @@ std::vector<Finding> fund_findings(const PhaseFacts& facts, CashBook& book) {
             const int year = facts.pole_year[i];
             if (year < row.year || year > by->year) continue;
             const PolePlan& plan = facts.plan.poles[i];
-            if (!holds(row.wards, facts.city.poles[i].ward) || !holds(row.kinds, text_of(plan.choice))) continue;
-            spent += book.pole({PoleIx(i), plan.choice, year, plan.choice == Choice::solar ? plan.head : std::string()}).capital_sum();
+            if (!holds(row.wards, facts.city.poles[i].ward) || !holds(row.kinds, text_of(plan.choice)))
+                continue;
+            spent += book.pole({PoleIx(i), plan.choice, year,
+                                plan.choice == Choice::solar ? plan.head : std::string()})
+                         .capital_sum();
         }
         if (to_dollars(spent) >= *row.money) continue;
-        findings.push_back(make_finding("fund-lapse", row.from.file, row.from.row, row.fund,
-                                        fmt::format("{:.0f} of {:.0f} spent by {}", to_dollars(spent), *row.money, by->year),
-                                        "all of it spent in its wards and kinds", "move work that it pays for to an earlier year", "budget"));
+        findings.push_back(
+            make_finding("fund-lapse", row.from.file, row.from.row, row.fund,
+                         fmt::format("{:.0f} of {:.0f} spent by {}", to_dollars(spent), *row.money, by->year),
+                         "all of it spent in its wards and kinds",
+                         "move work that it pays for to an earlier year", "budget"));
     }
     return findings;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -21,7 +21,8 @@ int LinearProgram::add_row_equal(double right) {
     return row;
 }
 
-int LinearProgram::add_column(double cost, double low, double high, const std::vector<std::pair<int, double>>& entries) {
+int LinearProgram::add_column(double cost, double low, double high,
+                              const std::vector<std::pair<int, double>>& entries) {
     const int column = glp_add_cols(problem_, 1);
     const int kind = std::isinf(high) ? GLP_LO : (high > low ? GLP_DB : GLP_FX);
     glp_set_col_bnds(problem_, column, kind, low, std::isinf(high) ? 0 : high);
@@ -44,7 +45,7 @@ bool LinearProgram::solve() {
     options.msg_lev = GLP_MSG_OFF;
     options.meth = GLP_PRIMAL;
     if (glp_simplex(problem_, &options) != 0) {
-        glp_adv_basis(problem_, 0);  // a singular basis: begin anew
+        glp_adv_basis(problem_, 0); // a singular basis: begin anew
         if (glp_simplex(problem_, &options) != 0) return false;
     }
     return glp_get_status(problem_) == GLP_OPT;
@@ -54,4 +55,4 @@ double LinearProgram::objective() const { return glp_get_obj_val(problem_); }
 double LinearProgram::value(int column) const { return glp_get_col_prim(problem_, column); }
 double LinearProgram::price(int row) const { return glp_get_row_dual(problem_, row); }
 
-}  // namespace unstring
+} // namespace unstring

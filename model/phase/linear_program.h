@@ -1,5 +1,6 @@
 #pragma once
-// The small linear programmes of the bound: GLPK behind one wall. Minimises; columns may be added between solves.
+// The small linear programmes of the bound: GLPK behind one wall. Minimises; columns may be added between
+// solves.
 
 #include <utility>
 #include <vector>
@@ -9,7 +10,7 @@ struct glp_prob;
 namespace unstring {
 
 class LinearProgram {
-  public:
+public:
     LinearProgram();
     ~LinearProgram();
     LinearProgram(const LinearProgram&) = delete;
@@ -25,10 +26,10 @@ class LinearProgram {
     [[nodiscard]] bool solve();
     [[nodiscard]] double objective() const;
     [[nodiscard]] double value(int column) const;
-    [[nodiscard]] double price(int row) const;  ///< dual value: objective per unit of the right side
+    [[nodiscard]] double price(int row) const; ///< dual value: objective per unit of the right side
 
-  private:
+private:
     glp_prob* problem_;
 };
 
-}  // namespace unstring
+} // namespace unstring

@@ -5,8 +5,8 @@
 namespace unstring {
 
 const char* limit_text(std::size_t limit) {
-    constexpr std::array<const char*, kLimits> kText = {"money", "line-hours", "civil-hours", "lighting-hours",
-                                                        "electric-hours"};
+    constexpr std::array<const char*, kLimits> kText = {"money", "line-hours", "civil-hours",
+                                                        "lighting-hours", "electric-hours"};
     return kText.at(limit);
 }
 
@@ -67,7 +67,8 @@ struct RoomCharge {
     }
     double arrival(int t, int n, int next, Use& use) const {
         if (room.section_cost.empty()) return 0;
-        const auto year = static_cast<std::size_t>(t), to = static_cast<std::size_t>(next), from = static_cast<std::size_t>(n);
+        const auto year = static_cast<std::size_t>(t), to = static_cast<std::size_t>(next),
+                   from = static_cast<std::size_t>(n);
         double cost = room.state_cost[year][to];
         use = plus(use, room.state_use[year][to]);
         if (next == n || room.jump_cost.empty()) return cost;
@@ -76,9 +77,11 @@ struct RoomCharge {
     }
 };
 
-template <class Charge> class ColumnSearch {
-  public:
-    ColumnSearch(const PackageCase& packages, std::size_t place, const Charge& charge, const ColumnLimits* within)
+template <class Charge>
+class ColumnSearch {
+public:
+    ColumnSearch(const PackageCase& packages, std::size_t place, const Charge& charge,
+                 const ColumnLimits* within)
         : string_(packages.strings[place]), charge_(charge), within_(within), years_(packages.years),
           classes_(static_cast<int>(string_.classes.size())) {
         width_ = (string_.sections + 1) * (classes_ + 1);
@@ -97,10 +100,16 @@ template <class Charge> class ColumnSearch {
         return trace();
     }
 
-  private:
+private:
     int state(int n, int c) const { return n * (classes_ + 1) + c; }
-    int least(int t) const { return within_ ? within_->least[static_cast<std::size_t>(t)] : string_.least[static_cast<std::size_t>(t)]; }
-    int most(int t) const { return within_ ? within_->most[static_cast<std::size_t>(t)] : string_.most[static_cast<std::size_t>(t)]; }
+    int least(int t) const {
+        return within_ ? within_->least[static_cast<std::size_t>(t)]
+                       : string_.least[static_cast<std::size_t>(t)];
+    }
+    int most(int t) const {
+        return within_ ? within_->most[static_cast<std::size_t>(t)]
+                       : string_.most[static_cast<std::size_t>(t)];
+    }
     bool is_banned(int t, int c) const {
         return within_ && within_->banned[static_cast<std::size_t>(t)][static_cast<std::size_t>(c)] != 0;
     }
@@ -116,9 +125,12 @@ template <class Charge> class ColumnSearch {
     /// Cost at the year's end of a live state, kNever where it is not legal.
     double live_cost(int t, int n, int c) const {
         if (is_banned(t, c)) return kNever;
-        double cost = string_.state_cost[static_cast<std::size_t>(t)][static_cast<std::size_t>(n)][static_cast<std::size_t>(c)];
+        double cost = string_.state_cost[static_cast<std::size_t>(t)][static_cast<std::size_t>(n)]
+                                        [static_cast<std::size_t>(c)];
         if (!string_.state_penalty.empty())
-            cost += charge_.steer(string_.state_penalty[static_cast<std::size_t>(t)][static_cast<std::size_t>(n)][static_cast<std::size_t>(c)]);
+            cost +=
+                charge_.steer(string_.state_penalty[static_cast<std::size_t>(t)][static_cast<std::size_t>(n)]
+                                                   [static_cast<std::size_t>(c)]);
         return cost + end_penalty(t, n);
     }
 
@@ -146,15 +158,18 @@ template <class Charge> class ColumnSearch {
                 if (next < least(t)) continue;
                 Use whole_use = with_jump(t, n, next, use);
                 const double whole = work + jump_cost(t, n, next) + charge_.arrival(t, n, next, whole_use);
-                if (next == string_.sections && string_.ends[year] != 0) finish(t, n, whole, whole_use, before);
-                else carry_on(t, n, next, whole, whole_use, before);
+                if (next == string_.sections && string_.ends[year] != 0)
+                    finish(t, n, whole, whole_use, before);
+                else
+                    carry_on(t, n, next, whole, whole_use, before);
             }
         }
     }
 
     double jump_cost(int t, int n, int next) const {
         if (next == n || string_.jump_cost.empty()) return 0;
-        const auto year = static_cast<std::size_t>(t), from = static_cast<std::size_t>(n), by = static_cast<std::size_t>(next - n - 1);
+        const auto year = static_cast<std::size_t>(t), from = static_cast<std::size_t>(n),
+                   by = static_cast<std::size_t>(next - n - 1);
         double cost = string_.jump_cost[year][from][by];
         if (!string_.jump_penalty.empty()) cost += charge_.steer(string_.jump_penalty[year][from][by]);
         return cost;
@@ -162,7 +177,8 @@ template <class Charge> class ColumnSearch {
 
     Use with_jump(int t, int n, int next, const Use& use) const {
         if (next == n || string_.jump_use.empty()) return use;
-        return plus(use, string_.jump_use[static_cast<std::size_t>(t)][static_cast<std::size_t>(n)][static_cast<std::size_t>(next - n - 1)]);
+        return plus(use, string_.jump_use[static_cast<std::size_t>(t)][static_cast<std::size_t>(n)]
+                                         [static_cast<std::size_t>(next - n - 1)]);
     }
 
     bool any_finite(const std::vector<double>& before, int n) const {
@@ -179,14 +195,16 @@ template <class Charge> class ColumnSearch {
         for (int c = 0; c <= classes_; ++c) {
             const bool ends_now = n < string_.sections || c < classes_;
             const double start = before[static_cast<std::size_t>(state(n, c))];
-            reach(t, state(string_.sections, classes_), start + (ends_now ? end_cost : idle_cost) + string_.done_cost[year], state(n, c));
+            reach(t, state(string_.sections, classes_),
+                  start + (ends_now ? end_cost : idle_cost) + string_.done_cost[year], state(n, c));
         }
     }
 
     void carry_on(int t, int n, int next, double work, const Use& use, const std::vector<double>& before) {
         const auto year = static_cast<std::size_t>(t);
         const double same = work + charge_.use(t, use);
-        const double swapped = work + string_.swap_cost[year] + charge_.use(t, plus(use, string_.swap_use[year]));
+        const double swapped =
+            work + string_.swap_cost[year] + charge_.use(t, plus(use, string_.swap_use[year]));
         for (int to = 0; to < classes_; ++to) {
             const double here = live_cost(t, next, to);
             if (here == kNever) continue;
@@ -226,7 +244,7 @@ template <class Charge> class ColumnSearch {
     std::vector<int> from_;
 };
 
-}  // namespace
+} // namespace
 
 ColumnFigures column_figures(const PackageCase& packages, std::size_t place, const StringPlan& plan) {
     const PackageString& string = packages.strings[place];
@@ -260,7 +278,8 @@ ColumnFigures column_figures(const PackageCase& packages, std::size_t place, con
         } else {
             const auto to = static_cast<std::size_t>(plan.cls[t]);
             figures.cost += string.state_cost[t][static_cast<std::size_t>(next)][to];
-            if (!string.state_penalty.empty()) figures.penalty += string.state_penalty[t][static_cast<std::size_t>(next)][to];
+            if (!string.state_penalty.empty())
+                figures.penalty += string.state_penalty[t][static_cast<std::size_t>(next)][to];
             if (plan.cls[t] != c) {
                 figures.cost += string.swap_cost[t];
                 use = plus(use, string.swap_use[t]);
@@ -288,4 +307,4 @@ PricedColumn best_column_in(const PackageCase& packages, std::size_t string, con
     return ColumnSearch<RoomCharge>(packages, string, charge, nullptr).run();
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -10,13 +10,13 @@ namespace unstring {
 namespace {
 
 constexpr double kHalfCent = 0.005;
-constexpr double kShare = 1e-6;  ///< a share nearer than this to a whole number is whole
+constexpr double kShare = 1e-6; ///< a share nearer than this to a whole number is whole
 
 struct Node {
     double bound = 0;
     int id = 0;
     MasterBranch branch;
-    bool operator<(const Node& other) const {  // the queue gives the lowest bound first, then the newest
+    bool operator<(const Node& other) const { // the queue gives the lowest bound first, then the newest
         if (bound != other.bound) return bound > other.bound;
         return id < other.id;
     }
@@ -27,7 +27,8 @@ struct Split {
 };
 
 /// Splits on the number of sections done where the shares disagree.
-std::optional<Split> split_done(const MasterAnswer& answer, const std::vector<MasterColumn>& columns, const MasterBranch& branch) {
+std::optional<Split> split_done(const MasterAnswer& answer, const std::vector<MasterColumn>& columns,
+                                const MasterBranch& branch) {
     double widest = 0;
     std::size_t string = 0, year = 0;
     int at = 0;
@@ -41,7 +42,8 @@ std::optional<Split> split_done(const MasterAnswer& answer, const std::vector<Ma
                 }
             mean /= std::max(weight, 1e-12);
             for (const auto& [place, share] : answer.used)
-                if (columns[place].string == s) spread += share * std::abs(columns[place].plan.done[t] - mean);
+                if (columns[place].string == s)
+                    spread += share * std::abs(columns[place].plan.done[t] - mean);
             if (spread <= std::max(widest, kShare)) continue;
             widest = spread;
             string = s;
@@ -56,7 +58,8 @@ std::optional<Split> split_done(const MasterAnswer& answer, const std::vector<Ma
 }
 
 /// Splits on the class in service where the shares disagree.
-std::optional<Split> split_class(const MasterAnswer& answer, const std::vector<MasterColumn>& columns, const MasterBranch& branch) {
+std::optional<Split> split_class(const MasterAnswer& answer, const std::vector<MasterColumn>& columns,
+                                 const MasterBranch& branch) {
     for (std::size_t s = 0; s < branch.strings.size(); ++s)
         for (std::size_t t = 0; t < branch.strings[s].banned.size(); ++t) {
             std::vector<double> share_of(branch.strings[s].banned[t].size(), 0);
@@ -89,7 +92,8 @@ std::optional<Split> split_purchase(const MasterAnswer& answer, const MasterBran
     return std::nullopt;
 }
 
-/// A whole-numbered answer that over-runs a limit says nothing of its branch: split wherever there is a choice left.
+/// A whole-numbered answer that over-runs a limit says nothing of its branch: split wherever there is a
+/// choice left.
 std::optional<Split> split_any(const MasterBranch& branch) {
     for (std::size_t s = 0; s < branch.strings.size(); ++s)
         for (std::size_t t = 0; t < branch.strings[s].least.size(); ++t) {
@@ -116,7 +120,8 @@ std::optional<Split> split_any(const MasterBranch& branch) {
     return std::nullopt;
 }
 
-std::optional<Split> split_of(const MasterAnswer& answer, const std::vector<MasterColumn>& columns, const MasterBranch& branch) {
+std::optional<Split> split_of(const MasterAnswer& answer, const std::vector<MasterColumn>& columns,
+                              const MasterBranch& branch) {
     if (auto split = split_done(answer, columns, branch)) return split;
     if (auto split = split_class(answer, columns, branch)) return split;
     if (auto split = split_purchase(answer, branch)) return split;
@@ -125,7 +130,8 @@ std::optional<Split> split_of(const MasterAnswer& answer, const std::vector<Mast
 }
 
 /// The plan that takes each string's largest share.
-PackagePlan rounded(const PackageCase& packages, const MasterAnswer& answer, const std::vector<MasterColumn>& columns) {
+PackagePlan rounded(const PackageCase& packages, const MasterAnswer& answer,
+                    const std::vector<MasterColumn>& columns) {
     std::vector<StringPlan> plans(packages.strings.size());
     std::vector<double> best(plans.size(), -1);
     for (const auto& [place, share] : answer.used) {
@@ -142,9 +148,10 @@ bool is_better(const PackagePlan& plan, const PackagePlan& than) {
     return plan.cost + plan.penalty < than.cost + than.penalty - 1e-9;
 }
 
-}  // namespace
+} // namespace
 
-PackageAnswer solve_packages(const PackageCase& packages, int search_rounds, int branches, const Progress& progress) {
+PackageAnswer solve_packages(const PackageCase& packages, int search_rounds, int branches,
+                             const Progress& progress) {
     PackageAnswer answer;
     answer.plan = search_packages(packages, {search_rounds, 1, {}}, progress);
     answer.is_feasible = !answer.plan.strings.empty() && answer.plan.penalty == 0;
@@ -160,9 +167,9 @@ PackageAnswer solve_packages(const PackageCase& packages, int search_rounds, int
         ++answer.branches;
         // Until there is a plan, only the root is priced; the others ask whether any plan is left in them.
         const bool ask_cost = answer.is_feasible || node.id == 0;
-        const MasterAnswer relaxed = solve_master(packages, node.branch, ask_cost ? MasterAim::least_cost : MasterAim::any_plan,
-                                                  columns, progress);
-        if (!relaxed.is_solved) {  // its bound stays the parent's
+        const MasterAnswer relaxed = solve_master(
+            packages, node.branch, ask_cost ? MasterAim::least_cost : MasterAim::any_plan, columns, progress);
+        if (!relaxed.is_solved) { // its bound stays the parent's
             open.push(std::move(node));
             break;
         }
@@ -175,16 +182,17 @@ PackageAnswer solve_packages(const PackageCase& packages, int search_rounds, int
         }
         if (answer.is_feasible && node.bound >= answer.plan.cost - kHalfCent) continue;
         auto split = split_of(relaxed, columns, node.branch);
-        if (!split) continue;  // the relaxation is a plan, and it was taken above
+        if (!split) continue; // the relaxation is a plan, and it was taken above
         open.push({node.bound, next_id++, std::move(split->left)});
         open.push({node.bound, next_id++, std::move(split->right)});
     }
     if (answer.is_feasible && branches > 0) {
-        const double left_open = open.empty() ? answer.plan.cost : std::min(answer.plan.cost, open.top().bound);
+        const double left_open =
+            open.empty() ? answer.plan.cost : std::min(answer.plan.cost, open.top().bound);
         answer.bound = std::max(answer.bound, left_open);
     }
     answer.is_proved_infeasible = branches > 0 && open.empty() && !answer.is_feasible;
     return answer;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -11,17 +11,19 @@ namespace {
 bool fits(const MasterColumn& column, const ColumnLimits& limits) {
     for (std::size_t t = 0; t < column.plan.done.size(); ++t) {
         if (column.plan.done[t] < limits.least[t] || column.plan.done[t] > limits.most[t]) return false;
-        if (column.plan.cls[t] != kNoClass && limits.banned[t][static_cast<std::size_t>(column.plan.cls[t])]) return false;
+        if (column.plan.cls[t] != kNoClass && limits.banned[t][static_cast<std::size_t>(column.plan.cls[t])])
+            return false;
     }
     return true;
 }
 
-constexpr double kOverrun = 1e-6;  ///< shares of a limit above this are an over-run, not rounding
+constexpr double kOverrun = 1e-6; ///< shares of a limit above this are an over-run, not rounding
 
 class Master {
-  public:
+public:
     Master(const PackageCase& packages, const MasterBranch& branch, std::vector<MasterColumn>& columns)
-        : packages_(packages), branch_(branch), columns_(columns), years_(static_cast<std::size_t>(packages.years)),
+        : packages_(packages), branch_(branch), columns_(columns),
+          years_(static_cast<std::size_t>(packages.years)),
           classes_(static_cast<std::size_t>(packages.classes)) {
         over_price_ = steep_over_price(packages);
         make_rows();
@@ -30,7 +32,8 @@ class Master {
             if (fits(columns_[place], branch_.strings[columns_[place].string])) enter(place);
     }
 
-    /// Column generation to its end. @return false where a string has no plan in the branch, or the master fails.
+    /// Column generation to its end. @return false where a string has no plan in the branch, or the master
+    /// fails.
     bool run(bool only_overrun, const Progress& progress) {
         only_overrun_ = only_overrun;
         set_costs();
@@ -83,9 +86,15 @@ class Master {
         for (const Bought& each : bought_) out.bought[each.t][each.cls] = program_.value(each.column);
     }
 
-  private:
-    struct Over { std::size_t t, limit; int column; };
-    struct Bought { std::size_t t, cls; int column; };
+private:
+    struct Over {
+        std::size_t t, limit;
+        int column;
+    };
+    struct Bought {
+        std::size_t t, cls;
+        int column;
+    };
 
     double tolerance() const { return only_overrun_ ? 1e-9 : 1e-6; }
 
@@ -96,7 +105,8 @@ class Master {
     }
 
     void make_rows() {
-        for (std::size_t s = 0; s < packages_.strings.size(); ++s) string_rows_.push_back(program_.add_row_equal(1));
+        for (std::size_t s = 0; s < packages_.strings.size(); ++s)
+            string_rows_.push_back(program_.add_row_equal(1));
         use_rows_.assign(years_, std::array<int, kLimits>{});
         unit_rows_.assign(years_, std::vector<int>(classes_, 0));
         for (std::size_t t = 0; t < years_; ++t) {
@@ -118,8 +128,10 @@ class Master {
                 missing_.push_back(program_.add_column(0, 0, kNever, {{unit_rows_[t][c], -1.0}}));
                 if (packages_.buy_cost[t] == kNever) continue;
                 std::vector<std::pair<int, double>> entries;
-                for (std::size_t later = t; later < years_; ++later) entries.push_back({unit_rows_[later][c], -1.0});
-                bought_.push_back({t, c, program_.add_column(0, branch_.buy_low[t][c], branch_.buy_high[t][c], entries)});
+                for (std::size_t later = t; later < years_; ++later)
+                    entries.push_back({unit_rows_[later][c], -1.0});
+                bought_.push_back(
+                    {t, c, program_.add_column(0, branch_.buy_low[t][c], branch_.buy_high[t][c], entries)});
             }
     }
 
@@ -134,7 +146,8 @@ class Master {
             const double share = 1 / std::max(1.0, std::abs(packages_.limit[over.t][over.limit]));
             program_.set_cost(over.column, only_overrun_ ? share : over_price_[over.limit]);
         }
-        for (const int column : missing_) program_.set_cost(column, only_overrun_ ? 1 : packages_.unit_penalty);
+        for (const int column : missing_)
+            program_.set_cost(column, only_overrun_ ? 1 : packages_.unit_penalty);
         for (const Bought& each : bought_)
             program_.set_cost(each.column, only_overrun_ ? 0 : packages_.buy_cost[each.t]);
         for (const auto& [place, column] : entered_)
@@ -149,7 +162,8 @@ class Master {
                 if (use_rows_[t][l] != 0 && column.figures.use[t][l] != 0)
                     entries.push_back({use_rows_[t][l], column.figures.use[t][l]});
             if (column.figures.in_class[t] != kNoClass)
-                entries.push_back({unit_rows_[t][static_cast<std::size_t>(column.figures.in_class[t])], packages_.pool_factor});
+                entries.push_back({unit_rows_[t][static_cast<std::size_t>(column.figures.in_class[t])],
+                                   packages_.pool_factor});
         }
         const double cost = only_overrun_ ? 0 : column.figures.cost;
         entered_.push_back({place, program_.add_column(cost, 0, kNever, entries)});
@@ -181,7 +195,8 @@ class Master {
             for (auto& year : string.work_cost) std::for_each(year.begin(), year.end(), zero);
             for (auto& year : string.state_cost)
                 for (auto& states : year) std::for_each(states.begin(), states.end(), zero);
-            for (auto* list : {&string.done_cost, &string.finish_cost, &string.mobilise_cost, &string.swap_cost})
+            for (auto* list :
+                 {&string.done_cost, &string.finish_cost, &string.mobilise_cost, &string.swap_cost})
                 std::for_each(list->begin(), list->end(), zero);
         }
         return packages;
@@ -193,7 +208,7 @@ class Master {
     std::size_t years_, classes_;
     Use over_price_{};
     bool only_overrun_ = false;
-    double slack_ = 0;  ///< <= 0
+    double slack_ = 0; ///< <= 0
     PackageCase free_;
     LinearProgram program_;
     std::vector<int> string_rows_;
@@ -205,15 +220,16 @@ class Master {
     std::vector<std::pair<std::size_t, int>> entered_;
 };
 
-}  // namespace
+} // namespace
 
 MasterBranch whole_branch(const PackageCase& packages) {
     const auto years = static_cast<std::size_t>(packages.years);
     const auto classes = static_cast<std::size_t>(packages.classes);
     MasterBranch branch;
     for (const PackageString& string : packages.strings)
-        branch.strings.push_back({string.least, string.most,
-                                  std::vector<std::vector<char>>(years, std::vector<char>(string.classes.size(), 0))});
+        branch.strings.push_back(
+            {string.least, string.most,
+             std::vector<std::vector<char>>(years, std::vector<char>(string.classes.size(), 0))});
     branch.buy_low.assign(years, std::vector<double>(classes, 0));
     branch.buy_high.assign(years, std::vector<double>(classes, kNever));
     return branch;
@@ -229,8 +245,10 @@ MasterAnswer solve_master(const PackageCase& packages, const MasterBranch& branc
     }
     answer.is_solved = master.run(aim == MasterAim::any_plan, progress);
     if (!answer.is_solved) return answer;
-    if (aim == MasterAim::any_plan) answer.is_infeasible = master.bound() > kOverrun;
-    else answer.bound = master.bound();
+    if (aim == MasterAim::any_plan)
+        answer.is_infeasible = master.bound() > kOverrun;
+    else
+        answer.bound = master.bound();
     answer.overrun = master.overrun();
     master.answer(answer);
     return answer;
@@ -239,10 +257,12 @@ MasterAnswer solve_master(const PackageCase& packages, const MasterBranch& branc
 double separate_bound(const PackageCase& packages) {
     const auto years = static_cast<std::size_t>(packages.years);
     const RowPrices none = {std::vector<Use>(years, Use{}),
-                            std::vector<std::vector<double>>(years, std::vector<double>(static_cast<std::size_t>(packages.classes), 0))};
+                            std::vector<std::vector<double>>(
+                                years, std::vector<double>(static_cast<std::size_t>(packages.classes), 0))};
     double sum = 0;
-    for (std::size_t s = 0; s < packages.strings.size(); ++s) sum += cheapest_column(packages, s, none, nullptr).value;
+    for (std::size_t s = 0; s < packages.strings.size(); ++s)
+        sum += cheapest_column(packages, s, none, nullptr).value;
     return sum;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -6,7 +6,7 @@
 namespace unstring {
 namespace {
 
-constexpr double kWhole = 1e-9;  ///< a fraction of a unit under this is rounding
+constexpr double kWhole = 1e-9; ///< a fraction of a unit under this is rounding
 
 using Counts = std::vector<std::vector<int>>;
 
@@ -31,7 +31,7 @@ Counts buy(const PackageCase& packages, const Counts& in_service, PackagePlan& p
     return bought;
 }
 
-}  // namespace
+} // namespace
 
 int year_done(const StringPlan& plan, int section) {
     for (std::size_t t = 0; t < plan.done.size(); ++t)
@@ -39,7 +39,8 @@ int year_done(const StringPlan& plan, int section) {
     return -1;
 }
 
-int item_year(const PackageItem& item, const std::vector<StringPlan>& strings, const std::vector<char>* counts) {
+int item_year(const PackageItem& item, const std::vector<StringPlan>& strings,
+              const std::vector<char>* counts) {
     const int never = static_cast<int>(item.cost.size());
     int first = item.fixed_t < 0 ? never : item.fixed_t;
     for (const auto& [string, section] : item.firsts) {
@@ -74,7 +75,8 @@ PackagePlan add_up(const PackageCase& packages, std::vector<StringPlan> strings,
         plan.penalty += figures.penalty;
         for (std::size_t t = 0; t < years; ++t) {
             for (std::size_t l = 0; l < kLimits; ++l) use[t][l] += figures.use[t][l];
-            if (figures.in_class[t] != kNoClass) ++in_service[t][static_cast<std::size_t>(figures.in_class[t])];
+            if (figures.in_class[t] != kNoClass)
+                ++in_service[t][static_cast<std::size_t>(figures.in_class[t])];
         }
     }
     for (const PackageWait& wait : packages.waits)
@@ -83,9 +85,12 @@ PackagePlan add_up(const PackageCase& packages, std::vector<StringPlan> strings,
         const int paid = item_year(item, strings, nullptr);
         if (paid >= packages.years) continue;
         const auto t = static_cast<std::size_t>(paid);
-        const bool digs = item.duct_string >= 0 && item.live[t][static_cast<std::size_t>(strings[static_cast<std::size_t>(item.duct_string)].done[t])] != 0;
+        const bool digs =
+            item.duct_string >= 0 && item.live[t][static_cast<std::size_t>(
+                                         strings[static_cast<std::size_t>(item.duct_string)].done[t])] != 0;
         plan.cost += item.cost[t] + (digs ? item.dig_cost[t] : 0);
-        for (std::size_t l = 0; l < kLimits; ++l) use[t][l] += item.use[t][l] + (digs ? item.dig_use[t][l] : 0);
+        for (std::size_t l = 0; l < kLimits; ++l)
+            use[t][l] += item.use[t][l] + (digs ? item.dig_use[t][l] : 0);
     }
     plan.bought = buy(packages, in_service, plan);
     for (std::size_t t = 0; t < years; ++t)
@@ -117,4 +122,4 @@ Use steep_over_price(const PackageCase& packages) {
     return price;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -9,12 +9,13 @@ namespace {
 
 /// The plans in hand and what they use together.
 class Hand {
-  public:
+public:
     explicit Hand(const PackageCase& packages)
         : packages_(packages), over_price_(steep_over_price(packages)),
           used_(static_cast<std::size_t>(packages.years), Use{}),
           in_service_(used_.size(), std::vector<int>(static_cast<std::size_t>(packages.classes), 0)),
-          plans_(packages.strings.size()), figures_(packages.strings.size()), has_(packages.strings.size(), 0) {}
+          plans_(packages.strings.size()), figures_(packages.strings.size()),
+          has_(packages.strings.size(), 0) {}
 
     void take_out(std::size_t s) {
         if (has_[s] == 0) return;
@@ -45,11 +46,12 @@ class Hand {
     const StringPlan& plan(std::size_t s) const { return plans_[s]; }
     PackagePlan sum() const { return add_up(packages_, plans_, over_price_); }
 
-  private:
+private:
     void count(const ColumnFigures& figures, int sign) {
         for (std::size_t t = 0; t < used_.size(); ++t) {
             for (std::size_t l = 0; l < kLimits; ++l) used_[t][l] += sign * figures.use[t][l];
-            if (figures.in_class[t] != kNoClass) in_service_[t][static_cast<std::size_t>(figures.in_class[t])] += sign;
+            if (figures.in_class[t] != kNoClass)
+                in_service_[t][static_cast<std::size_t>(figures.in_class[t])] += sign;
         }
     }
 
@@ -85,19 +87,22 @@ class Hand {
 
     bool is_live(const PackageItem& item, std::size_t t) const {
         const auto in = static_cast<std::size_t>(item.duct_string);
-        return item.duct_string >= 0 && has_[in] != 0 && item.live[t][static_cast<std::size_t>(plans_[in].done[t])] != 0;
+        return item.duct_string >= 0 && has_[in] != 0 &&
+               item.live[t][static_cast<std::size_t>(plans_[in].done[t])] != 0;
     }
 
-    /// What each shared item takes already, by the other strings, and what this one would add by coming first or by
-    /// keeping its duct live.
+    /// What each shared item takes already, by the other strings, and what this one would add by coming first
+    /// or by keeping its duct live.
     void add_items(std::size_t s, Room& room) const {
         for (const PackageItem& item : packages_.items) {
-            const int paid = item_year(item, plans_, &has_);  // s itself is out
+            const int paid = item_year(item, plans_, &has_); // s itself is out
             const bool is_paid = paid < packages_.years;
             const auto year = static_cast<std::size_t>(paid);
             if (is_paid) add(room.use[year], item.use[year], -1);
-            if (is_paid && item.duct_string != static_cast<int>(s) && is_live(item, year)) add(room.use[year], item.dig_use[year], -1);
-            const auto first = std::find_if(item.firsts.begin(), item.firsts.end(), [&](const auto& each) { return each.first == s; });
+            if (is_paid && item.duct_string != static_cast<int>(s) && is_live(item, year))
+                add(room.use[year], item.dig_use[year], -1);
+            const auto first = std::find_if(item.firsts.begin(), item.firsts.end(),
+                                            [&](const auto& each) { return each.first == s; });
             const int section = first == item.firsts.end() ? -1 : first->second;
             if (section >= 0) add_first(item, s, section, paid, room);
             if (item.duct_string == static_cast<int>(s)) add_own_duct(item, s, section, paid, room);
@@ -109,21 +114,25 @@ class Hand {
         const bool is_paid = paid < packages_.years;
         const auto later = static_cast<std::size_t>(paid);
         double saved = is_paid ? item.cost[later] : 0;
-        if (is_paid && item.duct_string != static_cast<int>(s) && is_live(item, later)) saved += item.dig_cost[later];
+        if (is_paid && item.duct_string != static_cast<int>(s) && is_live(item, later))
+            saved += item.dig_cost[later];
         for (std::size_t t = 0; t < std::min(later, used_.size()); ++t) {
             const bool digs = item.duct_string != static_cast<int>(s) && is_live(item, t);
-            room.section_cost[t][static_cast<std::size_t>(section)] += item.cost[t] + (digs ? item.dig_cost[t] : 0) - saved;
+            room.section_cost[t][static_cast<std::size_t>(section)] +=
+                item.cost[t] + (digs ? item.dig_cost[t] : 0) - saved;
             add(room.section_use[t][static_cast<std::size_t>(section)], item.use[t], 1);
             if (digs) add(room.section_use[t][static_cast<std::size_t>(section)], item.dig_use[t], 1);
         }
     }
 
-    /// The duct is this string's own: live at the year in which others pay, or in which it comes first itself.
+    /// The duct is this string's own: live at the year in which others pay, or in which it comes first
+    /// itself.
     void add_own_duct(const PackageItem& item, std::size_t s, int section, int paid, Room& room) const {
         open_extras(s, room);
         if (paid < packages_.years) {
             const auto t = static_cast<std::size_t>(paid);
-            const std::size_t upto = section < 0 ? item.live[t].size() : static_cast<std::size_t>(section) + 1;
+            const std::size_t upto =
+                section < 0 ? item.live[t].size() : static_cast<std::size_t>(section) + 1;
             for (std::size_t n = 0; n < upto; ++n) {
                 if (item.live[t][n] == 0) continue;
                 room.state_cost[t][n] += item.dig_cost[t];
@@ -134,7 +143,8 @@ class Hand {
         if (room.jump_cost.empty()) open_jumps(s, room);
         for (std::size_t t = 0; t < used_.size() && static_cast<int>(t) <= paid; ++t)
             for (std::size_t n = 0; n <= static_cast<std::size_t>(section); ++n)
-                for (std::size_t next = static_cast<std::size_t>(section) + 1; next < item.live[t].size(); ++next) {
+                for (std::size_t next = static_cast<std::size_t>(section) + 1; next < item.live[t].size();
+                     ++next) {
                     if (item.live[t][next] == 0) continue;
                     room.jump_cost[t][n][next - n - 1] += item.dig_cost[t];
                     add(room.jump_use[t][n][next - n - 1], item.dig_use[t], 1);
@@ -156,7 +166,8 @@ class Hand {
         Room room;
         room.over_price = over_price_;
         room.use = packages_.limit;
-        room.unit_is_there.assign(used_.size(), std::vector<char>(static_cast<std::size_t>(packages_.classes), 0));
+        room.unit_is_there.assign(used_.size(),
+                                  std::vector<char>(static_cast<std::size_t>(packages_.classes), 0));
         std::vector<int> held(static_cast<std::size_t>(packages_.classes), 0);
         for (std::size_t t = 0; t < used_.size(); ++t) {
             for (std::size_t l = 0; l < kLimits; ++l) room.use[t][l] -= used_[t][l];
@@ -198,9 +209,10 @@ bool construct(const PackageCase& packages, const SearchChoices& choices, Hand& 
     return std::all_of(order.begin(), order.end(), [&](std::size_t s) { return hand.put_best(s); });
 }
 
-}  // namespace
+} // namespace
 
-PackagePlan search_packages(const PackageCase& packages, const SearchChoices& choices, const Progress& progress) {
+PackagePlan search_packages(const PackageCase& packages, const SearchChoices& choices,
+                            const Progress& progress) {
     Hand hand(packages);
     if (packages.years == 0 || packages.strings.empty() || !construct(packages, choices, hand)) return {};
     const std::size_t strings = packages.strings.size();
@@ -208,7 +220,8 @@ PackagePlan search_packages(const PackageCase& packages, const SearchChoices& ch
     std::mt19937 random(choices.seed);
     int idle = 0;
     for (int round = 0; round < choices.rounds && !progress.is_cancelled(); ++round) {
-        const std::size_t out = std::min<std::size_t>(strings, round < static_cast<int>(strings) ? 1 : 2 + random() % 5);
+        const std::size_t out =
+            std::min<std::size_t>(strings, round < static_cast<int>(strings) ? 1 : 2 + random() % 5);
         std::vector<std::size_t> taken;
         if (out == 1) taken.push_back(static_cast<std::size_t>(round) % strings);
         while (taken.size() < out) {
@@ -232,10 +245,10 @@ PackagePlan search_packages(const PackageCase& packages, const SearchChoices& ch
                 hand.put(taken[i], before[i]);
             }
         }
-        if (idle > 150 * static_cast<int>(strings)) break;  // nothing has helped for long
+        if (idle > 150 * static_cast<int>(strings)) break; // nothing has helped for long
         progress.at(static_cast<double>(round + 1) / choices.rounds);
     }
     return hand.sum();
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -43,7 +43,8 @@ void CashBook::use(const PlanSettings& settings) {
 const YearCash* CashBook::find(const PoleAsk& ask) const {
     for (const Known& known : poles_[ask.pole.place()]) {
         if (known.choice != ask.choice) continue;
-        if (ask.choice == Choice::keep || (known.year == ask.year && known.head == ask.head)) return &known.cash;
+        if (ask.choice == Choice::keep || (known.year == ask.year && known.head == ask.head))
+            return &known.cash;
     }
     return nullptr;
 }
@@ -64,7 +65,7 @@ std::vector<std::vector<CashLine>> CashBook::lines_of(const std::vector<PoleAsk>
 }
 
 void CashBook::warm(const std::vector<PoleAsk>& asks) {
-    std::map<PoleIx, std::vector<const PoleAsk*>> wanting;  // one pole is worked out by one thread
+    std::map<PoleIx, std::vector<const PoleAsk*>> wanting; // one pole is worked out by one thread
     for (const PoleAsk& ask : asks)
         if (find(ask) == nullptr) wanting[ask.pole].push_back(&ask);
     std::vector<const std::vector<const PoleAsk*>*> rows;
@@ -86,7 +87,8 @@ const YearCash& CashBook::span(std::size_t place, int year, bool dug) {
     for (const auto& [known, cash] : known_years)
         if (known == year) return cash;
     const CircuitSpan& span = decide_.spans[place];
-    known_years.emplace_back(year, year_cash(plan_.settings, span_lines(input(), dug ? dug_span(span) : span, year)));
+    known_years.emplace_back(
+        year, year_cash(plan_.settings, span_lines(input(), dug ? dug_span(span) : span, year)));
     return known_years.back().second;
 }
 
@@ -98,4 +100,4 @@ const YearCash& CashBook::connection(ServiceIx service, int year) {
     return known_years.back().second;
 }
 
-}  // namespace unstring
+} // namespace unstring

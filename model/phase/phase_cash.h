@@ -1,5 +1,6 @@
 #pragma once
-// Cash by year of what a plan is made of: poles, spans, connections, each worked out once for each year it may fall in.
+// Cash by year of what a plan is made of: poles, spans, connections, each worked out once for each year it
+// may fall in.
 
 #include <string>
 #include <vector>
@@ -9,14 +10,15 @@
 
 namespace unstring {
 
-struct YearCash {  ///< cents by calendar year of the ledger, place 0 = first_year
+struct YearCash { ///< cents by calendar year of the ledger, place 0 = first_year
     std::vector<Cents> capital, operating;
-    double cost = 0;  ///< dollars, present value
+    double cost = 0; ///< dollars, present value
     bool possible = true;
     [[nodiscard]] Cents capital_sum() const;
 };
 
-/// First and last calendar year of the ledger: to the horizon, or to the plan's last year where that is later.
+/// First and last calendar year of the ledger: to the horizon, or to the plan's last year where that is
+/// later.
 [[nodiscard]] int ledger_last_year(const PlanSettings& settings);
 
 [[nodiscard]] YearCash year_cash(const PlanSettings& settings, const std::vector<CashLine>& lines);
@@ -24,12 +26,12 @@ struct YearCash {  ///< cents by calendar year of the ledger, place 0 = first_ye
 struct PoleAsk {
     PoleIx pole;
     Choice choice = Choice::keep;
-    int year = 0;  ///< read for rewire and solar only
+    int year = 0; ///< read for rewire and solar only
     std::string head;
 };
 
 class CashBook {
-  public:
+public:
     CashBook(const MoneyInput& input, const DecideResult& decide);
 
     /// Forgets what rests on other settings (rate, horizon, first year).
@@ -44,9 +46,11 @@ class CashBook {
     [[nodiscard]] const YearCash& connection(ServiceIx service, int year);
 
     /// Input with the settings in use: for the cash functions of other subjects.
-    [[nodiscard]] MoneyInput input() const { return {input_.city, input_.catalog, input_.prices, plan_, input_.shade}; }
+    [[nodiscard]] MoneyInput input() const {
+        return {input_.city, input_.catalog, input_.prices, plan_, input_.shade};
+    }
 
-  private:
+private:
     struct Known {
         Choice choice;
         int year;
@@ -58,9 +62,9 @@ class CashBook {
 
     const MoneyInput input_;
     const DecideResult& decide_;
-    Plan plan_;  ///< settings only
+    Plan plan_; ///< settings only
     std::vector<std::vector<Known>> poles_;
     std::vector<std::vector<std::pair<int, YearCash>>> spans_, dug_spans_, connections_;
 };
 
-}  // namespace unstring
+} // namespace unstring

@@ -18,8 +18,9 @@ constexpr double kRounding = 1e-6;
 constexpr double kCoverGoal = 0.95;
 
 class Checks {
-  public:
-    Checks(const PhaseFacts& facts, CashBook& book, PhaseResult& result) : facts_(facts), book_(book), result_(result) {}
+public:
+    Checks(const PhaseFacts& facts, CashBook& book, PhaseResult& result)
+        : facts_(facts), book_(book), result_(result) {}
 
     void run() {
         for (std::size_t s = 0; s < facts_.loops.size(); ++s)
@@ -34,16 +35,19 @@ class Checks {
         check_poles();
         for (Finding& finding : fund_findings(facts_, book_)) result_.failures.push_back(std::move(finding));
         for (const Finding& finding : result_.failures)
-            if (finding.severity == Severity::error || finding.code == "money-short" || finding.code == "hours-short") result_.feasible = false;
+            if (finding.severity == Severity::error || finding.code == "money-short" ||
+                finding.code == "hours-short")
+                result_.feasible = false;
         // A year that is not reached breaks no limit: what it would take is said, and the plan stands.
         check_money_for_rest();
         check_hours_for_rest();
     }
 
-  private:
-    void say(std::string code, std::string record, std::string found, std::string wanted, std::string remedy, std::string table) {
-        result_.failures.push_back(make_finding(std::move(code), {}, 0, std::move(record), std::move(found), std::move(wanted),
-                                                std::move(remedy), std::move(table)));
+private:
+    void say(std::string code, std::string record, std::string found, std::string wanted, std::string remedy,
+             std::string table) {
+        result_.failures.push_back(make_finding(std::move(code), {}, 0, std::move(record), std::move(found),
+                                                std::move(wanted), std::move(remedy), std::move(table)));
     }
     const std::string& string_id(std::size_t s) const { return facts_.city.strings[s].id; }
     std::size_t last() const { return static_cast<std::size_t>(facts_.years()); }
@@ -57,7 +61,8 @@ class Checks {
     }
 
     /// The first year end at which a test fails, and how many do.
-    template <class Test> std::pair<std::size_t, int> when(Test test) const {
+    template <class Test>
+    std::pair<std::size_t, int> when(Test test) const {
         std::size_t first = 0;
         int count = 0;
         for (std::size_t t = 1; t <= last(); ++t) {
@@ -74,16 +79,25 @@ class Checks {
     void check_string(std::size_t s) {
         const auto lives = [&](std::size_t t) { return facts_.at(s, t).state.lamps > 0; };
         const double class_v = facts_.loops[s].cable_kv * 1000;
-        if (const auto [t, n] = when([&](std::size_t y) { return lives(y) && unit_at(s, y) == nullptr; }); n > 0)
-            say("transformer-missing", string_id(s), fmt::format("{} lamps without a transformer {}", facts_.at(s, t).state.lamps, at_ends(t, n)),
+        if (const auto [t, n] = when([&](std::size_t y) { return lives(y) && unit_at(s, y) == nullptr; });
+            n > 0)
+            say("transformer-missing", string_id(s),
+                fmt::format("{} lamps without a transformer {}", facts_.at(s, t).state.lamps, at_ends(t, n)),
                 "a unit of the pool that fits", "add the unit that feeds it, or buy one", "strings");
         if (const auto [t, n] = when([&](std::size_t y) { return loading(s, y) > 1 + kRounding; }); n > 0)
             say("load-over", string_id(s),
-                fmt::format("{:.2f} kVA on {} of {:g} kW {}", facts_.at(s, t).state.load_kva, unit_at(s, t)->id, loop_rating_kw(*unit_at(s, t)), at_ends(t, n)),
-                "a load within the rating", "give it a larger unit, or move a section to an earlier year", "strings");
-        if (const auto [t, n] = when([&](std::size_t y) { return lives(y) && facts_.at(s, y).state.volts > class_v * (1 + kRounding); }); n > 0)
-            say("volts-over", string_id(s), fmt::format("{:.0f} V {}", facts_.at(s, t).state.volts, at_ends(t, n)),
-                fmt::format("at most {:.0f} V, the cable's class", class_v), "move a section to an earlier year", "strings");
+                fmt::format("{:.2f} kVA on {} of {:g} kW {}", facts_.at(s, t).state.load_kva,
+                            unit_at(s, t)->id, loop_rating_kw(*unit_at(s, t)), at_ends(t, n)),
+                "a load within the rating", "give it a larger unit, or move a section to an earlier year",
+                "strings");
+        if (const auto [t, n] = when([&](std::size_t y) {
+                return lives(y) && facts_.at(s, y).state.volts > class_v * (1 + kRounding);
+            });
+            n > 0)
+            say("volts-over", string_id(s),
+                fmt::format("{:.0f} V {}", facts_.at(s, t).state.volts, at_ends(t, n)),
+                fmt::format("at most {:.0f} V, the cable's class", class_v),
+                "move a section to an earlier year", "strings");
         if (const auto [t, n] = when([&](std::size_t y) { return is_low(s, y); }); n > 0) check_low(s, t, n);
         check_cutbacks(s);
         check_tests(s);
@@ -104,7 +118,8 @@ class Checks {
                 if (cutback.confirmed || is_said[static_cast<std::size_t>(place)] != 0) continue;
                 is_said[static_cast<std::size_t>(place)] = 1;
                 say("cutback-unconfirmed", string_id(s),
-                    fmt::format("{} to {}, in use from {}, {:.0f} m of new cable", name(cutback.a), name(cutback.b), facts_.year(t), cutback.new_cable_m),
+                    fmt::format("{} to {}, in use from {}, {:.0f} m of new cable", name(cutback.a),
+                                name(cutback.b), facts_.year(t), cutback.new_cable_m),
                     "a splice that was looked at", "survey it, then give it in the cut-back file", "strings");
             }
     }
@@ -115,23 +130,28 @@ class Checks {
             if (!unit.is_valid() || unit == facts_.units.strings[s][t - 1].unit) continue;
             const Transformer& row = facts_.city.transformers[unit.place()];
             if (is_untested(row, facts_.year(t)))
-                say("untested-spare", row.id, fmt::format("goes to string {} in {}, tested: {}", string_id(s), facts_.year(t), row.tested.empty() ? "never" : row.tested),
+                say("untested-spare", row.id,
+                    fmt::format("goes to string {} in {}, tested: {}", string_id(s), facts_.year(t),
+                                row.tested.empty() ? "never" : row.tested),
                     "a test in the five years before", "test it before it is moved", "transformers");
         }
     }
 
     bool is_low(std::size_t s, std::size_t t) const {
         const Transformer* unit = unit_at(s, t);
-        return unit != nullptr && facts_.at(s, t).state.lamps > 0 && loading(s, t) / facts_.units.strings[s][t].tap < min_frac_of(*unit) - kRounding;
+        return unit != nullptr && facts_.at(s, t).state.lamps > 0 &&
+               loading(s, t) / facts_.units.strings[s][t].tap < min_frac_of(*unit) - kRounding;
     }
 
     /// Hard for static units only: they do not hold their current there.
     void check_low(std::size_t s, std::size_t t, int n) {
         const Transformer& unit = *unit_at(s, t);
         say("load-low", string_id(s),
-            fmt::format("{:.2f} kVA on {} of {:g} kW, {:.0f} % {}", facts_.at(s, t).state.load_kva, unit.id, loop_rating_kw(unit),
-                        100 * loading(s, t) / facts_.units.strings[s][t].tap, at_ends(t, n)),
-            fmt::format("at least {:.0f} %", 100 * min_frac_of(unit)), "swap to a smaller unit, or end the string sooner", "strings");
+            fmt::format("{:.2f} kVA on {} of {:g} kW, {:.0f} % {}", facts_.at(s, t).state.load_kva, unit.id,
+                        loop_rating_kw(unit), 100 * loading(s, t) / facts_.units.strings[s][t].tap,
+                        at_ends(t, n)),
+            fmt::format("at least {:.0f} %", 100 * min_frac_of(unit)),
+            "swap to a smaller unit, or end the string sooner", "strings");
         if (unit.build == Build::static_unit) result_.failures.back().severity = Severity::error;
     }
 
@@ -139,9 +159,11 @@ class Checks {
         const std::string& from = facts_.city.strings[s].control_from;
         if (facts_.at(s, t).state.lamps == 0) return false;
         if (const StringIx other = find_string(facts_.city, from); other.is_valid())
-            return other != StringIx(s) && facts_.at(other.place(), 0).state.lamps > 0 && facts_.at(other.place(), t).state.lamps == 0;
+            return other != StringIx(s) && facts_.at(other.place(), 0).state.lamps > 0 &&
+                   facts_.at(other.place(), t).state.lamps == 0;
         const PoleIx pole = find_pole(facts_.city, from);
-        return pole.is_valid() && facts_.pole_year[pole.place()] != 0 && facts_.pole_year[pole.place()] <= facts_.year(t);
+        return pole.is_valid() && facts_.pole_year[pole.place()] != 0 &&
+               facts_.pole_year[pole.place()] <= facts_.year(t);
     }
 
     void check_controls() {
@@ -150,8 +172,10 @@ class Checks {
             const auto [t, n] = when([&](std::size_t y) { return control_is_lost(s, y); });
             if (n == 0) continue;
             say("control-lost", string_id(s),
-                fmt::format("{} lamps left {}, their control at {} is gone", facts_.at(s, t).state.lamps, at_ends(t, n), facts_.city.strings[s].control_from),
-                "a control for as long as a lamp burns", "end this string first, keep that position, or give it a control of its own", "strings");
+                fmt::format("{} lamps left {}, their control at {} is gone", facts_.at(s, t).state.lamps,
+                            at_ends(t, n), facts_.city.strings[s].control_from),
+                "a control for as long as a lamp burns",
+                "end this string first, keep that position, or give it a control of its own", "strings");
         }
     }
 
@@ -165,16 +189,22 @@ class Checks {
             if (!pole.critical || !is_candidate(facts_.city, pole)) continue;
             const std::size_t s = pole.string.place();
             const int leaves = facts_.pole_year[i];
-            const auto [t, n] = when([&](std::size_t y) { return (leaves == 0 || leaves > facts_.year(y)) && string_is_dark(s, y); });
+            const auto [t, n] = when([&](std::size_t y) {
+                return (leaves == 0 || leaves > facts_.year(y)) && string_is_dark(s, y);
+            });
             if (n == 0) continue;
-            say("critical-dark", pole.id, fmt::format("its string {} does not burn safely {}", string_id(s), at_ends(t, n)),
-                "a critical pole is never dark", "mend the string's finding, or convert this pole before", "poles");
+            say("critical-dark", pole.id,
+                fmt::format("its string {} does not burn safely {}", string_id(s), at_ends(t, n)),
+                "a critical pole is never dark", "mend the string's finding, or convert this pole before",
+                "poles");
         }
     }
 
-    void check_limit(std::string code, const PhaseYear& year, const char* what, double used, const std::optional<double>& limit) {
+    void check_limit(std::string code, const PhaseYear& year, const char* what, double used,
+                     const std::optional<double>& limit) {
         if (!limit || used <= *limit + 0.005) return;
-        say(std::move(code), fmt::format("year {}", year.year), fmt::format("{} {:.0f}, short by {:.0f}", what, used, used - *limit),
+        say(std::move(code), fmt::format("year {}", year.year),
+            fmt::format("{} {:.0f}, short by {:.0f}", what, used, used - *limit),
             fmt::format("at most {:.0f}", *limit), "move work to another year, or raise the limit", "budget");
     }
 
@@ -183,8 +213,10 @@ class Checks {
             check_limit("money-short", year, "capital", to_dollars(year.money), year.money_limit);
             check_limit("hours-short", year, "line crew hours", year.hours.line, year.line_limit_h);
             check_limit("hours-short", year, "civil crew hours", year.hours.civil, year.civil_limit_h);
-            check_limit("hours-short", year, "lighting crew hours", year.hours.lighting, year.lighting_limit_h);
-            check_limit("hours-short", year, "electricians' hours", year.hours.electric, year.electric_limit_h);
+            check_limit("hours-short", year, "lighting crew hours", year.hours.lighting,
+                        year.lighting_limit_h);
+            check_limit("hours-short", year, "electricians' hours", year.hours.electric,
+                        year.electric_limit_h);
         }
     }
 
@@ -193,8 +225,8 @@ class Checks {
             for (const SpareCover& cover : year.spares) {
                 if (cover.cover_frac >= kCoverGoal) continue;
                 say("spare-short", fmt::format("year {}", year.year),
-                    fmt::format("units of {:g} kW, {:g} A, {:g} V: a spare is there in {:.0f} % of cases", cover.rated_kw, cover.output_a, cover.primary_v,
-                                100 * cover.cover_frac),
+                    fmt::format("units of {:g} kW, {:g} A, {:g} V: a spare is there in {:.0f} % of cases",
+                                cover.rated_kw, cover.output_a, cover.primary_v, 100 * cover.cover_frac),
                     "95 %", "free a unit that fits by ending a string sooner, or buy one", "transformers");
             }
     }
@@ -203,10 +235,11 @@ class Checks {
         for (std::size_t i = 0; i < facts_.decide.circuits.size(); ++i) {
             if (!facts_.decide.circuits[i].service.is_valid()) continue;
             const ServicePoint& service = facts_.city.services[facts_.decide.circuits[i].service.place()];
-            const int ready = service_ready_year(facts_.city, facts_.prices, facts_.plan.settings, facts_.decide.circuits[i].service);
+            const int ready = service_ready_year(facts_.city, facts_.prices, facts_.plan.settings,
+                                                 facts_.decide.circuits[i].service);
             if (facts_.connection_year[i] == 0 || facts_.connection_year[i] >= ready) continue;
-            say("service-late", service.id, fmt::format("first used in {}", facts_.connection_year[i]), fmt::format("ready in {}", ready),
-                "move the first poles on it to a later year", "services");
+            say("service-late", service.id, fmt::format("first used in {}", facts_.connection_year[i]),
+                fmt::format("ready in {}", ready), "move the first poles on it to a later year", "services");
         }
     }
 
@@ -216,11 +249,12 @@ class Checks {
             const Pole& pole = facts_.city.poles[i];
             if (!is_candidate(facts_.city, pole)) continue;
             const Choice choice = facts_.plan.poles[i].choice;
-            if (facts_.pole_year[i] == 0 && choice != Choice::keep) unreached_[pole.string.place()].push_back(i);
+            if (facts_.pole_year[i] == 0 && choice != Choice::keep)
+                unreached_[pole.string.place()].push_back(i);
             if (facts_.pole_year[i] == 0) continue;
             if (pole.earliest_year && facts_.pole_year[i] < *pole.earliest_year)
-                say("owner-consent", pole.id, fmt::format("work in {}", facts_.pole_year[i]), fmt::format("not before {}", *pole.earliest_year),
-                    "move it to a later year", "poles");
+                say("owner-consent", pole.id, fmt::format("work in {}", facts_.pole_year[i]),
+                    fmt::format("not before {}", *pole.earliest_year), "move it to a later year", "poles");
             check_choice(i);
         }
         for (std::size_t s = 0; s < unreached_.size(); ++s) check_unreached(s, unreached_[s]);
@@ -237,13 +271,20 @@ class Checks {
                 const PolePlan& row = facts_.plan.poles[i];
                 if (row.choice != Choice::rewire && row.choice != Choice::solar) continue;
                 ++poles;
-                needed += to_dollars(book_.pole({PoleIx(i), row.choice, year.year, row.choice == Choice::solar ? row.head : std::string()}).capital_sum());
+                needed += to_dollars(book_
+                                         .pole({PoleIx(i), row.choice, year.year,
+                                                row.choice == Choice::solar ? row.head : std::string()})
+                                         .capital_sum());
             }
         const double left = std::max(0.0, *year.money_limit - to_dollars(year.money));
         if (poles == 0 || needed <= left) return;
         say("money-short", fmt::format("year {}", year.year),
-            fmt::format("{} poles not reached want {} more, trench and transformers apart; {} is left, short by {}", poles, dollars_text(needed), dollars_text(left), dollars_text(needed - left)),
-            fmt::format("at least {} in that year, or years after it", dollars_text(to_dollars(year.money) + needed)), "raise money, or add years", "budget");
+            fmt::format(
+                "{} poles not reached want {} more, trench and transformers apart; {} is left, short by {}",
+                poles, dollars_text(needed), dollars_text(left), dollars_text(needed - left)),
+            fmt::format("at least {} in that year, or years after it",
+                        dollars_text(to_dollars(year.money) + needed)),
+            "raise money, or add years", "budget");
     }
 
     /// Likewise of each crew's hours.
@@ -252,13 +293,19 @@ class Checks {
         const PhaseYear& year = result_.years.back();
         TaskHours needed;
         for (const auto& of_string : unreached_)
-            for (const std::size_t i : of_string) needed += pole_hours(facts_.prices, facts_.city.poles[i], facts_.plan.poles[i].choice, year.year);
-        const auto check = [&](const char* crew, double wanted, double used, const std::optional<double>& limit) {
+            for (const std::size_t i : of_string)
+                needed +=
+                    pole_hours(facts_.prices, facts_.city.poles[i], facts_.plan.poles[i].choice, year.year);
+        const auto check = [&](const char* crew, double wanted, double used,
+                               const std::optional<double>& limit) {
             if (!limit || wanted <= std::max(0.0, *limit - used)) return;
             const double left = std::max(0.0, *limit - used);
             say("hours-short", fmt::format("year {}", year.year),
-                fmt::format("the poles not reached want {:.0f} {} more, trench and wire apart; {:.0f} are left, short by {:.0f}", wanted, crew, left, wanted - left),
-                fmt::format("at least {:.0f} in that year, or years after it", used + wanted), "raise the crew's hours, or add years", "budget");
+                fmt::format("the poles not reached want {:.0f} {} more, trench and wire apart; {:.0f} are "
+                            "left, short by {:.0f}",
+                            wanted, crew, left, wanted - left),
+                fmt::format("at least {:.0f} in that year, or years after it", used + wanted),
+                "raise the crew's hours, or add years", "budget");
         };
         check("civil crew hours", needed.civil, year.hours.civil, year.civil_limit_h);
         check("lighting crew hours", needed.lighting, year.hours.lighting, year.lighting_limit_h);
@@ -269,24 +316,29 @@ class Checks {
         if (poles.empty()) return;
         result_.not_reached += static_cast<int>(poles.size());
         std::string list;
-        for (std::size_t k = 0; k < std::min<std::size_t>(5, poles.size()); ++k) list += (k == 0 ? "" : ", ") + facts_.city.poles[poles[k]].id;
+        for (std::size_t k = 0; k < std::min<std::size_t>(5, poles.size()); ++k)
+            list += (k == 0 ? "" : ", ") + facts_.city.poles[poles[k]].id;
         if (poles.size() > 5) list += ", ..";
         say("pole-unreached", string_id(s), fmt::format("{} poles without a year: {}", poles.size(), list),
-            fmt::format("a year by {}", facts_.plan.last_year()), "raise money or hours, or add years", "strings");
+            fmt::format("a year by {}", facts_.plan.last_year()), "raise money or hours, or add years",
+            "strings");
     }
 
     /// Decide chose at one year's prices; at the real year the other way may be the cheaper one.
     void check_choice(std::size_t i) {
         const PolePlan& row = facts_.plan.poles[i];
         const PoleDecision* decision = facts_.decide.find(PoleIx(i));
-        if (decision == nullptr || row.lock == row.choice || row.mark == row.choice || decision->choice != row.choice) return;
+        if (decision == nullptr || row.lock == row.choice || row.mark == row.choice ||
+            decision->choice != row.choice)
+            return;
         const int decided = facts_.plan.decide_year();
         if (facts_.pole_year[i] == decided) return;
         const OptionCost& rewire = decision->options[1];
         const OptionCost& solar = decision->options[2];
         if (!rewire.possible || !solar.possible) return;
         const bool is_rewire = row.choice == Choice::rewire;
-        if (is_rewire ? rewire.cost > solar.cost : solar.cost > rewire.cost) return;  // not chosen for its own price
+        if (is_rewire ? rewire.cost > solar.cost : solar.cost > rewire.cost)
+            return; // not chosen for its own price
         const std::string head = is_rewire ? std::string() : row.head;
         const double share = rewire.cost - book_.pole({PoleIx(i), Choice::rewire, decided, {}}).cost;
         const int year = facts_.pole_year[i];
@@ -298,18 +350,22 @@ class Checks {
         const double other = is_rewire ? solar_then.cost : rewire_cost;
         if (!solar_then.possible || chosen <= other + 0.01) return;
         say("choice-late", facts_.city.poles[i].id,
-            fmt::format("in {} {} costs {}, {} {}", year, text_of(row.choice), dollars_text(chosen), is_rewire ? "solar" : "rewire", dollars_text(other)),
-            fmt::format("the cheaper way at the prices of {}", year), "run decide again at that year, or leave it", "poles");
+            fmt::format("in {} {} costs {}, {} {}", year, text_of(row.choice), dollars_text(chosen),
+                        is_rewire ? "solar" : "rewire", dollars_text(other)),
+            fmt::format("the cheaper way at the prices of {}", year),
+            "run decide again at that year, or leave it", "poles");
     }
 
     const PhaseFacts& facts_;
     CashBook& book_;
     PhaseResult& result_;
-    std::vector<std::vector<std::size_t>> unreached_;  ///< [string] poles without a year
+    std::vector<std::vector<std::size_t>> unreached_; ///< [string] poles without a year
 };
 
-}  // namespace
+} // namespace
 
-void check_phase(const PhaseFacts& facts, CashBook& book, PhaseResult& result) { Checks(facts, book, result).run(); }
+void check_phase(const PhaseFacts& facts, CashBook& book, PhaseResult& result) {
+    Checks(facts, book, result).run();
+}
 
-}  // namespace unstring
+} // namespace unstring

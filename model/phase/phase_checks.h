@@ -8,8 +8,8 @@
 
 namespace unstring {
 
-/// Appends findings to result.failures and sets result.feasible; result's years, units and ledger are filled already.
-/// feasible: no error, no over-run of money or hours.
+/// Appends findings to result.failures and sets result.feasible; result's years, units and ledger are filled
+/// already. feasible: no error, no over-run of money or hours.
 void check_phase(const PhaseFacts& facts, CashBook& book, PhaseResult& result);
 
-}  // namespace unstring
+} // namespace unstring

@@ -14,7 +14,7 @@
 namespace unstring {
 namespace {
 
-struct KnownString {  ///< the states of one string, kept while its lamps' years stay
+struct KnownString { ///< the states of one string, kept while its lamps' years stay
     std::vector<int> lamp_year;
     int first_year = 0, years = -1;
     std::vector<StringAtYear> states;
@@ -26,8 +26,9 @@ void fill_string_years(const PhaseFacts& facts, PhaseResult& result) {
         for (std::size_t t = 0; t <= static_cast<std::size_t>(facts.years()); ++t) {
             const StringState& state = facts.at(s, t).state;
             const UnitAtYear& unit = facts.units.strings[s][t];
-            StringYear row{StringIx(s), facts.year(t), state.lamps, state.load_kw, state.load_kva, state.volts, state.cable_m,
-                           unit.unit, unit.tap, 0, Verdict::none};
+            StringYear row{StringIx(s),  facts.year(t), state.lamps, state.load_kw, state.load_kva,
+                           state.volts,  state.cable_m, unit.unit,   unit.tap,      0,
+                           Verdict::none};
             const bool has_unit = unit.unit.is_valid();
             double min_frac = kUsualMinFrac;
             if (has_unit) {
@@ -56,8 +57,10 @@ void fill_years(const PhaseFacts& facts, PhaseResult& result) {
         year.lighting_limit_h = limits.lighting_h;
         year.electric_limit_h = limits.electric_h;
         for (std::size_t i = 0; i < facts.pole_year.size(); ++i)
-            if (facts.pole_year[i] == year.year) ++(facts.plan.poles[i].choice == Choice::rewire ? year.rewire : year.solar);
-        for (std::size_t s = 0; s < facts.loops.size(); ++s) year.series_lamps_left += facts.at(s, t).state.lamps;
+            if (facts.pole_year[i] == year.year)
+                ++(facts.plan.poles[i].choice == Choice::rewire ? year.rewire : year.solar);
+        for (std::size_t s = 0; s < facts.loops.size(); ++s)
+            year.series_lamps_left += facts.at(s, t).state.lamps;
         DrillYear drill = drill_year(facts, t);
         year.dark_transformers = drill.dark_transformers;
         year.dark_cable = drill.dark_cable;
@@ -66,7 +69,7 @@ void fill_years(const PhaseFacts& facts, PhaseResult& result) {
     }
 }
 
-}  // namespace
+} // namespace
 
 struct PhaseDesk::Inside {
     const MoneyInput input;
@@ -79,36 +82,43 @@ struct PhaseDesk::Inside {
     std::vector<KnownString> known;
 
     Inside(const MoneyInput& given, const DecideResult& circuits)
-        : input(given), decide(circuits), loops(string_loops(given.city, given.catalog)), sections(sections_of(loops)),
-          kinds(given.city, loops), book(given, circuits), known(loops.size()) {
+        : input(given), decide(circuits), loops(string_loops(given.city, given.catalog)),
+          sections(sections_of(loops)), kinds(given.city, loops), book(given, circuits), known(loops.size()) {
         for (const StringLoop& loop : loops) ageing.push_back(ageing_of(given.city, given.catalog, loop));
     }
 
-    const std::vector<StringAtYear>& states_of(std::size_t s, const Plan& plan, const std::vector<int>& pole_year) {
+    const std::vector<StringAtYear>& states_of(std::size_t s, const Plan& plan,
+                                               const std::vector<int>& pole_year) {
         std::vector<int> lamp_year;
         for (const PoleIx lamp : loops[s].lamps) lamp_year.push_back(pole_year[lamp.place()]);
         KnownString& string = known[s];
         const PlanSettings& settings = plan.settings;
-        if (string.lamp_year != lamp_year || string.first_year != settings.first_year || string.years != settings.years)
+        if (string.lamp_year != lamp_year || string.first_year != settings.first_year ||
+            string.years != settings.years)
             string = {lamp_year, settings.first_year, settings.years,
                       string_years(loops[s], lamp_year, settings.first_year, settings.years, ageing[s])};
         return string.states;
     }
 };
 
-PhaseDesk::PhaseDesk(const MoneyInput& input, const DecideResult& decide) : inside_(std::make_unique<Inside>(input, decide)) {}
+PhaseDesk::PhaseDesk(const MoneyInput& input, const DecideResult& decide)
+    : inside_(std::make_unique<Inside>(input, decide)) {}
 PhaseDesk::~PhaseDesk() = default;
 
 PhaseResult PhaseDesk::evaluate(const Plan& plan, bool with_lines) {
     Inside& in = *inside_;
     in.book.use(plan.settings);
-    PhaseFacts facts{in.input.city, in.input.prices, plan, in.decide, in.loops, in.kinds, {}, {}, {}, {}, {}, {}};
-    for (std::size_t i = 0; i < in.input.city.poles.size(); ++i) facts.pole_year.push_back(work_year(in.input.city, plan, PoleIx(i)));
-    for (std::size_t s = 0; s < in.loops.size(); ++s) facts.states.push_back(&in.states_of(s, plan, facts.pole_year));
+    PhaseFacts facts{
+        in.input.city, in.input.prices, plan, in.decide, in.loops, in.kinds, {}, {}, {}, {}, {}, {}};
+    for (std::size_t i = 0; i < in.input.city.poles.size(); ++i)
+        facts.pole_year.push_back(work_year(in.input.city, plan, PoleIx(i)));
+    for (std::size_t s = 0; s < in.loops.size(); ++s)
+        facts.states.push_back(&in.states_of(s, plan, facts.pole_year));
     facts.span_year = span_years(in.decide, plan, facts.pole_year);
     facts.connection_year = connection_years(in.decide, plan, facts.pole_year);
     facts.duct = duct_states(facts);
-    facts.units = unit_years(in.input.city, in.loops, in.kinds, facts.states, plan.units, plan.settings.first_year, plan.settings.years);
+    facts.units = unit_years(in.input.city, in.loops, in.kinds, facts.states, plan.units,
+                             plan.settings.first_year, plan.settings.years);
 
     PhaseResult result;
     fill_ledger(facts, in.book, with_lines, result);
@@ -127,4 +137,4 @@ PhaseResult evaluate_phase(const MoneyInput& input, const DecideResult& decide) 
     return PhaseDesk(input, decide).evaluate(input.plan, true);
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -1,6 +1,7 @@
 #pragma once
-// The evaluation of a plan, apart from any solver: what does not depend on years is made once and kept, so that a
-// boundary can be dragged. Comes in: city, prices, decide's circuits; then plans of that city. Goes out: PhaseResult.
+// The evaluation of a plan, apart from any solver: what does not depend on years is made once and kept, so
+// that a boundary can be dragged. Comes in: city, prices, decide's circuits; then plans of that city. Goes
+// out: PhaseResult.
 
 #include <memory>
 
@@ -12,20 +13,20 @@
 namespace unstring {
 
 class PhaseDesk {
-  public:
+public:
     /// All by reference; input (its plan apart) and decide outlive the desk.
     PhaseDesk(const MoneyInput& input, const DecideResult& decide);
     ~PhaseDesk();
     PhaseDesk(const PhaseDesk&) = delete;
     PhaseDesk& operator=(const PhaseDesk&) = delete;
 
-    /// As evaluate_phase. Not from two threads at once. @param with_lines  false leaves PhaseResult::lines empty: the
-    /// way while a boundary is under the hand
+    /// As evaluate_phase. Not from two threads at once. @param with_lines  false leaves PhaseResult::lines
+    /// empty: the way while a boundary is under the hand
     [[nodiscard]] PhaseResult evaluate(const Plan& plan, bool with_lines);
 
-  private:
+private:
     struct Inside;
     std::unique_ptr<Inside> inside_;
 };
 
-}  // namespace unstring
+} // namespace unstring

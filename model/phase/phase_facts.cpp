@@ -13,7 +13,7 @@ int earliest(const std::vector<PoleIx>& poles, const Plan& plan, const std::vect
     return first;
 }
 
-}  // namespace
+} // namespace
 
 int work_year(const City& city, const Plan& plan, PoleIx ix) {
     const PolePlan& row = plan.poles[ix.place()];
@@ -24,14 +24,16 @@ int work_year(const City& city, const Plan& plan, PoleIx ix) {
 
 std::vector<int> span_years(const DecideResult& decide, const Plan& plan, const std::vector<int>& pole_year) {
     std::vector<int> years;
-    for (const CircuitSpan& span : decide.spans) years.push_back(earliest(span.poles_beyond, plan, pole_year));
+    for (const CircuitSpan& span : decide.spans)
+        years.push_back(earliest(span.poles_beyond, plan, pole_year));
     return years;
 }
 
-std::vector<int> connection_years(const DecideResult& decide, const Plan& plan, const std::vector<int>& pole_year) {
+std::vector<int> connection_years(const DecideResult& decide, const Plan& plan,
+                                  const std::vector<int>& pole_year) {
     std::vector<int> years;
     for (const Circuit& circuit : decide.circuits) years.push_back(earliest(circuit.poles, plan, pole_year));
     return years;
 }
 
-}  // namespace unstring
+} // namespace unstring

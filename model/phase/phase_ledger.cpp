@@ -20,13 +20,20 @@ void add(CrewHours& sum, const CrewHours& more) {
 
 SpanWork work_of(SpanKind kind) {
     switch (kind) {
-        case SpanKind::trench_verge: return SpanWork::trench_verge;
-        case SpanKind::trench_paved: return SpanWork::trench_paved;
-        case SpanKind::bore: return SpanWork::bore;
-        case SpanKind::conduit: return SpanWork::conduit;
-        case SpanKind::aerial: return SpanWork::aerial;
-        case SpanKind::tap: return SpanWork::tap;
-        case SpanKind::service: return SpanWork::service;
+    case SpanKind::trench_verge:
+        return SpanWork::trench_verge;
+    case SpanKind::trench_paved:
+        return SpanWork::trench_paved;
+    case SpanKind::bore:
+        return SpanWork::bore;
+    case SpanKind::conduit:
+        return SpanWork::conduit;
+    case SpanKind::aerial:
+        return SpanWork::aerial;
+    case SpanKind::tap:
+        return SpanWork::tap;
+    case SpanKind::service:
+        return SpanWork::service;
     }
     return SpanWork::trench_verge;
 }
@@ -39,7 +46,7 @@ PoleAsk ask_of(const PhaseFacts& facts, std::size_t i) {
 }
 
 class Sum {
-  public:
+public:
     Sum(const PlanSettings& settings, PhaseResult& result) : settings_(settings), result_(result) {
         const int last = ledger_last_year(settings);
         capital_.assign(static_cast<std::size_t>(last - settings.first_year + 1), 0);
@@ -62,7 +69,7 @@ class Sum {
         }
     }
 
-  private:
+private:
     const PlanSettings& settings_;
     PhaseResult& result_;
     std::vector<Cents> capital_, operating_;
@@ -74,7 +81,7 @@ bool other_loop_lives(const PhaseFacts& facts, std::size_t string, std::size_t t
     return false;
 }
 
-}  // namespace
+} // namespace
 
 std::vector<StringYearCash> string_cash(const PhaseFacts& facts, std::size_t string) {
     std::vector<StringYearCash> all;
@@ -82,7 +89,8 @@ std::vector<StringYearCash> string_cash(const PhaseFacts& facts, std::size_t str
     const PlanSettings& settings = facts.plan.settings;
     for (int year = settings.first_year; year <= ledger_last_year(settings); ++year) {
         const bool in_plan = year <= facts.plan.last_year();
-        const auto t = static_cast<std::size_t>(std::min(year, facts.plan.last_year()) - settings.first_year + 1);
+        const auto t =
+            static_cast<std::size_t>(std::min(year, facts.plan.last_year()) - settings.first_year + 1);
         const StringAtYear& at = facts.at(string, t);
         const TransformerIx unit = facts.units.strings[string][t].unit;
         StringYearCash cash;
@@ -95,8 +103,8 @@ std::vector<StringYearCash> string_cash(const PhaseFacts& facts, std::size_t str
             const TransformerIx before = facts.units.strings[string][t - 1].unit;
             cash.has_work = at.left > 0;
             cash.swaps_unit = at.state.lamps > 0 && unit.is_valid() && unit != before;
-            cash.retires = at.state.lamps == 0 && facts.at(string, t - 1).state.lamps > 0 && before.is_valid() &&
-                           !other_loop_lives(facts, string, t, before);
+            cash.retires = at.state.lamps == 0 && facts.at(string, t - 1).state.lamps > 0 &&
+                           before.is_valid() && !other_loop_lives(facts, string, t, before);
             if (before.is_valid()) {
                 const Oil oil = facts.city.transformers[before.place()].oil;
                 cash.oil_suspect = oil == Oil::pcb || oil == Oil::unknown;
@@ -126,7 +134,8 @@ void fill_ledger(const PhaseFacts& facts, CashBook& book, bool with_lines, Phase
         const bool dug = facts.duct[i] == DuctState::dug;
         sum.add(book.span(i, facts.span_year[i], dug));
         const CircuitSpan& span = facts.decide.spans[i];
-        if (with_lines) sum.add_lines(span_lines(book.input(), dug ? dug_span(span) : span, facts.span_year[i]));
+        if (with_lines)
+            sum.add_lines(span_lines(book.input(), dug ? dug_span(span) : span, facts.span_year[i]));
     }
     for (std::size_t i = 0; i < facts.decide.circuits.size(); ++i) {
         if (facts.connection_year[i] == 0 || !facts.decide.circuits[i].service.is_valid()) continue;
@@ -146,8 +155,10 @@ CrewHours span_crew_hours(const City& city, const PriceBook& prices, const Circu
     const PoleIx at = span.duct_to.is_valid() ? span.duct_to : span.pole;
     const bool has_duct = span.kind == SpanKind::conduit && at.is_valid();
     const double sound = has_duct ? duct_sound_frac(prices, city.poles[at.place()].duct, year) : 1;
-    CrewHours hours = crew_hours(span_hours(prices, work_of(span.kind), span.length_m, year, sound, span.surface));
-    hours.civil += span.boxes / prices.at("pace_pull_box", year) * prices.at("crew_civil", year) * prices.at("day_hours", year);
+    CrewHours hours =
+        crew_hours(span_hours(prices, work_of(span.kind), span.length_m, year, sound, span.surface));
+    hours.civil += span.boxes / prices.at("pace_pull_box", year) * prices.at("crew_civil", year) *
+                   prices.at("day_hours", year);
     return hours;
 }
 
@@ -162,25 +173,31 @@ std::vector<CrewHours> hours_of(const PhaseFacts& facts) {
     const auto at = [&](int year) -> CrewHours& { return hours[static_cast<std::size_t>(year - first)]; };
     for (std::size_t i = 0; i < facts.pole_year.size(); ++i) {
         if (facts.pole_year[i] == 0) continue;
-        add(at(facts.pole_year[i]), crew_hours(pole_hours(facts.prices, facts.city.poles[i], facts.plan.poles[i].choice, facts.pole_year[i])));
+        add(at(facts.pole_year[i]), crew_hours(pole_hours(facts.prices, facts.city.poles[i],
+                                                          facts.plan.poles[i].choice, facts.pole_year[i])));
     }
     for (std::size_t i = 0; i < facts.decide.spans.size(); ++i)
         if (facts.span_year[i] != 0) {
             const CircuitSpan& span = facts.decide.spans[i];
             const bool dug = facts.duct[i] == DuctState::dug;
-            add(at(facts.span_year[i]), span_crew_hours(facts.city, facts.prices, dug ? dug_span(span) : span, facts.span_year[i]));
+            add(at(facts.span_year[i]),
+                span_crew_hours(facts.city, facts.prices, dug ? dug_span(span) : span, facts.span_year[i]));
         }
     for (std::size_t i = 0; i < facts.decide.circuits.size(); ++i)
         if (facts.connection_year[i] != 0 && facts.decide.circuits[i].service.is_valid())
-            add(at(facts.connection_year[i]), connection_crew_hours(facts.city, facts.prices, facts.decide.circuits[i].service, facts.connection_year[i]));
+            add(at(facts.connection_year[i]),
+                connection_crew_hours(facts.city, facts.prices, facts.decide.circuits[i].service,
+                                      facts.connection_year[i]));
     for (std::size_t s = 0; s < facts.loops.size(); ++s)
         for (const StringYearCash& cash : string_cash(facts, s)) {
             if (cash.year > facts.plan.last_year()) break;
             if (!cash.has_work && !cash.swaps_unit && !cash.retires) continue;
-            const int swaps = (cash.swaps_unit ? 1 : 0) + (cash.retires ? 1 : 0);  // taking a unit away is a swap's day too
-            add(at(cash.year), crew_hours(string_hours(facts.prices, cash.jumpers, cash.splices, swaps, cash.year)));
+            const int swaps =
+                (cash.swaps_unit ? 1 : 0) + (cash.retires ? 1 : 0); // taking a unit away is a swap's day too
+            add(at(cash.year),
+                crew_hours(string_hours(facts.prices, cash.jumpers, cash.splices, swaps, cash.year)));
         }
     return hours;
 }
 
-}  // namespace unstring
+} // namespace unstring

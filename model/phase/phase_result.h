@@ -19,24 +19,25 @@ struct CrewHours {
 
 struct SpareCover {
     double rated_kw = 0, output_a = 0, primary_v = 0;
-    int count = 0;           ///< idle units of this class at the year's end
-    double cover_frac = 1;   ///< Poisson chance that the demand over the lead time is covered by units that fit
+    int count = 0;         ///< idle units of this class at the year's end
+    double cover_frac = 1; ///< Poisson chance that the demand over the lead time is covered by units that fit
 };
 
 struct PhaseYear {
     int year = 0;
-    Cents money = 0;  ///< capital of the year
+    Cents money = 0; ///< capital of the year
     std::optional<double> money_limit;
     Cents operating = 0;
     CrewHours hours;
     std::optional<double> line_limit_h, civil_limit_h, lighting_limit_h, electric_limit_h;
-    int rewire = 0, solar = 0;      ///< poles whose work falls in the year
-    int series_lamps_left = 0;      ///< at the year's end
-    double dark_transformers = 0, dark_cable = 0;  ///< expected lamp-nights in the year
+    int rewire = 0, solar = 0;                    ///< poles whose work falls in the year
+    int series_lamps_left = 0;                    ///< at the year's end
+    double dark_transformers = 0, dark_cable = 0; ///< expected lamp-nights in the year
     std::vector<SpareCover> spares;
 };
 
-struct LedgerYear {  ///< every year of the horizon; the plan's cost is the sum of (capital + operating) x factor
+struct LedgerYear { ///< every year of the horizon; the plan's cost is the sum of (capital + operating) x
+                    ///< factor
     int year = 0;
     Cents capital = 0, operating = 0;
     double factor = 1;
@@ -55,7 +56,7 @@ struct StringYear {
 struct UnitMove {
     int year = 0;
     TransformerIx transformer;
-    std::string from, to;  ///< string id, "spare", "scrapped", "bought"
+    std::string from, to; ///< string id, "spare", "scrapped", "bought"
 };
 
 struct PhaseResult {
@@ -65,13 +66,15 @@ struct PhaseResult {
     std::vector<StringYear> string_years; ///< by string, then year; year first_year - 1 = today
     std::vector<UnitMove> moves;
     std::vector<Section> sections;
-    std::vector<int> spans_dug;  ///< places in DecideResult::spans: conduit whose cable is live when it is built, dug instead
-    std::vector<int> pole_year;  ///< one per pole of the city: calendar year, 0 = none
+    std::vector<int> spans_dug; ///< places in DecideResult::spans: conduit whose cable is live when it is
+                                ///< built, dug instead
+    std::vector<int> pole_year; ///< one per pole of the city: calendar year, 0 = none
     int not_reached = 0;
-    double cost = 0, bound = 0;  ///< dollars, present value
-    bool feasible = true;        ///< no hard check failed and no year over its money or hours; poles not reached do not count
+    double cost = 0, bound = 0; ///< dollars, present value
+    bool feasible =
+        true; ///< no hard check failed and no year over its money or hours; poles not reached do not count
     std::vector<Finding> failures;
     double seconds = 0;
 };
 
-}  // namespace unstring
+} // namespace unstring

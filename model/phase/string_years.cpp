@@ -23,7 +23,7 @@ StringAtYear at_year(const StringLoop& loop, const std::vector<char>& live, doub
     return at;
 }
 
-}  // namespace
+} // namespace
 
 std::vector<char> live_legs(const StringLoop& loop, const StringState& state) {
     std::vector<char> live(loop.legs_m.size(), state.lamps > 0 ? 1 : 0);
@@ -34,13 +34,15 @@ std::vector<char> live_legs(const StringLoop& loop, const StringState& state) {
     return live;
 }
 
-LineWork line_work(const StringLoop& loop, std::span<const PoleIx> leaving, const StringState& before, const StringState& after) {
+LineWork line_work(const StringLoop& loop, std::span<const PoleIx> leaving, const StringState& before,
+                   const StringState& after) {
     LineWork work;
     if (after.lamps == 0) return work;
     for (const PoleIx pole : leaving) {
         const auto at = std::find(loop.lamps.begin(), loop.lamps.end(), pole);
         const auto i = static_cast<std::size_t>(at - loop.lamps.begin());
-        if (at != loop.lamps.end() && loop.burns[i] != 0 && !is_skipped(loop, after, static_cast<int>(i) + 1)) ++work.jumpers;
+        if (at != loop.lamps.end() && loop.burns[i] != 0 && !is_skipped(loop, after, static_cast<int>(i) + 1))
+            ++work.jumpers;
     }
     for (const int place : after.used) {
         if (std::find(before.used.begin(), before.used.end(), place) != before.used.end()) continue;
@@ -50,8 +52,8 @@ LineWork line_work(const StringLoop& loop, std::span<const PoleIx> leaving, cons
     return work;
 }
 
-std::vector<StringAtYear> string_years(const StringLoop& loop, std::span<const int> lamp_year, int first_year, int years,
-                                       double ageing_frac) {
+std::vector<StringAtYear> string_years(const StringLoop& loop, std::span<const int> lamp_year, int first_year,
+                                       int years, double ageing_frac) {
     std::vector<StringAtYear> all;
     std::vector<char> live(loop.lamps.size(), 0);
     for (std::size_t i = 0; i < live.size(); ++i) live[i] = loop.burns[i];
@@ -84,7 +86,8 @@ double ageing_of(const City& city, const Catalog& catalog, const StringLoop& loo
         const Lamp* known = find_lamp(catalog, city.poles[lamp.place()].fixture);
         return known != nullptr && known->kind == LampKind::filament;
     };
-    return !loop.lamps.empty() && std::all_of(loop.lamps.begin(), loop.lamps.end(), is_filament) ? kFilament : kSodium;
+    return !loop.lamps.empty() && std::all_of(loop.lamps.begin(), loop.lamps.end(), is_filament) ? kFilament
+                                                                                                 : kSodium;
 }
 
-}  // namespace unstring
+} // namespace unstring

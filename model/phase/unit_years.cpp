@@ -7,14 +7,15 @@
 namespace unstring {
 namespace {
 
-struct Asked {  ///< the plan's row for a string and year
+struct Asked { ///< the plan's row for a string and year
     TransformerIx unit;
     double tap = 0;
 };
 
 class Assignment {
-  public:
-    Assignment(const City& city, const UnitKinds& kinds, const std::vector<const std::vector<StringAtYear>*>& states, UnitYears& out)
+public:
+    Assignment(const City& city, const UnitKinds& kinds,
+               const std::vector<const std::vector<StringAtYear>*>& states, UnitYears& out)
         : city_(city), kinds_(kinds), states_(states), out_(out) {}
 
     void begin(std::size_t t, int year) {
@@ -32,7 +33,9 @@ class Assignment {
         const auto& own = city_.transformers[unit.place()].strings;
         const auto& users = users_[unit.place()];
         const bool is_two_loop = own.size() >= 2;
-        const auto is_own = [&](std::size_t each) { return std::find(own.begin(), own.end(), StringIx(each)) != own.end(); };
+        const auto is_own = [&](std::size_t each) {
+            return std::find(own.begin(), own.end(), StringIx(each)) != own.end();
+        };
         if (users.empty()) return true;
         return is_two_loop && is_own(s) && std::all_of(users.begin(), users.end(), is_own);
     }
@@ -48,10 +51,11 @@ class Assignment {
         const auto fit = kinds_.fit(StringIx(s), asked.unit, load_kva(s));
         if (!is_free_for(s, asked.unit)) {
             const std::string& id = city_.transformers[asked.unit.place()].id;
-            out_.findings.push_back(make_finding("unit-twice", {}, 0, id,
-                                                 fmt::format("planned in {} on string {} and on {}", year_, city_.strings[s].id,
-                                                             city_.strings[users_[asked.unit.place()].front()].id),
-                                                 "one string for each unit", "give one of the two another unit", "transformers"));
+            out_.findings.push_back(
+                make_finding("unit-twice", {}, 0, id,
+                             fmt::format("planned in {} on string {} and on {}", year_, city_.strings[s].id,
+                                         city_.strings[users_[asked.unit.place()].front()].id),
+                             "one string for each unit", "give one of the two another unit", "transformers"));
             return;
         }
         if (!fit) return;
@@ -82,12 +86,13 @@ class Assignment {
         std::vector<TransformerIx> free;
         for (std::size_t u = 0; u < city_.transformers.size(); ++u) {
             const Transformer& unit = city_.transformers[u];
-            if (users_[u].empty() && !unit.set_aside && unit.state != UnitState::scrapped) free.push_back(TransformerIx(u));
+            if (users_[u].empty() && !unit.set_aside && unit.state != UnitState::scrapped)
+                free.push_back(TransformerIx(u));
         }
         return free;
     }
 
-  private:
+private:
     const City& city_;
     const UnitKinds& kinds_;
     const std::vector<const std::vector<StringAtYear>*>& states_;
@@ -102,7 +107,8 @@ class Assignment {
 std::string place_of(const City& city, const UnitYears& years, std::size_t unit, std::size_t t) {
     std::string place;
     for (std::size_t s = 0; s < years.strings.size(); ++s)
-        if (years.strings[s][t].unit == TransformerIx(unit)) place += (place.empty() ? "" : ", ") + city.strings[s].id;
+        if (years.strings[s][t].unit == TransformerIx(unit))
+            place += (place.empty() ? "" : ", ") + city.strings[s].id;
     return place.empty() ? "spare" : place;
 }
 
@@ -110,15 +116,18 @@ std::string place_of(const City& city, const UnitYears& years, std::size_t unit,
 void order_moves(std::vector<UnitMove> moves, UnitYears& out) {
     while (!moves.empty()) {
         const auto is_waiting = [&](const UnitMove& move) {
-            return move.from != "spare" && std::any_of(moves.begin(), moves.end(), [&](const UnitMove& other) {
+            return move.from != "spare" &&
+                   std::any_of(moves.begin(), moves.end(), [&](const UnitMove& other) {
                        return &other != &move && other.to == move.from;
                    });
         };
         const auto next = std::find_if_not(moves.begin(), moves.end(), is_waiting);
         if (next == moves.end()) {
             std::string chain;
-            for (const UnitMove& move : moves) chain += (chain.empty() ? "" : "; ") + move.from + " to " + move.to;
-            out.findings.push_back(make_finding("unit-cycle", {}, 0, fmt::format("year {}", moves.front().year), chain,
+            for (const UnitMove& move : moves)
+                chain += (chain.empty() ? "" : "; ") + move.from + " to " + move.to;
+            out.findings.push_back(make_finding("unit-cycle", {}, 0,
+                                                fmt::format("year {}", moves.front().year), chain,
                                                 "a free unit for the first of these moves",
                                                 "take a loaned unit for a night, or accept an outage", {}));
             out.moves.insert(out.moves.end(), moves.begin(), moves.end());
@@ -141,14 +150,14 @@ void add_moves(const City& city, int first_year, int years, UnitYears& out) {
     }
 }
 
-}  // namespace
+} // namespace
 
 UnitKinds::UnitKinds(const City& city, const std::vector<StringLoop>& loops) : city_(city) {
     for (const StringLoop& loop : loops) {
         UnitNeed need = unit_need(city, loop, 0);
         std::vector<char> kind;
         for (Transformer unit : city.transformers) {
-            unit.build = Build::moving_coil;  // its lower end is judged with the load
+            unit.build = Build::moving_coil; // its lower end is judged with the load
             kind.push_back(why_unit_refused(unit, need).empty() ? 1 : 0);
         }
         need_.push_back(need);
@@ -166,9 +175,12 @@ std::optional<UnitFit> UnitKinds::fit(StringIx string, TransformerIx unit, doubl
     return fits.empty() ? std::nullopt : std::optional(fits.front());
 }
 
-std::optional<UnitFit> UnitKinds::best(StringIx string, const std::vector<TransformerIx>& pool, double load_kva) const {
+std::optional<UnitFit> UnitKinds::best(StringIx string, const std::vector<TransformerIx>& pool,
+                                       double load_kva) const {
     std::optional<UnitFit> best;
-    const auto carried_kw = [&](const UnitFit& fit) { return loop_rating_kw(city_.transformers[fit.unit.place()]) * fit.tap; };
+    const auto carried_kw = [&](const UnitFit& fit) {
+        return loop_rating_kw(city_.transformers[fit.unit.place()]) * fit.tap;
+    };
     for (const TransformerIx unit : pool) {
         const auto each = fit(string, unit, load_kva);
         if (each && (!best || carried_kw(*each) < carried_kw(*best))) best = each;
@@ -177,8 +189,8 @@ std::optional<UnitFit> UnitKinds::best(StringIx string, const std::vector<Transf
 }
 
 UnitYears unit_years(const City& city, const std::vector<StringLoop>& loops, const UnitKinds& kinds,
-                     const std::vector<const std::vector<StringAtYear>*>& states, const std::vector<StringUnit>& plan_units, int first_year,
-                     int years) {
+                     const std::vector<const std::vector<StringAtYear>*>& states,
+                     const std::vector<StringUnit>& plan_units, int first_year, int years) {
     const std::size_t strings = loops.size();
     const auto places = static_cast<std::size_t>(years) + 1;
     UnitYears out;
@@ -194,7 +206,8 @@ UnitYears unit_years(const City& city, const std::vector<StringLoop>& loops, con
     for (std::size_t s = 0; s < strings; ++s) {
         if (loops[s].lamps.empty()) continue;
         const TransformerIx today = unit_today(city, StringIx(s));
-        const auto fit = today.is_valid() ? kinds.fit(StringIx(s), today, (*states[s])[0].state.load_kva) : std::nullopt;
+        const auto fit =
+            today.is_valid() ? kinds.fit(StringIx(s), today, (*states[s])[0].state.load_kva) : std::nullopt;
         assignment.set(s, today, fit ? fit->tap : 1);
     }
     out.idle.push_back(assignment.idle());
@@ -213,4 +226,4 @@ UnitYears unit_years(const City& city, const std::vector<StringLoop>& loops, con
     return out;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -7,7 +7,7 @@ void add(std::optional<double>& sum, const std::optional<double>& more) {
     if (more) sum = sum.value_or(0) + *more;
 }
 
-}  // namespace
+} // namespace
 
 YearLimits limits_of(const City& city, int year) {
     YearLimits limits;
@@ -22,4 +22,4 @@ YearLimits limits_of(const City& city, int year) {
     return limits;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -9,7 +9,7 @@
 namespace unstring {
 namespace {
 
-constexpr double kLoadSlack = 1e-9;  ///< sums of loads printed with two decimals
+constexpr double kLoadSlack = 1e-9; ///< sums of loads printed with two decimals
 
 double rest_of(const std::vector<double>& values, std::size_t from) {
     return std::accumulate(values.begin() + static_cast<long>(from), values.end(), 0.0);
@@ -59,7 +59,7 @@ PackageString string_of(const YearsForm& form, const YearsFormString& given) {
     return string;
 }
 
-}  // namespace
+} // namespace
 
 PackageCase packages_of(const YearsForm& form) {
     PackageCase packages;
@@ -110,10 +110,12 @@ YearsFormCheck check_years(const YearsForm& form, const std::vector<StringPlan>&
             if (done == sections) continue;
             check.cost += string.fixed_keep * factor;
             for (std::size_t k = done; k < sections; ++k)
-                check.cost += string.keep[k] * std::pow(1 + form.keep_growth, static_cast<double>(t + 1)) * factor;
+                check.cost +=
+                    string.keep[k] * std::pow(1 + form.keep_growth, static_cast<double>(t + 1)) * factor;
             const auto cls = static_cast<std::size_t>(plans[s].cls[t]);
             if (cls >= form.ratings.size() || !carries(form, rest_of(string.load, done), cls)) {
-                check.broken.push_back(fmt::format("string {} year {}: no class carries {:.2f}", s, t + 1, rest_of(string.load, done)));
+                check.broken.push_back(fmt::format("string {} year {}: no class carries {:.2f}", s, t + 1,
+                                                   rest_of(string.load, done)));
                 break;
             }
             if (plans[s].cls[t] != rating) {
@@ -124,7 +126,8 @@ YearsFormCheck check_years(const YearsForm& form, const std::vector<StringPlan>&
             rating = plans[s].cls[t];
             ++in_service[t][cls];
         }
-        if (done != sections) check.broken.push_back(fmt::format("string {}: {} sections left", s, sections - done));
+        if (done != sections)
+            check.broken.push_back(fmt::format("string {}: {} sections left", s, sections - done));
     }
     check.bought.assign(years, std::vector<int>(form.ratings.size(), 0));
     for (std::size_t r = 0; r < form.ratings.size(); ++r) {
@@ -140,10 +143,12 @@ YearsFormCheck check_years(const YearsForm& form, const std::vector<StringPlan>&
         }
     }
     for (std::size_t t = 0; t < years; ++t) {
-        if (money[t] > form.budget[t] + 1e-6) check.over.push_back({static_cast<int>(t + 1), "money", money[t] - form.budget[t]});
-        if (hours[t] > form.hours[t] + 1e-6) check.over.push_back({static_cast<int>(t + 1), "hours", hours[t] - form.hours[t]});
+        if (money[t] > form.budget[t] + 1e-6)
+            check.over.push_back({static_cast<int>(t + 1), "money", money[t] - form.budget[t]});
+        if (hours[t] > form.hours[t] + 1e-6)
+            check.over.push_back({static_cast<int>(t + 1), "hours", hours[t] - form.hours[t]});
     }
     return check;
 }
 
-}  // namespace unstring
+} // namespace unstring

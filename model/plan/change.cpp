@@ -10,4 +10,4 @@ Change inverse(const Change& change) {
     return swapped;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -53,7 +53,8 @@ Change plan_difference(const City& city, const Plan& before, const Plan& after, 
 void apply_change(const City& city, const Change& change, Plan& plan) {
     if (change.plan != plan.settings.name) return;
     std::map<std::string_view, std::size_t> place_of;
-    for (std::size_t i = city.poles.size(); i-- > 0;) place_of[city.poles[i].id] = i;  // the first of a doubled id wins
+    for (std::size_t i = city.poles.size(); i-- > 0;)
+        place_of[city.poles[i].id] = i; // the first of a doubled id wins
     for (const RowChange& row : change.rows) {
         if (row.table == kPlansTable) {
             const std::string name = plan.settings.name;
@@ -65,7 +66,9 @@ void apply_change(const City& city, const Change& change, Plan& plan) {
         } else if (row.table == kPlanUnitsTable) {
             const StringUnit unit = unit_from(city, row.id, row.after);
             if (!unit.string.is_valid()) continue;
-            const auto same = [&](const StringUnit& each) { return each.string == unit.string && each.year == unit.year; };
+            const auto same = [&](const StringUnit& each) {
+                return each.string == unit.string && each.year == unit.year;
+            };
             plan.units.erase(std::remove_if(plan.units.begin(), plan.units.end(), same), plan.units.end());
             if (!row.after.empty()) plan.units.push_back(unit);
         }
@@ -77,48 +80,61 @@ void apply_change(const City& city, const Change& change, Plan& plan) {
 
 const char* text_of(Choice value) {
     switch (value) {
-        case Choice::undecided: return "";
-        case Choice::keep: return "keep";
-        case Choice::rewire: return "rewire";
-        case Choice::solar: return "solar";
+    case Choice::undecided:
+        return "";
+    case Choice::keep:
+        return "keep";
+    case Choice::rewire:
+        return "rewire";
+    case Choice::solar:
+        return "solar";
     }
     return "";
 }
 
 const char* text_of(YearBy value) {
     switch (value) {
-        case YearBy::none: return "";
-        case YearBy::solver: return "solver";
-        case YearBy::hand: return "hand";
+    case YearBy::none:
+        return "";
+    case YearBy::solver:
+        return "solver";
+    case YearBy::hand:
+        return "hand";
     }
     return "";
 }
 
 const char* text_of(Policy value) {
     switch (value) {
-        case Policy::end: return "end";
-        case Policy::may_stay: return "may-stay";
-        case Policy::must_stay: return "must-stay";
+    case Policy::end:
+        return "end";
+    case Policy::may_stay:
+        return "may-stay";
+    case Policy::must_stay:
+        return "must-stay";
     }
     return "";
 }
 
-template <> std::optional<Choice> read_word(std::string_view text) {
+template <>
+std::optional<Choice> read_word(std::string_view text) {
     for (const Choice value : {Choice::undecided, Choice::keep, Choice::rewire, Choice::solar})
         if (text == text_of(value)) return value;
     return std::nullopt;
 }
 
-template <> std::optional<YearBy> read_word(std::string_view text) {
+template <>
+std::optional<YearBy> read_word(std::string_view text) {
     for (const YearBy value : {YearBy::none, YearBy::solver, YearBy::hand})
         if (text == text_of(value)) return value;
     return std::nullopt;
 }
 
-template <> std::optional<Policy> read_word(std::string_view text) {
+template <>
+std::optional<Policy> read_word(std::string_view text) {
     for (const Policy value : {Policy::end, Policy::may_stay, Policy::must_stay})
         if (text == text_of(value)) return value;
     return std::nullopt;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -49,7 +49,7 @@ std::vector<std::string> split(const std::string& text) {
 
 CellValue integer(std::int64_t value) { return value; }
 
-}  // namespace
+} // namespace
 
 Cells settings_cells(const PlanSettings& settings) {
     return {{"first_year", integer(settings.first_year)},
@@ -129,4 +129,4 @@ StringUnit unit_from(const City& city, std::string_view row_id, const Cells& cel
     return unit;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -25,4 +25,4 @@ inline constexpr const char* kPlanUnitsTable = "plan_units";
 /// string and transformer stay not valid where the city no longer has them.
 [[nodiscard]] StringUnit unit_from(const City& city, std::string_view row_id, const Cells& cells);
 
-}  // namespace unstring
+} // namespace unstring

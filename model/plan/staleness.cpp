@@ -4,14 +4,20 @@ namespace unstring {
 
 const char* text_of(Step step) {
     switch (step) {
-        case Step::gather: return "gather";
-        case Step::vet: return "vet";
-        case Step::shade: return "shade";
-        case Step::decide: return "decide";
-        case Step::phase: return "phase";
-        case Step::hand_out: return "hand-out";
+    case Step::gather:
+        return "gather";
+    case Step::vet:
+        return "vet";
+    case Step::shade:
+        return "shade";
+    case Step::decide:
+        return "decide";
+    case Step::phase:
+        return "phase";
+    case Step::hand_out:
+        return "hand-out";
     }
     return "";
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -14,7 +14,7 @@ std::optional<int> read_digits(std::string_view text, std::size_t digits) {
     return value;
 }
 
-}  // namespace
+} // namespace
 
 std::optional<Date> date_of(std::string_view text) {
     const bool has_month = text.size() >= 7;
@@ -25,11 +25,12 @@ std::optional<Date> date_of(std::string_view text) {
     const std::optional<int> month = has_month ? read_digits(text.substr(5, 2), 2) : 0;
     const std::optional<int> day = has_day ? read_digits(text.substr(8, 2), 2) : 0;
     if (!year || !month || !day || *month > 12) return std::nullopt;
-    if (has_day && !std::chrono::year_month_day(std::chrono::year(*year), std::chrono::month(static_cast<unsigned>(*month)),
+    if (has_day && !std::chrono::year_month_day(std::chrono::year(*year),
+                                                std::chrono::month(static_cast<unsigned>(*month)),
                                                 std::chrono::day(static_cast<unsigned>(*day)))
                         .ok())
         return std::nullopt;
     return Date{*year, *month, *day};
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -8,11 +8,11 @@ namespace unstring {
 
 struct Date {
     int year = 0;
-    int month = 0, day = 0;  ///< 0 = not given
+    int month = 0, day = 0; ///< 0 = not given
     auto operator<=>(const Date&) const = default;
 };
 
 /// "1962", "1962-05", "1962-05-17"; nothing for another form or a day that the calendar does not have.
 [[nodiscard]] std::optional<Date> date_of(std::string_view text);
 
-}  // namespace unstring
+} // namespace unstring

@@ -9,8 +9,10 @@ namespace {
 /// Below this a saving is rounding, not cable.
 constexpr double kStrictly_m = 1e-9;
 
-void check(std::span<const double> legs_m, std::span<const char> live, std::span<const LoopCutBack> cutbacks) {
-    if (legs_m.size() != live.size() + 1) throw std::logic_error("energised_loop: one leg more than lamps is wanted");
+void check(std::span<const double> legs_m, std::span<const char> live,
+           std::span<const LoopCutBack> cutbacks) {
+    if (legs_m.size() != live.size() + 1)
+        throw std::logic_error("energised_loop: one leg more than lamps is wanted");
     const int last = static_cast<int>(legs_m.size());
     for (const LoopCutBack& cutback : cutbacks)
         if (cutback.a < 0 || cutback.a >= cutback.b || cutback.b > last)
@@ -25,7 +27,8 @@ std::vector<int> count_live_before(std::span<const char> live) {
 }
 
 /// Cut-backs that may be used, by the position where they end.
-std::vector<std::vector<int>> usable_by_end(std::span<const LoopCutBack> cutbacks, const std::vector<int>& live_before) {
+std::vector<std::vector<int>> usable_by_end(std::span<const LoopCutBack> cutbacks,
+                                            const std::vector<int>& live_before) {
     std::vector<std::vector<int>> by_end(live_before.size());
     for (std::size_t k = 0; k < cutbacks.size(); ++k) {
         const auto a = static_cast<std::size_t>(cutbacks[k].a);
@@ -35,7 +38,7 @@ std::vector<std::vector<int>> usable_by_end(std::span<const LoopCutBack> cutback
     return by_end;
 }
 
-}  // namespace
+} // namespace
 
 EnergisedLoop energised_loop(std::span<const double> legs_m, std::span<const char> live,
                              std::span<const LoopCutBack> cutbacks) {
@@ -45,7 +48,7 @@ EnergisedLoop energised_loop(std::span<const double> legs_m, std::span<const cha
     const auto by_end = usable_by_end(cutbacks, live_before);
 
     std::vector<double> shortest_m(legs_m.size() + 1, 0);
-    std::vector<int> arrived_by(shortest_m.size(), -1);  // -1: along the leg
+    std::vector<int> arrived_by(shortest_m.size(), -1); // -1: along the leg
     for (std::size_t p = 1; p < shortest_m.size(); ++p) {
         shortest_m[p] = shortest_m[p - 1] + legs_m[p - 1];
         for (const int k : by_end[p]) {
@@ -73,4 +76,4 @@ EnergisedLoop energised_loop(std::span<const double> legs_m, std::span<const cha
     return loop;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -19,7 +19,7 @@ double median(std::vector<double>& values) {
     return *middle;
 }
 
-}  // namespace
+} // namespace
 
 Extent extent_of(const City& city) {
     std::vector<double> x_m, y_m, away_m;
@@ -44,4 +44,4 @@ bool is_swapped(const Extent& extent, MapPoint place) {
     return is_finite(place) && !is_believed(extent, place) && is_believed(extent, {place.y_m, place.x_m});
 }
 
-}  // namespace unstring
+} // namespace unstring

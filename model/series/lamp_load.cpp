@@ -8,7 +8,7 @@ namespace {
 bool is_watts(double w) { return std::isfinite(w) && w >= 0; }
 bool is_power_factor(double pf) { return pf > 0 && pf <= 1; }
 
-}  // namespace
+} // namespace
 
 LampLoad LampBook::load_of(const Pole& pole) {
     const auto [at, is_new] = by_fixture_.try_emplace(pole.fixture, nullptr);
@@ -25,4 +25,4 @@ LampLoad LampBook::load_of(const Pole& pole) {
     return load;
 }
 
-}  // namespace unstring
+} // namespace unstring

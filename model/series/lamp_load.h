@@ -15,21 +15,21 @@ inline constexpr double kUsualLampPf = 0.9;
 inline constexpr double kUsualLampW = 188;
 
 struct LampLoad {
-    std::optional<double> w;  ///< none: neither watts given nor a fixture that is known
+    std::optional<double> w; ///< none: neither watts given nor a fixture that is known
     double pf = kUsualLampPf;
-    const Lamp* lamp = nullptr;  ///< of the catalogue; null = not known there
+    const Lamp* lamp = nullptr; ///< of the catalogue; null = not known there
 };
 
 /// Looks lamps up by the fixture's text, each text once.
 class LampBook {
-  public:
+public:
     explicit LampBook(const Catalog& catalog) : catalog_(catalog) {}
     /// The record's own watts and power factor go before the catalogue's.
     [[nodiscard]] LampLoad load_of(const Pole& pole);
 
-  private:
+private:
     const Catalog& catalog_;
     std::unordered_map<std::string, const Lamp*> by_fixture_;
 };
 
-}  // namespace unstring
+} // namespace unstring

@@ -13,9 +13,10 @@ double between_m(const std::optional<MapPoint>& a, const std::optional<MapPoint>
     return a && b ? distance_m(*a, *b) : 0;
 }
 
-}  // namespace
+} // namespace
 
-LoopPlaces loop_places(const City& city, const Extent& extent, StringIx string, const std::vector<PoleIx>& lamps) {
+LoopPlaces loop_places(const City& city, const Extent& extent, StringIx string,
+                       const std::vector<PoleIx>& lamps) {
     const auto believed = [&](const std::optional<MapPoint>& place) {
         return place && is_believed(extent, *place) ? place : std::nullopt;
     };
@@ -71,13 +72,16 @@ std::vector<LoopCutBack> cutbacks_of_file(const City& city, StringIx string, con
         if (a == position_of.end() || b == position_of.end() || a->second == b->second) continue;
         const auto [low, high] = std::minmax(a->second, b->second);
         if (low == 0 && high == last) continue;
-        const double straight_m = between_m(places[static_cast<std::size_t>(low)], places[static_cast<std::size_t>(high)]);
-        found.push_back({low, high, row.new_cable_m.value_or(straight_m), static_cast<int>(k), row.confirmed, row.kind});
+        const double straight_m =
+            between_m(places[static_cast<std::size_t>(low)], places[static_cast<std::size_t>(high)]);
+        found.push_back(
+            {low, high, row.new_cable_m.value_or(straight_m), static_cast<int>(k), row.confirmed, row.kind});
     }
     return found;
 }
 
-std::vector<LoopCutBack> cutback_candidates(const StringLoop& loop, const LoopPlaces& places, const StreetIndex& streets) {
+std::vector<LoopCutBack> cutback_candidates(const StringLoop& loop, const LoopPlaces& places,
+                                            const StreetIndex& streets) {
     constexpr int kFewestBetween = 2;
     std::vector<double> out_m{0};
     for (const double leg_m : loop.legs_m) out_m.push_back(out_m.back() + leg_m);
@@ -93,9 +97,10 @@ std::vector<LoopCutBack> cutback_candidates(const StringLoop& loop, const LoopPl
             const auto pair = std::pair(static_cast<int>(i), static_cast<int>(j));
             if (is_known.contains(pair)) continue;
             const bool crosses = streets.crossings(*places[i], *places[j]) > 0;
-            found.push_back({pair.first, pair.second, across_m, -1, false, crosses ? CutBackKind::crossing : CutBackKind::trench});
+            found.push_back({pair.first, pair.second, across_m, -1, false,
+                             crosses ? CutBackKind::crossing : CutBackKind::trench});
         }
     return found;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -15,7 +15,8 @@ Route route_of(const DistanceTable& distances, std::vector<int> order, bool is_c
     return route;
 }
 
-/// The table with one stop more: at no distance from any, and held to stop 0 by a distance that no tour gives up.
+/// The table with one stop more: at no distance from any, and held to stop 0 by a distance that no tour gives
+/// up.
 DistanceTable with_anywhere(const DistanceTable& distances) {
     const std::size_t n = distances.stops();
     DistanceTable wider(n + 1);
@@ -29,7 +30,7 @@ DistanceTable with_anywhere(const DistanceTable& distances) {
     return wider;
 }
 
-}  // namespace
+} // namespace
 
 DistanceTable straight_distances(std::span<const MapPoint> stops) {
     DistanceTable distances(stops.size());
@@ -54,4 +55,4 @@ Route open_route(const DistanceTable& distances, const RouteEffort& effort) {
     return route_of(distances, std::move(tour), false);
 }
 
-}  // namespace unstring
+} // namespace unstring

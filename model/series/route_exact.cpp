@@ -5,14 +5,16 @@
 
 namespace unstring {
 
-// Held and Karp 1962: shortest_m[set][last] = shortest way from stop 0 over the set (of stops 1..n-1), ending at `last`.
+// Held and Karp 1962: shortest_m[set][last] = shortest way from stop 0 over the set (of stops 1..n-1), ending
+// at `last`.
 std::vector<int> exact_order(const DistanceTable& distances, bool is_closed) {
     const std::size_t others = distances.stops() - 1;
     if (others == 0) return {0};
     const std::size_t sets = std::size_t{1} << others;
     std::vector<double> shortest_m(sets * others, std::numeric_limits<double>::infinity());
     std::vector<int> before(sets * others, -1);
-    for (std::size_t i = 0; i < others; ++i) shortest_m[(std::size_t{1} << i) * others + i] = distances(0, i + 1);
+    for (std::size_t i = 0; i < others; ++i)
+        shortest_m[(std::size_t{1} << i) * others + i] = distances(0, i + 1);
     for (std::size_t set = 1; set < sets; ++set)
         for (std::size_t last = 0; last < others; ++last) {
             const double here_m = shortest_m[set * others + last];
@@ -45,4 +47,4 @@ std::vector<int> exact_order(const DistanceTable& distances, bool is_closed) {
     return order;
 }
 
-}  // namespace unstring
+} // namespace unstring

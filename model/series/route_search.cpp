@@ -10,13 +10,14 @@ namespace unstring {
 namespace {
 
 constexpr int kNeighbours = 10;
-constexpr int kLongestSegment = 3;  // Or-opt
-constexpr int kBridgeSpan = 30;     // stops in one part of a local double bridge
-constexpr double kGain_m = 1e-7;    // smaller gains are rounding and could go round in a circle
+constexpr int kLongestSegment = 3; // Or-opt
+constexpr int kBridgeSpan = 30;    // stops in one part of a local double bridge
+constexpr double kGain_m = 1e-7;   // smaller gains are rounding and could go round in a circle
 
 class TourSearch {
-  public:
-    explicit TourSearch(const DistanceTable& distances) : d_(distances), n_(static_cast<int>(distances.stops())) {
+public:
+    explicit TourSearch(const DistanceTable& distances)
+        : d_(distances), n_(static_cast<int>(distances.stops())) {
         list_neighbours();
         start_at_nearest();
     }
@@ -34,18 +35,22 @@ class TourSearch {
             if (gained_m_ < -kGain_m)
                 restore(best);
             else
-                best = tour_;  // of equals the new one, so that the next round starts elsewhere
+                best = tour_; // of equals the new one, so that the next round starts elsewhere
         }
         std::rotate(best.begin(), std::find(best.begin(), best.end(), 0), best.end());
         if (best[1] > best.back()) std::reverse(best.begin() + 1, best.end());
         return best;
     }
 
-  private:
+private:
     static std::size_t at(int i) { return static_cast<std::size_t>(i); }
     [[nodiscard]] double d(int a, int b) const { return d_(at(a), at(b)); }
-    [[nodiscard]] int next(int stop) const { return tour_[at(place_[at(stop)] + 1 == n_ ? 0 : place_[at(stop)] + 1)]; }
-    [[nodiscard]] int prev(int stop) const { return tour_[at(place_[at(stop)] == 0 ? n_ - 1 : place_[at(stop)] - 1)]; }
+    [[nodiscard]] int next(int stop) const {
+        return tour_[at(place_[at(stop)] + 1 == n_ ? 0 : place_[at(stop)] + 1)];
+    }
+    [[nodiscard]] int prev(int stop) const {
+        return tour_[at(place_[at(stop)] == 0 ? n_ - 1 : place_[at(stop)] - 1)];
+    }
     [[nodiscard]] int step(int stop, bool forward) const { return forward ? next(stop) : prev(stop); }
 
     void list_neighbours() {
@@ -69,7 +74,8 @@ class TourSearch {
         while (static_cast<int>(tour_.size()) < n_) {
             int nearest = -1;
             for (int b = 0; b < n_; ++b)
-                if (is_in[at(b)] == 0 && (nearest < 0 || d(tour_.back(), b) < d(tour_.back(), nearest))) nearest = b;
+                if (is_in[at(b)] == 0 && (nearest < 0 || d(tour_.back(), b) < d(tour_.back(), nearest)))
+                    nearest = b;
             tour_.push_back(nearest);
             is_in[at(nearest)] = 1;
         }
@@ -94,7 +100,8 @@ class TourSearch {
             const int stop = queue_.front();
             queue_.pop_front();
             is_awake_[at(stop)] = 0;
-            while (two_opt(stop) || or_opt(stop)) {}
+            while (two_opt(stop) || or_opt(stop)) {
+            }
         }
     }
 
@@ -152,7 +159,9 @@ class TourSearch {
         const int head = segment.front(), tail = segment.back();
         const int before = step(head, !forward), after = step(tail, forward);
         const double freed_m = d(before, head) + d(tail, after) - d(before, after);
-        const auto is_in = [&](int stop) { return std::find(segment.begin(), segment.end(), stop) != segment.end(); };
+        const auto is_in = [&](int stop) {
+            return std::find(segment.begin(), segment.end(), stop) != segment.end();
+        };
         for (const int c : near_[at(head)]) {
             if (d(c, head) >= freed_m) break;
             if (is_in(c)) continue;
@@ -170,7 +179,8 @@ class TourSearch {
         return false;
     }
 
-    /// The tour without the segment, with it again between c and e, its head beside c. @param beyond  e follows c
+    /// The tour without the segment, with it again between c and e, its head beside c. @param beyond  e
+    /// follows c
     void insert_segment(std::span<const int> segment, int c, int e, bool beyond) {
         std::vector<int> moved;
         moved.reserve(tour_.size());
@@ -187,16 +197,21 @@ class TourSearch {
         restore(moved);
     }
 
-    /// Swaps two neighbouring parts of the tour, at a random place: the move that neither 2-opt nor Or-opt can undo at once.
+    /// Swaps two neighbouring parts of the tour, at a random place: the move that neither 2-opt nor Or-opt
+    /// can undo at once.
     void double_bridge(std::mt19937_64& random) {
-        const auto below = [&](int limit) { return static_cast<int>(random() % static_cast<std::uint64_t>(limit)); };
+        const auto below = [&](int limit) {
+            return static_cast<int>(random() % static_cast<std::uint64_t>(limit));
+        };
         const int span = std::min(kBridgeSpan, (n_ - 2) / 2);
         const int start = below(n_), left = 1 + below(span), right = 1 + below(span);
         std::vector<int> part;
-        for (int k = 0; k < left + right; ++k) part.push_back(tour_[at((start + 1 + (left + k) % (left + right)) % n_)]);
+        for (int k = 0; k < left + right; ++k)
+            part.push_back(tour_[at((start + 1 + (left + k) % (left + right)) % n_)]);
         const int before = tour_[at(start)], after = tour_[at((start + 1 + left + right) % n_)];
         const int old_first = tour_[at((start + 1) % n_)], old_left_end = tour_[at((start + left) % n_)];
-        const int old_right = tour_[at((start + left + 1) % n_)], old_last = tour_[at((start + left + right) % n_)];
+        const int old_right = tour_[at((start + left + 1) % n_)],
+                  old_last = tour_[at((start + left + right) % n_)];
         gained_m_ += d(before, old_first) + d(old_left_end, old_right) + d(old_last, after);
         gained_m_ -= d(before, old_right) + d(old_last, old_first) + d(old_left_end, after);
         for (int k = 0; k < left + right; ++k) {
@@ -216,10 +231,10 @@ class TourSearch {
     double gained_m_ = 0;
 };
 
-}  // namespace
+} // namespace
 
 std::vector<int> searched_tour(const DistanceTable& distances, const RouteEffort& effort) {
     return TourSearch(distances).run(effort);
 }
 
-}  // namespace unstring
+} // namespace unstring

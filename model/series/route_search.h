@@ -13,4 +13,4 @@ namespace unstring {
 /// Order of a short closed tour from stop 0; 5 stops or more.
 [[nodiscard]] std::vector<int> searched_tour(const DistanceTable& distances, const RouteEffort& effort);
 
-}  // namespace unstring
+} // namespace unstring

@@ -7,27 +7,29 @@
 namespace unstring {
 namespace {
 
-constexpr int kUsualLamps = 8;  // sections of about 6 to 10 lamps
-constexpr int kMostLamps = 11;  // eleven are one section: two would be under six
+constexpr int kUsualLamps = 8; // sections of about 6 to 10 lamps
+constexpr int kMostLamps = 11; // eleven are one section: two would be under six
 
 /// A run of lamps that is off: positions first .. last.
 struct Run {
     int first = 0, last = -1;
-    int cutback = -1;  ///< closes the loop around it
+    int cutback = -1; ///< closes the loop around it
     [[nodiscard]] int lamps() const { return last - first + 1; }
 };
 
-/// How far a ring of so many lamps is from the usual size; nothing for 6 to 11, and for what must be cut into such pieces.
+/// How far a ring of so many lamps is from the usual size; nothing for 6 to 11, and for what must be cut into
+/// such pieces.
 double size_cost(int lamps) {
     const int pieces = std::max(1, (lamps + kMostLamps - 1) / kMostLamps);
     const double each = static_cast<double>(lamps) / pieces;
     const double off = std::max(0.0, 6 - each);
-    return off * off / 6 + (pieces - 1) * 1.5;  // a cut that no cut-back serves leaves live cable behind
+    return off * off / 6 + (pieces - 1) * 1.5; // a cut that no cut-back serves leaves live cable behind
 }
 
 /// A splice has its price, an unconfirmed one its doubt.
 double cutback_cost(const LoopCutBack& cutback) {
-    return (cutback.confirmed ? 0.2 : 0.5) + cutback.new_cable_m / 100 + (cutback.kind == CutBackKind::crossing ? 0.3 : 0);
+    return (cutback.confirmed ? 0.2 : 0.5) + cutback.new_cable_m / 100 +
+           (cutback.kind == CutBackKind::crossing ? 0.3 : 0);
 }
 
 double skipped_m(const StringLoop& loop, const LoopCutBack& cutback) {
@@ -51,8 +53,8 @@ std::vector<Run> closable_runs(const StringLoop& loop) {
     return runs;
 }
 
-/// The chain of nested runs, from the far end to the whole string, whose rings have the best sizes: shortest path over
-/// the runs by size, exact.
+/// The chain of nested runs, from the far end to the whole string, whose rings have the best sizes: shortest
+/// path over the runs by size, exact.
 std::vector<Run> best_chain(const StringLoop& loop) {
     std::vector<Run> runs = closable_runs(loop);
     const Run whole{1, static_cast<int>(loop.lamps.size()), -1};
@@ -70,7 +72,8 @@ std::vector<Run> best_chain(const StringLoop& loop) {
             cost[r] = with_inner;
             inner[r] = static_cast<int>(q);
         }
-        if (runs[r].cutback >= 0) cost[r] += cutback_cost(loop.cutbacks[static_cast<std::size_t>(runs[r].cutback)]);
+        if (runs[r].cutback >= 0)
+            cost[r] += cutback_cost(loop.cutbacks[static_cast<std::size_t>(runs[r].cutback)]);
     }
     std::vector<Run> chain;
     for (int r = static_cast<int>(runs.size()) - 1; r >= 0; r = inner[static_cast<std::size_t>(r)])
@@ -79,7 +82,9 @@ std::vector<Run> best_chain(const StringLoop& loop) {
     return chain;
 }
 
-int pieces_of(int lamps) { return std::max(1, static_cast<int>(std::lround(static_cast<double>(lamps) / kUsualLamps))); }
+int pieces_of(int lamps) {
+    return std::max(1, static_cast<int>(std::lround(static_cast<double>(lamps) / kUsualLamps)));
+}
 
 /// Grows `off` to `goal` in even pieces, on both sides at once.
 void grow_both_sides(Run off, const Run& goal, std::vector<Run>& out) {
@@ -94,8 +99,8 @@ void grow_both_sides(Run off, const Run& goal, std::vector<Run>& out) {
     }
 }
 
-/// A run with nothing off yet, in contiguous blocks: the one at the far end first, then always the neighbour block
-/// that lies farther from the station.
+/// A run with nothing off yet, in contiguous blocks: the one at the far end first, then always the neighbour
+/// block that lies farther from the station.
 void grow_by_blocks(const StringLoop& loop, const Run& goal, std::vector<Run>& out) {
     const int blocks = goal.lamps() <= kMostLamps ? 1 : pieces_of(goal.lamps());
     const auto block_start = [&](int k) { return goal.first + goal.lamps() * k / blocks; };
@@ -108,7 +113,8 @@ void grow_by_blocks(const StringLoop& loop, const Run& goal, std::vector<Run>& o
     for (const double leg_m : loop.legs_m) out_m.push_back(out_m.back() + leg_m);
     while (low > 0 || high < blocks) {
         const double left_m = low > 0 ? out_m[static_cast<std::size_t>(off.first - 1)] : -1;
-        const double right_m = high < blocks ? out_m.back() - out_m[static_cast<std::size_t>(off.last + 1)] : -1;
+        const double right_m =
+            high < blocks ? out_m.back() - out_m[static_cast<std::size_t>(off.last + 1)] : -1;
         if (left_m >= right_m)
             off.first = block_start(--low);
         else
@@ -129,7 +135,7 @@ std::vector<Run> growing_runs(const StringLoop& loop) {
     return off;
 }
 
-}  // namespace
+} // namespace
 
 std::vector<Section> sections_of(const std::vector<StringLoop>& loops) {
     std::vector<Section> sections;
@@ -144,7 +150,8 @@ std::vector<Section> sections_of(const std::vector<StringLoop>& loops) {
             section.ring = ring++;
             section.cutback = off.cutback;
             for (int p = off.first; p <= off.last; ++p)
-                if (p < before.first || p > before.last) section.poles.push_back(loop.lamps[static_cast<std::size_t>(p - 1)]);
+                if (p < before.first || p > before.last)
+                    section.poles.push_back(loop.lamps[static_cast<std::size_t>(p - 1)]);
             sections.push_back(std::move(section));
             before = off;
         }
@@ -152,4 +159,4 @@ std::vector<Section> sections_of(const std::vector<StringLoop>& loops) {
     return sections;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -8,7 +8,8 @@ namespace unstring {
 namespace {
 
 void check(double mean) {
-    if (!(mean >= 0) || !std::isfinite(mean)) throw std::logic_error("spares: the mean demand must be 0 or more");
+    if (!(mean >= 0) || !std::isfinite(mean))
+        throw std::logic_error("spares: the mean demand must be 0 or more");
 }
 
 double chance_of(double mean, int demand) {
@@ -16,7 +17,7 @@ double chance_of(double mean, int demand) {
     return std::exp(demand * std::log(mean) - mean - std::lgamma(demand + 1.0));
 }
 
-}  // namespace
+} // namespace
 
 double poisson_cover(double mean, int stock) {
     check(mean);
@@ -27,7 +28,8 @@ double poisson_cover(double mean, int stock) {
 
 SpareStock poisson_stock(double mean, double target_frac) {
     check(mean);
-    if (!(target_frac >= 0) || target_frac >= 1) throw std::logic_error("spares: the target must be in [0, 1)");
+    if (!(target_frac >= 0) || target_frac >= 1)
+        throw std::logic_error("spares: the target must be in [0, 1)");
     // Far beyond the mean the remaining chance is under rounding: a target that near to 1 is met there.
     const int enough = static_cast<int>(std::min(2e9, mean + 12 * std::sqrt(mean) + 60));
     SpareStock answer{0, chance_of(mean, 0)};
@@ -37,4 +39,4 @@ SpareStock poisson_stock(double mean, double target_frac) {
     return answer;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -7,12 +7,13 @@ namespace unstring {
 namespace {
 
 constexpr double kCell_m = 100;
-constexpr double kLongest_m = 5000;  // a piece or line beyond this is no street of a city
+constexpr double kLongest_m = 5000; // a piece or line beyond this is no street of a city
 
 std::int64_t cell_of(double m) { return static_cast<std::int64_t>(std::floor(m / kCell_m)); }
 std::int64_t key_of(std::int64_t x, std::int64_t y) { return x * 0x100000000LL + (y & 0xffffffffLL); }
 
-template <class Visit> void for_cells(MapPoint a, MapPoint b, Visit visit) {
+template <class Visit>
+void for_cells(MapPoint a, MapPoint b, Visit visit) {
     if (!(distance_m(a, b) < kLongest_m)) return;
     const auto [x0, x1] = std::minmax({cell_of(a.x_m), cell_of(b.x_m)});
     const auto [y0, y1] = std::minmax({cell_of(a.y_m), cell_of(b.y_m)});
@@ -29,14 +30,15 @@ bool crosses(MapPoint a, MapPoint b, MapPoint c, MapPoint d) {
     return side(a, b, c) * side(a, b, d) <= 0 && side(c, d, a) * side(c, d, b) < 0;
 }
 
-}  // namespace
+} // namespace
 
 StreetIndex::StreetIndex(const std::vector<Street>& streets) {
     for (const Street& street : streets)
         for (std::size_t i = 1; i < street.line.size(); ++i) {
             const auto place = static_cast<std::uint32_t>(pieces_.size());
             pieces_.push_back({street.line[i - 1], street.line[i]});
-            for_cells(street.line[i - 1], street.line[i], [&](std::int64_t key) { by_cell_[key].push_back(place); });
+            for_cells(street.line[i - 1], street.line[i],
+                      [&](std::int64_t key) { by_cell_[key].push_back(place); });
         }
 }
 
@@ -53,4 +55,4 @@ int StreetIndex::crossings(MapPoint a, MapPoint b) const {
     }));
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -51,4 +51,4 @@ PrimarySide primary_side(double rated_kw, double load_kw) {
     return primary;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -12,7 +12,7 @@ inline constexpr double kStringCableC = 25;
 
 struct StringLoad {
     double volts = 0, load_kw = 0, load_kva = 0, pf = 1;
-    double cable_w = 0;  ///< of load_kw
+    double cable_w = 0; ///< of load_kw
 };
 
 /// V = I (R + jX) L + sum V_i, each lamp |V_i| = P_i / (I pf_i), lagging; load_kw = I Re V, load_kva = I |V|.
@@ -32,8 +32,8 @@ struct PrimarySide {
     double kva = 0, kw = 0, pf = 0;
 };
 
-/// Input of a moving-coil unit: nearly constant kVA whatever its load, S = 1.04 rated / .78; a fixed loss of 4 % of rating.
-/// Source: derived; the loss is from memory, pf .78 at full load is common practice.
+/// Input of a moving-coil unit: nearly constant kVA whatever its load, S = 1.04 rated / .78; a fixed loss of
+/// 4 % of rating. Source: derived; the loss is from memory, pf .78 at full load is common practice.
 [[nodiscard]] PrimarySide primary_side(double rated_kw, double load_kw);
 
-}  // namespace unstring
+} // namespace unstring

@@ -39,7 +39,8 @@ double current_of(const City& city, StringIx string) {
     if (const auto& given = city.strings[string.place()].current_a; given && *given > 0) return *given;
     for (const Transformer& unit : city.transformers) {
         const bool feeds = std::find(unit.strings.begin(), unit.strings.end(), string) != unit.strings.end();
-        if (feeds && unit.state == UnitState::in_service && unit.output_a && *unit.output_a > 0) return *unit.output_a;
+        if (feeds && unit.state == UnitState::in_service && unit.output_a && *unit.output_a > 0)
+            return *unit.output_a;
     }
     return kUsualCurrent_a;
 }
@@ -60,7 +61,8 @@ void add_lamp_loads(const City& city, LampBook& book, StringLoop& loop) {
     }
 }
 
-/// Poles by id that are in the plan: a set-aside record of one of these, at the same place or at none, is the same lamp.
+/// Poles by id that are in the plan: a set-aside record of one of these, at the same place or at none, is the
+/// same lamp.
 using KeptById = std::unordered_map<std::string, PoleIx>;
 
 bool is_second_record(const City& city, const KeptById& kept, const Pole& pole) {
@@ -77,7 +79,8 @@ void add_aside_lamps(const City& city, LampBook& book, std::vector<StringLoop>& 
     for (std::size_t i = 0; i < city.poles.size(); ++i) {
         const Pole& pole = city.poles[i];
         const bool burns = pole.status == PoleStatus::standing || pole.status == PoleStatus::not_ours;
-        if (!pole.set_aside || !pole.string.is_valid() || !burns || is_second_record(city, kept, pole)) continue;
+        if (!pole.set_aside || !pole.string.is_valid() || !burns || is_second_record(city, kept, pole))
+            continue;
         StringLoop& loop = loops[pole.string.place()];
         const LampLoad load = book.load_of(pole);
         if (loop.lamps.empty() || !load.w) continue;
@@ -98,8 +101,8 @@ struct Ground {
     StreetIndex streets;
 };
 
-StringLoop loop_of(const City& city, const Catalog& catalog, StringIx string, std::vector<PoleIx> lamps, LampBook& book,
-                   const Ground& ground) {
+StringLoop loop_of(const City& city, const Catalog& catalog, StringIx string, std::vector<PoleIx> lamps,
+                   LampBook& book, const Ground& ground) {
     const SeriesString& row = city.strings[string.place()];
     StringLoop loop;
     loop.string = string;
@@ -125,13 +128,16 @@ StringLoop loop_of(const City& city, const Catalog& catalog, StringIx string, st
     return loop;
 }
 
-}  // namespace
+} // namespace
 
 const char* text_of(OrderFrom value) {
     switch (value) {
-        case OrderFrom::given: return "given";
-        case OrderFrom::inferred: return "inferred";
-        case OrderFrom::partial: return "partial";
+    case OrderFrom::given:
+        return "given";
+    case OrderFrom::inferred:
+        return "inferred";
+    case OrderFrom::partial:
+        return "partial";
     }
     return "given";
 }
@@ -147,4 +153,4 @@ std::vector<StringLoop> string_loops(const City& city, const Catalog& catalog) {
     return loops;
 }
 
-}  // namespace unstring
+} // namespace unstring

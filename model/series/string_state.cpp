@@ -7,8 +7,8 @@
 namespace unstring {
 namespace {
 
-/// Lamps that burnt and have left, counted below each position. A pole that is down has left nothing: nobody spliced
-/// the loop across it.
+/// Lamps that burnt and have left, counted below each position. A pole that is down has left nothing: nobody
+/// spliced the loop across it.
 std::vector<int> count_left_before(const StringLoop& loop, const std::vector<char>& live) {
     std::vector<int> before(live.size() + 2, 0);
     for (std::size_t p = 1; p <= live.size(); ++p)
@@ -16,13 +16,15 @@ std::vector<int> count_left_before(const StringLoop& loop, const std::vector<cha
     return before;
 }
 
-EnergisedLoop loop_of_state(const StringLoop& loop, const std::vector<char>& live, const std::vector<char>& burning) {
+EnergisedLoop loop_of_state(const StringLoop& loop, const std::vector<char>& live,
+                            const std::vector<char>& burning) {
     const std::vector<int> left_before = count_left_before(loop, live);
     std::vector<LoopCutBack> usable;
     std::vector<int> place_of;
     for (std::size_t k = 0; k < loop.cutbacks.size(); ++k) {
         const LoopCutBack& cutback = loop.cutbacks[k];
-        const int left = left_before[static_cast<std::size_t>(cutback.b)] - left_before[static_cast<std::size_t>(cutback.a) + 1];
+        const int left = left_before[static_cast<std::size_t>(cutback.b)] -
+                         left_before[static_cast<std::size_t>(cutback.a) + 1];
         if (left == 0) continue;
         usable.push_back(cutback);
         place_of.push_back(static_cast<int>(k));
@@ -32,7 +34,7 @@ EnergisedLoop loop_of_state(const StringLoop& loop, const std::vector<char>& liv
     return energised;
 }
 
-}  // namespace
+} // namespace
 
 StringState string_state(const StringLoop& loop, const std::vector<char>& live, double ageing_frac) {
     if (live.size() != loop.lamps.size()) throw std::logic_error("string_state: one flag per lamp is wanted");
@@ -51,8 +53,8 @@ StringState string_state(const StringLoop& loop, const std::vector<char>& live, 
     lamp_w.insert(lamp_w.end(), loop.aside_w.begin(), loop.aside_w.end());
     lamp_pf.insert(lamp_pf.end(), loop.aside_pf.begin(), loop.aside_pf.end());
     EnergisedLoop energised = loop_of_state(loop, live, burning);
-    const StringLoad load =
-        string_load(loop.current_a, *loop.cable, energised.cable_m, kStringCableC, lamp_w, lamp_pf, ageing_frac);
+    const StringLoad load = string_load(loop.current_a, *loop.cable, energised.cable_m, kStringCableC, lamp_w,
+                                        lamp_pf, ageing_frac);
     state.load_kw = load.load_kw;
     state.load_kva = load.load_kva;
     state.volts = load.volts;
@@ -64,4 +66,4 @@ StringState string_state(const StringLoop& loop, const std::vector<char>& live, 
     return state;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -13,15 +13,22 @@ Verdict verdict_of(bool has_transformer, int lamps, double loading_frac, double 
 
 const char* text_of(Verdict verdict) {
     switch (verdict) {
-        case Verdict::open: return "open";
-        case Verdict::over: return "over";
-        case Verdict::tight: return "tight";
-        case Verdict::good: return "good";
-        case Verdict::light: return "light";
-        case Verdict::low: return "low";
-        case Verdict::none: return "none";
+    case Verdict::open:
+        return "open";
+    case Verdict::over:
+        return "over";
+    case Verdict::tight:
+        return "tight";
+    case Verdict::good:
+        return "good";
+    case Verdict::light:
+        return "light";
+    case Verdict::low:
+        return "low";
+    case Verdict::none:
+        return "none";
     }
     return "none";
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -20,4 +20,4 @@ enum class Schedule { pvc_40, pvc_80 };
 /// @param area_mm2  area of each wire over its insulation, grounding wire included
 [[nodiscard]] std::optional<double> conduit_for(Schedule schedule, std::span<const double> area_mm2);
 
-}  // namespace unstring
+} // namespace unstring

@@ -16,7 +16,7 @@ Sign sign_of(char c) {
 
 bool is_number(const std::string& part) { return !part.empty() && sign_of(part.front()) == Sign::digit; }
 
-}  // namespace
+} // namespace
 
 std::vector<std::string> id_parts(std::string_view id) {
     std::vector<std::string> parts;
@@ -43,10 +43,11 @@ bool is_before_by_number(std::string_view a, std::string_view b) {
     const std::vector<std::string> left = id_parts(a), right = id_parts(b);
     for (std::size_t i = 0; i < std::min(left.size(), right.size()); ++i) {
         if (left[i] == right[i]) continue;
-        if (is_number(left[i]) && is_number(right[i]) && left[i].size() != right[i].size()) return left[i].size() < right[i].size();
+        if (is_number(left[i]) && is_number(right[i]) && left[i].size() != right[i].size())
+            return left[i].size() < right[i].size();
         return left[i] < right[i];
     }
     return left.size() != right.size() ? left.size() < right.size() : a < b;
 }
 
-}  // namespace unstring
+} // namespace unstring

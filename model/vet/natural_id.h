@@ -16,4 +16,4 @@ namespace unstring {
 /// Order of the parts, digits as numbers.
 [[nodiscard]] bool is_before_by_number(std::string_view a, std::string_view b);
 
-}  // namespace unstring
+} // namespace unstring

@@ -10,8 +10,8 @@
 namespace unstring {
 namespace {
 
-/// The records that the errors of one table name: by row where a finding has one (of two records with one id only that
-/// in the row is meant), else by id.
+/// The records that the errors of one table name: by row where a finding has one (of two records with one id
+/// only that in the row is meant), else by id.
 struct NamedRecords {
     std::unordered_multimap<long, const Finding*> by_row;
     std::unordered_set<std::string_view> by_id;
@@ -39,13 +39,14 @@ NamedRecords records_of(const std::vector<Finding>& findings, std::string_view t
 }
 
 template <class Table, class IdOf>
-void set_aside_named(Table& records, std::string_view table, const std::vector<Finding>& findings, IdOf id_of) {
+void set_aside_named(Table& records, std::string_view table, const std::vector<Finding>& findings,
+                     IdOf id_of) {
     const NamedRecords named = records_of(findings, table);
     for (auto& record : records)
         if (named.has(id_of(record), record.from)) record.set_aside = true;
 }
 
-}  // namespace
+} // namespace
 
 City set_aside_errors(City city, const std::vector<Finding>& findings) {
     const auto own_id = [](const auto& record) -> const std::string& { return record.id; };
@@ -54,7 +55,8 @@ City set_aside_errors(City city, const std::vector<Finding>& findings) {
     set_aside_named(city.transformers, kTransformersTable, findings, own_id);
     set_aside_named(city.services, kServicesTable, findings, own_id);
     // A cut-back has no id of its own: its findings name its string, and it by its row.
-    set_aside_named(city.cutbacks, kCutbacksTable, findings, [](const CutBack& row) -> const std::string& { return row.string_given; });
+    set_aside_named(city.cutbacks, kCutbacksTable, findings,
+                    [](const CutBack& row) -> const std::string& { return row.string_given; });
     for (Pole& pole : city.poles)
         if (pole.string.is_valid() && city.strings[pole.string.place()].set_aside) pole.set_aside = true;
     return city;
@@ -72,4 +74,4 @@ City with_wiring(City city, const std::vector<VetString>& strings) {
     return city;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -5,10 +5,10 @@
 
 namespace unstring {
 
-void VetInput::add(std::string code, const char* table, const RowRef& from, std::string record, std::string found,
-                   std::string wanted, std::string remedy) const {
-    findings.push_back(make_finding(std::move(code), from.file, from.row, std::move(record), std::move(found), std::move(wanted),
-                                    std::move(remedy), table));
+void VetInput::add(std::string code, const char* table, const RowRef& from, std::string record,
+                   std::string found, std::string wanted, std::string remedy) const {
+    findings.push_back(make_finding(std::move(code), from.file, from.row, std::move(record), std::move(found),
+                                    std::move(wanted), std::move(remedy), table));
 }
 
 VetResult vet_city(const City& city, const Catalog& catalog) {
@@ -23,10 +23,11 @@ VetResult vet_city(const City& city, const Catalog& catalog) {
     vet_units(vet);
     vet_orders(vet);
     vet_cutbacks(vet);
-    // A record in error must not bend the strings' loads: they are judged without it, as the next step would see them.
+    // A record in error must not bend the strings' loads: they are judged without it, as the next step would
+    // see them.
     const City believed = set_aside_errors(city, result.findings);
     result.strings = vet_strings({believed, catalog, vet.extent, vet.year, result.findings});
     return result;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -21,8 +21,9 @@ void vet_pole_ids(const VetInput& vet) {
         if (pole.set_aside) continue;
         const auto [first, is_new] = by_id.try_emplace(pole.id, &pole);
         if (!is_new) {
-            vet.add("pole-id-twice", kPolesTable, pole.from, pole.id, fmt::format("also in row {}", first->second->from.row),
-                    "one row for each pole", "give one of the two its own id, or delete the second row");
+            vet.add("pole-id-twice", kPolesTable, pole.from, pole.id,
+                    fmt::format("also in row {}", first->second->from.row), "one row for each pole",
+                    "give one of the two its own id, or delete the second row");
             continue;
         }
         const auto [alike, is_first] = by_squeezed.try_emplace(squeezed_id(pole.id), &pole);
@@ -58,7 +59,8 @@ void vet_twin_places(const VetInput& vet) {
         if (pole.set_aside || !stands || !pole.has_place || !is_believed(vet.extent, pole.place)) continue;
         if (const Pole* twin = twin_in(by_cell, pole); twin != nullptr)
             vet.add("pole-near-twin", kPolesTable, pole.from, pole.id,
-                    fmt::format("{:.1f} m from {} in row {}", distance_m(twin->place, pole.place), twin->id, twin->from.row),
+                    fmt::format("{:.1f} m from {} in row {}", distance_m(twin->place, pole.place), twin->id,
+                                twin->from.row),
                     "one row for each pole", "if it is the same pole, delete one row");
         by_cell[cell_of(pole.place)].push_back(&pole);
     }
@@ -69,10 +71,13 @@ void vet_unit_ids(const VetInput& vet) {
     for (const Transformer& unit : vet.city.transformers) {
         if (unit.set_aside) continue;
         if (const auto [first, is_new] = by_id.try_emplace(unit.id, &unit); !is_new)
-            vet.add("transformer-twice", kTransformersTable, unit.from, unit.id, fmt::format("also in row {}", first->second->from.row),
-                    "one row for each unit, or two that differ in the string alone", "give one of the two its own id");
+            vet.add("transformer-twice", kTransformersTable, unit.from, unit.id,
+                    fmt::format("also in row {}", first->second->from.row),
+                    "one row for each unit, or two that differ in the string alone",
+                    "give one of the two its own id");
         else if (unit.strings.size() > 2)
-            vet.add("transformer-twice", kTransformersTable, unit.from, unit.id, fmt::format("feeds {} strings", unit.strings.size()),
+            vet.add("transformer-twice", kTransformersTable, unit.from, unit.id,
+                    fmt::format("feeds {} strings", unit.strings.size()),
                     "one string, or two of a two-loop unit", "mend the string_id of its rows");
         else if (unit.strings.size() == 2 && unit.strings[0] == unit.strings[1])
             vet.add("transformer-twice", kTransformersTable, unit.from, unit.id, "two rows with one string",
@@ -80,7 +85,7 @@ void vet_unit_ids(const VetInput& vet) {
     }
 }
 
-}  // namespace
+} // namespace
 
 void vet_ids(const VetInput& vet) {
     vet_pole_ids(vet);
@@ -88,4 +93,4 @@ void vet_ids(const VetInput& vet) {
     vet_unit_ids(vet);
 }
 
-}  // namespace unstring
+} // namespace unstring

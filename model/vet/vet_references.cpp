@@ -17,8 +17,9 @@ void vet_string_of_poles(const VetInput& vet) {
     for (const Pole& pole : vet.city.poles) {
         const bool may_be_blank = pole.status == PoleStatus::proposed || pole.status == PoleStatus::not_ours;
         if (pole.set_aside || pole.string.is_valid() || (pole.string_given.empty() && may_be_blank)) continue;
-        vet.add("string-unknown", kPolesTable, pole.from, pole.id, pole.string_given.empty() ? "nothing" : pole.string_given,
-                kWantString, "mend the id, add the circuit, or set the pole aside");
+        vet.add("string-unknown", kPolesTable, pole.from, pole.id,
+                pole.string_given.empty() ? "nothing" : pole.string_given, kWantString,
+                "mend the id, add the circuit, or set the pole aside");
     }
 }
 
@@ -58,14 +59,16 @@ void vet_ends_of_cutbacks(const VetInput& vet) {
     for (const CutBack& cutback : vet.city.cutbacks) {
         if (cutback.set_aside) continue;
         if (!cutback.string.is_valid()) {
-            vet.add("string-unknown", kCutbacksTable, cutback.from, cutback.string_given, cutback.string_given, kWantString,
-                    "mend the id, or set the cut-back aside");
+            vet.add("string-unknown", kCutbacksTable, cutback.from, cutback.string_given,
+                    cutback.string_given, kWantString, "mend the id, or set the cut-back aside");
             continue;
         }
         for (const std::string& end : {cutback.pole_a, cutback.pole_b})
-            if (in_city.contains(end) && !on_string.contains(fmt::format("{}|{}", cutback.string.place(), end)))
-                vet.add("pole-unknown", kCutbacksTable, cutback.from, cutback.string_given, end + ", which is not on that string",
-                        "a pole of that string, \"out\" or \"return\"", "mend the id; until then the cut-back is not used");
+            if (in_city.contains(end) &&
+                !on_string.contains(fmt::format("{}|{}", cutback.string.place(), end)))
+                vet.add("pole-unknown", kCutbacksTable, cutback.from, cutback.string_given,
+                        end + ", which is not on that string", "a pole of that string, \"out\" or \"return\"",
+                        "mend the id; until then the cut-back is not used");
     }
 }
 
@@ -77,12 +80,13 @@ void vet_controls(const VetInput& vet) {
         const bool is_own = string.control_from == string.id;
         if ((by_string.is_valid() || by_pole.is_valid()) && !is_own) continue;
         vet.add("control-unknown", kCircuitsTable, string.from, string.id, string.control_from,
-                is_own ? "blank where a string controls itself" : "the string or the pole that switches this one",
+                is_own ? "blank where a string controls itself"
+                       : "the string or the pole that switches this one",
                 "mend control_from: else nobody sees that retiring another string leaves this one dark");
     }
 }
 
-}  // namespace
+} // namespace
 
 void vet_references(const VetInput& vet) {
     vet_string_of_poles(vet);
@@ -91,4 +95,4 @@ void vet_references(const VetInput& vet) {
     vet_controls(vet);
 }
 
-}  // namespace unstring
+} // namespace unstring

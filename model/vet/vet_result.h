@@ -17,7 +17,7 @@ struct VetString {
     int lamps = 0;
     OrderFrom order = OrderFrom::given;
     double order_confidence_frac = 1;
-    std::vector<PoleIx> wiring;  ///< lamps in the order that was settled
+    std::vector<PoleIx> wiring; ///< lamps in the order that was settled
     double load_kw = 0, load_kva = 0, volts = 0, cable_m = 0;
     TransformerIx transformer;
     double tap = 1, loading_frac = 0;
@@ -26,7 +26,7 @@ struct VetString {
 
 struct VetResult {
     std::vector<Finding> findings;
-    std::vector<VetString> strings;  ///< series strings only, in the order of the city
+    std::vector<VetString> strings; ///< series strings only, in the order of the city
 };
 
 /// Never fails because of data.
@@ -35,7 +35,8 @@ struct VetResult {
 /// The city with the wiring order that vet settled written into Pole::order; every later step takes this one.
 [[nodiscard]] City with_wiring(City city, const std::vector<VetString>& strings);
 
-/// The city with set_aside on every record that an error finding names (and on every pole of a string set aside).
+/// The city with set_aside on every record that an error finding names (and on every pole of a string set
+/// aside).
 [[nodiscard]] City set_aside_errors(City city, const std::vector<Finding>& findings);
 
-}  // namespace unstring
+} // namespace unstring

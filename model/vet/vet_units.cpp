@@ -29,7 +29,8 @@ void vet_current(const VetInput& vet, const Transformer& unit) {
         if (!string.current_a) continue;
         if (current && std::abs(*current - *string.current_a) > kSameCurrent_a)
             vet.add("current-mixed", kCircuitsTable, string.from, string.id,
-                    fmt::format("{:g} A, {} {:g} A", *string.current_a, whose, *current), "one current in unit and string",
+                    fmt::format("{:g} A, {} {:g} A", *string.current_a, whose, *current),
+                    "one current in unit and string",
                     "read the nameplate; mend current_a, output_a or string_id");
         if (!current) {
             current = string.current_a;
@@ -39,21 +40,23 @@ void vet_current(const VetInput& vet, const Transformer& unit) {
 }
 
 void vet_state(const VetInput& vet, const Transformer& unit) {
-    const bool feeds = std::any_of(unit.strings.begin(), unit.strings.end(), [](StringIx string) { return string.is_valid(); });
+    const bool feeds = std::any_of(unit.strings.begin(), unit.strings.end(),
+                                   [](StringIx string) { return string.is_valid(); });
     if (unit.state == UnitState::in_service && !feeds)
-        vet.add("unit-state", kTransformersTable, unit.from, unit.id, "in service without a string", "the string it feeds, or state spare",
-                "give string_id or mend the state");
+        vet.add("unit-state", kTransformersTable, unit.from, unit.id, "in service without a string",
+                "the string it feeds, or state spare", "give string_id or mend the state");
     if (unit.state != UnitState::in_service && feeds)
         vet.add("unit-state", kTransformersTable, unit.from, unit.id,
-                fmt::format("{} with string {}", text_of(unit.state), unit.strings_given.empty() ? "" : unit.strings_given.front()),
+                fmt::format("{} with string {}", text_of(unit.state),
+                            unit.strings_given.empty() ? "" : unit.strings_given.front()),
                 "state in-service for a unit that feeds a string", "mend the state or clear string_id");
     if (unit.state == UnitState::spare && is_untested(unit, vet.year))
         vet.add("untested-spare", kTransformersTable, unit.from, unit.id,
-                unit.tested.empty() ? "never tested" : "tested " + unit.tested, "a test in the last five years",
-                "test it before the plan leans on it");
+                unit.tested.empty() ? "never tested" : "tested " + unit.tested,
+                "a test in the last five years", "test it before the plan leans on it");
 }
 
-}  // namespace
+} // namespace
 
 void vet_units(const VetInput& vet) {
     std::map<StringIx, const Transformer*> feeder_of;
@@ -67,11 +70,11 @@ void vet_units(const VetInput& vet) {
             const auto [first, is_new] = feeder_of.try_emplace(string, &unit);
             if (is_new || first->second->id == unit.id) continue;
             vet.add("transformer-twice", kTransformersTable, unit.from, unit.id,
-                    fmt::format("feeds string {}, as does {} in row {}", vet.city.strings[string.place()].id, first->second->id,
-                                first->second->from.row),
+                    fmt::format("feeds string {}, as does {} in row {}", vet.city.strings[string.place()].id,
+                                first->second->id, first->second->from.row),
                     "one unit for each string", "mend string_id or the state of one of them");
         }
     }
 }
 
-}  // namespace unstring
+} // namespace unstring

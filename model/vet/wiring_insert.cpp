@@ -9,11 +9,12 @@ namespace {
 
 constexpr double kGain_m = 1e-7;
 constexpr int kMostPasses = 50;
-constexpr std::size_t kWindow = 16;  // slots rearranged at once
+constexpr std::size_t kWindow = 16; // slots rearranged at once
 
 class Insertion {
-  public:
-    Insertion(const DistanceTable& distances, const std::vector<std::optional<int>>& numbers) : d_(distances) {
+public:
+    Insertion(const DistanceTable& distances, const std::vector<std::optional<int>>& numbers)
+        : d_(distances) {
         std::vector<int> numbered;
         for (std::size_t stop = 1; stop < numbers.size(); ++stop)
             (numbers[stop] ? numbered : loose_).push_back(static_cast<int>(stop));
@@ -33,24 +34,29 @@ class Insertion {
         return order_;
     }
 
-  private:
+private:
     /// Numbers from 1..n, all different, so that each stop without one belongs into one gap.
-    [[nodiscard]] bool fills_gaps(const std::vector<std::optional<int>>& numbers, const std::vector<int>& numbered) const {
+    [[nodiscard]] bool fills_gaps(const std::vector<std::optional<int>>& numbers,
+                                  const std::vector<int>& numbered) const {
         std::set<int> seen;
         for (const int stop : numbered) seen.insert(*numbers[static_cast<std::size_t>(stop)]);
         const int lamps = static_cast<int>(numbered.size() + loose_.size());
-        return !loose_.empty() && !seen.empty() && seen.size() == numbered.size() && *seen.begin() >= 1 && *seen.rbegin() <= lamps;
+        return !loose_.empty() && !seen.empty() && seen.size() == numbered.size() && *seen.begin() >= 1 &&
+               *seen.rbegin() <= lamps;
     }
 
     void open_slots(const std::vector<std::optional<int>>& numbers, const std::vector<int>& numbered) {
         order_.assign(1 + numbered.size() + loose_.size(), -1);
         order_[0] = 0;
-        for (const int stop : numbered) order_[static_cast<std::size_t>(*numbers[static_cast<std::size_t>(stop)])] = stop;
+        for (const int stop : numbered)
+            order_[static_cast<std::size_t>(*numbers[static_cast<std::size_t>(stop)])] = stop;
         for (std::size_t i = 1; i < order_.size(); ++i)
             if (order_[i] < 0) slots_.push_back(i);
     }
 
-    [[nodiscard]] double d(int a, int b) const { return d_(static_cast<std::size_t>(a), static_cast<std::size_t>(b)); }
+    [[nodiscard]] double d(int a, int b) const {
+        return d_(static_cast<std::size_t>(a), static_cast<std::size_t>(b));
+    }
     [[nodiscard]] int stop_at(std::size_t i) const { return order_[i == order_.size() ? 0 : i]; }
 
     /// The two legs of the stop at place i.
@@ -58,7 +64,8 @@ class Insertion {
         return d(order_[i - 1], order_[i]) + d(order_[i], stop_at(i + 1));
     }
 
-    /// Distance of a stop to where the slot should lie: between the numbered stops before and after it, by its share.
+    /// Distance of a stop to where the slot should lie: between the numbered stops before and after it, by
+    /// its share.
     [[nodiscard]] double misfit_m(std::size_t slot, int stop) const {
         std::size_t before = slot, after = slot;
         while (order_[before] < 0) --before;
@@ -67,7 +74,8 @@ class Insertion {
         return (1 - share) * d(order_[before], stop) + share * d(stop_at(after), stop);
     }
 
-    /// The best fitting pairs of slot and stop first; then slots change places, turn round or shift while that shortens the loop.
+    /// The best fitting pairs of slot and stop first; then slots change places, turn round or shift while
+    /// that shortens the loop.
     void fill_slots() {
         std::vector<std::tuple<double, std::size_t, int>> fits;
         for (const std::size_t slot : slots_)
@@ -80,7 +88,8 @@ class Insertion {
         for (int pass = 0; is_better && pass < kMostPasses; ++pass) {
             is_better = false;
             for (std::size_t x = 0; x < slots_.size(); ++x)
-                for (std::size_t y = x + 1; y < std::min(slots_.size(), x + kWindow); ++y) is_better = rearrange(x, y) || is_better;
+                for (std::size_t y = x + 1; y < std::min(slots_.size(), x + kWindow); ++y)
+                    is_better = rearrange(x, y) || is_better;
         }
     }
 
@@ -118,7 +127,8 @@ class Insertion {
     [[nodiscard]] std::pair<double, std::size_t> cheapest_place(int stop) const {
         std::pair<double, std::size_t> best{0, 0};
         for (std::size_t i = 1; i <= order_.size(); ++i) {
-            const double longer_m = d(order_[i - 1], stop) + d(stop, stop_at(i)) - d(order_[i - 1], stop_at(i));
+            const double longer_m =
+                d(order_[i - 1], stop) + d(stop, stop_at(i)) - d(order_[i - 1], stop_at(i));
             if (best.second == 0 || longer_m < best.first - kGain_m) best = {longer_m, i};
         }
         return best;
@@ -146,7 +156,8 @@ class Insertion {
     }
 
     bool move_loose(int stop) {
-        const auto at = static_cast<std::size_t>(std::find(order_.begin(), order_.end(), stop) - order_.begin());
+        const auto at =
+            static_cast<std::size_t>(std::find(order_.begin(), order_.end(), stop) - order_.begin());
         const double freed_m = detour_m(at) - d(order_[at - 1], stop_at(at + 1));
         order_.erase(order_.begin() + static_cast<long>(at));
         const auto place = cheapest_place(stop);
@@ -157,13 +168,14 @@ class Insertion {
 
     const DistanceTable& d_;
     std::vector<int> order_, loose_;
-    std::vector<std::size_t> slots_;  ///< places in order_ that the numbering leaves open
+    std::vector<std::size_t> slots_; ///< places in order_ that the numbering leaves open
 };
 
-}  // namespace
+} // namespace
 
-std::vector<int> insert_unnumbered(const DistanceTable& distances, const std::vector<std::optional<int>>& numbers) {
+std::vector<int> insert_unnumbered(const DistanceTable& distances,
+                                   const std::vector<std::optional<int>>& numbers) {
     return Insertion(distances, numbers).run();
 }
 
-}  // namespace unstring
+} // namespace unstring

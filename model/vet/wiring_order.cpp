@@ -15,11 +15,12 @@ namespace {
 constexpr double kPerCrossing_m = 15;
 constexpr double kShake_frac = 0.1;
 constexpr int kShakes = 8;
-constexpr double kNumbersAsShort = 1.02;  // of the shortest route found
-constexpr double kLongestChecked_m = 300; // pairs farther apart are no neighbours: their crossings are not counted
+constexpr double kNumbersAsShort = 1.02; // of the shortest route found
+constexpr double kLongestChecked_m =
+    300; // pairs farther apart are no neighbours: their crossings are not counted
 
-struct Stops {  ///< 0 = the station, then lamps that have a place
-    bool has_station = false;  ///< else stop 0 lies at no distance from any and the loop is closed without it
+struct Stops {                ///< 0 = the station, then lamps that have a place
+    bool has_station = false; ///< else stop 0 lies at no distance from any and the loop is closed without it
     std::vector<MapPoint> places;
     std::vector<PoleIx> lamps;
     std::vector<std::optional<int>> numbers;
@@ -55,14 +56,18 @@ DistanceTable street_distances(const Stops& stops, const StreetIndex& streets) {
         for (std::size_t b = 0; b < a; ++b) {
             if (b == 0 && !stops.has_station) distances.set(a, b, 0);
             if (distances(a, b) > kLongestChecked_m || (b == 0 && !stops.has_station)) continue;
-            distances.set(a, b, distances(a, b) + kPerCrossing_m * streets.crossings(stops.places[a], stops.places[b]));
+            distances.set(
+                a, b, distances(a, b) + kPerCrossing_m * streets.crossings(stops.places[a], stops.places[b]));
         }
     return distances;
 }
 
 double length_m(const DistanceTable& distances, const Stops& stops, const std::vector<int>& order) {
-    const auto between_m = [&](int a, int b) { return distances(static_cast<std::size_t>(a), static_cast<std::size_t>(b)); };
-    double metres = stops.has_station ? between_m(order.back(), order.front()) : between_m(order.back(), order[1]);
+    const auto between_m = [&](int a, int b) {
+        return distances(static_cast<std::size_t>(a), static_cast<std::size_t>(b));
+    };
+    double metres =
+        stops.has_station ? between_m(order.back(), order.front()) : between_m(order.back(), order[1]);
     for (std::size_t i = 1; i < order.size(); ++i) metres += between_m(order[i - 1], order[i]);
     return metres;
 }
@@ -125,7 +130,8 @@ DistanceTable shaken(const DistanceTable& distances, std::mt19937_64& random) {
     return out;
 }
 
-double confidence_of(const DistanceTable& distances, const Stops& stops, bool any_number, const std::vector<int>& order) {
+double confidence_of(const DistanceTable& distances, const Stops& stops, bool any_number,
+                     const std::vector<int>& order) {
     const auto pairs = neighbour_pairs(order);
     std::mt19937_64 random(stops.lamps.size());
     double stayed = 0;
@@ -137,16 +143,18 @@ double confidence_of(const DistanceTable& distances, const Stops& stops, bool an
 
 /// Of the two ways round, the one whose first lamp lies nearer the station.
 void turn_to_nearer(const DistanceTable& distances, std::vector<int>& order) {
-    if (distances(0, static_cast<std::size_t>(order.back())) < distances(0, static_cast<std::size_t>(order[1])))
+    if (distances(0, static_cast<std::size_t>(order.back())) <
+        distances(0, static_cast<std::size_t>(order[1])))
         std::reverse(order.begin() + 1, order.end());
 }
 
-}  // namespace
+} // namespace
 
 SettledOrder settle_order(const City& city, const Extent& extent, const StreetIndex& streets, StringIx string,
                           const std::vector<PoleIx>& lamps) {
     SettledOrder settled{OrderFrom::given, 1, lamps};
-    const auto numbered = std::count_if(lamps.begin(), lamps.end(), [&](PoleIx lamp) { return has_number(city.poles[lamp.place()]); });
+    const auto numbered = std::count_if(lamps.begin(), lamps.end(),
+                                        [&](PoleIx lamp) { return has_number(city.poles[lamp.place()]); });
     if (numbered == static_cast<long>(lamps.size())) return settled;
     const bool any_number = numbered > 0;
     settled.from = any_number ? OrderFrom::partial : OrderFrom::inferred;
@@ -164,7 +172,8 @@ SettledOrder settle_order(const City& city, const Extent& extent, const StreetIn
         }
         settled.confidence_frac = confidence_of(distances, stops, any_number, order);
         settled.wiring.clear();
-        for (std::size_t i = 1; i < order.size(); ++i) settled.wiring.push_back(stops.lamps[static_cast<std::size_t>(order[i])]);
+        for (std::size_t i = 1; i < order.size(); ++i)
+            settled.wiring.push_back(stops.lamps[static_cast<std::size_t>(order[i])]);
     } else {
         settled.wiring.clear();
     }
@@ -172,4 +181,4 @@ SettledOrder settle_order(const City& city, const Extent& extent, const StreetIn
     return settled;
 }
 
-}  // namespace unstring
+} // namespace unstring

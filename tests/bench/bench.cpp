@@ -1,4 +1,5 @@
-// The speed table of ./dev bench: ours beside a reference measured in the same run; below 1 ours is the faster one.
+// The speed table of ./dev bench: ours beside a reference measured in the same run; below 1 ours is the
+// faster one.
 
 #include <cstdio>
 #include <filesystem>
@@ -22,12 +23,13 @@ namespace {
 using namespace unstring;
 using unstring::bench::row;
 
-volatile double keep_result = 0;  // what is worked out must not be optimised away
+volatile double keep_result = 0; // what is worked out must not be optimised away
 
 void bench_sun() {
     constexpr int kCount = 20000;
     const LonLat place{-130, 34};
-    row("sun position, bulk", "full solar position algorithm", kCount, "position",
+    row(
+        "sun position, bulk", "full solar position algorithm", kCount, "position",
         [&] {
             double sum = 0;
             for (int i = 0; i < kCount; ++i) sum += psa_sun(9000 + i / 24.0, place).elevation_deg;
@@ -40,7 +42,8 @@ void bench_sun() {
         });
 }
 
-double loop_by_brute_force(const std::vector<double>& legs, const std::vector<char>& live, const std::vector<LoopCutBack>& cutbacks) {
+double loop_by_brute_force(const std::vector<double>& legs, const std::vector<char>& live,
+                           const std::vector<LoopCutBack>& cutbacks) {
     double best = std::accumulate(legs.begin(), legs.end(), 0.0);
     const double whole = best;
     for (unsigned choice = 1; choice < (1U << cutbacks.size()); ++choice) {
@@ -51,7 +54,8 @@ double loop_by_brute_force(const std::vector<double>& legs, const std::vector<ch
             if ((choice >> i & 1U) == 0) continue;
             const LoopCutBack& c = cutbacks[i];
             is_good = c.a >= end;
-            for (int p = c.a + 1; p < c.b && is_good; ++p) is_good = live[static_cast<std::size_t>(p - 1)] == 0;
+            for (int p = c.a + 1; p < c.b && is_good; ++p)
+                is_good = live[static_cast<std::size_t>(p - 1)] == 0;
             for (int p = c.a; p < c.b && is_good; ++p) metres -= legs[static_cast<std::size_t>(p)];
             metres += c.new_cable_m;
             end = c.b;
@@ -68,8 +72,11 @@ void bench_loop() {
     std::vector<char> live(kLamps, 1);
     for (int i = 20; i < 40; ++i) live[static_cast<std::size_t>(i)] = 0;
     std::vector<LoopCutBack> cutbacks;
-    for (int a = 5; a + 4 < kLamps; a += 5) cutbacks.push_back({a, a + 4, 20.0 + static_cast<double>(random() % 9), -1, true, CutBackKind::pullbox});
-    row("energised loop, 60 lamps", "every choice of cut-backs tried", kRounds, "state",
+    for (int a = 5; a + 4 < kLamps; a += 5)
+        cutbacks.push_back(
+            {a, a + 4, 20.0 + static_cast<double>(random() % 9), -1, true, CutBackKind::pullbox});
+    row(
+        "energised loop, 60 lamps", "every choice of cut-backs tried", kRounds, "state",
         [&] {
             for (int i = 0; i < kRounds; ++i) keep_result = energised_loop(legs, live, cutbacks).cable_m;
         },
@@ -82,11 +89,14 @@ void bench_loop() {
 double spanning_tree_cost(const SteinerProblem& problem) {
     std::vector<std::size_t> order(problem.edges.size());
     std::iota(order.begin(), order.end(), std::size_t{0});
-    std::sort(order.begin(), order.end(), [&](std::size_t a, std::size_t b) { return problem.edges[a].cost < problem.edges[b].cost; });
+    std::sort(order.begin(), order.end(),
+              [&](std::size_t a, std::size_t b) { return problem.edges[a].cost < problem.edges[b].cost; });
     std::vector<int> parent(problem.prize.size());
     std::iota(parent.begin(), parent.end(), 0);
     const auto find = [&](int v) {
-        while (parent[static_cast<std::size_t>(v)] != v) v = parent[static_cast<std::size_t>(v)] = parent[static_cast<std::size_t>(parent[static_cast<std::size_t>(v)])];
+        while (parent[static_cast<std::size_t>(v)] != v)
+            v = parent[static_cast<std::size_t>(v)] =
+                parent[static_cast<std::size_t>(parent[static_cast<std::size_t>(v)])];
         return v;
     };
     double cost = 0;
@@ -107,13 +117,19 @@ void bench_trench(int side) {
     problem.prize.assign(static_cast<std::size_t>(n), 0);
     problem.must.assign(static_cast<std::size_t>(n), 0);
     for (int i = 1; i < n; ++i)
-        if (random() % 4 == 0) problem.prize[static_cast<std::size_t>(i)] = 100000 + static_cast<std::int64_t>(random() % 400000);
+        if (random() % 4 == 0)
+            problem.prize[static_cast<std::size_t>(i)] =
+                100000 + static_cast<std::int64_t>(random() % 400000);
     for (int i = 0; i < n; ++i) {
-        if (i % side + 1 < side) problem.edges.push_back({i, i + 1, 80000 + static_cast<std::int64_t>(random() % 150000)});
-        if (i + side < n) problem.edges.push_back({i, i + side, 80000 + static_cast<std::int64_t>(random() % 150000)});
+        if (i % side + 1 < side)
+            problem.edges.push_back({i, i + 1, 80000 + static_cast<std::int64_t>(random() % 150000)});
+        if (i + side < n)
+            problem.edges.push_back({i, i + side, 80000 + static_cast<std::int64_t>(random() % 150000)});
     }
     double gap = 0;
-    row(fmt::format("shared trench, {} vertices, with bound", n), "least spanning tree alone, by sorted edges", 1, "problem",
+    row(
+        fmt::format("shared trench, {} vertices, with bound", n),
+        "least spanning tree alone, by sorted edges", 1, "problem",
         [&] {
             const SteinerAnswer answer = solve_steiner(problem);
             gap = static_cast<double>(answer.cost - answer.bound) / static_cast<double>(answer.cost);
@@ -129,7 +145,9 @@ void bench_poles(const std::string& folder, long poles) {
     files.poles = folder + "/poles.csv";
     files.circuits = folder + "/circuits.csv";
     files.crs = "EPSG:32609";
-    row(fmt::format("gather, {} poles", poles), "GDAL's own reader of the same file", static_cast<double>(poles), "pole",
+    row(
+        fmt::format("gather, {} poles", poles), "GDAL's own reader of the same file",
+        static_cast<double>(poles), "pole",
         [&] {
             const auto gathered = read_files(files, nullptr, {});
             keep_result = gathered ? static_cast<double>(gathered->city.poles.size()) : 0;
@@ -139,12 +157,13 @@ void bench_poles(const std::string& folder, long poles) {
             double sum = 0;
             if (file)
                 for (auto& feature : file->GetLayer(0))
-                    for (int i = 0; i < feature->GetFieldCount(); ++i) sum += static_cast<double>(std::string(feature->GetFieldAsString(i)).size());
+                    for (int i = 0; i < feature->GetFieldCount(); ++i)
+                        sum += static_cast<double>(std::string(feature->GetFieldAsString(i)).size());
             keep_result = sum;
         });
 }
 
-}  // namespace
+} // namespace
 
 int main() {
     GDALAllRegister();

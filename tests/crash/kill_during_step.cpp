@@ -11,12 +11,15 @@ using namespace std::chrono;
 namespace {
 
 void copy_project(const std::string& from, const std::string& to) {
-    for (const char* suffix : {"", "-wal", "-shm", "-journal", ".lock", ".new"}) std::filesystem::remove(to + suffix);
+    for (const char* suffix : {"", "-wal", "-shm", "-journal", ".lock", ".new"})
+        std::filesystem::remove(to + suffix);
     std::filesystem::copy_file(from, to);
 }
 
-// Kills the step at moments spread over the time that it takes, with more of them near the end, where the writing is.
-void check_step(const std::string& before_path, const std::vector<std::string>& step, const TempFolder& folder) {
+// Kills the step at moments spread over the time that it takes, with more of them near the end, where the
+// writing is.
+void check_step(const std::string& before_path, const std::vector<std::string>& step,
+                const TempFolder& folder) {
     const std::string work = folder.file("work.gpkg");
     std::vector<std::string> arguments = step;
     arguments.insert(arguments.begin() + 1, work);
@@ -40,22 +43,26 @@ void check_step(const std::string& before_path, const std::vector<std::string>& 
         untouched += is_before ? 1 : 0;
         done += is_after ? 1 : 0;
     }
-    CHECK(untouched > 0);  // else no kill came in time
+    CHECK(untouched > 0); // else no kill came in time
     copy_project(before_path, work);
-    REQUIRE(run_program(arguments).status == 0);  // the lock of a dead process does not stand in the way
+    REQUIRE(run_program(arguments).status == 0); // the lock of a dead process does not stand in the way
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("crash: a step that is killed leaves the project as it was before or after it") {
     const TempFolder folder;
-    REQUIRE(run_file(UNSTRING_CITY_MAKER, {"--size", "150", "--seed", "5", "--to", folder.file("city")}).status == 0);
+    REQUIRE(
+        run_file(UNSTRING_CITY_MAKER, {"--size", "150", "--seed", "5", "--to", folder.file("city")}).status ==
+        0);
     const std::string project = folder.file("p.gpkg");
-    std::filesystem::remove(folder.file("city") + "/marks.csv");  // a lock may break a check, which would stop hand-out
+    std::filesystem::remove(folder.file("city") +
+                            "/marks.csv"); // a lock may break a check, which would stop hand-out
     const Ran gathered = run_program(gather_arguments(project, folder.file("city")));
     INFO(gathered.err);
     REQUIRE(gathered.status == 0);
-    const std::vector<std::vector<std::string>> steps = {{"vet"}, {"shade"}, {"decide"}, {"phase"}, {"hand-out", "--to", folder.file("orders")}};
+    const std::vector<std::vector<std::string>> steps = {
+        {"vet"}, {"shade"}, {"decide"}, {"phase"}, {"hand-out", "--to", folder.file("orders")}};
     for (const auto& step : steps) {
         check_step(project, step, folder);
         std::vector<std::string> arguments = step;
@@ -68,7 +75,9 @@ TEST_CASE("crash: a step that is killed leaves the project as it was before or a
 
 TEST_CASE("crash: gather that is killed leaves no project, or a whole one") {
     const TempFolder folder;
-    REQUIRE(run_file(UNSTRING_CITY_MAKER, {"--size", "150", "--seed", "5", "--to", folder.file("city")}).status == 0);
+    REQUIRE(
+        run_file(UNSTRING_CITY_MAKER, {"--size", "150", "--seed", "5", "--to", folder.file("city")}).status ==
+        0);
     const std::string project = folder.file("p.gpkg");
     const auto arguments = gather_arguments(project, folder.file("city"));
     const auto start = steady_clock::now();
@@ -86,9 +95,15 @@ TEST_CASE("crash: gather that is killed leaves no project, or a whole one") {
 
 TEST_CASE("crash: gather into a project that is there, killed, leaves the old tables or the new ones") {
     const TempFolder folder;
-    REQUIRE(run_file(UNSTRING_CITY_MAKER, {"--size", "150", "--seed", "5", "--to", folder.file("city")}).status == 0);
-    REQUIRE(run_file(UNSTRING_CITY_MAKER, {"--size", "150", "--seed", "6", "--to", folder.file("other")}).status == 0);
+    REQUIRE(
+        run_file(UNSTRING_CITY_MAKER, {"--size", "150", "--seed", "5", "--to", folder.file("city")}).status ==
+        0);
+    REQUIRE(run_file(UNSTRING_CITY_MAKER, {"--size", "150", "--seed", "6", "--to", folder.file("other")})
+                .status == 0);
     const std::string project = folder.file("p.gpkg");
     REQUIRE(run_program(gather_arguments(project, folder.file("city"))).status == 0);
-    check_step(project, {"gather", "--poles", folder.file("other") + "/poles.csv", "--circuits", folder.file("other") + "/circuits.csv"}, folder);
+    check_step(project,
+               {"gather", "--poles", folder.file("other") + "/poles.csv", "--circuits",
+                folder.file("other") + "/circuits.csv"},
+               folder);
 }

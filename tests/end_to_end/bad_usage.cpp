@@ -15,19 +15,21 @@ void check_fault(const Ran& ran, int status, const std::string& code) {
     CHECK(ran.status == status);
     INFO(ran.out << ran.err);
     const auto fault = ran.json().at("fault");
-    for (const char* key : {"code", "file", "row", "field", "found", "wanted", "remedy"}) CHECK(fault.contains(key));
+    for (const char* key : {"code", "file", "row", "field", "found", "wanted", "remedy"})
+        CHECK(fault.contains(key));
     CHECK(fault["code"] == code);
     CHECK_FALSE(ran.err.empty());
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("command line: bad usage is status 2, a bad file is 3, each with a fault that says what to do") {
     const TempFolder folder;
     check_fault(run_program({"gather", folder.file("p.gpkg"), "--json"}), 2, "bad-usage");
     check_fault(run_program({"gather", "--nonsense", "--json"}), 2, "bad-usage");
     check_fault(run_program({"shade", folder.file("none.gpkg"), "--json"}), 3, "file-missing");
-    check_fault(run_program({"gather", folder.file("p.gpkg"), "--poles", folder.file("none.csv"), "--json"}), 3, "file-missing");
+    check_fault(run_program({"gather", folder.file("p.gpkg"), "--poles", folder.file("none.csv"), "--json"}),
+                3, "file-missing");
     std::ofstream(folder.file("text.gpkg")) << "no database";
     check_fault(run_program({"vet", folder.file("text.gpkg"), "--json"}), 3, "file-broken");
     check_fault(run_program({"work-out", "worth", "--rate", "x", "--years", "3", "--json"}), 2, "bad-usage");
@@ -41,7 +43,8 @@ TEST_CASE("command line: every subcommand answers --help with an example") {
         CHECK(ran.status == 0);
         CHECK(ran.out.find("Example: unstring") != std::string::npos);
     }
-    for (const char* topic : {"sun", "sky", "night", "string", "horizon", "loop", "drop", "trench", "years", "worth", "spares", "route"}) {
+    for (const char* topic : {"sun", "sky", "night", "string", "horizon", "loop", "drop", "trench", "years",
+                              "worth", "spares", "route"}) {
         const Ran ran = run_program({"work-out", topic, "--help"});
         INFO(topic);
         CHECK(ran.status == 0);
@@ -51,10 +54,13 @@ TEST_CASE("command line: every subcommand answers --help with an example") {
 
 TEST_CASE("command line: a step whose forerunner has not run stops with status 1 and says what to run") {
     const TempFolder folder;
-    const std::string project = folder.file("p.gpkg"), poles = folder.file("poles.csv"), circuits = folder.file("circuits.csv");
-    std::ofstream(poles) << "pole_id,string_id,order,easting,northing\nA1,S1,1,400000,3762000\nA2,S1,2,400030,3762000\n";
+    const std::string project = folder.file("p.gpkg"), poles = folder.file("poles.csv"),
+                      circuits = folder.file("circuits.csv");
+    std::ofstream(poles)
+        << "pole_id,string_id,order,easting,northing\nA1,S1,1,400000,3762000\nA2,S1,2,400030,3762000\n";
     std::ofstream(circuits) << "string_id,kind,current_a\nS1,series,6.6\n";
-    REQUIRE(run_program({"gather", project, "--poles", poles, "--circuits", circuits, "--crs", "EPSG:32609"}).status == 0);
+    REQUIRE(run_program({"gather", project, "--poles", poles, "--circuits", circuits, "--crs", "EPSG:32609"})
+                .status == 0);
     const Ran shade = run_program({"shade", project, "--json"});
     CHECK(shade.status == 1);
     CHECK(shade.json()["fault"]["code"] == "not-ready");
@@ -63,7 +69,8 @@ TEST_CASE("command line: a step whose forerunner has not run stops with status 1
     CHECK(run_program({"why", project, "A1", "--json"}).status == 0);
 }
 
-TEST_CASE("command line: while one process writes, another is told so with status 4, and looking still works") {
+TEST_CASE(
+    "command line: while one process writes, another is told so with status 4, and looking still works") {
     const TempFolder folder;
     const std::string project = folder.file("p.gpkg"), poles = folder.file("poles.csv");
     std::ofstream(poles) << "pole_id,easting,northing\nA1,400000,3762000\n";

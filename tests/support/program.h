@@ -24,13 +24,14 @@ extern char** environ;
 namespace unstring::tests {
 
 struct Ran {
-    int status = -1;  ///< exit status; 128 + signal when it was killed
+    int status = -1; ///< exit status; 128 + signal when it was killed
     std::string out, err;
     [[nodiscard]] nlohmann::json json() const { return nlohmann::json::parse(out); }
 };
 
 /// @param kill_after  no limit when zero; else SIGKILL after that time
-inline Ran run_file(const std::string& file, std::vector<std::string> arguments, std::chrono::microseconds kill_after = {}) {
+inline Ran run_file(const std::string& file, std::vector<std::string> arguments,
+                    std::chrono::microseconds kill_after = {}) {
     const TempFolder folder;
     const std::string out = folder.file("out"), err = folder.file("err");
     arguments.insert(arguments.begin(), file);
@@ -66,10 +67,18 @@ inline Ran run_program(std::vector<std::string> arguments, std::chrono::microsec
 /// The options of gather for a folder of city files in our own names.
 inline std::vector<std::string> gather_arguments(const std::string& project, const std::string& city) {
     std::vector<std::string> arguments = {"gather", project, "--json"};
-    const std::pair<const char*, const char*> files[] = {
-        {"--poles", "poles.csv"},       {"--circuits", "circuits.csv"},     {"--transformers", "transformers.csv"}, {"--services", "services.csv"},
-        {"--streets", "streets.gpkg"},  {"--canopy", "canopy.tif"},         {"--obstacles", "buildings.gpkg"},      {"--climate", "climate.csv"},
-        {"--prices", "prices.csv"},     {"--budget", "budget.csv"},         {"--cutbacks", "cutbacks.csv"},         {"--marks", "marks.csv"}};
+    const std::pair<const char*, const char*> files[] = {{"--poles", "poles.csv"},
+                                                         {"--circuits", "circuits.csv"},
+                                                         {"--transformers", "transformers.csv"},
+                                                         {"--services", "services.csv"},
+                                                         {"--streets", "streets.gpkg"},
+                                                         {"--canopy", "canopy.tif"},
+                                                         {"--obstacles", "buildings.gpkg"},
+                                                         {"--climate", "climate.csv"},
+                                                         {"--prices", "prices.csv"},
+                                                         {"--budget", "budget.csv"},
+                                                         {"--cutbacks", "cutbacks.csv"},
+                                                         {"--marks", "marks.csv"}};
     for (const auto& [option, name] : files) {
         const std::string path = city + "/" + name;
         if (!std::filesystem::exists(path)) continue;
@@ -79,4 +88,4 @@ inline std::vector<std::string> gather_arguments(const std::string& project, con
     return arguments;
 }
 
-}  // namespace unstring::tests
+} // namespace unstring::tests

@@ -1,5 +1,6 @@
 #pragma once
-// Everything that a project file holds, as text, without times and durations: two files of equal content are the same project.
+// Everything that a project file holds, as text, without times and durations: two files of equal content are
+// the same project.
 
 #include <regex>
 #include <string>
@@ -16,7 +17,8 @@ inline std::string project_content(const std::string& path) {
     std::string content = database.text("PRAGMA integrity_check").value_or("no answer") + "\n";
     std::vector<std::string> tables;
     {
-        auto names = database.prepare("SELECT name FROM sqlite_master WHERE type='table' AND name NOT LIKE 'sqlite_%' ORDER BY name");
+        auto names = database.prepare(
+            "SELECT name FROM sqlite_master WHERE type='table' AND name NOT LIKE 'sqlite_%' ORDER BY name");
         while (names.step()) tables.push_back(names.text(0));
     }
     for (const std::string& table : tables) {
@@ -36,4 +38,4 @@ inline std::string project_content(const std::string& path) {
     return content;
 }
 
-}  // namespace unstring::tests
+} // namespace unstring::tests

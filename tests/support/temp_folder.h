@@ -9,7 +9,7 @@
 namespace unstring::tests {
 
 class TempFolder {
-  public:
+public:
     TempFolder() {
         std::string pattern = (std::filesystem::temp_directory_path() / "unstring-test-XXXXXX").string();
         path_ = mkdtemp(pattern.data());
@@ -17,10 +17,12 @@ class TempFolder {
     ~TempFolder() { std::filesystem::remove_all(path_); }
     TempFolder(const TempFolder&) = delete;
     TempFolder& operator=(const TempFolder&) = delete;
-    [[nodiscard]] std::string file(const std::string& name) const { return (std::filesystem::path(path_) / name).string(); }
+    [[nodiscard]] std::string file(const std::string& name) const {
+        return (std::filesystem::path(path_) / name).string();
+    }
 
-  private:
+private:
     std::string path_;
 };
 
-}  // namespace unstring::tests
+} // namespace unstring::tests

@@ -17,8 +17,10 @@ using namespace unstring;
 
 namespace {
 
-WorkOutAnswer asked(void (*add)(CLI::App&, WorkOutAnswer&), const std::string& topic, const std::string& text, const std::string& more = {}) {
-    const std::string path = std::filesystem::temp_directory_path() / ("unstring-" + topic + "-" + std::to_string(getpid()));
+WorkOutAnswer asked(void (*add)(CLI::App&, WorkOutAnswer&), const std::string& topic, const std::string& text,
+                    const std::string& more = {}) {
+    const std::string path =
+        std::filesystem::temp_directory_path() / ("unstring-" + topic + "-" + std::to_string(getpid()));
     std::ofstream(path) << text;
     WorkOutAnswer answer;
     CLI::App app;
@@ -30,7 +32,9 @@ WorkOutAnswer asked(void (*add)(CLI::App&, WorkOutAnswer&), const std::string& t
 
 WorkOutAnswer string_of(const std::string& text) { return asked(add_work_out_string, "string", text); }
 WorkOutAnswer loop_of(const std::string& text) { return asked(add_work_out_loop, "loop", text); }
-WorkOutAnswer route_of(const std::string& text, const std::string& more = {}) { return asked(add_work_out_route, "route", text, more); }
+WorkOutAnswer route_of(const std::string& text, const std::string& more = {}) {
+    return asked(add_work_out_route, "route", text, more);
+}
 
 std::string lamps(int count, const std::string& lamp) {
     std::string list;
@@ -38,20 +42,25 @@ std::string lamps(int count, const std::string& lamp) {
     return "[" + list + "]";
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("work-out string: thirty lamps of 188 W at pf .8 on 2 300 m of AWG 8, every key of the contract") {
-    const WorkOutAnswer answer = string_of(R"({"current_a": 6.6, "cable_awg": 8, "cable_m": 2300, "transformer": {"rated_kw": 10}, "lamps": )" +
-                                           lamps(30, R"({"w": 188, "pf": 0.8})") + "}");
+    const WorkOutAnswer answer = string_of(
+        R"({"current_a": 6.6, "cable_awg": 8, "cable_m": 2300, "transformer": {"rated_kw": 10}, "lamps": )" +
+        lamps(30, R"({"w": 188, "pf": 0.8})") + "}");
     REQUIRE_FALSE(answer.fault);
     CHECK(answer.json["volts"].get<double>() == Approx(1096).margin(0.6));
     CHECK(answer.json["load_kva"].get<double>() == Approx(7.23).margin(0.006));
-    CHECK(answer.json["load_kw"].get<double>() == Approx(5.640 + answer.json["cable_w"].get<double>() / 1000));
-    CHECK(answer.json["cable_w"].get<double>() == Approx(6.6 * 6.6 * 2.3 * 0.778 / 0.3048 * (1 - 0.00323 * 50)));
-    CHECK(answer.json["pf"].get<double>() == Approx(answer.json["load_kw"].get<double>() / answer.json["load_kva"].get<double>()));
+    CHECK(answer.json["load_kw"].get<double>() ==
+          Approx(5.640 + answer.json["cable_w"].get<double>() / 1000));
+    CHECK(answer.json["cable_w"].get<double>() ==
+          Approx(6.6 * 6.6 * 2.3 * 0.778 / 0.3048 * (1 - 0.00323 * 50)));
+    CHECK(answer.json["pf"].get<double>() ==
+          Approx(answer.json["load_kw"].get<double>() / answer.json["load_kva"].get<double>()));
     CHECK(answer.json["loading_frac"].get<double>() == Approx(0.723).margin(0.001));
     CHECK(answer.json["verdict"] == "good");
-    CHECK(answer.json["primary_pf"].get<double>() == Approx((answer.json["load_kw"].get<double>() + 0.4) / (10.4 / 0.78)));
+    CHECK(answer.json["primary_pf"].get<double>() ==
+          Approx((answer.json["load_kw"].get<double>() + 0.4) / (10.4 / 0.78)));
     CHECK(answer.steps_text.find("Source: ") != std::string::npos);
 }
 
@@ -72,12 +81,13 @@ TEST_CASE("work-out string: each input counts") {
 }
 
 TEST_CASE("work-out string: without a transformer the string is open, without lamps none") {
-    const WorkOutAnswer open = string_of(R"({"current_a": 6.6, "cable_awg": 8, "cable_m": 100, "lamps": [{"w": 188, "pf": 0.8}]})");
+    const WorkOutAnswer open =
+        string_of(R"({"current_a": 6.6, "cable_awg": 8, "cable_m": 100, "lamps": [{"w": 188, "pf": 0.8}]})");
     CHECK(open.json["verdict"] == "open");
     CHECK(open.json["loading_frac"].is_null());
     CHECK(open.json["primary_pf"].is_null());
-    const WorkOutAnswer none =
-        string_of(R"({"current_a": 6.6, "cable_awg": 8, "cable_m": 100, "lamps": [{"w": 0, "pf": 0.8}], "transformer": {"rated_kw": 5}})");
+    const WorkOutAnswer none = string_of(
+        R"({"current_a": 6.6, "cable_awg": 8, "cable_m": 100, "lamps": [{"w": 0, "pf": 0.8}], "transformer": {"rated_kw": 5}})");
     CHECK(none.json["verdict"] == "none");
     const WorkOutAnswer low = string_of(
         R"({"current_a": 6.6, "cable_awg": 8, "cable_m": 100, "lamps": [{"w": 188, "pf": 0.8}], "transformer": {"rated_kw": 0.5, "min_frac": 0.6}, "cable_kv": 5})");
@@ -95,14 +105,21 @@ TEST_CASE("work-out string: what cannot be is refused by its field") {
     CHECK(field(R"({"current_a": 6.6, "cable_awg": 7, "cable_m": 1, "lamps": []})") == "cable_awg");
     CHECK(field(R"({"current_a": 6.6, "cable_awg": 8, "cable_m": -1, "lamps": []})") == "cable_m");
     CHECK(field(R"({"current_a": 6.6, "cable_awg": 8, "cable_m": 1})") == "lamps");
-    CHECK(field(R"({"current_a": 6.6, "cable_awg": 8, "cable_m": 1, "lamps": [{"w": 1, "pf": 1}, {"w": 1, "pf": 0}]})") == "lamps[1].pf");
-    CHECK(field(R"({"current_a": 6.6, "cable_awg": 8, "cable_m": 1, "lamps": [], "transformer": {"rated_kw": 0}})") == "transformer.rated_kw");
+    CHECK(
+        field(
+            R"({"current_a": 6.6, "cable_awg": 8, "cable_m": 1, "lamps": [{"w": 1, "pf": 1}, {"w": 1, "pf": 0}]})") ==
+        "lamps[1].pf");
+    CHECK(
+        field(
+            R"({"current_a": 6.6, "cable_awg": 8, "cable_m": 1, "lamps": [], "transformer": {"rated_kw": 0}})") ==
+        "transformer.rated_kw");
     CHECK(field(R"({"current_a": 6.6, "cable_awg": 8, "cable_m": 1, "lamps": [], "lamp": 1})") == "lamp");
     CHECK(string_of("{").fault->code == FaultCode::file_broken);
 }
 
 TEST_CASE("work-out loop: the example of its help, and the same without a live lamp") {
-    const std::string legs = R"({"legs_m": [100, 35, 35, 20, 35, 35, 100], "cutbacks": [{"a": 1, "b": 6, "new_cable_m": 20}], "live": )";
+    const std::string legs =
+        R"({"legs_m": [100, 35, 35, 20, 35, 35, 100], "cutbacks": [{"a": 1, "b": 6, "new_cable_m": 20}], "live": )";
     const WorkOutAnswer answer = loop_of(legs + "[1, 6]}");
     REQUIRE_FALSE(answer.fault);
     CHECK(answer.json["cable_m"] == 220.0);
@@ -126,9 +143,12 @@ TEST_CASE("work-out loop: what cannot be is refused by its field") {
     CHECK(field(R"({"legs_m": [1, 2], "live": [2]})") == "live[0]");
     CHECK(field(R"({"legs_m": [1, 2], "live": [0.5]})") == "live[0]");
     CHECK(field(R"({"legs_m": [1, 2, 3], "live": [1.5]})") == "live");
-    CHECK(field(R"({"legs_m": [1, 2], "live": [1], "cutbacks": [{"a": 0, "b": 3, "new_cable_m": 1}]})") == "cutbacks[0].b");
-    CHECK(field(R"({"legs_m": [1, 2], "live": [1], "cutbacks": [{"a": 1, "b": 1, "new_cable_m": 1}]})") == "cutbacks[0].b");
-    CHECK(field(R"({"legs_m": [1, 2], "live": [1], "cutbacks": [{"a": 0, "b": 1}]})") == "cutbacks[0].new_cable_m");
+    CHECK(field(R"({"legs_m": [1, 2], "live": [1], "cutbacks": [{"a": 0, "b": 3, "new_cable_m": 1}]})") ==
+          "cutbacks[0].b");
+    CHECK(field(R"({"legs_m": [1, 2], "live": [1], "cutbacks": [{"a": 1, "b": 1, "new_cable_m": 1}]})") ==
+          "cutbacks[0].b");
+    CHECK(field(R"({"legs_m": [1, 2], "live": [1], "cutbacks": [{"a": 0, "b": 1}]})") ==
+          "cutbacks[0].new_cable_m");
 }
 
 TEST_CASE("work-out route: a square, open and closed, with a heading or without, decimal commas too") {
@@ -150,8 +170,10 @@ TEST_CASE("work-out route: a cell that is no number is refused with its row") {
     CHECK(route_of("x,y\n").fault.has_value());
 }
 
-TEST_CASE("work-out route: a thousand points stay within 12 % of the random-uniform constant of the shortest tour") {
-    // Beardwood, Halton and Hammersley 1959; constant .7124 (from memory): L = .7124 sqrt(n A), some 3 % more at n = 1000.
+TEST_CASE("work-out route: a thousand points stay within 12 % of the random-uniform constant of the shortest "
+          "tour") {
+    // Beardwood, Halton and Hammersley 1959; constant .7124 (from memory): L = .7124 sqrt(n A), some 3 % more
+    // at n = 1000.
     std::string text = "x,y\n";
     unsigned state = 12345;
     for (int i = 0; i < 2000; ++i) {
@@ -162,4 +184,3 @@ TEST_CASE("work-out route: a thousand points stay within 12 % of the random-unif
     CHECK(length > 0.7124 * std::sqrt(1000.0) * 100000 * 0.95);
     CHECK(length < 0.7124 * std::sqrt(1000.0) * 100000 * 1.12);
 }
-

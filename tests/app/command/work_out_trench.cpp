@@ -11,7 +11,8 @@ using namespace unstring;
 namespace {
 
 WorkOutAnswer work_out(const std::string& content, const std::vector<std::string>& more = {}) {
-    const std::filesystem::path path = std::filesystem::temp_directory_path() / "unstring_work_out_trench.stp";
+    const std::filesystem::path path =
+        std::filesystem::temp_directory_path() / "unstring_work_out_trench.stp";
     std::ofstream(path) << content;
     CLI::App app;
     WorkOutAnswer answer;
@@ -30,7 +31,7 @@ const std::string kLine = kHead +
                           "SECTION Graph\nNodes 4\nEdges 4\nE 1 2 2.5\nE 2 3 1\nE 2 3 4\nE 3 4 10\nEND\n"
                           "SECTION Terminals\nTerminals 3\nRootP 1\nTP 3 4.25\nTP 4 9\nEND\nEOF\n";
 
-}  // namespace
+} // namespace
 
 TEST_CASE("work-out trench: a line of four with two prizes, worked by hand") {
     // 1-2-3 costs 3.5 and collects 4.25; going on to 4 costs 10 for 9: left outside. Cost 3.5 + 9.
@@ -80,7 +81,8 @@ TEST_CASE("work-out trench: a broken file names its row and field") {
     CHECK(fault_of(kHead + "SECTION Graph\nNodes 2\nE 1 2 5e12\nEND\n").field == "cost");
     CHECK(fault_of(kHead + "SECTION Graph\nE 1 2 5\nEND\n").field == "Nodes");
     CHECK(fault_of(kHead + "SECTION Graph\nNodes 9e99\nEND\n").field == "Nodes");
-    CHECK(fault_of(kHead + "SECTION Graph\nNodes 3\nE 1 2 5\nEND\nSECTION Terminals\nT 1\nT 3\nEND\n").code == FaultCode::no_solution);
+    CHECK(fault_of(kHead + "SECTION Graph\nNodes 3\nE 1 2 5\nEND\nSECTION Terminals\nT 1\nT 3\nEND\n").code ==
+          FaultCode::no_solution);
 
     CLI::App app;
     WorkOutAnswer answer;

@@ -11,10 +11,27 @@ namespace {
 
 /// One string of two sections, two years, one class. Done together in year 1: 1000 + 100 paid, nothing kept.
 nlohmann::json tiny_case() {
-    return {{"T", 2}, {"discount", 0.0}, {"keepGrowth", 0.0}, {"minfrac", 0.1}, {"mobilisationCost", 100}, {"mobilisationHours", 1},
-            {"swapCost", 50}, {"swapHours", 1}, {"buyCost", 500}, {"spareFraction", 0.0}, {"ratings", {10}}, {"budget", {2000, 2000}},
-            {"hours", {100, 100}}, {"unitsOwned", {{1}, {1}}},
-            {"strings", {{{"ratingIndex", 0}, {"fixedKeep", 10}, {"load", {4, 4}}, {"capital", {400, 600}}, {"hours", {10, 10}}, {"keep", {30, 30}}}}}};
+    return {{"T", 2},
+            {"discount", 0.0},
+            {"keepGrowth", 0.0},
+            {"minfrac", 0.1},
+            {"mobilisationCost", 100},
+            {"mobilisationHours", 1},
+            {"swapCost", 50},
+            {"swapHours", 1},
+            {"buyCost", 500},
+            {"spareFraction", 0.0},
+            {"ratings", {10}},
+            {"budget", {2000, 2000}},
+            {"hours", {100, 100}},
+            {"unitsOwned", {{1}, {1}}},
+            {"strings",
+             {{{"ratingIndex", 0},
+               {"fixedKeep", 10},
+               {"load", {4, 4}},
+               {"capital", {400, 600}},
+               {"hours", {10, 10}},
+               {"keep", {30, 30}}}}}};
 }
 
 WorkOutAnswer answer_of(const nlohmann::json& json) {
@@ -28,7 +45,7 @@ WorkOutAnswer answer_of(const nlohmann::json& json) {
     return answer;
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("work-out years: everything in the first year is cheapest where money allows it") {
     const WorkOutAnswer answer = answer_of(tiny_case());
@@ -56,7 +73,7 @@ TEST_CASE("work-out years: money splits the work, and a year costs its keep and 
 
 TEST_CASE("work-out years: what cannot be is proved, and says which year, which limit, by how much") {
     nlohmann::json json = tiny_case();
-    json["budget"] = {450, 650};  // 500 and 700 are wanted
+    json["budget"] = {450, 650}; // 500 and 700 are wanted
     const WorkOutAnswer answer = answer_of(json);
     REQUIRE_FALSE(answer.fault);
     CHECK(answer.json["feasible"] == false);

@@ -58,7 +58,8 @@ TEST_CASE("open project: a closed project is one file") {
         const auto project = city.open();
         REQUIRE(project->run_vet(true, {}));
     }
-    for (const char* suffix : {"-wal", "-shm", "-journal", ".lock", ".new"}) CHECK_FALSE(std::filesystem::exists(city.project + suffix));
+    for (const char* suffix : {"-wal", "-shm", "-journal", ".lock", ".new"})
+        CHECK_FALSE(std::filesystem::exists(city.project + suffix));
 }
 
 TEST_CASE("open project: a step that is cancelled leaves the project as it was") {
@@ -77,7 +78,8 @@ TEST_CASE("open project: a step that is cancelled leaves the project as it was")
     }
 }
 
-TEST_CASE("open project: a run of decide or phase undoes like any other edit, and running it again brings the same plan") {
+TEST_CASE("open project: a run of decide or phase undoes like any other edit, and running it again brings "
+          "the same plan") {
     const PlannedCity city;
     const auto project = city.planned();
     const Plan planned = project->view()->plan;
@@ -91,7 +93,8 @@ TEST_CASE("open project: a run of decide or phase undoes like any other edit, an
     CHECK(project->view()->plan.units == planned.units);
 }
 
-TEST_CASE("open project: rows read are planned, parallel or set aside, and vet finds no error once they are set aside") {
+TEST_CASE("open project: rows read are planned, parallel or set aside, and vet finds no error once they are "
+          "set aside") {
     const PlannedCity city;
     city.gather(city.files());
     GatherFiles dirty;
@@ -101,7 +104,7 @@ TEST_CASE("open project: rows read are planned, parallel or set aside, and vet f
         std::ofstream out(dirty.poles);
         std::string line;
         for (int i = 0; std::getline(in, line); ++i) {
-            if (i == 7) out << line << "\n";  // one id twice
+            if (i == 7) out << line << "\n"; // one id twice
             out << line << "\n";
         }
     }
@@ -115,7 +118,8 @@ TEST_CASE("open project: rows read are planned, parallel or set aside, and vet f
     const auto view = project->view();
     long planned = 0, parallel = 0, aside = 0;
     for (const Pole& pole : view->city.poles) {
-        const bool is_aside = pole.set_aside || (pole.string.is_valid() && view->city.strings[pole.string.place()].set_aside);
+        const bool is_aside =
+            pole.set_aside || (pole.string.is_valid() && view->city.strings[pole.string.place()].set_aside);
         (is_aside ? aside : is_parallel(view->city, pole) ? parallel : planned) += 1;
     }
     CHECK(aside >= 1);

@@ -17,7 +17,8 @@ struct PlannedCity {
     std::string project = folder.file("p.gpkg"), city = folder.file("city");
 
     explicit PlannedCity(int poles = 150) {
-        REQUIRE(run_file(UNSTRING_CITY_MAKER, {"--size", std::to_string(poles), "--seed", "5", "--to", city}).status == 0);
+        REQUIRE(run_file(UNSTRING_CITY_MAKER, {"--size", std::to_string(poles), "--seed", "5", "--to", city})
+                    .status == 0);
     }
     [[nodiscard]] GatherFiles files() const {
         GatherFiles f;
@@ -57,6 +58,8 @@ struct PlannedCity {
     }
 };
 
-inline StepStanding standing(const OpenProject& project, Step step) { return project.view()->steps[static_cast<std::size_t>(step)].standing; }
+inline StepStanding standing(const OpenProject& project, Step step) {
+    return project.view()->steps[static_cast<std::size_t>(step)].standing;
+}
 
-}  // namespace unstring::tests
+} // namespace unstring::tests

@@ -27,7 +27,7 @@ void write_dearer(const std::string& prices, const std::string& target) {
     std::ofstream(target) << header << "\n" << row.substr(0, next) << ",1,777,999,,,,,\n";
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("staleness: a price changed makes decide and phase stale, changed back nothing is") {
     const PlannedCity city;
@@ -52,14 +52,16 @@ TEST_CASE("staleness: a price changed makes decide and phase stale, changed back
     check_all_good(*city.open());
 }
 
-TEST_CASE("staleness: a mark makes decide stale and its undo does not leave it so; a year by hand makes phase edited by hand") {
+TEST_CASE("staleness: a mark makes decide stale and its undo does not leave it so; a year by hand makes "
+          "phase edited by hand") {
     const PlannedCity city;
     const auto project = city.planned();
     check_all_good(*project);
     const auto view = project->view();
     const PoleIx pole = view->decide->poles.front().pole;
     Plan next = view->plan;
-    next.poles[pole.place()].mark = next.poles[pole.place()].choice == Choice::solar ? Choice::rewire : Choice::solar;
+    next.poles[pole.place()].mark =
+        next.poles[pole.place()].choice == Choice::solar ? Choice::rewire : Choice::solar;
     REQUIRE(project->edit(next, "mark"));
     CHECK(standing(*project, Step::decide) == StepStanding::stale);
     CHECK(standing(*project, Step::shade) == StepStanding::up_to_date);
@@ -67,7 +69,8 @@ TEST_CASE("staleness: a mark makes decide stale and its undo does not leave it s
     check_all_good(*project);
 
     next = project->view()->plan;
-    const auto planned = std::find_if(next.poles.begin(), next.poles.end(), [](const PolePlan& row) { return row.year != 0; });
+    const auto planned =
+        std::find_if(next.poles.begin(), next.poles.end(), [](const PolePlan& row) { return row.year != 0; });
     REQUIRE(planned != next.poles.end());
     planned->year = planned->year == next.last_year() ? next.settings.first_year : planned->year + 1;
     planned->year_by = YearBy::hand;
@@ -88,7 +91,8 @@ TEST_CASE("staleness: a year that came locked with the marks is no edit by hand"
         std::string line;
         std::getline(poles, line);
         std::getline(poles, line);
-        std::ofstream(files.marks) << "pole_id,mark,lock,year,who,note\n" << line.substr(0, line.find(',')) << ",,1,2028,planner,\n";
+        std::ofstream(files.marks) << "pole_id,mark,lock,year,who,note\n"
+                                   << line.substr(0, line.find(',')) << ",,1,2028,planner,\n";
     }
     city.gather(files);
     const auto project = city.open();
@@ -101,7 +105,8 @@ TEST_CASE("staleness: a year that came locked with the marks is no edit by hand"
     check_all_good(*project);
 }
 
-TEST_CASE("staleness: new records make every step after gather stale, and results of the old ones are not shown") {
+TEST_CASE(
+    "staleness: new records make every step after gather stale, and results of the old ones are not shown") {
     const PlannedCity city;
     city.planned().reset();
     GatherFiles only_poles;

@@ -15,7 +15,8 @@ TEST_CASE("geometry blob: points come back as they went in, for a point, a line 
 }
 
 TEST_CASE("geometry blob: the bytes of a point are those of the standard's layout") {
-    // OGC 12-128r18 clause 2.1.3: magic GP, version 0, flags 0x03 (little endian, xy envelope), srs_id, envelope minx maxx miny maxy, WKB.
+    // OGC 12-128r18 clause 2.1.3: magic GP, version 0, flags 0x03 (little endian, xy envelope), srs_id,
+    // envelope minx maxx miny maxy, WKB.
     const auto blob = point_blob({1, 2}, 4326);
     REQUIRE(blob.size() == 8 + 32 + 21);
     CHECK(blob[0] == 'G');
@@ -23,14 +24,15 @@ TEST_CASE("geometry blob: the bytes of a point are those of the standard's layou
     CHECK(blob[2] == 0);
     CHECK(blob[3] == 0x03);
     CHECK((blob[4] | blob[5] << 8) == 4326);
-    CHECK(blob[40] == 1);  // little-endian WKB
-    CHECK(blob[41] == 1);  // point
+    CHECK(blob[40] == 1); // little-endian WKB
+    CHECK(blob[41] == 1); // point
 }
 
 TEST_CASE("geometry blob: broken bytes are no geometry") {
     auto blob = line_blob(std::vector<MapPoint>{{0, 0}, {1, 1}}, 1);
-    for (std::size_t size = 0; size < blob.size(); ++size) CHECK_FALSE(points_of_blob(std::span(blob).first(size)));
-    blob[45] = 0xff;  // a count far beyond the bytes
+    for (std::size_t size = 0; size < blob.size(); ++size)
+        CHECK_FALSE(points_of_blob(std::span(blob).first(size)));
+    blob[45] = 0xff; // a count far beyond the bytes
     blob[46] = 0xff;
     blob[47] = 0xff;
     CHECK_FALSE(points_of_blob(blob));

@@ -11,7 +11,7 @@ using namespace unstring::tests;
 
 namespace {
 
-struct Editor {  ///< edits, undoes and redoes the way the steps do
+struct Editor { ///< edits, undoes and redoes the way the steps do
     Database& database;
     City city;
 
@@ -29,9 +29,11 @@ struct Editor {  ///< edits, undoes and redoes the way the steps do
     bool redo() { return take_back(next_redo(database, "first")); }
 };
 
-bool same(const Plan& a, const Plan& b) { return a.settings == b.settings && a.poles == b.poles && a.units == b.units; }
+bool same(const Plan& a, const Plan& b) {
+    return a.settings == b.settings && a.poles == b.poles && a.units == b.units;
+}
 
-}  // namespace
+} // namespace
 
 TEST_CASE("plan tables: do, undo, redo over random edits comes back to the same plan each time") {
     const TempFolder folder;
@@ -63,7 +65,7 @@ TEST_CASE("plan tables: do, undo, redo over random edits comes back to the same 
         CHECK(same(editor.plan(), past[i]));
     }
     CHECK_FALSE(editor.redo());
-    CHECK(database->integer("SELECT count(*) FROM edits") == 75);  // nothing is ever taken out of the history
+    CHECK(database->integer("SELECT count(*) FROM edits") == 75); // nothing is ever taken out of the history
 }
 
 TEST_CASE("plan tables: a new edit empties redo, and undo survives closing the file") {
@@ -97,7 +99,8 @@ TEST_CASE("plan tables: a new edit empties redo, and undo survives closing the f
     CHECK_FALSE(editor.undo());
 }
 
-TEST_CASE("plan tables: the history of a pole lists the edits that touched it, newest first, with who made them") {
+TEST_CASE(
+    "plan tables: the history of a pole lists the edits that touched it, newest first, with who made them") {
     const TempFolder folder;
     const auto database = make_project(folder.file("p.gpkg"));
     Editor editor{*database, sample_tables().city};

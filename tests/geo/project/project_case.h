@@ -10,7 +10,8 @@
 
 namespace unstring::tests {
 
-inline std::unique_ptr<Database> make_project(const std::string& path, const CityTables& tables = sample_tables()) {
+inline std::unique_ptr<Database> make_project(const std::string& path,
+                                              const CityTables& tables = sample_tables()) {
     auto database = Database::open(path, Database::Access::create);
     REQUIRE(database);
     const auto written = (*database)->transaction([&] {
@@ -22,4 +23,4 @@ inline std::unique_ptr<Database> make_project(const std::string& path, const Cit
     return std::move(*database);
 }
 
-}  // namespace unstring::tests
+} // namespace unstring::tests

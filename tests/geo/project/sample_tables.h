@@ -49,7 +49,15 @@ inline CityTables sample_tables() {
     unit.strings = {StringIx(0)};
     unit.strings_given = {"S-01"};
     city.transformers = {unit};
-    city.cutbacks = {{StringIx(0), "S-01", "01-001", "return", CutBackKind::crossing, true, 22.5, false, {"cutbacks.csv", 2}}};
+    city.cutbacks = {{StringIx(0),
+                      "S-01",
+                      "01-001",
+                      "return",
+                      CutBackKind::crossing,
+                      true,
+                      22.5,
+                      false,
+                      {"cutbacks.csv", 2}}};
     ServicePoint service;
     service.id = "SV-1";
     service.kind = ServiceKind::circuit_end;
@@ -57,7 +65,13 @@ inline CityTables sample_tables() {
     service.has_place = true;
     service.free_kva = 3;
     city.services = {service};
-    city.streets = {{"Heron Street", "local", Surface::paved, 9.0, 2030, {{400000, 3762000}, {400100, 3762000}}, {"streets.gpkg", 1}}};
+    city.streets = {{"Heron Street",
+                     "local",
+                     Surface::paved,
+                     9.0,
+                     2030,
+                     {{400000, 3762000}, {400100, 3762000}},
+                     {"streets.gpkg", 1}}};
     city.canopy = {{{{400000, 3762000}, {400010, 3762000}, {400010, 3762010}}, 12.0, Leaf::evergreen, true}};
     city.obstacles = {{{{400020, 3762000}, {400030, 3762000}, {400030, 3762010}, {400020, 3762000}}, 9.5}};
     YearBudget year;
@@ -92,4 +106,4 @@ inline CityTables sample_tables() {
     return tables;
 }
 
-}  // namespace unstring::tests
+} // namespace unstring::tests

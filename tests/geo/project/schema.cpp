@@ -14,7 +14,8 @@
 using namespace unstring;
 using namespace unstring::tests;
 
-TEST_CASE("schema: layers open in another library that reads GeoPackage, with count, extent, system and spatial index") {
+TEST_CASE("schema: layers open in another library that reads GeoPackage, with count, extent, system and "
+          "spatial index") {
     const TempFolder folder;
     const std::string path = folder.file("p.gpkg");
     make_project(path)->close_to_one_file();
@@ -45,9 +46,10 @@ TEST_CASE("schema: what the standard asks of contents, geometry columns and R-tr
     CHECK(db->integer("SELECT count(*) FROM pragma_foreign_key_check") == 0);
     CHECK(db->integer("SELECT count(*) FROM gpkg_contents c WHERE c.data_type='features' AND NOT EXISTS "
                       "(SELECT 1 FROM gpkg_geometry_columns g WHERE g.table_name=c.table_name)") == 0);
-    CHECK(db->integer("SELECT count(*) FROM gpkg_contents c WHERE NOT EXISTS (SELECT 1 FROM sqlite_master m WHERE m.name=c.table_name)") == 0);
+    CHECK(db->integer("SELECT count(*) FROM gpkg_contents c WHERE NOT EXISTS (SELECT 1 FROM sqlite_master m "
+                      "WHERE m.name=c.table_name)") == 0);
     CHECK(db->integer("SELECT count(*) FROM gpkg_extensions WHERE extension_name='gpkg_rtree_index'") == 6);
-    CHECK(db->integer("SELECT count(*) FROM rtree_poles_geom") == 4);  // the fifth has no place
+    CHECK(db->integer("SELECT count(*) FROM rtree_poles_geom") == 4); // the fifth has no place
     CHECK(db->integer("SELECT count(*) FROM sqlite_master WHERE type='trigger' AND tbl_name='poles'") == 6);
 }
 
@@ -115,6 +117,7 @@ TEST_CASE("schema: a project with a foreign trigger is refused before it could r
     CHECK(answer.error().found.find("surprise") != std::string::npos);
     db->run("DROP TRIGGER surprise");
     CHECK(check_schema(*db, path));
-    db->run("DROP TRIGGER rtree_poles_geom_insert; CREATE TRIGGER rtree_poles_geom_insert AFTER INSERT ON poles BEGIN DELETE FROM edits; END");
+    db->run("DROP TRIGGER rtree_poles_geom_insert; CREATE TRIGGER rtree_poles_geom_insert AFTER INSERT ON "
+            "poles BEGIN DELETE FROM edits; END");
     CHECK_FALSE(check_schema(*db, path));
 }

@@ -61,7 +61,7 @@ SteinerProblem read_problem(const std::string& file) {
     return problem;
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("trench benchmarks: every cost is within 0.5 % of the proved optimum and no bound is above it") {
     const std::vector<Known> list = known_optima();
@@ -73,10 +73,12 @@ TEST_CASE("trench benchmarks: every cost is within 0.5 % of the proved optimum a
         problem.root = known.root - 1;
         const auto start = std::chrono::steady_clock::now();
         const SteinerAnswer answer = solve_steiner(problem);
-        const double seconds = std::chrono::duration<double>(std::chrono::steady_clock::now() - start).count();
-        const double cost = static_cast<double>(answer.cost) / 1e6, bound = static_cast<double>(answer.bound) / 1e6;
-        std::printf("%-28s cost %14.2f bound %14.2f optimum %14.2f  %.3f %%  %.3f s\n", known.file.c_str(), cost, bound, known.optimum,
-                    100 * (cost / known.optimum - 1), seconds);
+        const double seconds =
+            std::chrono::duration<double>(std::chrono::steady_clock::now() - start).count();
+        const double cost = static_cast<double>(answer.cost) / 1e6,
+                     bound = static_cast<double>(answer.bound) / 1e6;
+        std::printf("%-28s cost %14.2f bound %14.2f optimum %14.2f  %.3f %%  %.3f s\n", known.file.c_str(),
+                    cost, bound, known.optimum, 100 * (cost / known.optimum - 1), seconds);
         INFO(known.file);
         const SteinerCheck check = check_steiner(problem, answer.edges, answer.vertices);
         CHECK(check.is_tree);
@@ -85,7 +87,8 @@ TEST_CASE("trench benchmarks: every cost is within 0.5 % of the proved optimum a
         // Cologne's optima are given to 0.01.
         CHECK(bound <= known.optimum + 0.01);
         CHECK(cost >= known.optimum - 0.01);
-        const bool is_tight = known.file.starts_with("JMP") || known.file.starts_with("cologne") || known.file.starts_with("grid");
+        const bool is_tight = known.file.starts_with("JMP") || known.file.starts_with("cologne") ||
+                              known.file.starts_with("grid");
         CHECK(cost <= known.optimum * (is_tight ? 1.001 : 1.005) + 0.01);
         gaps += (cost - bound) / cost;
         ++reached;

@@ -13,7 +13,8 @@ using namespace unstring;
 namespace {
 
 int count_of(const DecideResult& result, const std::string& code) {
-    return static_cast<int>(std::count_if(result.findings.begin(), result.findings.end(), [&](const Finding& each) { return each.code == code; }));
+    return static_cast<int>(std::count_if(result.findings.begin(), result.findings.end(),
+                                          [&](const Finding& each) { return each.code == code; }));
 }
 
 /// Every circuit is within its limits, or a finding says that it is not.
@@ -26,7 +27,9 @@ void check_limits(const StreetCase& street, const DecideResult& result) {
             kva += lamp.watts / lamp.pf / 1000;
         }
         CHECK(circuit.load_kva == Approx(kva));
-        const double free = circuit.service.is_valid() ? street.city.services[circuit.service.place()].free_kva.value_or(1e9) : 1e9;
+        const double free = circuit.service.is_valid()
+                                ? street.city.services[circuit.service.place()].free_kva.value_or(1e9)
+                                : 1e9;
         if (kva > free + 1e-9 || circuit.worst_drop_frac > kDropLimitFrac) ++over;
         for (const PoleIx pole : circuit.poles) {
             const PoleDecision& each = *result.find(pole);
@@ -40,7 +43,7 @@ void check_limits(const StreetCase& street, const DecideResult& result) {
     CHECK(result.bound <= result.cost + 1e-9);
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("limits: a service that is full sends the least valuable lamps to solar") {
     StreetCase street = one_street(8);
@@ -51,13 +54,14 @@ TEST_CASE("limits: a service that is full sends the least valuable lamps to sola
     CHECK(free.rewire == 8);
     CHECK(free.limits_price == Approx(0).margin(0.005));
 
-    street.city.services[service.place()].free_kva = 0.3;  // four lamps of 60 W at .95
+    street.city.services[service.place()].free_kva = 0.3; // four lamps of 60 W at .95
     const DecideResult full = street.decide();
     check_limits(street, full);
     CHECK(full.rewire == 4);
     CHECK(full.solar == 4);
     // The far end goes: nobody else hangs on it.
-    for (std::size_t i = 0; i < 8; ++i) CHECK(full.poles[i].choice == (i < 4 ? Choice::rewire : Choice::solar));
+    for (std::size_t i = 0; i < 8; ++i)
+        CHECK(full.poles[i].choice == (i < 4 ? Choice::rewire : Choice::solar));
     CHECK(full.limits_price > 0);
     CHECK(full.bound == free.bound);
 }
@@ -66,7 +70,8 @@ TEST_CASE("limits: lamps that cannot be solar move to another source, or the ser
     StreetCase street = one_street(8);
     street.city.services.clear();
     const ServiceIx near = street.add_service({0, 5.5}, ServiceKind::circuit_end);
-    for (PoleShade& shade : street.shade.poles) shade.heads[0] = {.head = "M", .eligible = false, .why = "41 nights dark a year"};
+    for (PoleShade& shade : street.shade.poles)
+        shade.heads[0] = {.head = "M", .eligible = false, .why = "41 nights dark a year"};
     street.city.services[near.place()].free_kva = 0.3;
     const DecideResult alone = street.decide();
     check_limits(street, alone);
@@ -116,10 +121,13 @@ TEST_CASE("limits: on random towns with small services every circuit keeps them 
         }
         for (int s = 0; s < 4; ++s) {
             const StringIx string = street.add_string();
-            for (int i = 0; i < 11; ++i) street.add_pole(string, {35.0 * i, 120.0 * s + (below(4) == 0 ? -6.0 : 6.0)}, "A" + std::to_string(s), below(3) != 0);
+            for (int i = 0; i < 11; ++i)
+                street.add_pole(string, {35.0 * i, 120.0 * s + (below(4) == 0 ? -6.0 : 6.0)},
+                                "A" + std::to_string(s), below(3) != 0);
         }
         for (int i = 0; i < 7; ++i) {
-            const ServiceIx service = street.add_service({below(380) * 1.0, below(380) * 1.0}, static_cast<ServiceKind>(below(3)));
+            const ServiceIx service =
+                street.add_service({below(380) * 1.0, below(380) * 1.0}, static_cast<ServiceKind>(below(3)));
             street.city.services[service.place()].free_kva = 0.2 + 0.1 * below(6);
         }
         INFO("seed " << seed << " town " << town);

@@ -13,7 +13,9 @@ using namespace unstring;
 
 namespace {
 
-const OptionCost& option(const PoleDecision& each, Choice choice) { return each.options[static_cast<std::size_t>(choice) - 1]; }
+const OptionCost& option(const PoleDecision& each, Choice choice) {
+    return each.options[static_cast<std::size_t>(choice) - 1];
+}
 
 /// Everything that has to hold for any answer.
 void check_result(const StreetCase& street, const DecideResult& result) {
@@ -44,7 +46,7 @@ void check_result(const StreetCase& street, const DecideResult& result) {
     }
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("decide: a lone pole beside a circuit end takes what is cheaper, its trench counted by hand") {
     StreetCase street;
@@ -57,7 +59,8 @@ TEST_CASE("decide: a lone pole beside a circuit end takes what is cheaper, its t
     check_result(street, result);
     REQUIRE(result.poles.size() == 1);
 
-    // 30 m of verge at (45 + 2.2) a foot, one box at the pole, 800 for the circuit end; 18 % design; paid at the end of year 4 of 8.
+    // 30 m of verge at (45 + 2.2) a foot, one box at the pole, 800 for the circuit end; 18 % design; paid at
+    // the end of year 4 of 8.
     const int year = street.plan.decide_year();
     const double trench = (30 / .3048 * (45 + 2.2) + 1200) * 1.18, end = 800 * 1.18;
     const double own = pole_option(street.input(), PoleIx(0), Choice::rewire, year).cost;
@@ -70,11 +73,13 @@ TEST_CASE("decide: a lone pole beside a circuit end takes what is cheaper, its t
     CHECK(result.bound == result.cost);
 }
 
-TEST_CASE("decide: poles too shaded for solar are rewired together, and those on the way come along only where it pays") {
+TEST_CASE("decide: poles too shaded for solar are rewired together, and those on the way come along only "
+          "where it pays") {
     StreetCase street = one_street(30);
     street.add_service({35.0 * 14, 5.5}, ServiceKind::service);
     street.add_service({35.0 * 23, 6.5}, ServiceKind::candidate);
-    for (const std::size_t i : {21U, 22U, 23U, 24U}) street.shade.poles[i].heads[0] = {.head = "M", .eligible = false, .why = "41 nights dark a year"};
+    for (const std::size_t i : {21U, 22U, 23U, 24U})
+        street.shade.poles[i].heads[0] = {.head = "M", .eligible = false, .why = "41 nights dark a year"};
     const DecideResult result = street.decide();
     check_result(street, result);
     for (const std::size_t i : {21U, 22U, 23U, 24U}) {
@@ -90,7 +95,8 @@ TEST_CASE("decide: poles too shaded for solar are rewired together, and those on
     CHECK(result.all_rewire_not_possible == 0);
 }
 
-TEST_CASE("decide: sound old conduit is pulled, its string and poles named, and its price is the chance-weighted one") {
+TEST_CASE("decide: sound old conduit is pulled, its string and poles named, and its price is the "
+          "chance-weighted one") {
     StreetCase street = one_street(6);
     for (Pole& pole : street.city.poles) pole.duct = Duct::proven;
     street.city.poles[3].spare_duct = true;
@@ -106,7 +112,8 @@ TEST_CASE("decide: sound old conduit is pulled, its string and poles named, and 
         CHECK(span.duct_to.place() == span.duct_from.place() + 1);
         CHECK(span.duct_string.is_valid() == (span.duct_to != PoleIx(3)));
         // .95 x 8 + .05 x (45 + 2.2) a foot, one box, 18 % design.
-        CHECK(to_dollars(span.cost) == Approx(((.95 * 8 + .05 * 47.2) * 35 / .3048 + 1200) * 1.18).margin(0.03));
+        CHECK(to_dollars(span.cost) ==
+              Approx(((.95 * 8 + .05 * 47.2) * 35 / .3048 + 1200) * 1.18).margin(0.03));
     }
     CHECK(conduits == 5);
     CHECK(result.trench_m < 2);
@@ -144,18 +151,21 @@ TEST_CASE("decide: a pole across the carriageway pays the crossing") {
     check_result(street, result);
     CHECK(result.rewire == 2);
     // 10 m: bored 65 a foot + 1 800 is dearer than 110 a foot of pavement.
-    const auto crossings = std::count_if(result.spans.begin(), result.spans.end(), [](const CircuitSpan& span) { return span.kind == SpanKind::trench_paved; });
+    const auto crossings =
+        std::count_if(result.spans.begin(), result.spans.end(),
+                      [](const CircuitSpan& span) { return span.kind == SpanKind::trench_paved; });
     CHECK(crossings == 1);
     street.set_price("bore_setup", 100);
     const DecideResult bored = street.decide();
-    CHECK(std::count_if(bored.spans.begin(), bored.spans.end(), [](const CircuitSpan& span) { return span.kind == SpanKind::bore; }) == 1);
+    CHECK(std::count_if(bored.spans.begin(), bored.spans.end(),
+                        [](const CircuitSpan& span) { return span.kind == SpanKind::bore; }) == 1);
 }
 
 TEST_CASE("decide: a corner is walked without crossing, streets that only touch are joined") {
     StreetCase street;
     const StringIx string = street.add_string();
     street.add_street("Elm", {0, 0}, {100, 0});
-    street.add_street("Oak", {50, 0}, {50, 100});  // ends on Elm between its points
+    street.add_street("Oak", {50, 0}, {50, 100}); // ends on Elm between its points
     street.add_pole(string, {20, 5.5}, "Elm", false);
     street.add_pole(string, {44.5, 60}, "Oak", false);
     street.add_service({0, 5.5}, ServiceKind::circuit_end);
@@ -167,7 +177,8 @@ TEST_CASE("decide: a corner is walked without crossing, streets that only touch 
     CHECK(result.trench_m == Approx(45 + 55 + 0.5 + 0.5 + 0.5).margin(0.6));
 }
 
-TEST_CASE("decide: marks are followed or refused with the reason, locks are followed and named where they break a check") {
+TEST_CASE("decide: marks are followed or refused with the reason, locks are followed and named where they "
+          "break a check") {
     StreetCase street = one_street(8);
     street.add_service({0, 5.5}, ServiceKind::circuit_end);
     street.shade.poles[5].heads[0].eligible = false;
@@ -189,25 +200,28 @@ TEST_CASE("decide: marks are followed or refused with the reason, locks are foll
     CHECK(result.poles[6].choice == Choice::keep);
     CHECK(result.poles[7].choice == Choice::rewire);
     CHECK(result.keep == 1);
-    CHECK(std::count_if(result.findings.begin(), result.findings.end(), [](const Finding& each) { return each.code == "policy-end"; }) == 1);
+    CHECK(std::count_if(result.findings.begin(), result.findings.end(),
+                        [](const Finding& each) { return each.code == "policy-end"; }) == 1);
 
     street.plan.poles[5].mark = Choice::undecided;
     street.plan.poles[5].lock = Choice::solar;
     const DecideResult locked = street.decide();
     CHECK(locked.poles[5].choice == Choice::solar);
-    CHECK(std::count_if(locked.findings.begin(), locked.findings.end(), [](const Finding& each) { return each.code == "lock-breaks-check"; }) == 1);
+    CHECK(std::count_if(locked.findings.begin(), locked.findings.end(),
+                        [](const Finding& each) { return each.code == "lock-breaks-check"; }) == 1);
 }
 
 TEST_CASE("decide: a pole with no possible option is an error, the others are decided all the same") {
     StreetCase street = one_street(3);
     street.add_service({0, 5.5}, ServiceKind::circuit_end);
     street.city.poles[1].solar_ok = false;
-    street.city.poles[1].place = {40000, 40000};  // nothing leads there
+    street.city.poles[1].place = {40000, 40000}; // nothing leads there
     const DecideResult result = street.decide();
     check_result(street, result);
     CHECK_FALSE(result.feasible);
     CHECK(result.poles[1].choice == Choice::undecided);
-    REQUIRE(std::count_if(result.findings.begin(), result.findings.end(), [](const Finding& each) { return each.severity == Severity::error; }) == 1);
+    REQUIRE(std::count_if(result.findings.begin(), result.findings.end(),
+                          [](const Finding& each) { return each.severity == Severity::error; }) == 1);
     for (const Finding& each : result.findings)
         if (each.severity == Severity::error) CHECK((each.code == "no-way" && each.record == "01-002"));
     CHECK(result.poles[0].choice != Choice::undecided);
@@ -221,8 +235,10 @@ TEST_CASE("decide: without a service nothing can be rewired, and that is said of
     check_result(street, result);
     CHECK(result.solar == 2);
     CHECK_FALSE(result.feasible);
-    CHECK(std::count_if(result.findings.begin(), result.findings.end(), [](const Finding& each) { return each.code == "pole-unreached"; }) == 3);
-    CHECK(std::count_if(result.findings.begin(), result.findings.end(), [](const Finding& each) { return each.code == "no-way"; }) == 1);
+    CHECK(std::count_if(result.findings.begin(), result.findings.end(),
+                        [](const Finding& each) { return each.code == "pole-unreached"; }) == 3);
+    CHECK(std::count_if(result.findings.begin(), result.findings.end(),
+                        [](const Finding& each) { return each.code == "no-way"; }) == 1);
 }
 
 TEST_CASE("decide: strings that must stay are kept, the others end") {
@@ -254,24 +270,29 @@ TEST_CASE("decide: an empty city is decided at no cost, and a cancelled run is a
     CHECK(stopped.error().code == FaultCode::cancelled);
 }
 
-TEST_CASE("decide: on random towns the plan is never dearer than all rewire, all solar or each pole for itself, nor under its bound") {
+TEST_CASE("decide: on random towns the plan is never dearer than all rewire, all solar or each pole for "
+          "itself, nor under its bound") {
     const unsigned seed = 4711;
     std::mt19937 random(seed);
     const auto below = [&](unsigned n) { return static_cast<int>(random() % n); };
     for (int town = 0; town < 12; ++town) {
         StreetCase street;
         for (int i = 0; i < 4; ++i) {
-            street.add_street("A" + std::to_string(i), {-30, 120.0 * i}, {400, 120.0 * i}, i % 2 ? Surface::paved : Surface::verge);
+            street.add_street("A" + std::to_string(i), {-30, 120.0 * i}, {400, 120.0 * i},
+                              i % 2 ? Surface::paved : Surface::verge);
             street.add_street("B" + std::to_string(i), {120.0 * i, -30}, {120.0 * i, 400});
         }
         for (int s = 0; s < 4; ++s) {
             const StringIx string = street.add_string();
             for (int i = 0; i < 11; ++i) {
-                const PoleIx pole = street.add_pole(string, {35.0 * i, 120.0 * s + (below(4) == 0 ? -6.0 : 6.0)}, "A" + std::to_string(s), below(4) != 0);
+                const PoleIx pole =
+                    street.add_pole(string, {35.0 * i, 120.0 * s + (below(4) == 0 ? -6.0 : 6.0)},
+                                    "A" + std::to_string(s), below(4) != 0);
                 street.city.poles[pole.place()].duct = static_cast<Duct>(below(6));
             }
         }
-        for (int i = 0; i < 5; ++i) street.add_service({below(380) * 1.0, below(380) * 1.0}, static_cast<ServiceKind>(below(3)));
+        for (int i = 0; i < 5; ++i)
+            street.add_service({below(380) * 1.0, below(380) * 1.0}, static_cast<ServiceKind>(below(3)));
         const DecideResult result = street.decide();
         INFO("seed " << seed << " town " << town);
         check_result(street, result);
@@ -281,6 +302,7 @@ TEST_CASE("decide: on random towns the plan is never dearer than all rewire, all
         const DecideResult again = street.decide();
         CHECK(again.cost == result.cost);
         CHECK(again.spans.size() == result.spans.size());
-        for (std::size_t i = 0; i < result.poles.size(); ++i) CHECK(again.poles[i].choice == result.poles[i].choice);
+        for (std::size_t i = 0; i < result.poles.size(); ++i)
+            CHECK(again.poles[i].choice == result.poles[i].choice);
     }
 }

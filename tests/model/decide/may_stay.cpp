@@ -32,9 +32,10 @@ double with_strings(const StreetCase& street, const DecideResult& result) {
     return recomputed_cost(street.input(), result) + to_dollars(sum_of(string_costs(street.input(), cases)));
 }
 
-}  // namespace
+} // namespace
 
-TEST_CASE("may stay: where conversion is dear the strings stay, where keeping is dear they end; the cost holds their own cash") {
+TEST_CASE("may stay: where conversion is dear the strings stay, where keeping is dear they end; the cost "
+          "holds their own cash") {
     StreetCase street = two_strings();
     street.set_price("solar_head_m", 60000);
     street.set_price("trench_soft", 600);
@@ -42,7 +43,8 @@ TEST_CASE("may stay: where conversion is dear the strings stay, where keeping is
     street.set_price("emergency_factor", 0.01);
     street.set_price("upkeep_series", 1);
     street.set_price("pull_box", 20000);
-    // The conversion owed at the horizon is the larger part of keeping; a low rate of failure leaves it as it is.
+    // The conversion owed at the horizon is the larger part of keeping; a low rate of failure leaves it as it
+    // is.
     const DecideResult stays = street.decide();
     CHECK(stays.cost == Approx(with_strings(street, stays)).margin(0.005));
     CHECK(stays.bound <= stays.cost + 1e-9);
@@ -85,7 +87,8 @@ TEST_CASE("may stay: a keep mark is followed, and a pole without another option 
     CHECK(result.bound <= result.cost + 1e-9);
 }
 
-TEST_CASE("services anywhere: candidates at poles, none nearer than 150 m to another, the same city twice over") {
+TEST_CASE(
+    "services anywhere: candidates at poles, none nearer than 150 m to another, the same city twice over") {
     const StreetCase street = one_street(30);
     const City once = with_services_anywhere(street.city), twice = with_services_anywhere(once);
     CHECK(once.services.size() >= 6);
@@ -93,7 +96,8 @@ TEST_CASE("services anywhere: candidates at poles, none nearer than 150 m to ano
     for (std::size_t i = 0; i < once.services.size(); ++i) {
         CHECK(once.services[i].kind == ServiceKind::candidate);
         CHECK(once.services[i].id == "anywhere-" + once.services[i].pole_given);
-        for (std::size_t j = 0; j < i; ++j) CHECK(distance_m(once.services[i].place, once.services[j].place) >= 150);
+        for (std::size_t j = 0; j < i; ++j)
+            CHECK(distance_m(once.services[i].place, once.services[j].place) >= 150);
     }
     StreetCase dear = street;
     dear.city = once;

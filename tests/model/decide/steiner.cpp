@@ -12,13 +12,15 @@ using namespace unstring;
 
 namespace {
 
-SteinerProblem random_problem(std::mt19937_64& random, int vertices, int edges, int prizes, int musts, bool has_root) {
+SteinerProblem random_problem(std::mt19937_64& random, int vertices, int edges, int prizes, int musts,
+                              bool has_root) {
     const auto below = [&](int n) { return static_cast<int>(random() % static_cast<unsigned long>(n)); };
     SteinerProblem out;
     out.prize.assign(static_cast<std::size_t>(vertices), 0);
     out.must.assign(static_cast<std::size_t>(vertices), 0);
     for (int v = 1; v < vertices; ++v) out.edges.push_back({v, below(v), 1 + below(1000)});
-    for (int e = vertices - 1; e < edges; ++e) out.edges.push_back({below(vertices), below(vertices), 1 + below(1000)});
+    for (int e = vertices - 1; e < edges; ++e)
+        out.edges.push_back({below(vertices), below(vertices), 1 + below(1000)});
     for (int i = 0; i < prizes; ++i) out.prize[static_cast<std::size_t>(below(vertices))] = 1 + below(1200);
     for (int i = 0; i < musts; ++i) out.must[static_cast<std::size_t>(below(vertices))] = 1;
     if (has_root) out.root = below(vertices);
@@ -29,7 +31,8 @@ SteinerProblem random_problem(std::mt19937_64& random, int vertices, int edges, 
 std::int64_t brute_force(const SteinerProblem& problem) {
     const unsigned n = static_cast<unsigned>(problem.prize.size());
     std::vector<SteinerEdge> edges = problem.edges;
-    std::sort(edges.begin(), edges.end(), [](const SteinerEdge& a, const SteinerEdge& b) { return a.cost < b.cost; });
+    std::sort(edges.begin(), edges.end(),
+              [](const SteinerEdge& a, const SteinerEdge& b) { return a.cost < b.cost; });
     std::int64_t best = std::numeric_limits<std::int64_t>::max();
     for (unsigned set = 0; set < (1U << n); ++set) {
         std::int64_t cost = 0;
@@ -58,14 +61,15 @@ std::int64_t brute_force(const SteinerProblem& problem) {
     return best;
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("trench: the tree costs what trying every set of vertices finds, on 400 random graphs") {
     const unsigned long seed = 20270104;
     std::mt19937_64 random(seed);
     for (int i = 0; i < 400; ++i) {
         const int n = 5 + i % 8;
-        const SteinerProblem problem = random_problem(random, n, n + static_cast<int>(random() % 14), 2 + i % 7, i % 3 == 0 ? 2 : 0, i % 4 != 0);
+        const SteinerProblem problem = random_problem(random, n, n + static_cast<int>(random() % 14),
+                                                      2 + i % 7, i % 3 == 0 ? 2 : 0, i % 4 != 0);
         const std::int64_t best = brute_force(problem);
         for (const long branch_work : {0L, 60'000'000L}) {
             SteinerLimits limits;
@@ -85,7 +89,8 @@ TEST_CASE("trench: the tree costs what trying every set of vertices finds, on 40
     }
 }
 
-TEST_CASE("trench: without the exact search the bound stays under the cost and the gap under 3 % in the mean") {
+TEST_CASE(
+    "trench: without the exact search the bound stays under the cost and the gap under 3 % in the mean") {
     std::mt19937_64 random(7);
     SteinerLimits limits;
     limits.branch_work = 0;
@@ -130,7 +135,8 @@ TEST_CASE("trench: a vertex that has to be in and cannot be reached makes the an
     CHECK(answer.bound <= answer.cost);
 }
 
-TEST_CASE("trench: a prize beyond all edges acts like one that has to be in, and is paid in full where nothing reaches it") {
+TEST_CASE("trench: a prize beyond all edges acts like one that has to be in, and is paid in full where "
+          "nothing reaches it") {
     SteinerProblem problem;
     problem.root = 0;
     problem.prize = {0, 1'000'000'000'000, 2'000'000'000'000};

@@ -7,7 +7,8 @@
 
 using namespace unstring;
 
-TEST_CASE("trench bound: no reduced cost and no prize left is ever negative, and the rise is what the prizes gave up") {
+TEST_CASE("trench bound: no reduced cost and no prize left is ever negative, and the rise is what the prizes "
+          "gave up") {
     const unsigned long seed = 31;
     std::mt19937_64 random(seed);
     const auto below = [&](int n) { return static_cast<int>(random() % static_cast<unsigned long>(n)); };

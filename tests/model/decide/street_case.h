@@ -110,10 +110,13 @@ inline double recomputed_cost(const MoneyInput& input, const DecideResult& resul
     Cents sum = 0;
     const int year = input.plan.decide_year();
     for (const PoleDecision& each : result.poles)
-        if (each.choice != Choice::undecided) sum += to_cents(present_value(pole_option(input, each.pole, each.choice, year).lines));
-    for (const CircuitSpan& span : result.spans) sum += to_cents(present_value(span_lines(input, span, year)));
-    for (const Circuit& circuit : result.circuits) sum += to_cents(present_value(connection_lines(input, circuit.service, year)));
+        if (each.choice != Choice::undecided)
+            sum += to_cents(present_value(pole_option(input, each.pole, each.choice, year).lines));
+    for (const CircuitSpan& span : result.spans)
+        sum += to_cents(present_value(span_lines(input, span, year)));
+    for (const Circuit& circuit : result.circuits)
+        sum += to_cents(present_value(connection_lines(input, circuit.service, year)));
     return to_dollars(sum);
 }
 
-}  // namespace unstring
+} // namespace unstring

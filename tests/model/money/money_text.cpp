@@ -4,7 +4,8 @@
 
 using namespace unstring;
 
-TEST_CASE("money text: thousands are grouped, the sign stands before the currency, nothing is minus nothing") {
+TEST_CASE(
+    "money text: thousands are grouped, the sign stands before the currency, nothing is minus nothing") {
     CHECK(dollars_text(0) == "$0");
     CHECK(dollars_text(999.5) == "$1,000");
     CHECK(dollars_text(13541.2) == "$13,541");

@@ -28,13 +28,14 @@ YearsForm read_benchmark(const std::string& name) {
     form.hours = json.at("hours").get<std::vector<double>>();
     form.units_owned = json.at("unitsOwned").get<std::vector<std::vector<double>>>();
     for (const auto& row : json.at("strings"))
-        form.strings.push_back({row.at("ratingIndex"), row.at("fixedKeep"), row.at("load").get<std::vector<double>>(),
-                                row.at("capital").get<std::vector<double>>(), row.at("hours").get<std::vector<double>>(),
-                                row.at("keep").get<std::vector<double>>()});
+        form.strings.push_back(
+            {row.at("ratingIndex"), row.at("fixedKeep"), row.at("load").get<std::vector<double>>(),
+             row.at("capital").get<std::vector<double>>(), row.at("hours").get<std::vector<double>>(),
+             row.at("keep").get<std::vector<double>>()});
     return form;
 }
 
-}  // namespace
+} // namespace
 
 // shared/benchmarks/README.md: both values proved there by two mixed-integer models.
 TEST_CASE("years: the 4 x 4 x 4 benchmark is solved to its proved optimum of 2 101 471.72") {

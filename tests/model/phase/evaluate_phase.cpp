@@ -14,13 +14,16 @@ using namespace unstring;
 namespace {
 
 bool has(const PhaseResult& result, const std::string& code, const std::string& record = {}) {
-    return std::any_of(result.failures.begin(), result.failures.end(),
-                       [&](const Finding& each) { return each.code == code && (record.empty() || each.record == record); });
+    return std::any_of(result.failures.begin(), result.failures.end(), [&](const Finding& each) {
+        return each.code == code && (record.empty() || each.record == record);
+    });
 }
 
 const StringYear& row_of(const PhaseResult& result, std::size_t string, int year) {
-    const auto at = std::find_if(result.string_years.begin(), result.string_years.end(),
-                                 [&](const StringYear& each) { return each.string == StringIx(string) && each.year == year; });
+    const auto at =
+        std::find_if(result.string_years.begin(), result.string_years.end(), [&](const StringYear& each) {
+            return each.string == StringIx(string) && each.year == year;
+        });
     REQUIRE(at != result.string_years.end());
     return *at;
 }
@@ -41,7 +44,10 @@ SmallCity one_string(SpanKind kind) {
 void give_random_years(SmallCity& city, unsigned seed) {
     std::mt19937 dice(seed);
     for (PolePlan& row : city.plan.poles)
-        row.year = dice() % 6 == 0 ? 0 : city.plan.settings.first_year + static_cast<int>(dice() % static_cast<unsigned>(city.plan.settings.years));
+        row.year = dice() % 6 == 0
+                       ? 0
+                       : city.plan.settings.first_year +
+                             static_cast<int>(dice() % static_cast<unsigned>(city.plan.settings.years));
 }
 
 double sum_of_lines(const PhaseResult& result) {
@@ -50,7 +56,8 @@ double sum_of_lines(const PhaseResult& result) {
     return sum;
 }
 
-/// Each string's year-end load is within the rating of the transformer named, or a finding says that it is not.
+/// Each string's year-end load is within the rating of the transformer named, or a finding says that it is
+/// not.
 void check_loads(const SmallCity& city, const PhaseResult& result) {
     for (const StringYear& row : result.string_years) {
         if (row.lamps == 0 || row.year < city.plan.settings.first_year) continue;
@@ -93,7 +100,8 @@ void check_poles(const SmallCity& city, const PhaseResult& result) {
 
 void check_money(const PhaseResult& result) {
     double ledger = 0;
-    for (const LedgerYear& year : result.ledger) ledger += to_dollars(year.capital + year.operating) * year.factor;
+    for (const LedgerYear& year : result.ledger)
+        ledger += to_dollars(year.capital + year.operating) * year.factor;
     CHECK(std::abs(ledger - result.cost) < 0.005);
     CHECK(std::abs(sum_of_lines(result) - result.cost) < 0.005);
     for (const LedgerYear& year : result.ledger) {
@@ -103,10 +111,12 @@ void check_money(const PhaseResult& result) {
         CHECK(capital == year.capital);
         CHECK(operating == year.operating);
     }
-    for (const PhaseYear& year : result.years) CHECK(year.money == result.ledger[static_cast<std::size_t>(year.year - result.ledger[0].year)].capital);
+    for (const PhaseYear& year : result.years)
+        CHECK(year.money ==
+              result.ledger[static_cast<std::size_t>(year.year - result.ledger[0].year)].capital);
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("phase: a section that is cut back takes its lamps and its cable off the string") {
     const SmallCity city = one_string(SpanKind::trench_verge);
@@ -136,16 +146,17 @@ TEST_CASE("phase: a duct is live as long as the section beyond it is on the stri
     SmallCity city = one_string(SpanKind::conduit);
     const auto duct_findings = [&] {
         const PhaseResult result = evaluate_phase(city.input(), city.decide);
-        return std::count_if(result.failures.begin(), result.failures.end(), [](const Finding& each) { return each.code == "duct-live"; });
+        return std::count_if(result.failures.begin(), result.failures.end(),
+                             [](const Finding& each) { return each.code == "duct-live"; });
     };
-    // The circuit comes from the station's end: the ducts 1-2, 2-3 and 3-4 are pulled in 2027 for the poles beyond, while
-    // lamps 1 to 4 still burn; beyond lamp 4 the loop is cut back.
+    // The circuit comes from the station's end: the ducts 1-2, 2-3 and 3-4 are pulled in 2027 for the poles
+    // beyond, while lamps 1 to 4 still burn; beyond lamp 4 the loop is cut back.
     CHECK(duct_findings() == 3);
     for (PolePlan& row : city.plan.poles) row.year = 2029;
     CHECK(duct_findings() == 0);
     for (PolePlan& row : city.plan.poles) row.year = row.year == 2029 ? 2027 : 0;
     CHECK(duct_findings() == 0);
-    city.plan.poles[3].year = 0;  // lamp 4 keeps the legs that lead to it live: three out, three back
+    city.plan.poles[3].year = 0; // lamp 4 keeps the legs that lead to it live: three out, three back
     CHECK(duct_findings() == 6);
     for (Pole& pole : city.city.poles) pole.spare_duct = true;
     CHECK(duct_findings() == 0);
@@ -153,10 +164,11 @@ TEST_CASE("phase: a duct is live as long as the section beyond it is on the stri
 
 TEST_CASE("phase: an overloaded string takes the unit that fits, smallest first, and hands its own back") {
     SmallCity city = one_string(SpanKind::trench_verge);
-    city.city.transformers[0].rated_kw = 2;   // 16 lamps of 188 W at pf 0.9 take 3.3 kVA
+    city.city.transformers[0].rated_kw = 2; // 16 lamps of 188 W at pf 0.9 take 3.3 kVA
     const PhaseResult result = evaluate_phase(city.input(), city.decide);
     CHECK_FALSE(has(result, "load-over"));
-    CHECK(row_of(result, 0, 2028).transformer == TransformerIx(0));  // 1.7 kVA: the small one does again only if asked
+    CHECK(row_of(result, 0, 2028).transformer ==
+          TransformerIx(0)); // 1.7 kVA: the small one does again only if asked
     city.plan.units = {{StringIx(0), 2027, TransformerIx(1), 1}, {StringIx(0), 2028, TransformerIx(1), 1}};
     const PhaseResult asked = evaluate_phase(city.input(), city.decide);
     CHECK(row_of(asked, 0, 2028).transformer == TransformerIx(1));
@@ -193,7 +205,8 @@ TEST_CASE("phase: each kind of planted fault is found") {
         city.add_string(4, false);
         city.add_unit("T-2", 10, {StringIx(1)});
         city.plan.poles.resize(city.city.poles.size());
-        city.plan.units = {{StringIx(0), 2027, TransformerIx(0), 1}, {StringIx(1), 2027, TransformerIx(0), 1}};
+        city.plan.units = {{StringIx(0), 2027, TransformerIx(0), 1},
+                           {StringIx(1), 2027, TransformerIx(0), 1}};
         CHECK(has(evaluate_phase(city.input(), city.decide), "unit-twice", "T-1"));
     }
     SECTION("control lost") {
@@ -202,7 +215,7 @@ TEST_CASE("phase: each kind of planted fault is found") {
         city.plan.poles.resize(city.city.poles.size());
         city.city.strings[1].control_from = "S-1";
         CHECK(has(evaluate_phase(city.input(), city.decide), "control-lost", "S-2"));
-        city.city.strings[1].control_from = "S-1-6";  // leaves in 2027
+        city.city.strings[1].control_from = "S-1-6"; // leaves in 2027
         CHECK(has(evaluate_phase(city.input(), city.decide), "control-lost", "S-2"));
     }
     SECTION("money and hours short") {
@@ -253,8 +266,10 @@ TEST_CASE("phase: two units that change places within a year need a loaned one")
     city.add_unit("T-2", 12, {StringIx(1)});
     city.add_catalog();
     city.choose([](std::size_t) { return false; }, SpanKind::trench_verge);
-    city.plan.units = {{StringIx(0), 2027, TransformerIx(1), 1}, {StringIx(1), 2027, TransformerIx(0), 1},
-                       {StringIx(0), 2028, TransformerIx(1), 1}, {StringIx(1), 2028, TransformerIx(0), 1}};
+    city.plan.units = {{StringIx(0), 2027, TransformerIx(1), 1},
+                       {StringIx(1), 2027, TransformerIx(0), 1},
+                       {StringIx(0), 2028, TransformerIx(1), 1},
+                       {StringIx(1), 2028, TransformerIx(0), 1}};
     const PhaseResult result = evaluate_phase(city.input(), city.decide);
     CHECK(has(result, "unit-cycle", "year 2027"));
     CHECK(result.moves.size() == 2);
@@ -278,7 +293,8 @@ TEST_CASE("phase: a two-loop unit carries both its strings and is freed when bot
     CHECK(result.moves[1].to == "spare");
 }
 
-TEST_CASE("phase: for random plans no pole is lost, years add up to the cost, loads are within ratings or said not to be") {
+TEST_CASE("phase: for random plans no pole is lost, years add up to the cost, loads are within ratings or "
+          "said not to be") {
     for (unsigned seed = 1; seed <= 30; ++seed) {
         SmallCity city = random_city(seed);
         give_random_years(city, seed + 1000);
@@ -303,7 +319,8 @@ TEST_CASE("phase: a desk that has seen other plans answers as a new one does") {
         CHECK(kept.failures.size() == fresh.failures.size());
         CHECK(kept.moves.size() == fresh.moves.size());
         REQUIRE(kept.string_years.size() == fresh.string_years.size());
-        for (std::size_t i = 0; i < kept.string_years.size(); ++i) CHECK(kept.string_years[i].load_kva == fresh.string_years[i].load_kva);
+        for (std::size_t i = 0; i < kept.string_years.size(); ++i)
+            CHECK(kept.string_years[i].load_kva == fresh.string_years[i].load_kva);
     }
 }
 
@@ -311,12 +328,14 @@ TEST_CASE("phase: a boundary dragged in a city of 1 400 lamps is evaluated withi
     SmallCity city;
     city.plan.settings.years = 8;
     for (int s = 0; s < 14; ++s) city.add_string(50, true);
-    for (int s = 0; s < 14; ++s) city.add_unit("T-" + std::to_string(s + 1), 25, {StringIx(static_cast<std::size_t>(s))});
+    for (int s = 0; s < 14; ++s)
+        city.add_unit("T-" + std::to_string(s + 1), 25, {StringIx(static_cast<std::size_t>(s))});
     for (int k = 0; k < 4; ++k) city.add_unit("R-" + std::to_string(k + 1), 15, {});
     city.add_budget(600000, 5000);
     city.add_catalog();
     city.choose([](std::size_t i) { return i % 3 == 0; }, SpanKind::conduit);
-    for (std::size_t i = 0; i < city.lamps(); ++i) city.plan.poles[i].year = 2027 + static_cast<int>(i * 8 / city.lamps());
+    for (std::size_t i = 0; i < city.lamps(); ++i)
+        city.plan.poles[i].year = 2027 + static_cast<int>(i * 8 / city.lamps());
     PhaseDesk desk(city.input(), city.decide);
     using Clock = std::chrono::steady_clock;
     const auto cold = Clock::now();
@@ -330,5 +349,5 @@ TEST_CASE("phase: a boundary dragged in a city of 1 400 lamps is evaluated withi
         best_ms = std::min(best_ms, std::chrono::duration<double, std::milli>(Clock::now() - start).count());
     }
     WARN("first " << cold_ms << " ms, dragged " << best_ms << " ms");
-    CHECK(best_ms < 60);  // on a busy machine; a few ms alone
+    CHECK(best_ms < 60); // on a busy machine; a few ms alone
 }

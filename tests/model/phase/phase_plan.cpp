@@ -12,7 +12,8 @@ using namespace unstring;
 namespace {
 
 int count_of(const PhaseResult& result, const std::string& code) {
-    return static_cast<int>(std::count_if(result.failures.begin(), result.failures.end(), [&](const Finding& each) { return each.code == code; }));
+    return static_cast<int>(std::count_if(result.failures.begin(), result.failures.end(),
+                                          [&](const Finding& each) { return each.code == code; }));
 }
 
 PhaseOutcome solved(const SmallCity& city, PhaseChoices choices = {}) {
@@ -21,22 +22,27 @@ PhaseOutcome solved(const SmallCity& city, PhaseChoices choices = {}) {
     return std::move(*outcome);
 }
 
-/// Sections leave from the far end inward: where a section has a year, those further out have an earlier one or the same.
+/// Sections leave from the far end inward: where a section has a year, those further out have an earlier one
+/// or the same.
 void check_nested(const PhaseResult& result) {
     for (const Section& section : result.sections)
         for (const Section& inner : result.sections) {
             if (inner.string != section.string || inner.ring <= section.ring) continue;
             int last = 0, first = 1 << 30;
-            for (const PoleIx pole : section.poles) last = std::max(last, result.pole_year[pole.place()] == 0 ? 1 << 30 : result.pole_year[pole.place()]);
+            for (const PoleIx pole : section.poles)
+                last = std::max(last, result.pole_year[pole.place()] == 0 ? 1 << 30
+                                                                          : result.pole_year[pole.place()]);
             for (const PoleIx pole : inner.poles)
-                first = std::min(first, result.pole_year[pole.place()] == 0 ? 1 << 30 : result.pole_year[pole.place()]);
+                first = std::min(first, result.pole_year[pole.place()] == 0 ? 1 << 30
+                                                                            : result.pole_year[pole.place()]);
             CHECK(last <= first);
         }
 }
 
-}  // namespace
+} // namespace
 
-TEST_CASE("phase: for random cities the plan costs no less than its bound, is nested, and names what it over-runs") {
+TEST_CASE("phase: for random cities the plan costs no less than its bound, is nested, and names what it "
+          "over-runs") {
     int feasible = 0;
     double widest = 0;
     for (unsigned seed = 1; seed <= 25; ++seed) {
@@ -57,7 +63,8 @@ TEST_CASE("phase: for random cities the plan costs no less than its bound, is ne
         }
         CHECK(dated + result.not_reached == static_cast<int>(city.lamps()));
         for (const PhaseYear& year : result.years)
-            if (year.money_limit && to_dollars(year.money) > *year.money_limit + 0.005) CHECK(count_of(result, "money-short") > 0);
+            if (year.money_limit && to_dollars(year.money) > *year.money_limit + 0.005)
+                CHECK(count_of(result, "money-short") > 0);
         if (result.feasible && result.not_reached == 0) {
             ++feasible;
             widest = std::max(widest, (result.cost - result.bound) / result.cost);
@@ -102,7 +109,7 @@ TEST_CASE("phase: with too little money the rest has no year, and what it lacks 
     CHECK(outcome.result.not_reached > 0);
     CHECK(count_of(outcome.result, "pole-unreached") > 0);
     CHECK(count_of(outcome.result, "money-short") > 0);
-    CHECK(outcome.result.feasible);  // no year's limit is broken
+    CHECK(outcome.result.feasible); // no year's limit is broken
     CHECK(outcome.result.cost >= outcome.result.bound);
     for (const PhaseYear& year : outcome.result.years) CHECK(to_dollars(year.money) <= 30000.005);
 }
@@ -131,16 +138,21 @@ TEST_CASE("phase: a city of 1 400 lamps is planned within seconds") {
     SmallCity city;
     city.plan.settings.years = 8;
     for (int s = 0; s < 14; ++s) city.add_string(50, s % 3 != 0);
-    for (int s = 0; s < 14; ++s) city.add_unit("T-" + std::to_string(s + 1), 25, {StringIx(static_cast<std::size_t>(s))});
+    for (int s = 0; s < 14; ++s)
+        city.add_unit("T-" + std::to_string(s + 1), 25, {StringIx(static_cast<std::size_t>(s))});
     for (int k = 0; k < 4; ++k) city.add_unit("R-" + std::to_string(k + 1), 15, {});
     city.add_budget(1500000, 20000);
     city.add_catalog();
     city.choose([](std::size_t i) { return i % 3 == 0; }, SpanKind::trench_verge);
     const PhaseOutcome outcome = solved(city);
-    for (const Finding& each : outcome.result.failures) WARN(each.code << " " << each.record << ": " << each.found);
-    for (const PhaseYear& each : outcome.result.years) WARN(each.year << " " << to_dollars(each.money) << " of " << each.money_limit.value_or(0) << ", civil " << each.hours.civil << ", left " << each.series_lamps_left);
-    WARN("seconds " << outcome.result.seconds << ", cost " << outcome.result.cost << ", bound " << outcome.result.bound << ", not reached "
-                    << outcome.result.not_reached << ", failures " << outcome.result.failures.size());
+    for (const Finding& each : outcome.result.failures)
+        WARN(each.code << " " << each.record << ": " << each.found);
+    for (const PhaseYear& each : outcome.result.years)
+        WARN(each.year << " " << to_dollars(each.money) << " of " << each.money_limit.value_or(0)
+                       << ", civil " << each.hours.civil << ", left " << each.series_lamps_left);
+    WARN("seconds " << outcome.result.seconds << ", cost " << outcome.result.cost << ", bound "
+                    << outcome.result.bound << ", not reached " << outcome.result.not_reached << ", failures "
+                    << outcome.result.failures.size());
     CHECK(outcome.result.cost >= outcome.result.bound);
     CHECK(outcome.result.seconds < 60);
 }

@@ -1,6 +1,6 @@
 #pragma once
-// Small invented cities for the tests of phase: strings that run out along one side of a street and back along the other,
-// with cut-backs across it, one service a string, conduit between neighbours.
+// Small invented cities for the tests of phase: strings that run out along one side of a street and back
+// along the other, with cut-backs across it, one service a string, conduit between neighbours.
 
 #include <random>
 #include <string>
@@ -22,7 +22,8 @@ struct SmallCity {
     [[nodiscard]] MoneyInput input() const { return {city, catalog, prices, plan, shade}; }
     [[nodiscard]] std::size_t lamps() const { return city.poles.size(); }
 
-    void add_unit(const std::string& id, double rated_kw, std::vector<StringIx> strings, double primary_v = 2400) {
+    void add_unit(const std::string& id, double rated_kw, std::vector<StringIx> strings,
+                  double primary_v = 2400) {
         Transformer unit;
         unit.id = id;
         unit.rated_kw = rated_kw;
@@ -94,8 +95,10 @@ struct SmallCity {
         }
     }
 
-    /// Rewires every pole of the string from its near end out, each side a chain of spans; solar where `is_solar` says so.
-    template <class IsSolar> void choose(IsSolar is_solar, SpanKind kind) {
+    /// Rewires every pole of the string from its near end out, each side a chain of spans; solar where
+    /// `is_solar` says so.
+    template <class IsSolar>
+    void choose(IsSolar is_solar, SpanKind kind) {
         plan.poles.resize(city.poles.size());
         for (std::size_t s = 0; s < city.strings.size(); ++s) {
             Circuit circuit;
@@ -125,7 +128,8 @@ struct SmallCity {
                     span.duct_from = PoleIx(rewired[k - 1]);
                     span.duct_to = PoleIx(rewired[k]);
                 }
-                for (std::size_t j = k; j < rewired.size(); ++j) span.poles_beyond.push_back(PoleIx(rewired[j]));
+                for (std::size_t j = k; j < rewired.size(); ++j)
+                    span.poles_beyond.push_back(PoleIx(rewired[j]));
                 decide.spans.push_back(span);
             }
             decide.circuits.push_back(circuit);
@@ -167,14 +171,17 @@ inline SmallCity random_city(unsigned seed) {
     const int strings = 2 + upto(4);
     for (int s = 0; s < strings; ++s) out.add_string(4 + upto(14), upto(4) != 0);
     for (int s = 0; s < strings; ++s)
-        if (upto(8) != 0) out.add_unit("T-" + std::to_string(s + 1), upto(6) == 0 ? 4 : 10, {StringIx(static_cast<std::size_t>(s))}, upto(5) == 0 ? 4160 : 2400);
+        if (upto(8) != 0)
+            out.add_unit("T-" + std::to_string(s + 1), upto(6) == 0 ? 4 : 10,
+                         {StringIx(static_cast<std::size_t>(s))}, upto(5) == 0 ? 4160 : 2400);
     for (int k = 0; k < upto(4); ++k) out.add_unit("R-" + std::to_string(k + 1), 5, {});
     if (upto(3) == 0) out.city.strings[1].control_from = out.city.strings[0].id;
     if (upto(2) == 0) out.city.poles[static_cast<std::size_t>(upto(8))].critical = true;
     out.add_budget(40000.0 * (1 + upto(12)), 300.0 * (1 + upto(8)));
     out.add_catalog();
-    out.choose([&](std::size_t) { return upto(3) == 0; }, upto(2) == 0 ? SpanKind::conduit : SpanKind::trench_verge);
+    out.choose([&](std::size_t) { return upto(3) == 0; },
+               upto(2) == 0 ? SpanKind::conduit : SpanKind::trench_verge);
     return out;
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -1,4 +1,5 @@
-// TSPLIB (Reinelt 1991), rounded Euclidean distances: optimal tours as published; open paths from city 1 proved.
+// TSPLIB (Reinelt 1991), rounded Euclidean distances: optimal tours as published; open paths from city 1
+// proved.
 
 #include <cmath>
 #include <fstream>
@@ -16,7 +17,8 @@ DistanceTable rounded_distances(const std::string& name) {
     std::ifstream file(std::string(UNSTRING_BENCHMARKS) + "/tsp/" + name + ".tsp");
     REQUIRE(file.good());
     std::string line;
-    while (std::getline(file, line) && !line.starts_with("NODE_COORD_SECTION")) {}
+    while (std::getline(file, line) && !line.starts_with("NODE_COORD_SECTION")) {
+    }
     std::vector<MapPoint> stops;
     while (std::getline(file, line) && !line.starts_with("EOF")) {
         std::istringstream fields(line);
@@ -26,7 +28,8 @@ DistanceTable rounded_distances(const std::string& name) {
     }
     DistanceTable distances(stops.size());
     for (std::size_t a = 0; a < stops.size(); ++a)
-        for (std::size_t b = 0; b < a; ++b) distances.set(a, b, std::floor(distance_m(stops[a], stops[b]) + 0.5));
+        for (std::size_t b = 0; b < a; ++b)
+            distances.set(a, b, std::floor(distance_m(stops[a], stops[b]) + 0.5));
     return distances;
 }
 
@@ -35,10 +38,13 @@ struct Known {
     double optimum, within;
 };
 
-}  // namespace
+} // namespace
 
 TEST_CASE("route: published optimal tours are found, to the unit or within what is allowed") {
-    for (const Known& known : {Known{"berlin52", 7542, 0}, {"eil51", 426, 0}, {"st70", 675, 0}, {"ch130", 6110, 0.01},
+    for (const Known& known : {Known{"berlin52", 7542, 0},
+                               {"eil51", 426, 0},
+                               {"st70", 675, 0},
+                               {"ch130", 6110, 0.01},
                                {"lin105", 14379, 0.01}}) {
         const double length = closed_route(rounded_distances(known.name)).length_m;
         CAPTURE(known.name, length);
@@ -52,4 +58,4 @@ TEST_CASE("route: the proved open paths from city 1 are found") {
     CHECK(open_route(rounded_distances("eil51")).length_m == 411);
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -12,7 +12,8 @@ namespace unstring::for_tests {
 inline Catalog catalog() {
     Catalog catalog;
     catalog.cables = default_cables();
-    catalog.lamps = {{"HPS150", {"150W S"}, 188, 0.8, LampKind::hps}, {"HPS250", {}, 295, 0.9, LampKind::hps},
+    catalog.lamps = {{"HPS150", {"150W S"}, 188, 0.8, LampKind::hps},
+                     {"HPS250", {}, 295, 0.9, LampKind::hps},
                      {"LED60", {}, 60, 0.95, LampKind::led}};
     return catalog;
 }
@@ -28,7 +29,8 @@ inline SeriesString string_row(std::string id, MapPoint station) {
     return row;
 }
 
-inline Pole pole_row(std::string id, StringIx string, const std::string& string_id, int order, MapPoint place) {
+inline Pole pole_row(std::string id, StringIx string, const std::string& string_id, int order,
+                     MapPoint place) {
     Pole pole;
     pole.id = std::move(id);
     pole.string = string;
@@ -59,17 +61,19 @@ inline Transformer unit_row(std::string id, double rated_kw, StringIx string, co
     return unit;
 }
 
-/// String S-1: lamps 1..n/2 out along y = 0, n/2+1..n back along y = 20, every 35 m; the station 100 m before the first.
+/// String S-1: lamps 1..n/2 out along y = 0, n/2+1..n back along y = 20, every 35 m; the station 100 m before
+/// the first.
 inline City out_and_back(int lamps, double rated_kw) {
     City city;
     city.strings = {string_row("S-1", {0, 10})};
     const int half = lamps / 2;
     for (int i = 1; i <= lamps; ++i) {
         const double along_m = 100 + 35.0 * (i <= half ? i - 1 : lamps - i);
-        city.poles.push_back(pole_row("P-" + std::to_string(i), StringIx(0), "S-1", i, {along_m, i <= half ? 0.0 : 20.0}));
+        city.poles.push_back(
+            pole_row("P-" + std::to_string(i), StringIx(0), "S-1", i, {along_m, i <= half ? 0.0 : 20.0}));
     }
     city.transformers = {unit_row("T-1", rated_kw, StringIx(0), "S-1")};
     return city;
 }
 
-}  // namespace unstring::for_tests
+} // namespace unstring::for_tests

@@ -12,8 +12,9 @@ TEST_CASE("dates: a year, a month or a day that the calendar has") {
 }
 
 TEST_CASE("dates: anything else is none") {
-    for (const char* text : {"", "62", "2023-02-29", "2024-13", "2024-00", "2024-01-00", "2024/01/01", "01-01-2024", "20x4", "-962"})
+    for (const char* text : {"", "62", "2023-02-29", "2024-13", "2024-00", "2024-01-00", "2024/01/01",
+                             "01-01-2024", "20x4", "-962"})
         CHECK_FALSE(date_of(text).has_value());
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -10,10 +10,14 @@
 namespace unstring {
 namespace {
 
-LoopCutBack cutback(int a, int b, double new_cable_m) { return {a, b, new_cable_m, 0, true, CutBackKind::pullbox}; }
+LoopCutBack cutback(int a, int b, double new_cable_m) {
+    return {a, b, new_cable_m, 0, true, CutBackKind::pullbox};
+}
 
-/// Tries every set of cut-backs: no two overlap, each with only lamps that are off between its ends; counts metres leg by leg.
-double by_brute_force_m(const std::vector<double>& legs_m, const std::vector<char>& live, const std::vector<LoopCutBack>& cutbacks) {
+/// Tries every set of cut-backs: no two overlap, each with only lamps that are off between its ends; counts
+/// metres leg by leg.
+double by_brute_force_m(const std::vector<double>& legs_m, const std::vector<char>& live,
+                        const std::vector<LoopCutBack>& cutbacks) {
     if (std::none_of(live.begin(), live.end(), [](char is_live) { return is_live != 0; })) return 0;
     double shortest_m = std::numeric_limits<double>::infinity();
     for (unsigned set = 0; set < (1U << cutbacks.size()); ++set) {
@@ -23,8 +27,10 @@ double by_brute_force_m(const std::vector<double>& legs_m, const std::vector<cha
         for (std::size_t k = 0; k < cutbacks.size(); ++k) {
             if ((set >> k & 1U) == 0) continue;
             metres += cutbacks[k].new_cable_m;
-            for (int leg = cutbacks[k].a; leg < cutbacks[k].b; ++leg) ++skipped[static_cast<std::size_t>(leg)];
-            for (int p = cutbacks[k].a + 1; p < cutbacks[k].b; ++p) is_legal = is_legal && live[static_cast<std::size_t>(p - 1)] == 0;
+            for (int leg = cutbacks[k].a; leg < cutbacks[k].b; ++leg)
+                ++skipped[static_cast<std::size_t>(leg)];
+            for (int p = cutbacks[k].a + 1; p < cutbacks[k].b; ++p)
+                is_legal = is_legal && live[static_cast<std::size_t>(p - 1)] == 0;
         }
         for (std::size_t leg = 0; leg < legs_m.size(); ++leg) {
             is_legal = is_legal && skipped[leg] <= 1;
@@ -35,13 +41,16 @@ double by_brute_force_m(const std::vector<double>& legs_m, const std::vector<cha
     return shortest_m;
 }
 
-}  // namespace
+} // namespace
 
-TEST_CASE("energised loop: equals brute force over every set of cut-backs on 500 random strings of up to 12 lamps") {
+TEST_CASE("energised loop: equals brute force over every set of cut-backs on 500 random strings of up to 12 "
+          "lamps") {
     const unsigned seed = 20270;
     INFO("seed " << seed);
     std::mt19937 random(seed);
-    const auto whole = [&](int low, int high) { return std::uniform_int_distribution<int>(low, high)(random); };
+    const auto whole = [&](int low, int high) {
+        return std::uniform_int_distribution<int>(low, high)(random);
+    };
     int with_cutback = 0;
     for (int round = 0; round < 500; ++round) {
         const int n = whole(1, 12);
@@ -81,7 +90,9 @@ TEST_CASE("energised loop: a cut-back of the same length as the legs it skips is
 }
 
 TEST_CASE("energised loop: tenths of metres that add up to the cut-back's own are not taken for a saving") {
-    CHECK(energised_loop(std::vector<double>{0.1, 0.2, 5}, std::vector<char>{0, 1}, std::vector{cutback(0, 2, 0.3)}).used.empty());
+    CHECK(energised_loop(std::vector<double>{0.1, 0.2, 5}, std::vector<char>{0, 1},
+                         std::vector{cutback(0, 2, 0.3)})
+              .used.empty());
 }
 
 TEST_CASE("energised loop: the whole cable is live while every lamp is on, and none once every lamp is off") {
@@ -92,15 +103,18 @@ TEST_CASE("energised loop: the whole cable is live while every lamp is on, and n
 
 TEST_CASE("energised loop: crossing cut-backs are never both used") {
     const std::vector<double> legs_m{10, 10, 10, 10, 10, 10};
-    const EnergisedLoop loop =
-        energised_loop(legs_m, std::vector<char>{1, 0, 0, 0, 1}, std::vector{cutback(1, 4, 1), cutback(2, 5, 2)});
+    const EnergisedLoop loop = energised_loop(legs_m, std::vector<char>{1, 0, 0, 0, 1},
+                                              std::vector{cutback(1, 4, 1), cutback(2, 5, 2)});
     CHECK(loop.used == std::vector<int>{0});
     CHECK(loop.cable_m == 31);
 }
 
 TEST_CASE("energised loop: a cut-back outside the loop is a bug") {
-    CHECK_THROWS_AS(energised_loop(std::vector<double>{1, 1}, std::vector<char>{1}, std::vector{cutback(0, 3, 1)}), std::logic_error);
-    CHECK_THROWS_AS(energised_loop(std::vector<double>{1}, std::vector<char>{1}, std::vector<LoopCutBack>{}), std::logic_error);
+    CHECK_THROWS_AS(
+        energised_loop(std::vector<double>{1, 1}, std::vector<char>{1}, std::vector{cutback(0, 3, 1)}),
+        std::logic_error);
+    CHECK_THROWS_AS(energised_loop(std::vector<double>{1}, std::vector<char>{1}, std::vector<LoopCutBack>{}),
+                    std::logic_error);
 }
 
-}  // namespace unstring
+} // namespace unstring

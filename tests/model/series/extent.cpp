@@ -36,4 +36,4 @@ TEST_CASE("extent: setting records aside does not move it") {
     CHECK(extent_of(city).reach_m == before.reach_m);
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -44,7 +44,7 @@ void check_is_route(const Route& route, std::size_t stops) {
     for (std::size_t i = 0; i < sorted.size(); ++i) REQUIRE(sorted[i] == static_cast<int>(i));
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("route: up to 8 stops equal the best of all permutations, open and closed") {
     const unsigned seed = 99;
@@ -88,7 +88,8 @@ TEST_CASE("route: every stop once and the length that its order has, also with s
             check_is_route(route, static_cast<std::size_t>(n));
             double metres = 0;
             for (std::size_t i = 1; i < route.order.size(); ++i)
-                metres += distances(static_cast<std::size_t>(route.order[i - 1]), static_cast<std::size_t>(route.order[i]));
+                metres += distances(static_cast<std::size_t>(route.order[i - 1]),
+                                    static_cast<std::size_t>(route.order[i]));
             if (is_closed) metres += distances(static_cast<std::size_t>(route.order.back()), 0);
             CHECK(route.length_m == Approx(metres));
         }
@@ -100,7 +101,8 @@ TEST_CASE("route: the search of many stops finds what the exact programme proves
     for (unsigned round = 0; round < 20; ++round) {
         std::vector<MapPoint> stops = random_stops(12, 1000 + round);
         const double proved_m = closed_route(straight_distances(stops)).length_m;
-        stops.push_back(stops.front());  // a thirteenth at the first one's place: the same length, the other search
+        stops.push_back(
+            stops.front()); // a thirteenth at the first one's place: the same length, the other search
         const double searched_m = closed_route(straight_distances(stops)).length_m;
         CHECK(searched_m >= proved_m - 1e-6);
         found += searched_m <= proved_m + 1e-6 ? 1 : 0;
@@ -113,4 +115,4 @@ TEST_CASE("route: asked twice it answers the same") {
     CHECK(open_route(distances).order == open_route(distances).order);
 }
 
-}  // namespace unstring
+} // namespace unstring

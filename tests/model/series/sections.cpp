@@ -34,7 +34,8 @@ std::vector<std::size_t> positions_of(const Section& section) {
     return positions;
 }
 
-/// Every lamp in one section; rings count from 0; after each ring the lamps off are one run that holds the far end.
+/// Every lamp in one section; rings count from 0; after each ring the lamps off are one run that holds the
+/// far end.
 void check_nested(const StringLoop& loop, const std::vector<Section>& sections) {
     std::set<std::size_t> off;
     int ring = 0;
@@ -54,9 +55,10 @@ void check_nested(const StringLoop& loop, const std::vector<Section>& sections) 
     REQUIRE(off.size() == loop.lamps.size());
 }
 
-}  // namespace
+} // namespace
 
-TEST_CASE("sections: without cut-backs a string leaves in contiguous blocks of 6 to 10 lamps from the far end inward") {
+TEST_CASE("sections: without cut-backs a string leaves in contiguous blocks of 6 to 10 lamps from the far "
+          "end inward") {
     for (int lamps = 6; lamps <= 140; ++lamps) {
         const StringLoop loop = loop_of(lamps, {});
         const std::vector<Section> sections = sections_of({loop});
@@ -104,11 +106,14 @@ TEST_CASE("sections: a cut-back that saves no cable is not used, a confirmed one
     CHECK(sections_of({either})[0].cutback == 1);
 }
 
-TEST_CASE("sections: stay nested and whole on 300 random loops with cut-backs, ids count on over the strings") {
+TEST_CASE(
+    "sections: stay nested and whole on 300 random loops with cut-backs, ids count on over the strings") {
     const unsigned seed = 4711;
     INFO("seed " << seed);
     std::mt19937 random(seed);
-    const auto whole = [&](int low, int high) { return std::uniform_int_distribution<int>(low, high)(random); };
+    const auto whole = [&](int low, int high) {
+        return std::uniform_int_distribution<int>(low, high)(random);
+    };
     for (int round = 0; round < 300; ++round) {
         const int n = whole(1, 90);
         std::vector<LoopCutBack> cutbacks;
@@ -126,4 +131,4 @@ TEST_CASE("sections: stay nested and whole on 300 random loops with cut-backs, i
     for (std::size_t i = 0; i < two.size(); ++i) CHECK(two[i].id == static_cast<int>(i));
 }
 
-}  // namespace unstring
+} // namespace unstring

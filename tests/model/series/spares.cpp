@@ -31,4 +31,4 @@ TEST_CASE("spares: a mean that is no number, or a target of certainty, is a bug"
     CHECK_THROWS_AS(poisson_stock(1, 1), std::logic_error);
 }
 
-}  // namespace unstring
+} // namespace unstring

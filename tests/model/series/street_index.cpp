@@ -11,11 +11,12 @@ std::vector<Street> streets(std::vector<std::vector<MapPoint>> lines) {
     return out;
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("street index: counts the centre lines between two places, wherever the cells of its grid lie") {
     for (const double shift_m : {0.0, 50.0, 99.9, -3000.0, 500000.0}) {
-        const StreetIndex index(streets({{{shift_m - 400, 10}, {shift_m + 400, 10}}, {{shift_m - 400, 30}, {shift_m + 400, 30}}}));
+        const StreetIndex index(streets(
+            {{{shift_m - 400, 10}, {shift_m + 400, 10}}, {{shift_m - 400, 30}, {shift_m + 400, 30}}}));
         CAPTURE(shift_m);
         CHECK(index.crossings({shift_m, 0}, {shift_m, 20}) == 1);
         CHECK(index.crossings({shift_m, 0}, {shift_m + 250, 40}) == 2);
@@ -30,4 +31,4 @@ TEST_CASE("street index: a bend of one street between two places on its one side
     CHECK(index.crossings({50, 10}, {110, 50}) == 1);
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -8,8 +8,10 @@
 
 namespace unstring {
 
-TEST_CASE("string load: thirty 150 W lamps out and back give 1 096 V, and the change of volts when ten leave is theirs and their cable's") {
-    // Worked by hand: 30 x 188 / 6.6 = 854.5 V real, x .75 = 640.9 V reactive; 2 300 m at 2.140 and .1706 ohm/km.
+TEST_CASE("string load: thirty 150 W lamps out and back give 1 096 V, and the change of volts when ten leave "
+          "is theirs and their cable's") {
+    // Worked by hand: 30 x 188 / 6.6 = 854.5 V real, x .75 = 640.9 V reactive; 2 300 m at 2.140 and .1706
+    // ohm/km.
     const std::vector<double> w(30, 188), pf(30, 0.8);
     const StringLoad whole = string_load(6.6, usual_string_cable(), 2 * (30 * 35 + 100), 25, w, pf);
     CHECK(whole.volts == Approx(1096).margin(0.6));
@@ -49,7 +51,9 @@ TEST_CASE("string load: lamps of one power factor add as numbers, of two as phas
 }
 
 TEST_CASE("string load: a power factor of zero is a bug") {
-    CHECK_THROWS_AS(string_load(6.6, usual_string_cable(), 0, 25, std::vector<double>{1}, std::vector<double>{0}), std::logic_error);
+    CHECK_THROWS_AS(
+        string_load(6.6, usual_string_cable(), 0, 25, std::vector<double>{1}, std::vector<double>{0}),
+        std::logic_error);
 }
 
 TEST_CASE("primary side: the kVA stay while the load falls, so the power factor falls with it") {
@@ -58,4 +62,4 @@ TEST_CASE("primary side: the kVA stay while the load falls, so the power factor 
     CHECK(primary_side(20, 5).pf < 0.3);
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -34,7 +34,7 @@ CutBack cutback_row(std::string a, std::string b) {
     return row;
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("string loop: legs run straight from lamp to lamp, scaled to the length that the file gives") {
     City city = out_and_back(10, 10);
@@ -58,11 +58,12 @@ TEST_CASE("string loop: without a station the closing run is halved between the 
 TEST_CASE("string loop: the far end is the lamp with the longest way back on its nearer side") {
     CHECK(loop_of(out_and_back(10, 10)).far_position == 5);
     City city = out_and_back(10, 10);
-    city.poles[1].place.x_m = 700;  // lamp 2 now hangs on a long spur
+    city.poles[1].place.x_m = 700; // lamp 2 now hangs on a long spur
     CHECK(loop_of(city).far_position == 2);
 }
 
-TEST_CASE("string loop: lamps on both sides of a street can be spliced across, a crossing where the centre line runs between") {
+TEST_CASE("string loop: lamps on both sides of a street can be spliced across, a crossing where the centre "
+          "line runs between") {
     City city = out_and_back(10, 10);
     const StringLoop loop = loop_of(city);
     REQUIRE(loop.cutbacks.size() == 4);
@@ -78,12 +79,13 @@ TEST_CASE("string loop: lamps on both sides of a street can be spliced across, a
     CHECK(loop_of(city).cutbacks[0].kind == CutBackKind::crossing);
 }
 
-TEST_CASE("string loop: a cut-back of the file is a fact with its own metres, its ends in either order, terminals by name") {
+TEST_CASE("string loop: a cut-back of the file is a fact with its own metres, its ends in either order, "
+          "terminals by name") {
     City city = out_and_back(10, 10);
     city.cutbacks = {cutback_row("P-7", "P-4"), cutback_row("out", "P-3"), cutback_row("P-9", "return"),
                      cutback_row("P-1", "nowhere"), cutback_row("out", "return")};
     const StringLoop loop = loop_of(city);
-    REQUIRE(loop.cutbacks.size() == 6);  // three of the file, three candidates
+    REQUIRE(loop.cutbacks.size() == 6); // three of the file, three candidates
     CHECK(loop.cutbacks[0].a == 4);
     CHECK(loop.cutbacks[0].b == 7);
     CHECK(loop.cutbacks[0].confirmed);
@@ -93,7 +95,8 @@ TEST_CASE("string loop: a cut-back of the file is a fact with its own metres, it
     CHECK(loop.cutbacks[2].b == 11);
 }
 
-TEST_CASE("string state: lamps that leave between a cut-back take their cable along, lamps jumpered alone leave it live") {
+TEST_CASE("string state: lamps that leave between a cut-back take their cable along, lamps jumpered alone "
+          "leave it live") {
     const StringLoop loop = loop_of(out_and_back(20, 10));
     const StringState whole = string_state(loop, all_live_but(loop, 1, 0));
     CHECK(whole.lamps == 20);
@@ -110,7 +113,8 @@ TEST_CASE("string state: lamps that leave between a cut-back take their cable al
     CHECK(whole.load_kw - jumpered.load_kw == Approx(0.188));
 }
 
-TEST_CASE("string state: a pole that is down is jumpered, draws nothing, and does not by itself make a cut-back") {
+TEST_CASE(
+    "string state: a pole that is down is jumpered, draws nothing, and does not by itself make a cut-back") {
     City city = out_and_back(10, 10);
     for (const std::size_t down : {3U, 4U, 5U, 6U}) city.poles[down].status = PoleStatus::down;
     const StringLoop loop = loop_of(city);
@@ -144,7 +148,7 @@ TEST_CASE("string loop: a second record of one lamp that is set aside is not cou
     city.poles.push_back(city.poles[4]);
     city.poles.back().set_aside = true;
     CHECK(loop_of(city).aside.empty());
-    city.poles.back().place.x_m += 500;  // the same id elsewhere is another lamp with a wrong id
+    city.poles.back().place.x_m += 500; // the same id elsewhere is another lamp with a wrong id
     CHECK(loop_of(city).aside.size() == 1);
 }
 
@@ -187,4 +191,4 @@ TEST_CASE("string loop: a cable size that the catalogue lacks is replaced, never
     CHECK(loop_of(city).cable->awg == 6);
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -11,11 +11,14 @@ using for_tests::unit_row;
 
 const UnitNeed kNeed{6.6, 8, 5, 4160.0, Mount::pole};
 
-std::string refused(const Transformer& unit, const UnitNeed& need = kNeed) { return why_unit_refused(unit, need); }
+std::string refused(const Transformer& unit, const UnitNeed& need = kNeed) {
+    return why_unit_refused(unit, need);
+}
 
-}  // namespace
+} // namespace
 
-TEST_CASE("units: one that agrees in current, primary volts and mounting and carries the load is not refused") {
+TEST_CASE(
+    "units: one that agrees in current, primary volts and mounting and carries the load is not refused") {
     CHECK(refused(unit_row("T", 10, {}, "")).empty());
 }
 
@@ -76,8 +79,9 @@ TEST_CASE("units: a two-loop unit carries half its rating on each loop") {
 
 TEST_CASE("units: the smallest that fits comes first, and a tap counts as a rating") {
     City city;
-    city.transformers = {unit_row("big", 20, {}, ""), unit_row("right", 10, {}, ""), unit_row("small", 5, {}, ""),
-                         unit_row("tapped", 30, {}, ""), unit_row("gone", 9, {}, "")};
+    city.transformers = {unit_row("big", 20, {}, ""), unit_row("right", 10, {}, ""),
+                         unit_row("small", 5, {}, ""), unit_row("tapped", 30, {}, ""),
+                         unit_row("gone", 9, {}, "")};
     city.transformers[3].taps = {1, 0.75, 0.5, 0.3};
     city.transformers[4].state = UnitState::scrapped;
     std::vector<TransformerIx> pool;
@@ -113,4 +117,4 @@ TEST_CASE("units: a spare counts as untested without a date or more than five ye
     CHECK(is_untested(unit, 0));
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -7,7 +7,9 @@
 namespace unstring {
 
 TEST_CASE("verdict: each word begins where the contract says") {
-    const auto word = [](double loading) { return std::string(text_of(verdict_of(true, 10, loading, 0.25))); };
+    const auto word = [](double loading) {
+        return std::string(text_of(verdict_of(true, 10, loading, 0.25)));
+    };
     CHECK(word(1.0001) == "over");
     CHECK(word(1) == "tight");
     CHECK(word(0.9001) == "tight");
@@ -28,4 +30,4 @@ TEST_CASE("verdict: a unit that needs more than half its rating is low before it
     CHECK(verdict_of(true, 10, 0.55, 0.6) == Verdict::low);
 }
 
-}  // namespace unstring
+} // namespace unstring

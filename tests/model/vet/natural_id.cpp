@@ -21,4 +21,4 @@ TEST_CASE("natural id: numbers sort as numbers") {
     CHECK_FALSE(is_before_by_number("P-2", "P-2"));
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -25,7 +25,7 @@ StringIx add_string(City& city, const std::string& id) {
     return StringIx(city.strings.size() - 1);
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("vet: a sound city gives no finding, and its string as it stands today") {
     const VetResult result = vet(clean_city());
@@ -59,7 +59,8 @@ TEST_CASE("vet: the second row of one id is named by its row, and only that row 
     CHECK(mended.poles.back().set_aside);
 }
 
-TEST_CASE("vet: ids that differ in case, signs or leading zeros alone, and poles in one place, are near twins") {
+TEST_CASE(
+    "vet: ids that differ in case, signs or leading zeros alone, and poles in one place, are near twins") {
     City city = clean_city();
     city.poles[5].id = "p 004";
     city.poles[8].place = {city.poles[7].place.x_m + 0.4, city.poles[7].place.y_m};
@@ -80,7 +81,7 @@ TEST_CASE("vet: a place that is missing, exchanged or far away") {
     CHECK(finding_of(result.findings, "place-missing", "P-1").severity == Severity::error);
     CHECK(finding_of(result.findings, "place-swapped", "P-2").severity == Severity::error);
     CHECK(finding_of(result.findings, "place-far", "P-3").severity == Severity::warning);
-    CHECK(count_of(result.findings, "load-over") == 0);  // no cable is laid to the far place
+    CHECK(count_of(result.findings, "load-over") == 0); // no cable is laid to the far place
     CHECK(count_of(result.findings, "span-long") == 0);
 }
 
@@ -115,7 +116,7 @@ TEST_CASE("vet: poles, units and cut-backs of a string that is not there") {
     cutback.string = StringIx(0);
     cutback.string_given = "S-1";
     cutback.pole_a = "P-5";
-    cutback.pole_b = "P-1";  // in the city, but on no string
+    cutback.pole_b = "P-1"; // in the city, but on no string
     city.cutbacks.push_back(cutback);
     const VetResult result = vet(city);
     CHECK(finding_of(result.findings, "string-unknown", "P-1").found == "S-99");
@@ -171,7 +172,8 @@ TEST_CASE("vet: wiring numbers that are missing, doubled or leave gaps") {
     CHECK(result.strings[0].order == OrderFrom::partial);
     for (Pole& pole : city.poles) pole.order.reset();
     const VetResult none = vet(city);
-    CHECK(finding_of(none.findings, "order-missing", "P-1").found == "none of the 30 lamps of string S-1 has an order");
+    CHECK(finding_of(none.findings, "order-missing", "P-1").found ==
+          "none of the 30 lamps of string S-1 has an order");
     CHECK(count_of(none.findings, "order-missing") == 1);
     CHECK(finding_of(none.findings, "order-inferred", "S-1").severity == Severity::notice);
     CHECK(none.strings[0].order == OrderFrom::inferred);
@@ -213,7 +215,8 @@ TEST_CASE("vet: load over the rating is an error of the string, load under the u
     CHECK(count_of(vet(city).findings, "pulsing-light") == 1);
 }
 
-TEST_CASE("vet: running volts and nameplate open-circuit volts over the cable's class are errors, an estimate a warning") {
+TEST_CASE("vet: running volts and nameplate open-circuit volts over the cable's class are errors, an "
+          "estimate a warning") {
     City city = clean_city();
     city.strings[0].cable_kv = 1;
     CHECK(finding_of(vet(city).findings, "volts-over", "S-1").found == "1096 V running");
@@ -322,4 +325,4 @@ TEST_CASE("vet: parallel circuits are no strings, and their poles are not asked 
     CHECK(result.strings.size() == 1);
 }
 
-}  // namespace unstring
+} // namespace unstring

@@ -15,7 +15,8 @@ namespace {
 using namespace for_tests;
 
 SettledOrder settle(const City& city) {
-    return settle_order(city, extent_of(city), StreetIndex(city.streets), StringIx(0), lamps_by_string(city)[0]);
+    return settle_order(city, extent_of(city), StreetIndex(city.streets), StringIx(0),
+                        lamps_by_string(city)[0]);
 }
 
 double loop_m(const City& city, const std::vector<PoleIx>& wiring) {
@@ -41,7 +42,7 @@ void rename_at_random(City& city, std::mt19937& random) {
     for (std::size_t i = 0; i < names.size(); ++i) city.poles[i].id = "X" + std::to_string(names[i]);
 }
 
-}  // namespace
+} // namespace
 
 TEST_CASE("wiring order: an out-and-back string without numbers is found again by its geometry") {
     std::mt19937 random(7);
@@ -62,14 +63,16 @@ TEST_CASE("wiring order: pole numbers are followed where their way is as short a
     for (std::size_t i = 0; i < 40; ++i) CHECK(settled.wiring[i] == PoleIx(i));
 }
 
-TEST_CASE("wiring order: on 60 random rings without numbers the loop is at most 2 % longer than the true one") {
+TEST_CASE(
+    "wiring order: on 60 random rings without numbers the loop is at most 2 % longer than the true one") {
     const unsigned seed = 77;
     INFO("seed " << seed);
     std::mt19937 random(seed);
     std::uniform_real_distribution<double> jitter(-12, 12);
     for (int round = 0; round < 60; ++round) {
         City city = out_and_back(std::uniform_int_distribution<int>(4, 60)(random) * 2, 10);
-        for (Pole& pole : city.poles) pole.place = {pole.place.x_m + jitter(random), pole.place.y_m * 5 + jitter(random)};
+        for (Pole& pole : city.poles)
+            pole.place = {pole.place.x_m + jitter(random), pole.place.y_m * 5 + jitter(random)};
         std::vector<PoleIx> as_built(city.poles.size());
         for (std::size_t i = 0; i < as_built.size(); ++i) as_built[i] = PoleIx(i);
         rename_at_random(city, random);
@@ -83,7 +86,8 @@ TEST_CASE("wiring order: on 60 random rings without numbers the loop is at most 
     }
 }
 
-TEST_CASE("wiring order: given numbers keep their sequence, and lamps without one fill the gaps in the numbering") {
+TEST_CASE(
+    "wiring order: given numbers keep their sequence, and lamps without one fill the gaps in the numbering") {
     const unsigned seed = 5;
     INFO("seed " << seed);
     std::mt19937 random(seed);
@@ -97,8 +101,10 @@ TEST_CASE("wiring order: given numbers keep their sequence, and lamps without on
         const SettledOrder settled = settle(city);
         REQUIRE(settled.wiring.size() == 30);
         for (std::size_t i = 0; i < 30; ++i)
-            if (as_given[settled.wiring[i].place()]) REQUIRE(*as_given[settled.wiring[i].place()] == static_cast<int>(i) + 1);
-        CHECK(loop_m(city, settled.wiring) <= 1.0001 * loop_m(city, lamps_by_string(out_and_back(30, 10))[0]));
+            if (as_given[settled.wiring[i].place()])
+                REQUIRE(*as_given[settled.wiring[i].place()] == static_cast<int>(i) + 1);
+        CHECK(loop_m(city, settled.wiring) <=
+              1.0001 * loop_m(city, lamps_by_string(out_and_back(30, 10))[0]));
     }
 }
 
@@ -140,7 +146,8 @@ TEST_CASE("wiring order: a carriageway between makes the neighbour on the same s
     city.strings = {string_row("S-1", {-10, 0})};
     // two rows of lamps 20 m apart, lamps every 25 m: without the street the zigzag is shorter
     for (int i = 0; i < 12; ++i)
-        city.poles.push_back(pole_row("X" + std::to_string(i * 5 % 12), StringIx(0), "S-1", i + 1, {25.0 * (i / 2), i % 2 == 0 ? 0.0 : 20.0}));
+        city.poles.push_back(pole_row("X" + std::to_string(i * 5 % 12), StringIx(0), "S-1", i + 1,
+                                      {25.0 * (i / 2), i % 2 == 0 ? 0.0 : 20.0}));
     for (Pole& pole : city.poles) pole.order.reset();
     Street street;
     street.line = {{-50, 10}, {300, 10}};
@@ -148,8 +155,9 @@ TEST_CASE("wiring order: a carriageway between makes the neighbour on the same s
     int crossings = 0;
     const std::vector<PoleIx> wiring = settle(city).wiring;
     for (std::size_t i = 1; i < wiring.size(); ++i)
-        crossings += city.poles[wiring[i].place()].place.y_m != city.poles[wiring[i - 1].place()].place.y_m ? 1 : 0;
+        crossings +=
+            city.poles[wiring[i].place()].place.y_m != city.poles[wiring[i - 1].place()].place.y_m ? 1 : 0;
     CHECK(crossings == 1);
 }
 
-}  // namespace unstring
+} // namespace unstring

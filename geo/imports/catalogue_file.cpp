@@ -151,9 +151,10 @@ Head head(const Fields& in) {
     for (const auto& [key, item] :
          {std::pair{"price_item", &head.price_item}, std::pair{"battery_item", &head.battery_item}}) {
         const auto items = price_items();
-        const bool is_known =
-            item->empty() || std::any_of(items.begin(), items.end(),
-                                         [&](const PriceItem& each) { return each.item == *item; });
+        const bool is_known = item->empty() || std::any_of(items.begin(), items.end(),
+                                                           [&wanted = *item](const PriceItem& each) {
+                                                               return each.item == wanted;
+                                                           });
         if (!is_known) in.refuse(key, *item, "an item of the price list", FaultCode::value_unknown);
     }
     return head;

@@ -242,8 +242,8 @@ Expected<void> read_table_map(const nlohmann::json& entries, const std::string& 
         return tl::unexpected(
             map_fault(path, table, entries.dump().substr(0, 60), "{\"field\": \"column\"}"));
     for (const auto& [field, column] : entries.items()) {
-        const bool is_known =
-            std::any_of(fields.begin(), fields.end(), [&](const Field& each) { return each.name == field; });
+        const bool is_known = std::any_of(fields.begin(), fields.end(),
+                                          [&name = field](const Field& each) { return each.name == name; });
         if (!is_known) return tl::unexpected(map_fault(path, table + "." + field, field, names_of(fields)));
         if (!column.is_string() && !column.is_null())
             return tl::unexpected(

@@ -113,9 +113,10 @@ OrderFacts order_facts(const MoneyInput& input, const DecideResult& decide, cons
     add_strings(facts, jobs);
     const std::vector<int> rings = rings_of(input.city, phase);
     for (auto& [key, job] : jobs) {
+        const StringLoop& loop = facts.loops[key.second.place()];
         std::sort(job.poles.begin(), job.poles.end(), [&](PoleIx a, PoleIx b) {
             const auto place = [&](PoleIx pole) {
-                return std::pair(rings[pole.place()], position_of(facts.loops[key.second.place()], pole));
+                return std::pair(rings[pole.place()], position_of(loop, pole));
             };
             return place(a) != place(b) ? place(a) < place(b) : a < b;
         });

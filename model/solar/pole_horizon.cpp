@@ -104,7 +104,7 @@ Expected<void> scan_raster(const City& city, const std::vector<PoleIx>& poles, H
         const auto window = heights.window(centre, 0.5 * kTile_m + kReach_m + 2.0 * heights.cell_m());
         if (!window) return tl::unexpected(window.error());
         const WindowBounds bounds = bounds_of(*window);
-        tbb::parallel_for(std::size_t{0}, members.size(), [&](std::size_t k) {
+        tbb::parallel_for(std::size_t{0}, members.size(), [&, &members = members](std::size_t k) {
             PoleHorizon& horizon = horizons[members[k]];
             ScannedHorizon scanned =
                 scan_horizon(*window, bounds, city.poles[poles[members[k]].place()].place,
